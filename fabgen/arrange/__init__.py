@@ -1,0 +1,1 @@
+"""Stage 3: stations, holes and placed parts as numbers."""

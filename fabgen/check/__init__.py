@@ -1,0 +1,1 @@
+"""Stage 4: the arranged design is judged; one file per question a builder asks."""

@@ -1,0 +1,1 @@
+"""Options in, text out."""

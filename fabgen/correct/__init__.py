@@ -1,0 +1,1 @@
+"""Stage 2: modelled lengths become cut lengths, line by line."""

@@ -1,0 +1,1 @@
+"""What passes between the stages: frozen records in mm, no kernel, no files."""

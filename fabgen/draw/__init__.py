@@ -1,0 +1,1 @@
+"""Stage 5: sheets as plain primitives in mm."""

@@ -1,0 +1,1 @@
+"""Stage 7: one writer per format."""

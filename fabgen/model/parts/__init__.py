@@ -1,0 +1,1 @@
+"""One printed, made or bought part per file."""

@@ -1,0 +1,1 @@
+"""Pure functions with their source and range; plain numbers in, plain numbers out."""
