@@ -1,0 +1,307 @@
+"""Text to millimetres and megahertz and back: the only place that knows what an inch is.
+
+A length is read as an exact fraction and rounded to a float once, so `5/8 in` and `15.875 mm` are the same number.
+Whatever could be read in two ways (`4,5 mm`, `1 000 mm`, `1:30`) is refused with the reason and the cheapest fix.
+"""
+
+import difflib
+import math
+import re
+from fractions import Fraction
+
+SPEED_OF_LIGHT_M_S = 299_792_458
+"""Speed of light in vacuum. Source: SI Brochure, BIPM, 9th edition 2019, defining constants (exact)."""
+
+MM_PER_IN = Fraction("25.4")
+"""Source: international inch of 1959 (exact), as in ISO 80000-3."""
+
+_MM_PER_UNIT = {
+    "mm": Fraction(1),
+    "cm": Fraction(10),
+    "m": Fraction(1000),
+    "in": MM_PER_IN,
+    "ft": 12 * MM_PER_IN,
+}
+_LENGTH_NAMES = {name: name for name in _MM_PER_UNIT} | {
+    '"': "in",
+    "''": "in",
+    "inch": "in",
+    "inches": "in",
+    "'": "ft",
+    "foot": "ft",
+    "feet": "ft",
+}
+_MHZ_PER_UNIT = {
+    "Hz": Fraction(1, 1_000_000),
+    "kHz": Fraction(1, 1000),
+    "MHz": Fraction(1),
+    "GHz": Fraction(1000),
+}
+_LONGEST_TEXT = 40
+_LARGEST_EXPONENT = 15
+_LARGEST_MM = 1_000_000
+_LARGEST_MHZ = 1_000_000
+
+_VULGAR = dict(
+    zip("½⅓⅔¼¾⅕⅖⅗⅘⅙⅚⅛⅜⅝⅞", "1/2 1/3 2/3 1/4 3/4 1/5 2/5 3/5 4/5 1/6 5/6 1/8 3/8 5/8 7/8".split(), strict=True)
+)
+_SAME_CHARACTERS = str.maketrans(
+    {"″": '"', "”": '"', "“": '"', "′": "'", "’": "'", "‘": "'", "−": "-", "⁄": "/"}  # noqa: RUF001
+    | dict.fromkeys("\u00a0\u2007\u2009\u202f", " ")
+)
+
+_DECIMAL = r"(?:[0-9]+\.?[0-9]*|\.[0-9]+)"
+_QUANTITY = re.compile(rf"(?P<number>{_DECIMAL}(?:[eE][+-]?[0-9]+)?) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?")
+_FRACTION = re.compile(
+    r"(?:(?P<whole>[0-9]+)(?: |-| -|- ))?(?P<over>[0-9]+)/(?P<under>[0-9]+) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?"
+)
+_FEET_INCHES = re.compile(r"(?P<feet>[0-9]+) ?(?:ft|foot|feet|'(?!')) ?-? ?(?P<inches>[0-9.].*)")
+
+
+class UnitError(ValueError):
+    """A text that is not one length or one frequency.
+
+    Attributes:
+        message: what is wrong, one sentence.
+        fix: the cheapest way out, with an example.
+    """
+
+    def __init__(self, message: str, fix: str) -> None:
+        super().__init__(f"{message}; {fix}")
+        self.message = message
+        self.fix = fix
+
+
+def parse_length_mm(text: str, default_unit: str | None = None) -> float:
+    """Read one length.
+
+    Accepts `12.7 mm`, `1.2 m`, `3 cm`, `0.625 in`, `5/8 in`, `1-1/2 in`, `1 1/2"`, `1½ in`, `6 ft 2 in`, with or
+    without a sign and with or without the space before the unit.
+
+    Args:
+        text: the length as written.
+        default_unit: unit of a bare number, `mm`, `cm`, `m`, `in` or `ft`; None refuses a bare number. A bare fraction
+            takes it only when it is `in` or `ft`: nobody measures `5/8` in millimetres.
+
+    Returns:
+        The length in mm, correctly rounded; negative when the text is.
+
+    Raises:
+        UnitError: the text is not exactly one length.
+    """
+    shown, plain = _prepare(text, "12.7 mm")
+    sign, plain = _split_sign(plain)
+    value = _feet_and_inches(shown, plain) or _one_length(shown, plain, default_unit)
+    if value > _LARGEST_MM:
+        raise UnitError(f"{shown} is longer than 1 km", "check the number and its unit, for example 12.7 mm")
+    return float(sign * value)
+
+
+def parse_frequency_mhz(text: str) -> float:
+    """Read one frequency: `434.2 MHz`, `1.2962 GHz`, `50100 kHz`, `144300000 Hz`; the unit is compulsory.
+
+    Args:
+        text: the frequency as written.
+
+    Returns:
+        The frequency in MHz, correctly rounded, above zero.
+
+    Raises:
+        UnitError: the text is not exactly one frequency above zero.
+    """
+    shown, plain = _prepare(text, "434.2 MHz")
+    sign, plain = _split_sign(plain)
+    match = _QUANTITY.fullmatch(plain)
+    if not match:
+        raise UnitError(f"{shown} is not a frequency", "write a number and its unit, for example 434.2 MHz")
+    number, unit = match["number"], match["unit"]
+    if unit is None:
+        raise UnitError(f"{shown} has no unit", f"write {number} MHz")
+    if unit not in _MHZ_PER_UNIT:
+        raise _unknown_unit(unit, number, list(_MHZ_PER_UNIT), "MHz")
+    value = _decimal(shown, number) * _MHZ_PER_UNIT[unit]
+    if sign < 0 or value <= 0 or value > _LARGEST_MHZ:
+        raise UnitError(f"{shown} is not a frequency above zero and up to 1000 GHz", "for example 434.2 MHz")
+    return float(value)
+
+
+def wavelength_mm(frequency_mhz: float) -> float:
+    """Wavelength in vacuum.
+
+    Args:
+        frequency_mhz: frequency in MHz, above zero.
+
+    Returns:
+        Wavelength in mm.
+    """
+    return SPEED_OF_LIGHT_M_S / frequency_mhz / 1000
+
+
+def mm_to_in(length_mm: float) -> float:
+    """Inches of a length in mm."""
+    return length_mm / float(MM_PER_IN)
+
+
+def in_to_mm(length_in: float) -> float:
+    """Millimetres of a length in inches."""
+    return length_in * float(MM_PER_IN)
+
+
+def format_mm(length_mm: float, decimals: int = 3) -> str:
+    """Print a length for a table or a drawing: `.` as decimal mark, fixed decimals, never a negative zero.
+
+    Args:
+        length_mm: any finite number.
+        decimals: digits after the mark, at least 1.
+
+    Raises:
+        ValueError: the number is not finite.
+    """
+    if not math.isfinite(length_mm):
+        raise ValueError(f"{length_mm} is not a length")
+    printed = f"{length_mm:.{decimals}f}"
+    return printed.removeprefix("-") if float(printed) == 0 else printed
+
+
+def nearest_inch_fraction(length_mm: float, denominator: int = 64) -> tuple[str, float]:
+    """The nearest inch fraction, as a ruler shows it.
+
+    Args:
+        length_mm: length in mm.
+        denominator: finest graduation, a power of two.
+
+    Returns:
+        The text, for example `1-1/2 in`, and what it differs from the length by, in mm (fraction minus length).
+    """
+    steps = round(Fraction(length_mm) / MM_PER_IN * denominator)
+    value = Fraction(steps, denominator)
+    whole, rest = divmod(abs(value), 1)
+    parts = [str(whole)] if whole or not rest else []
+    parts += [f"{rest.numerator}/{rest.denominator}"] if rest else []
+    sign = "-" if value < 0 else ""
+    return f"{sign}{'-'.join(parts)} in", float(value * MM_PER_IN - Fraction(length_mm))
+
+
+def _prepare(text: str, example: str) -> tuple[str, str]:
+    """The text as messages show it, and the text with one spelling for signs, quotes, spaces and fractions.
+
+    Raises:
+        UnitError: a form that is refused by name.
+    """
+    if not text.strip():
+        raise UnitError("the value is empty", f"write a number and its unit, for example {example}")
+    if len(text) > _LONGEST_TEXT:
+        raise UnitError(f"'{text[:20]}…' is too long for one value", f"write a number like {example}")
+    plain = text.translate(_SAME_CHARACTERS)
+    plain = re.sub(f"(?<=[0-9])[{''.join(_VULGAR)}]", lambda match: f" {_VULGAR[match[0]]}", plain)
+    plain = re.sub(f"[{''.join(_VULGAR)}]", lambda match: _VULGAR[match[0]], plain)
+    plain = " ".join(plain.split())
+    shown = repr(text.strip())
+    lower = plain.lower()
+    if "," in plain:
+        raise _comma(shown, plain)
+    if re.match(r"[+-]?\.?(nan|inf)", lower):
+        raise UnitError(f"{shown} is not a finite number", f"write a number like {example}")
+    if re.match(r"[+-]?0[xob]", lower):
+        raise UnitError(f"{shown} is not a decimal number", f"write it in decimal, for example {example}")
+    if "_" in plain:
+        raise UnitError(f"{shown} has an underscore in it", f"write {plain.replace('_', '')}")
+    if ":" in plain:
+        raise UnitError(f"{shown} looks like a time or a base-60 number", f"write a number like {example}")
+    if grouped := re.match(r"[+-]?[0-9]{1,3}(?: [0-9]{3})+(?![0-9/])", plain):
+        joined = grouped[0].replace(" ", "") + plain[grouped.end() :]
+        raise UnitError(f"{shown} has a space inside a number", f"write {joined}")
+    return shown, plain
+
+
+def _comma(shown: str, plain: str) -> UnitError:
+    """The refusal of a comma, which is a decimal mark for one reader and a thousands mark for the next."""
+    point = plain.replace(",", ".", 1)
+    if re.match(r"[+-]?[0-9]{1,3}(,[0-9]{3})+(?![0-9])", plain):
+        joined = plain.replace(",", "")
+        if plain.count(",") == 1:
+            return UnitError(f"the comma in {shown} can be read in two ways", f"write {joined} or {point}")
+        return UnitError(f"{shown} has commas inside a number", f"write {joined}")
+    if plain.count(",") == 1 and re.search(r"[0-9],[0-9]", plain):
+        return UnitError(f"{shown} has a decimal comma", f"write {point}")
+    return UnitError(f"{shown} is not one value", "write one number with a decimal point, for example 4.5 mm")
+
+
+def _split_sign(plain: str) -> tuple[int, str]:
+    """The sign as a factor and the rest of the text."""
+    return (-1 if plain.startswith("-") else 1), re.sub(r"^[+-] ?", "", plain)
+
+
+def _feet_and_inches(shown: str, plain: str) -> Fraction | None:
+    """A length in feet and inches in mm, or None when the text is not of that form."""
+    match = _FEET_INCHES.fullmatch(plain)
+    if not match:
+        return None
+    inches_mm = _one_length(shown, match["inches"], None)
+    unit = re.search(r"[^0-9\s./-]+$", match["inches"])
+    if unit is None or _LENGTH_NAMES.get(unit[0]) != "in":
+        raise UnitError(f"{shown} mixes feet with another unit than inches", "write 6 ft 2 in, or one unit")
+    if inches_mm >= _MM_PER_UNIT["ft"]:
+        raise UnitError(f"{shown} has 12 inches or more after the feet", "write 7 ft 2 in for 6 ft 14 in")
+    return int(match["feet"]) * _MM_PER_UNIT["ft"] + inches_mm
+
+
+def _one_length(shown: str, plain: str, default_unit: str | None) -> Fraction:
+    """A length in one unit, unsigned, in mm."""
+    fraction = _FRACTION.fullmatch(plain)
+    match = fraction or _QUANTITY.fullmatch(plain)
+    if not match:
+        raise UnitError(
+            f"{shown} is not a length", "write one number and its unit, for example 12.7 mm or 1-1/2 in"
+        )
+    number = plain[: match.start("unit")].strip() if match["unit"] else plain
+    unit = _length_unit(shown, number, match["unit"], default_unit, bool(fraction))
+    value = _mixed_number(shown, fraction) if fraction else _decimal(shown, number)
+    return value * _MM_PER_UNIT[unit]
+
+
+def _length_unit(
+    shown: str, number: str, unit: str | None, default_unit: str | None, is_fraction: bool
+) -> str:
+    """The unit in force, by its short name."""
+    if unit is not None:
+        if unit not in _LENGTH_NAMES:
+            raise _unknown_unit(unit, number, list(_MM_PER_UNIT) + ["inch", "inches", "foot", "feet"], "mm")
+        return _LENGTH_NAMES[unit]
+    if default_unit is None:
+        raise UnitError(f"{shown} has no unit", f"write {number} {'in' if is_fraction else 'mm'}")
+    if is_fraction and default_unit not in ("in", "ft"):
+        raise UnitError(f"{shown} is a fraction without a unit among {default_unit}", f"write {number} in")
+    return default_unit
+
+
+def _mixed_number(shown: str, match: re.Match[str]) -> Fraction:
+    """The value of `5/8` or `1-1/2`."""
+    over, under = int(match["over"]), int(match["under"])
+    if under == 0:
+        raise UnitError(f"{shown} divides by zero", "write a fraction like 5/8 in")
+    if match["whole"] is None:
+        return Fraction(over, under)
+    if over >= under:
+        raise UnitError(f"{shown} has a whole number and a fraction of one or more", "write it like 1-1/2 in")
+    return int(match["whole"]) + Fraction(over, under)
+
+
+def _decimal(shown: str, number: str) -> Fraction:
+    """An exact decimal; a power of ten that no antenna needs is refused before it is multiplied out."""
+    mantissa, _, exponent = number.lower().partition("e")
+    if exponent and abs(int(exponent)) > _LARGEST_EXPONENT:
+        raise UnitError(
+            f"{shown} is out of range", "write the number without a power of ten, for example 12.7 mm"
+        )
+    return Fraction(mantissa) * Fraction(10) ** int(exponent or 0)
+
+
+def _unknown_unit(unit: str, number: str, names: list[str], usual: str) -> UnitError:
+    """The refusal of a unit, with the nearest one that exists."""
+    lower = {name.lower(): name for name in names}
+    near = difflib.get_close_matches(unit.lower().rstrip("."), list(lower), n=1, cutoff=0.5)
+    guess = lower[near[0]] if near else usual
+    return UnitError(
+        f"'{unit}' is not a unit that is known here ({', '.join(names)})", f"write {number} {guess}"
+    )
