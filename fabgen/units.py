@@ -1,7 +1,8 @@
 """Text to millimetres and megahertz and back: the only place that knows what an inch is.
 
-A length is read as an exact fraction and rounded to a float once, so `5/8 in` and `15.875 mm` are the same number.
-Whatever could be read in two ways (`4,5 mm`, `1 000 mm`, `1:30`) is refused with the reason and the cheapest fix.
+A length is read as an exact fraction and rounded to a float once, so `5/8 in` and `15.875 mm` are the same
+number. Whatever could be read in two ways (`4,5 mm`, `1 000 mm`, `1:30`) is refused with the reason and the
+cheapest fix.
 """
 
 import difflib
@@ -42,11 +43,12 @@ _LARGEST_EXPONENT = 15
 _LARGEST_MM = 1_000_000
 _LARGEST_MHZ = 1_000_000
 
-_VULGAR = dict(
-    zip("½⅓⅔¼¾⅕⅖⅗⅘⅙⅚⅛⅜⅝⅞", "1/2 1/3 2/3 1/4 3/4 1/5 2/5 3/5 4/5 1/6 5/6 1/8 3/8 5/8 7/8".split(), strict=True)
-)
+_VULGAR = {
+    "½": "1/2", "⅓": "1/3", "⅔": "2/3", "¼": "1/4", "¾": "3/4", "⅕": "1/5", "⅖": "2/5", "⅗": "3/5", "⅘": "4/5",
+    "⅙": "1/6", "⅚": "5/6", "⅛": "1/8", "⅜": "3/8", "⅝": "5/8", "⅞": "7/8",
+}  # fmt: skip
 _SAME_CHARACTERS = str.maketrans(
-    {"″": '"', "”": '"', "“": '"', "′": "'", "’": "'", "‘": "'", "−": "-", "⁄": "/"}  # noqa: RUF001
+    {"″": '"', "”": '"', "“": '"', "′": "'", "’": "'", "‘": "'", "−": "-", "⁄": "/"}
     | dict.fromkeys("\u00a0\u2007\u2009\u202f", " ")
 )
 
@@ -55,7 +57,7 @@ _QUANTITY = re.compile(rf"(?P<number>{_DECIMAL}(?:[eE][+-]?[0-9]+)?) ?(?P<unit>[
 _FRACTION = re.compile(
     r"(?:(?P<whole>[0-9]+)(?: |-| -|- ))?(?P<over>[0-9]+)/(?P<under>[0-9]+) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?"
 )
-_FEET_INCHES = re.compile(r"(?P<feet>[0-9]+) ?(?:ft|foot|feet|'(?!')) ?-? ?(?P<inches>[0-9.].*)")
+_FEET_INCHES = re.compile(r"(?P<feet>[0-9]+) ?(?:ft|foot|feet|'(?!'))[ -]?(?P<inches>[0-9.].*)")
 
 
 class UnitError(ValueError):
@@ -75,13 +77,13 @@ class UnitError(ValueError):
 def parse_length_mm(text: str, default_unit: str | None = None) -> float:
     """Read one length.
 
-    Accepts `12.7 mm`, `1.2 m`, `3 cm`, `0.625 in`, `5/8 in`, `1-1/2 in`, `1 1/2"`, `1½ in`, `6 ft 2 in`, with or
-    without a sign and with or without the space before the unit.
+    Accepts `12.7 mm`, `1.2 m`, `3 cm`, `0.625 in`, `5/8 in`, `1-1/2 in`, `1 1/2"`, `1½ in`, `6 ft 2 in`, with
+    or without a sign and with or without the space before the unit.
 
     Args:
         text: the length as written.
-        default_unit: unit of a bare number, `mm`, `cm`, `m`, `in` or `ft`; None refuses a bare number. A bare fraction
-            takes it only when it is `in` or `ft`: nobody measures `5/8` in millimetres.
+        default_unit: unit of a bare number, `mm`, `cm`, `m`, `in` or `ft`; None refuses a bare number. A bare
+            fraction takes it only when it is `in` or `ft`: `5/8` beside millimetres is most likely inches.
 
     Returns:
         The length in mm, correctly rounded; negative when the text is.
@@ -171,7 +173,7 @@ def nearest_inch_fraction(length_mm: float, denominator: int = 64) -> tuple[str,
         denominator: finest graduation, a power of two.
 
     Returns:
-        The text, for example `1-1/2 in`, and what it differs from the length by, in mm (fraction minus length).
+        The text, for example `1-1/2 in`, and its difference from the length in mm (fraction minus length).
     """
     steps = round(Fraction(length_mm) / MM_PER_IN * denominator)
     value = Fraction(steps, denominator)
@@ -237,13 +239,14 @@ def _feet_and_inches(shown: str, plain: str) -> Fraction | None:
     match = _FEET_INCHES.fullmatch(plain)
     if not match:
         return None
-    inches_mm = _one_length(shown, match["inches"], None)
     unit = re.search(r"[^0-9\s./-]+$", match["inches"])
     if unit is None or _LENGTH_NAMES.get(unit[0]) != "in":
-        raise UnitError(f"{shown} mixes feet with another unit than inches", "write 6 ft 2 in, or one unit")
+        fix = f"write {match['feet']} ft 2 in, or one unit"
+        raise UnitError(f"{shown} has feet and then something else than inches", fix)
+    feet, inches_mm = int(match["feet"]), _one_length(shown, match["inches"], None)
     if inches_mm >= _MM_PER_UNIT["ft"]:
         raise UnitError(f"{shown} has 12 inches or more after the feet", "write 7 ft 2 in for 6 ft 14 in")
-    return int(match["feet"]) * _MM_PER_UNIT["ft"] + inches_mm
+    return feet * _MM_PER_UNIT["ft"] + inches_mm
 
 
 def _one_length(shown: str, plain: str, default_unit: str | None) -> Fraction:
@@ -251,9 +254,7 @@ def _one_length(shown: str, plain: str, default_unit: str | None) -> Fraction:
     fraction = _FRACTION.fullmatch(plain)
     match = fraction or _QUANTITY.fullmatch(plain)
     if not match:
-        raise UnitError(
-            f"{shown} is not a length", "write one number and its unit, for example 12.7 mm or 1-1/2 in"
-        )
+        raise UnitError(f"{shown} is not a length", "write one number and its unit, like 12.7 mm or 1-1/2 in")
     number = plain[: match.start("unit")].strip() if match["unit"] else plain
     unit = _length_unit(shown, number, match["unit"], default_unit, bool(fraction))
     value = _mixed_number(shown, fraction) if fraction else _decimal(shown, number)
@@ -266,12 +267,14 @@ def _length_unit(
     """The unit in force, by its short name."""
     if unit is not None:
         if unit not in _LENGTH_NAMES:
-            raise _unknown_unit(unit, number, list(_MM_PER_UNIT) + ["inch", "inches", "foot", "feet"], "mm")
+            raise _unknown_unit(unit, number, [name for name in _LENGTH_NAMES if name.isalpha()], "mm")
         return _LENGTH_NAMES[unit]
     if default_unit is None:
         raise UnitError(f"{shown} has no unit", f"write {number} {'in' if is_fraction else 'mm'}")
     if is_fraction and default_unit not in ("in", "ft"):
-        raise UnitError(f"{shown} is a fraction without a unit among {default_unit}", f"write {number} in")
+        raise UnitError(
+            f"{shown} is a fraction without a unit, unlikely in {default_unit}", f"write {number} in"
+        )
     return default_unit
 
 
@@ -291,17 +294,14 @@ def _decimal(shown: str, number: str) -> Fraction:
     """An exact decimal; a power of ten that no antenna needs is refused before it is multiplied out."""
     mantissa, _, exponent = number.lower().partition("e")
     if exponent and abs(int(exponent)) > _LARGEST_EXPONENT:
-        raise UnitError(
-            f"{shown} is out of range", "write the number without a power of ten, for example 12.7 mm"
-        )
+        raise UnitError(f"{shown} is out of range", "write the number without a power of ten")
     return Fraction(mantissa) * Fraction(10) ** int(exponent or 0)
 
 
 def _unknown_unit(unit: str, number: str, names: list[str], usual: str) -> UnitError:
     """The refusal of a unit, with the nearest one that exists."""
+    written = unit.lower().rstrip(".")
     lower = {name.lower(): name for name in names}
-    near = difflib.get_close_matches(unit.lower().rstrip("."), list(lower), n=1, cutoff=0.5)
-    guess = lower[near[0]] if near else usual
-    return UnitError(
-        f"'{unit}' is not a unit that is known here ({', '.join(names)})", f"write {number} {guess}"
-    )
+    near = difflib.get_close_matches(written, [name for name in lower if len(name) > 1], n=1, cutoff=0.5)
+    guess = lower.get(written) or (lower[near[0]] if near else usual)
+    return UnitError(f"'{unit}' is not a unit known here ({', '.join(names)})", f"write {number} {guess}")
