@@ -38,14 +38,15 @@ _MHZ_PER_UNIT = {
     "MHz": Fraction(1),
     "GHz": Fraction(1000),
 }
+_OTHER_UNITS = {"km", "dm", "um", "µm", "μm", "nm", "yd", "mil", "mils", "thou", "pt", "px"}
 _LONGEST_TEXT = 40
 _LARGEST_EXPONENT = 15
 _LARGEST_MM = 1_000_000
 _LARGEST_MHZ = 1_000_000
 
 _VULGAR = {
-    "½": "1/2", "⅓": "1/3", "⅔": "2/3", "¼": "1/4", "¾": "3/4", "⅕": "1/5", "⅖": "2/5", "⅗": "3/5", "⅘": "4/5",
-    "⅙": "1/6", "⅚": "5/6", "⅛": "1/8", "⅜": "3/8", "⅝": "5/8", "⅞": "7/8",
+    "½": "1/2", "⅓": "1/3", "⅔": "2/3", "¼": "1/4", "¾": "3/4", "⅕": "1/5", "⅖": "2/5", "⅗": "3/5",
+    "⅘": "4/5", "⅙": "1/6", "⅚": "5/6", "⅛": "1/8", "⅜": "3/8", "⅝": "5/8", "⅞": "7/8",
 }  # fmt: skip
 _SAME_CHARACTERS = str.maketrans(
     {"″": '"', "”": '"', "“": '"', "′": "'", "’": "'", "‘": "'", "−": "-", "⁄": "/"}
@@ -93,7 +94,9 @@ def parse_length_mm(text: str, default_unit: str | None = None) -> float:
     """
     shown, plain = _prepare(text, "12.7 mm")
     sign, plain = _split_sign(plain)
-    value = _feet_and_inches(shown, plain) or _one_length(shown, plain, default_unit)
+    value = _feet_and_inches(shown, plain)
+    if value is None:
+        value = _one_length(shown, plain, default_unit)
     if value > _LARGEST_MM:
         raise UnitError(f"{shown} is longer than 1 km", "check the number and its unit, for example 12.7 mm")
     return float(sign * value)
@@ -120,7 +123,7 @@ def parse_frequency_mhz(text: str) -> float:
     if unit is None:
         raise UnitError(f"{shown} has no unit", f"write {number} MHz")
     if unit not in _MHZ_PER_UNIT:
-        raise _unknown_unit(unit, number, list(_MHZ_PER_UNIT), "MHz")
+        raise _unknown_unit(unit, number, list(_MHZ_PER_UNIT))
     value = _decimal(shown, number) * _MHZ_PER_UNIT[unit]
     if sign < 0 or value <= 0 or value > _LARGEST_MHZ:
         raise UnitError(f"{shown} is not a frequency above zero and up to 1000 GHz", "for example 434.2 MHz")
@@ -267,7 +270,7 @@ def _length_unit(
     """The unit in force, by its short name."""
     if unit is not None:
         if unit not in _LENGTH_NAMES:
-            raise _unknown_unit(unit, number, [name for name in _LENGTH_NAMES if name.isalpha()], "mm")
+            raise _unknown_unit(unit, number, [name for name in _LENGTH_NAMES if name.isalpha()])
         return _LENGTH_NAMES[unit]
     if default_unit is None:
         raise UnitError(f"{shown} has no unit", f"write {number} {'in' if is_fraction else 'mm'}")
@@ -298,10 +301,13 @@ def _decimal(shown: str, number: str) -> Fraction:
     return Fraction(mantissa) * Fraction(10) ** int(exponent or 0)
 
 
-def _unknown_unit(unit: str, number: str, names: list[str], usual: str) -> UnitError:
-    """The refusal of a unit, with the nearest one that exists."""
+def _unknown_unit(unit: str, number: str, names: list[str]) -> UnitError:
+    """The refusal of a unit, with the nearest one that exists; a real unit of another size is no misspelling."""
     written = unit.lower().rstrip(".")
     lower = {name.lower(): name for name in names}
-    near = difflib.get_close_matches(written, [name for name in lower if len(name) > 1], n=1, cutoff=0.5)
-    guess = lower.get(written) or (lower[near[0]] if near else usual)
-    return UnitError(f"'{unit}' is not a unit known here ({', '.join(names)})", f"write {number} {guess}")
+    near = [] if written in _OTHER_UNITS else difflib.get_close_matches(written, lower, n=9, cutoff=0.5)
+    near = [name for name in near if len(name) > 1 or name == written]
+    fix = (
+        f"write {number} {lower[near[0]]}" if near else f"write it in {', '.join(names[:-1])} or {names[-1]}"
+    )
+    return UnitError(f"'{unit}' is not a unit known here ({', '.join(names)})", fix)
