@@ -38,7 +38,7 @@ _MHZ_PER_UNIT = {
     "MHz": Fraction(1),
     "GHz": Fraction(1000),
 }
-_OTHER_UNITS = {"km", "dm", "um", "µm", "μm", "nm", "yd", "mil", "mils", "thou", "pt", "px"}
+_OTHER_UNITS = {"km", "dm", "um", "µm", "μm", "nm", "yd", "mil", "mils", "thou", "thz"}
 _LONGEST_TEXT = 40
 _LARGEST_EXPONENT = 15
 _LARGEST_MM = 1_000_000
@@ -56,7 +56,7 @@ _SAME_CHARACTERS = str.maketrans(
 _DECIMAL = r"(?:[0-9]+\.?[0-9]*|\.[0-9]+)"
 _QUANTITY = re.compile(rf"(?P<number>{_DECIMAL}(?:[eE][+-]?[0-9]+)?) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?")
 _FRACTION = re.compile(
-    r"(?:(?P<whole>[0-9]+)(?: |-| -|- ))?(?P<over>[0-9]+)/(?P<under>[0-9]+) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?"
+    r"(?:(?P<whole>[0-9]+)[ -])?(?P<over>[0-9]+)/(?P<under>[0-9]+) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?"
 )
 _FEET_INCHES = re.compile(r"(?P<feet>[0-9]+) ?(?:ft|foot|feet|'(?!'))[ -]?(?P<inches>[0-9.].*)")
 
@@ -123,7 +123,7 @@ def parse_frequency_mhz(text: str) -> float:
     if unit is None:
         raise UnitError(f"{shown} has no unit", f"write {number} MHz")
     if unit not in _MHZ_PER_UNIT:
-        raise _unknown_unit(unit, number, list(_MHZ_PER_UNIT))
+        raise _unknown_unit(unit, number, list(_MHZ_PER_UNIT), "MHz or GHz")
     value = _decimal(shown, number) * _MHZ_PER_UNIT[unit]
     if sign < 0 or value <= 0 or value > _LARGEST_MHZ:
         raise UnitError(f"{shown} is not a frequency above zero and up to 1000 GHz", "for example 434.2 MHz")
@@ -270,7 +270,7 @@ def _length_unit(
     """The unit in force, by its short name."""
     if unit is not None:
         if unit not in _LENGTH_NAMES:
-            raise _unknown_unit(unit, number, [name for name in _LENGTH_NAMES if name.isalpha()])
+            raise _unknown_unit(unit, number, [name for name in _LENGTH_NAMES if name.isalpha()], "mm or in")
         return _LENGTH_NAMES[unit]
     if default_unit is None:
         raise UnitError(f"{shown} has no unit", f"write {number} {'in' if is_fraction else 'mm'}")
@@ -301,13 +301,11 @@ def _decimal(shown: str, number: str) -> Fraction:
     return Fraction(mantissa) * Fraction(10) ** int(exponent or 0)
 
 
-def _unknown_unit(unit: str, number: str, names: list[str]) -> UnitError:
+def _unknown_unit(unit: str, number: str, names: list[str], usual: str) -> UnitError:
     """The refusal of a unit, with the nearest one that exists; a real unit of another size is no misspelling."""
     written = unit.lower().rstrip(".")
     lower = {name.lower(): name for name in names}
     near = [] if written in _OTHER_UNITS else difflib.get_close_matches(written, lower, n=9, cutoff=0.5)
     near = [name for name in near if len(name) > 1 or name == written]
-    fix = (
-        f"write {number} {lower[near[0]]}" if near else f"write it in {', '.join(names[:-1])} or {names[-1]}"
-    )
+    fix = f"write {number} {lower[near[0]]}" if near else f"write it in {usual}"
     return UnitError(f"'{unit}' is not a unit known here ({', '.join(names)})", fix)
