@@ -1,12 +1,17 @@
-"""What every test shares: the flag that accepts goldens, and one thread per process for linear algebra."""
+"""What every test shares: the flag that accepts goldens, one thread for linear algebra, laws that repeat exactly."""
 
 import os
 from pathlib import Path
 
+import hypothesis
 import pytest
 
 for _threads in ("OMP_NUM_THREADS", "OPENBLAS_NUM_THREADS", "MKL_NUM_THREADS"):
     os.environ.setdefault(_threads, "1")
+
+# The same examples on every machine, and no failure because a shared machine was busy.
+hypothesis.settings.register_profile("repeatable", derandomize=True, deadline=None, database=None)
+hypothesis.settings.load_profile("repeatable")
 
 ROOT = Path(__file__).resolve().parent.parent
 
