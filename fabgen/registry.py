@@ -71,3 +71,29 @@ def summary(path: Path) -> str:
     """First line of a module's docstring, without importing it."""
     docstring = ast.get_docstring(ast.parse(path.read_text(encoding="utf-8"))) or ""
     return docstring.partition("\n")[0]
+
+
+@functools.cache
+def code_page(code: str) -> str | None:
+    """The page of a finding's or problem's code, title line first; None when there is no such code."""
+    if code not in codes():
+        return None
+    return (ROOT / "codes" / f"{code}.md").read_text(encoding="utf-8")
+
+
+def code_title(code: str) -> str:
+    """What a code means, in one line.
+
+    Raises:
+        ProgramError: the code has no page.
+    """
+    page = code_page(code)
+    if page is None:
+        raise ProgramError(f"code {code} has no page in fabgen/codes")
+    return page.partition("\n")[0].strip()
+
+
+@functools.cache
+def codes() -> tuple[str, ...]:
+    """All codes that have a page, in order."""
+    return tuple(sorted(path.stem for path in (ROOT / "codes").glob("*.md")))

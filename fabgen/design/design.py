@@ -96,7 +96,7 @@ class Boom:
 
     @property
     def top_mm(self) -> float:
-        """z of the top face, of the crown when round."""
+        """Height of the top face over the axis, of the crown when round."""
         return self.height_mm / 2
 
     @property

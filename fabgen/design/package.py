@@ -1,0 +1,18 @@
+"""What a package is made of before it is written."""
+
+from dataclasses import dataclass
+
+
+@dataclass(frozen=True, slots=True)
+class PackageFile:
+    """One file of a package.
+
+    Attributes:
+        path: below the package folder, with forward slashes.
+        data: its bytes.
+        purpose: what it is for, one line, for the manifest.
+    """
+
+    path: str
+    data: bytes
+    purpose: str

@@ -1,0 +1,183 @@
+"""A package folder is written beside its place and swapped in by one exchange.
+
+Whatever happens, the folder that a builder opens is the old package or the new one, complete. All of it happens inside
+the output folder, under a lock, so that two runs cannot mix.
+"""
+
+import contextlib
+import ctypes
+import errno
+import hashlib
+import json
+import os
+import shutil
+from collections.abc import Iterator, Sequence
+from pathlib import Path, PurePosixPath
+from typing import Any
+
+from fabgen.design.package import PackageFile
+from fabgen.errors import MachineError, ProgramError
+
+try:
+    import fcntl
+except ImportError:  # pragma: no cover - not on this system
+    fcntl = None  # type: ignore[assignment]
+
+_AT_FDCWD = -100
+_RENAME_EXCHANGE = 2
+
+
+def manifest(
+    files: Sequence[PackageFile],
+    *,
+    number: str,
+    revision: str,
+    design_sha256: str,
+    verdict: str,
+    versions: dict[str, str],
+) -> PackageFile:
+    """The manifest of all `files`; it holds no absolute path and no clock."""
+    content: dict[str, Any] = {
+        "fabgen": versions["fabgen"],
+        "number": number,
+        "revision": revision,
+        "design_sha256": design_sha256,
+        "verdict": verdict,
+        "versions": versions,
+        "files": [
+            {"path": file.path, "sha256": hashlib.sha256(file.data).hexdigest(), "purpose": file.purpose}
+            for file in sorted(files, key=lambda file: file.path)
+        ],
+    }
+    text = json.dumps(content, indent=2, ensure_ascii=False) + "\n"
+    return PackageFile("manifest.json", text.encode("utf-8"), "what is in this package")
+
+
+def write(files: Sequence[PackageFile], *, output: Path, name: str) -> Path:
+    """Write a package folder, complete or not at all.
+
+    Args:
+        files: all files, the manifest among them.
+        output: the output folder; made when missing.
+        name: the package folder's name below it.
+
+    Returns:
+        The package folder.
+
+    Raises:
+        MachineError: the disk or a permission is in the way; nothing has changed then.
+        ProgramError: a name would lead outside the output folder.
+    """
+    if PurePosixPath(name).name != name or name in {"", ".", ".."}:
+        raise ProgramError(f"package name {name!r} is not a plain folder name")
+    try:
+        output.mkdir(parents=True, exist_ok=True)
+        with _locked(output):
+            return _write_locked(files, output, name)
+    except OSError as error:
+        raise MachineError(_say(error, output), _fix(error)) from error
+
+
+def _write_locked(files: Sequence[PackageFile], output: Path, name: str) -> Path:
+    target, fresh, aside = output / name, output / f".{name}.new", output / f".{name}.old"
+    _repair(target, fresh, aside)
+    if target.is_symlink() or (target.exists() and not target.is_dir()):
+        raise MachineError(f"{target} is not a folder", "move it away; a package folder goes there")
+    try:
+        for file in files:
+            _write_file(fresh, file)
+        _sync_folder(fresh)
+        if target.exists():
+            _swap(fresh, target, aside)
+        else:
+            fresh.rename(target)
+        _sync_folder(output)
+    finally:
+        shutil.rmtree(fresh, ignore_errors=True)
+        if target.exists():
+            shutil.rmtree(aside, ignore_errors=True)
+    return target
+
+
+def _repair(target: Path, fresh: Path, aside: Path) -> None:
+    """Finish what a killed run left: an old package set aside goes back when nothing took its place."""
+    if aside.exists() and not target.exists():
+        aside.rename(target)
+    for rest in (fresh, aside):
+        if rest.exists():
+            shutil.rmtree(rest)
+
+
+def _write_file(folder: Path, file: PackageFile) -> None:
+    path = PurePosixPath(file.path)
+    if path.is_absolute() or ".." in path.parts:
+        raise ProgramError(f"file name {file.path!r} leads outside the package")
+    place = folder / path
+    place.parent.mkdir(parents=True, exist_ok=True)
+    with place.open("wb") as out:
+        out.write(file.data)
+        out.flush()
+        os.fsync(out.fileno())
+
+
+def _swap(fresh: Path, target: Path, aside: Path) -> None:
+    """Exchange two folders in one step where the system can; by two renames elsewhere."""
+    if _exchange(fresh, target):
+        return
+    target.rename(aside)
+    fresh.rename(target)
+
+
+def _exchange(first: Path, second: Path) -> bool:
+    try:
+        renameat2 = ctypes.CDLL(None, use_errno=True).renameat2
+    except (OSError, AttributeError, TypeError):
+        return False
+    done = renameat2(
+        ctypes.c_int(_AT_FDCWD), os.fsencode(first), ctypes.c_int(_AT_FDCWD), os.fsencode(second),
+        ctypes.c_uint(_RENAME_EXCHANGE),
+    )  # fmt: skip
+    return bool(done == 0)
+
+
+def _sync_folder(folder: Path) -> None:
+    with contextlib.suppress(OSError):
+        handle = os.open(folder, os.O_RDONLY)
+        try:
+            os.fsync(handle)
+        finally:
+            os.close(handle)
+
+
+@contextlib.contextmanager
+def _locked(output: Path) -> Iterator[None]:
+    """Hold the output folder; a second run waits."""
+    if fcntl is None:
+        yield
+        return
+    with (output / ".fabgen.lock").open("w") as lock:
+        fcntl.flock(lock, fcntl.LOCK_EX)
+        yield
+
+
+def _say(error: OSError, output: Path) -> str:
+    place = error.filename or output
+    reason = {
+        errno.ENOSPC: "the disk is full",
+        errno.EDQUOT: "the disk quota is used up",
+        errno.EACCES: "no permission to write there",
+        errno.EPERM: "no permission to write there",
+        errno.EROFS: "the disk is read-only",
+        errno.EEXIST: "a file stands where the folder should be",
+        errno.ENOTDIR: "a file stands where the folder should be",
+        errno.ENAMETOOLONG: "the name is too long for this disk",
+    }.get(error.errno or 0, error.strerror or "it failed")
+    return f"cannot write {place}: {reason}"
+
+
+def _fix(error: OSError) -> str:
+    return {
+        errno.ENOSPC: "free some space; nothing was changed",
+        errno.EEXIST: "move that file away or name another folder with --output",
+        errno.ENOTDIR: "move that file away or name another folder with --output",
+    }.get(error.errno or 0, "name another folder with --output; nothing was changed")
