@@ -302,7 +302,7 @@ def _decimal(shown: str, number: str) -> Fraction:
 
 
 def _unknown_unit(unit: str, number: str, names: list[str], usual: str) -> UnitError:
-    """The refusal of a unit, with the nearest one that exists; a real unit of another size is no misspelling."""
+    """The refusal of a unit, with the nearest that exists; a real unit of another size is no misspelling."""
     written = unit.lower().rstrip(".")
     lower = {name.lower(): name for name in names}
     near = [] if written in _OTHER_UNITS else difflib.get_close_matches(written, lower, n=9, cutoff=0.5)

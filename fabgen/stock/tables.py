@@ -1,0 +1,75 @@
+"""All look-ups in one place: materials, drills, fasteners, tolerances, paper and shop practice.
+
+Each table is a CSV file in `data/`, read when it is first asked for; the last column of every row is its source.
+`SOURCES.md` lists the standards and the traps in copies of them.
+"""
+
+from fabgen.stock.drills import Drill, DrillSeries, drill_of_size, drills, nearest_drill, smallest_drill_at_least
+from fabgen.stock.fasteners import (
+    HeadKind,
+    Nut,
+    ScrewHead,
+    Thread,
+    Washer,
+    clearance_hole_mm,
+    nut,
+    screw_head,
+    tap_drill_mm,
+    thread,
+    thread_names,
+    washer,
+)
+from fabgen.stock.materials import Material, galvanic_difference_cv, galvanic_limit_cv, material, material_names
+from fabgen.stock.practice import (
+    Paper,
+    TitleField,
+    edge_distance_factor,
+    paper,
+    paper_size_mm,
+    print_practice,
+    process_range,
+    stock_lengths_mm,
+    title_fields,
+)
+from fabgen.stock.read_csv import UnknownStockError
+from fabgen.stock.tolerances import NoToleranceError, ToleranceClass, it_grade_mm, linear_tolerance_mm
+
+__all__ = [
+    "Drill",
+    "DrillSeries",
+    "HeadKind",
+    "Material",
+    "NoToleranceError",
+    "Nut",
+    "Paper",
+    "ScrewHead",
+    "Thread",
+    "TitleField",
+    "ToleranceClass",
+    "UnknownStockError",
+    "Washer",
+    "clearance_hole_mm",
+    "drill_of_size",
+    "drills",
+    "edge_distance_factor",
+    "galvanic_difference_cv",
+    "galvanic_limit_cv",
+    "it_grade_mm",
+    "linear_tolerance_mm",
+    "material",
+    "material_names",
+    "nearest_drill",
+    "nut",
+    "paper",
+    "paper_size_mm",
+    "print_practice",
+    "process_range",
+    "screw_head",
+    "smallest_drill_at_least",
+    "stock_lengths_mm",
+    "tap_drill_mm",
+    "thread",
+    "thread_names",
+    "title_fields",
+    "washer",
+]
