@@ -37,6 +37,7 @@ DIMENSIONLESS = {
     "cosine": "length over length",
     "sine": "length over length",
     "efficiency": "power over power",
+    "tangent": "length over length",
     "relative": "a part of the value it qualifies",
     "measured": "a finding's own field `unit` says it",
     "required": "a finding's own field `unit` says it",
@@ -54,7 +55,8 @@ def is_float(annotation: ast.expr | None) -> bool:
         case ast.Name(id="float"):
             return True
         case ast.BinOp(left=left, right=right):
-            return is_float(left) or is_float(right)
+            kinds = [side for side in (left, right) if not isinstance(side, ast.Constant)]
+            return all(is_float(kind) for kind in kinds)
         case ast.Subscript(value=ast.Name(id="Callable")):
             return False
         case ast.Subscript(value=ast.Name(id=("dict" | "Mapping")), slice=ast.Tuple(elts=[_, value])):
