@@ -55,9 +55,7 @@ _SAME_CHARACTERS = str.maketrans(
 
 _DECIMAL = r"(?:[0-9]+\.?[0-9]*|\.[0-9]+)"
 _QUANTITY = re.compile(rf"(?P<number>{_DECIMAL}(?:[eE][+-]?[0-9]+)?) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?")
-_FRACTION = re.compile(
-    r"(?:(?P<whole>[0-9]+)[ -])?(?P<over>[0-9]+)/(?P<under>[0-9]+) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?"
-)
+_FRACTION = re.compile(r"(?:(?P<whole>[0-9]+)[ -])?(?P<over>[0-9]+)/(?P<under>[0-9]+) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?")
 _FEET_INCHES = re.compile(r"(?P<feet>[0-9]+) ?(?:ft|foot|feet|'(?!'))[ -]?(?P<inches>[0-9.].*)")
 
 
@@ -264,9 +262,7 @@ def _one_length(shown: str, plain: str, default_unit: str | None) -> Fraction:
     return value * _MM_PER_UNIT[unit]
 
 
-def _length_unit(
-    shown: str, number: str, unit: str | None, default_unit: str | None, is_fraction: bool
-) -> str:
+def _length_unit(shown: str, number: str, unit: str | None, default_unit: str | None, is_fraction: bool) -> str:
     """The unit in force, by its short name."""
     if unit is not None:
         if unit not in _LENGTH_NAMES:
@@ -275,9 +271,7 @@ def _length_unit(
     if default_unit is None:
         raise UnitError(f"{shown} has no unit", f"write {number} {'in' if is_fraction else 'mm'}")
     if is_fraction and default_unit not in ("in", "ft"):
-        raise UnitError(
-            f"{shown} is a fraction without a unit, unlikely in {default_unit}", f"write {number} in"
-        )
+        raise UnitError(f"{shown} is a fraction without a unit, unlikely in {default_unit}", f"write {number} in")
     return default_unit
 
 

@@ -57,7 +57,7 @@ def round_section(*, diameter_mm: float, wall_mm: float = 0.0) -> SectionPropert
 def rectangular_section(
     *, width_mm: float, height_mm: float, wall_mm: float = 0.0, corner_radius_mm: float = 0.0
 ) -> SectionProperties:
-    """A rectangular or square bar, or a tube when it has a wall; the inner corner radius is outer less wall, at least 0.
+    """A rectangular or square bar, or a tube when it has a wall; inner corner radius: outer less wall, at least 0.
 
     Args:
         width_mm: outside along y in mm.
@@ -126,7 +126,7 @@ def drilled_rectangular_section(
     i_near = (deep - bore) * hole_mm**3 / 12
     i_far = hole_mm * (deep**3 - bore**3) / 12
     i_y, i_z = (i_near, i_far) if along == "y" else (i_far, i_near)
-    return _less(full, area, i_y, i_z, width_mm, height_mm)
+    return _less(full, (area, i_y, i_z), width_mm, height_mm)
 
 
 def drilled_round_section(*, diameter_mm: float, wall_mm: float = 0.0, hole_mm: float) -> SectionProperties:
@@ -146,14 +146,16 @@ def drilled_round_section(*, diameter_mm: float, wall_mm: float = 0.0, hole_mm: 
         raise ValueError("the hole is as wide as the bar or its bore")
     outer, inner = _strip(diameter_mm / 2, hole_mm / 2), _strip(bore_mm / 2, hole_mm / 2)
     area, i_y, i_z = (o - i for o, i in zip(outer, inner, strict=True))
-    return _less(full, area, i_y, i_z, diameter_mm, diameter_mm)
+    return _less(full, (area, i_y, i_z), diameter_mm, diameter_mm)
 
 
 def _less(
-    full: SectionProperties, area: float, i_y: float, i_z: float, width_mm: float, height_mm: float
+    full: SectionProperties, removed: tuple[float, float, float], width_mm: float, height_mm: float
 ) -> SectionProperties:
+    area, i_y, i_z = removed
     rest_y, rest_z = full.i_about_y_mm4 - i_y, full.i_about_z_mm4 - i_z
-    return SectionProperties(full.area_mm2 - area, rest_y, rest_z, rest_y / (height_mm / 2), rest_z / (width_mm / 2))
+    w_y, w_z = rest_y / (height_mm / 2), rest_z / (width_mm / 2)
+    return SectionProperties(full.area_mm2 - area, rest_y, rest_z, w_y, w_z)
 
 
 def _strip(radius: float, half: float) -> tuple[float, float, float]:
