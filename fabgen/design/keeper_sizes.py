@@ -180,7 +180,7 @@ def snap_keeper_size(
     mouth_mm: float | None = None,
     hole_growth_mm: float = 0.0,
 ) -> SnapKeeperSize:
-    """Sizes of a snap keeper: bore rod − 0.2, outside rod + 3.2 (thin rods 1.8 × rod), mouth 0.91 × rod (common practice).
+    """Sizes of a snap keeper: bore rod − 0.2, outside rod + 3.2 (thin rods 1.8 × rod), mouth 0.91 × rod.
 
     Raises:
         ValueError: no wall left, or a mouth that does not hold the rod.

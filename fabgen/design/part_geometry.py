@@ -112,3 +112,10 @@ def segment_mm2(radius_mm: float, distance_mm: float) -> float:
         return 0.0
     chord = math.sqrt(radius_mm**2 - distance_mm**2)
     return radius_mm**2 * math.acos(distance_mm / radius_mm) - distance_mm * chord
+
+
+def teardrop_chord_mm(diameter_mm: float, offset_mm: float) -> float:
+    """Length of a teardrop along its apex's direction, at a distance from its axis of symmetry."""
+    radius, offset = diameter_mm / 2, abs(offset_mm)
+    arc = math.sqrt(max(0.0, radius**2 - offset**2))
+    return arc + (math.sqrt(2) * radius - offset if offset < math.sqrt(0.5) * radius else arc)

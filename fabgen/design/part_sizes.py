@@ -6,6 +6,8 @@ the part's local frame and the volume of its solid; the solids take their number
 
 from fabgen.design.bush_sizes import BushSize, bush_size, sleeve_size
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
+from fabgen.design.folded_rod_sizes import FoldedRodSize, folded_rod_size
+from fabgen.design.folded_saddle_sizes import FoldedSaddleSize, folded_saddle_size
 from fabgen.design.hardware_sizes import (
     ClampPlateSize,
     NutSize,
@@ -28,6 +30,8 @@ __all__ = [
     "BushSize",
     "ClampPlateSize",
     "FeedBlockSize",
+    "FoldedRodSize",
+    "FoldedSaddleSize",
     "NutSize",
     "PushRingSize",
     "RodSize",
@@ -40,6 +44,8 @@ __all__ = [
     "clamp_plate_size",
     "crush_sleeve_size",
     "feed_block_size",
+    "folded_rod_size",
+    "folded_saddle_size",
     "nut_size",
     "push_ring_size",
     "rod_size",

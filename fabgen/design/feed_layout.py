@@ -1,0 +1,287 @@
+"""Where everything is in the straight dipole's feed block and its lid.
+
+Frame of both: origin on the boom's top (round: its crown) under the rod; x along the boom, y along the rods, z up. The
+half rods enter from ±y through the side walls, lie in troughs of the chamber's floor and end at a rib as wide as the
+gap. A terminal screw crosses each of them from above, its nut in a trap under the floor. The cable comes up beside the
+boom at +y and is gripped by a wedge on the lid; water leaves by a drain at −y. Two screws hold the block on the boom's
+top.
+"""
+
+import math
+from dataclasses import dataclass
+
+from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
+from fabgen.design.part_geometry import hexagon_corners_mm
+from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, ENGAGEMENT_MM
+from fabgen.stock.fasteners import tap_drill_mm
+
+TERMINALS = ("M2", "M2.5", "M3", "M4", "M5")
+WALL_X_MM = 2.4
+WALL_Y_MM = 3.0
+RIM_MM = 1.2
+LID_MM = 3.0
+LID_PLAY_MM = 0.3
+POST_MM = 6.5
+PILOT_DEPTH_MM = 11.0
+LID_SCREW_LENGTH_MM = 12.0
+TAG_MM = 0.8
+NUT_PLAY_MM = 0.25
+BEYOND_NUT_MM = 0.4
+LEAST_UNDER_ROD_MM = 2.5
+MEMBRANE_MM = 0.3
+LAND_MM = 1.4
+GRIP = 0.85
+TONGUE_MM = 3.0
+TONGUE_PLAY_MM = 0.2
+TONGUE_REACH_MM = 10.0
+TOOTH_MM = 0.5
+TIP_MM = (1.2, 4.0)
+DRAIN_MM = 4.0
+BESIDE_BOOM_MM = 0.8
+CRADLE_DEG = 60.0
+
+
+@dataclass(frozen=True, slots=True)
+class FeedBlockLayout:
+    """One feed block with its lid.
+
+    Attributes:
+        gap_mm: between the half rods' ends; the rib's width.
+        height_mm: from the boom's top to the rods' axis, also the chamber's floor.
+        cable_mm: outside diameter of the cable.
+        screw: thread of the two hold-down screws.
+        terminal: thread of the two terminal screws.
+        lid_screw: thread of the four lid screws, formed in the plastic.
+        hole_growth_mm: added to the drawn bores.
+    """
+
+    rod_diameter_mm: float
+    gap_mm: float
+    height_mm: float
+    cable_mm: float
+    boom_width_mm: float
+    boom_diameter_mm: float
+    bore_mm: float
+    screw: str
+    terminal: str
+    lid_screw: str
+    hole_growth_mm: float
+
+    @property
+    def drawn_bore_mm(self) -> float:
+        """Rod bore of the solid."""
+        return self.bore_mm + self.hole_growth_mm
+
+    def drawn_mm(self, hole_mm: float) -> float:
+        """What a printed hole is drawn as."""
+        return hole_mm + self.hole_growth_mm
+
+    # Terminals.
+
+    @property
+    def terminal_fastener(self) -> Fastener:
+        """The terminal screw's sizes."""
+        return fastener(self.terminal)
+
+    @property
+    def rod_hole_mm(self) -> float:
+        """Hole drilled across each half rod: ISO 273 fine."""
+        return self.terminal_fastener.clearance_fine_mm
+
+    @property
+    def rod_hole_from_end_mm(self) -> float:
+        """From a half rod's inner end to the middle of that hole."""
+        return max(2 * self.rod_hole_mm, 3.5)
+
+    @property
+    def terminal_y_mm(self) -> float:
+        """±y of the terminal screws."""
+        return self.gap_mm / 2 + self.rod_hole_from_end_mm
+
+    @property
+    def terminal_head_mm(self) -> float:
+        """Level under the terminal screw's head, a solder tag below it on the rod."""
+        return self.height_mm + self.rod_diameter_mm / 2 + TAG_MM
+
+    @property
+    def terminal_length_mm(self) -> float:
+        """Screw length to buy: the shortest that leaves enough plastic between rod and nut."""
+        bolt = self.terminal_fastener
+        least = self.rod_diameter_mm + TAG_MM + LEAST_UNDER_ROD_MM + bolt.nut_height_mm + BEYOND_NUT_MM
+        return next(length for length in SCREW_LENGTHS_MM if length >= least)
+
+    @property
+    def trap_top_mm(self) -> float:
+        """Level of the nut's seat: the trap is open below it."""
+        tip = self.terminal_head_mm - self.terminal_length_mm
+        return tip + BEYOND_NUT_MM + self.terminal_fastener.nut_height_mm
+
+    @property
+    def trap_flats_mm(self) -> float:
+        """Nut trap across flats, flats towards ±y."""
+        return self.terminal_fastener.nut_across_flats_mm + NUT_PLAY_MM
+
+    # Rib and hold-down screws.
+
+    @property
+    def rib_half_mm(self) -> float:
+        """Half the rib's length along the boom."""
+        return self.drawn_bore_mm / 2 + 1.5
+
+    @property
+    def rib_top_mm(self) -> float:
+        """Level of the rib's top, above the rods."""
+        return self.height_mm + self.rod_diameter_mm / 2 + 1.0
+
+    @property
+    def fastener(self) -> Fastener:
+        """The hold-down screw's sizes."""
+        return fastener(self.screw)
+
+    @property
+    def counterbore_mm(self) -> float:
+        """Drawn diameter of the hole for a hold-down head."""
+        return self.drawn_mm(self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM)
+
+    @property
+    def screw_x_mm(self) -> tuple[float, float]:
+        """Where along x the two hold-down screws stand, on the centre line of the boom's top."""
+        offset = self.rib_half_mm + 0.6 + self.counterbore_mm / 2
+        return -offset, offset
+
+    @property
+    def screw_length_mm(self) -> float:
+        """Hold-down length to buy: the longest whose head stays below the floor."""
+        most = self.height_mm - self.fastener.head_height_mm + ENGAGEMENT_MM
+        return max((length for length in SCREW_LENGTHS_MM if length <= most), default=0.0)
+
+    @property
+    def seat_mm(self) -> float:
+        """Level of a hold-down head's seat."""
+        return self.screw_length_mm - ENGAGEMENT_MM
+
+    # Cable.
+
+    @property
+    def slot_x_mm(self) -> tuple[float, float]:
+        """The cable slot along the boom."""
+        trap = hexagon_corners_mm(self.trap_flats_mm)
+        low = max(self.drawn_bore_mm, trap) / 2 + LAND_MM
+        return low, low + self.cable_mm + 2 * TONGUE_PLAY_MM
+
+    @property
+    def slot_y_mm(self) -> tuple[float, float]:
+        """The cable slot along the rods: squeezed cable inboard, wedge outboard."""
+        low = max(self.boom_width_mm / 2 + BESIDE_BOOM_MM, self.counterbore_mm / 2 + LAND_MM)
+        return low, low + self.grip_mm + TONGUE_MM + TONGUE_PLAY_MM
+
+    @property
+    def grip_mm(self) -> float:
+        """What the wedge leaves of the cable's diameter."""
+        return GRIP * self.cable_mm
+
+    @property
+    def cable_at_mm(self) -> tuple[float, float]:
+        """x, y of the cable's axis, going down beside the boom."""
+        return sum(self.slot_x_mm) / 2, self.slot_y_mm[0] + self.cable_mm / 2
+
+    @property
+    def drain_at_mm(self) -> tuple[float, float]:
+        """x, y of the drain."""
+        return -self.cable_at_mm[0], -(self.slot_y_mm[0] + self.drawn_mm(DRAIN_MM) / 2)
+
+    @property
+    def tongue_y_mm(self) -> tuple[float, float]:
+        """The lid's wedge along the rods: it stands between the squeezed cable and the slot's outer wall."""
+        low = self.slot_y_mm[0] + self.grip_mm
+        return low, low + TONGUE_MM
+
+    @property
+    def tongue_low_mm(self) -> float:
+        """Level of the wedge's tip."""
+        return max(self.height_mm - TONGUE_REACH_MM, self.bottom_mm + 2.0)
+
+    @property
+    def tooth_z_mm(self) -> tuple[float, ...]:
+        """Levels of the ridges that bite into the cable."""
+        return tuple(self.height_mm - 1.0 - 2.0 * i for i in range(2))
+
+    # Outside, chamber, lid.
+
+    @property
+    def half_x_mm(self) -> float:
+        """Half the block's length along the boom."""
+        return max(self.slot_x_mm[1] + POST_MM, self.screw_x_mm[1] + self.counterbore_mm / 2 + 0.5 + WALL_X_MM)
+
+    @property
+    def half_y_mm(self) -> float:
+        """Half the block's width along the rods."""
+        return max(self.slot_y_mm[1], self.terminal_y_mm + 3.5) + WALL_Y_MM
+
+    @property
+    def chamber_mm(self) -> tuple[float, float]:
+        """Half the chamber in x and y."""
+        return self.half_x_mm - WALL_X_MM, self.half_y_mm - WALL_Y_MM
+
+    @property
+    def lid_seat_mm(self) -> float:
+        """Level of the rabbet's floor: the lid's underside."""
+        head = self.rod_diameter_mm / 2 + TAG_MM + self.terminal_fastener.head_height_mm + 2.0
+        return self.height_mm + max(8.0, head)
+
+    @property
+    def top_mm(self) -> float:
+        """Level of the top, flush with the lid."""
+        return self.lid_seat_mm + LID_MM
+
+    @property
+    def rabbet_mm(self) -> tuple[float, float]:
+        """Half the rabbet in x and y."""
+        return self.half_x_mm - RIM_MM, self.half_y_mm - RIM_MM
+
+    @property
+    def lid_mm(self) -> tuple[float, float]:
+        """Half the lid in x and y."""
+        return self.rabbet_mm[0] - LID_PLAY_MM / 2, self.rabbet_mm[1] - LID_PLAY_MM / 2
+
+    @property
+    def pilot_mm(self) -> float:
+        """Drawn diameter of the holes in which the lid's screws form their thread."""
+        return self.drawn_mm(tap_drill_mm(self.lid_screw))
+
+    @property
+    def post_mm(self) -> tuple[float, float]:
+        """±x, ±y of the four lid screws."""
+        return self.half_x_mm - POST_MM / 2, self.half_y_mm - POST_MM / 2
+
+    # Foot.
+
+    @property
+    def foot_drop_mm(self) -> float:
+        """How far the cradle reaches below a round boom's crown; 0 on a flat top."""
+        return self.boom_diameter_mm / 2 * (1 - math.cos(math.radians(CRADLE_DEG)))
+
+    @property
+    def bottom_mm(self) -> float:
+        """Level of the underside."""
+        return 0.0 - self.foot_drop_mm
+
+    @property
+    def roof_mm(self) -> float:
+        """Level of the cradle's roof over a round boom: the boom's circle closed by tangents at 45°, or cut flat."""
+        apex = (math.sqrt(2) - 1) * self.boom_diameter_mm / 2
+        return min(apex, self.seat_mm - 3.0) if self.boom_diameter_mm else 0.0
+
+    def underside_mm(self, y_mm: float) -> float:
+        """Level of the underside at a distance y across: the cradle carries the boom between 45° and 60°."""
+        radius, y = self.boom_diameter_mm / 2, abs(y_mm)
+        if y >= radius * math.sin(math.radians(CRADLE_DEG)):
+            return self.bottom_mm
+        if y > radius * math.sqrt(0.5):
+            return math.sqrt(radius**2 - y**2) - radius
+        return min(self.roof_mm, (math.sqrt(2) - 1) * radius - y)
+
+    @property
+    def length_mm(self) -> float:
+        """Footprint along the boom."""
+        return 2 * self.half_x_mm
