@@ -56,7 +56,7 @@ def largest_push_ring_outside_mm(*, rod_mm: float, bore_mm: float, strain_limit:
         strain_limit: 0.02 for 2 %.
 
     Returns:
-        Outside diameter in mm: `math.inf` when any thickness will do, the bore itself when none will.
+        Outside diameter in mm; `math.inf` when any thickness will do.
 
     Raises:
         ValueError: the bore is not between zero and the rod.
@@ -67,8 +67,6 @@ def largest_push_ring_outside_mm(*, rod_mm: float, bore_mm: float, strain_limit:
         return math.inf
     opening = (rod_mm - bore_mm) / 2
     neutral = opening * (1 + strain_limit) * bore_mm / (rod_mm - (1 + strain_limit) * bore_mm)
-    if neutral <= bore_mm / 2:
-        return bore_mm
     low, high = bore_mm, 2 * bore_mm
     while neutral_radius_mm(bore_mm, high) < neutral:
         high *= 2
