@@ -18,11 +18,11 @@ from itertools import pairwise
 
 import numpy as np
 
-from fabgen.physics.array_loss import rod_loss
+from fabgen.physics.array_loss import RodLoss, impedance_matrix, rod_loss
 from fabgen.physics.array_matrix import (
     ETA_OHM,
+    Bases,
     bases,
-    impedance_matrix,
     mutual_and_self,
 )
 from fabgen.physics.blas_threads import one_blas_thread
@@ -263,22 +263,41 @@ def solve_array(array: RodArray, frequency_mhz: float, *, segments: int = 4) -> 
     basis = bases(array.length_mm, array.diameter_mm, k_per_mm, segments)
     potentials = mutual_and_self(basis, array.station_mm, array.diameter_mm, k_per_mm)
     loss = rod_loss(basis, array.diameter_mm, k_per_mm, frequency_mhz, array.conductivity_s_per_m)
-    matrix = impedance_matrix(basis, potentials, None if loss is None else loss.value_ohm)
+    matrix = impedance_matrix(basis, potentials, loss)
     drive = np.zeros(matrix.shape[0], dtype=np.complex128)
     drive[array.fed_index * segments] = 1.0
     with one_blas_thread():
-        current = np.asarray(np.linalg.solve(matrix, drive), dtype=np.complex128).reshape(array.count, segments)
+        current = np.asarray(np.linalg.solve(matrix, drive), dtype=np.complex128)
+    return solution_from_current(array, frequency_mhz, basis, loss, current)
+
+
+def solution_from_current(
+    array: RodArray, frequency_mhz: float, basis: Bases, loss: RodLoss | None, current: ComplexArray
+) -> ArraySolution:
+    """The solution that currents at 1 V belong to.
+
+    Args:
+        array: the rods.
+        frequency_mhz: frequency.
+        basis: their basis functions.
+        loss: their surface loss.
+        current: currents, rods by bases or flat.
+
+    Returns:
+        the solution.
+    """
+    by_rod = current.reshape(array.count, basis.segments)
     lost = 0.0
     if loss is not None:
-        lost_ohm = np.einsum("im,imn,in->", current.conj(), loss.value_ohm.real, current).real
-        lost = float(lost_ohm / current[array.fed_index, 0].real)
+        dissipated = np.einsum("im,imn,in->", by_rod.conj(), loss.value_ohm.real, by_rod).real
+        lost = float(dissipated / by_rod[array.fed_index, 0].real)
     return ArraySolution(
         array=array,
         frequency_mhz=frequency_mhz,
-        current_a=current,
-        moment_a=np.einsum("in,in->i", current, basis.moment),
+        current_a=by_rod,
+        moment_a=np.einsum("in,in->i", by_rod, basis.moment),
         lost_fraction=lost,
-        segments=segments,
+        segments=basis.segments,
     )
 
 

@@ -11,7 +11,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from fabgen.physics.array_matrix import Bases
+from fabgen.physics.array_matrix import IMPEDANCE_FACTOR_OHM, Bases, project
 from fabgen.physics.thin_rod_kernel import NODES, ComplexArray, FloatArray
 
 MU_0_H_PER_M = 4e-7 * math.pi
@@ -78,3 +78,22 @@ def rod_loss(
         to_half_length_ohm=per_k_length_ohm * _tridiagonal(own_slope, cross_slope),
         to_radius_ohm=-value / k_radius[:, None, None],
     )
+
+
+def impedance_matrix(basis: Bases, potentials: ComplexArray, loss: RodLoss | None) -> ComplexArray:
+    """Impedance matrix over rods and bases.
+
+    Args:
+        basis: the bases.
+        potentials: node potentials.
+        loss: surface loss of the rods, None for perfect conductors.
+
+    Returns:
+        symmetric matrix in ohm.
+    """
+    matrix = IMPEDANCE_FACTOR_OHM * project(basis.jump, potentials, basis.jump)
+    if loss is not None:
+        count, segments = basis.kh.size, basis.segments
+        rod = np.arange(count)
+        matrix.reshape(count, segments, count, segments)[rod, :, rod, :] += loss.value_ohm
+    return matrix

@@ -109,8 +109,23 @@ class Bases:
 
     @property
     def moment(self) -> FloatArray:
-        """Rods by bases: k/2 times the integral of the basis function, the broadside response."""
-        return np.asarray(self.jump.sum(axis=2))
+        """Rods by bases: the broadside response, see `broadside_moment`."""
+        return broadside_moment(self.kh, self.segments)
+
+
+def broadside_moment(kh: FloatArray, segments: int) -> FloatArray:
+    """Response of each basis function to a field broadside to the rod: k/2 times its integral.
+
+    Args:
+        kh: half lengths with the end extension, times the wavenumber; any shape.
+        segments: bases per rod.
+
+    Returns:
+        the shape of `kh` with the bases as a last axis.
+    """
+    flank = np.tan(0.5 * kh[..., None] * np.diff(NODES[segments]))
+    flank[..., 1:] += flank[..., :-1].copy()
+    return np.asarray(flank)
 
 
 def bases(length_mm: Sequence[float], diameter_mm: Sequence[float], k_per_mm: float, segments: int) -> Bases:
@@ -152,8 +167,9 @@ class NodePotentials:
 
     Args:
         value: k {W(z_p - z'_q) + W(z_p + z'_q)}.
-        to_half_length: derivative to kh of rod i (on one rod: to its kh altogether).
-        to_station: derivative to k times the station of rod i.
+        to_half_length: derivative to kh of rod i; on one rod half of it, so that D X + (D X)^T is the whole change
+            for the diagonal matrix D of the changes of kh.
+        to_station: derivative to k times the station of rod i; D X + (D X)^T likewise.
         to_radius: rods by nodes by nodes: derivative of the self term to k times the radius.
     """
 
@@ -252,9 +268,8 @@ def mutual_and_self_with_slopes(
     to_half[j, :, i, :] = (column * (at_plus - at_minus)).transpose(0, 2, 1)
     own_slope = both.slope_z[split:].reshape(own_z.shape) @ weight
     rod = np.arange(count)
-    to_half[rod, :, rod, :] = (row - column) * own_slope[:, own.minus] * own.minus_sign + (row + column) * own_slope[
-        :, own.plus
-    ]
+    from_minus = (row - column) * own.minus_sign * own_slope[:, own.minus]
+    to_half[rod, :, rod, :] = 0.5 * (from_minus + (row + column) * own_slope[:, own.plus])
 
     ahead = np.sign(np.asarray(station_mm)[i] - np.asarray(station_mm)[j])[:, None]
     rho_slope = both.slope_rho[:split].reshape(shape) * ahead
@@ -287,22 +302,3 @@ def project(left: FloatArray, between: ComplexArray, right: FloatArray) -> Compl
     half = half.reshape(count * size_left, count, nodes).transpose(1, 2, 0)
     full = right.astype(np.complex128) @ half
     return np.asarray(full.reshape(-1, count * size_left).T)
-
-
-def impedance_matrix(basis: Bases, potentials: ComplexArray, loss: ComplexArray | None) -> ComplexArray:
-    """Impedance matrix over rods and bases.
-
-    Args:
-        basis: the bases.
-        potentials: node potentials.
-        loss: surface loss of each rod, rods by bases by bases, or None.
-
-    Returns:
-        symmetric matrix in ohm.
-    """
-    matrix = IMPEDANCE_FACTOR_OHM * project(basis.jump, potentials, basis.jump)
-    if loss is not None:
-        rod = np.arange(loss.shape[0])
-        blocks = matrix.reshape(loss.shape[0], basis.segments, loss.shape[0], basis.segments)
-        blocks[rod, :, rod, :] += loss
-    return matrix

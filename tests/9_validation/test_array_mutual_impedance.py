@@ -9,7 +9,8 @@ import math
 import pytest
 
 from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, solve_array
-from fabgen.physics.array_matrix import bases, impedance_matrix, mutual_and_self
+from fabgen.physics.array_loss import impedance_matrix
+from fabgen.physics.array_matrix import bases, mutual_and_self
 
 WAVELENGTH_MM = 1000.0
 THIN_MM = 1e-6
