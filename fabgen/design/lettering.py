@@ -37,9 +37,11 @@ _ADVANCE = {
     **{chr(160 + i): width for i, width in enumerate(_LATIN_1)},
     **_OTHERS,
 }
-_LEVEL = frozenset(" !\"#%&'*+-.0123456789:<=>?ABCDEFGHIKLMNOPRSTUVWXYZ^abcdefhiklmnorstuvwxz|~°±²³×–—−←↑→↓…″′≤≥≈λπΩΔ")
-"""Characters that stay above the baseline and, within a twentieth, below a capital's top."""
-_DEEP_H, _TALL_H, _LEVEL_H = 0.35, 1.3, 1.06
+_LEVEL = frozenset(" !\"#%&'*+-.0123456789:<=>?ABCDEFGHIKLMNOPRSTUVWXYZ^abcdefhiklmnorstuvwxz~°±²³×–—−←↑→↓…″′≤≥≈λπΩΔ")
+"""Characters that stay, within a twentieth of a capital's height, between baseline and a capital's top."""
+_DEEP = frozenset("$(),/;@JQ[]\\_gjpqy{|}")
+"""Characters of usual height that reach below the baseline."""
+_DEEP_H, _TALL_H, _LEVEL_H, _ROUND_H = 0.35, 1.31, 1.06, 0.05
 
 
 def text_width_mm(text: str, height_mm: float) -> float:
@@ -65,9 +67,8 @@ def text_corners(text: Text) -> tuple[Point, Point, Point, Point]:
     """
     width = text_width_mm(text.text, text.height_mm)
     left = {"start": 0.0, "middle": -width / 2, "end": -width}[text.anchor]
-    level = _LEVEL.issuperset(text.text)
-    low = -text.height_mm * (0.02 if level else _DEEP_H)
-    high = text.height_mm * (_LEVEL_H if level else _TALL_H)
+    low = -text.height_mm * (_ROUND_H if _LEVEL.issuperset(text.text) else _DEEP_H)
+    high = text.height_mm * (_LEVEL_H if (_LEVEL | _DEEP).issuperset(text.text) else _TALL_H)
     angle = math.radians(text.angle_deg)
     c, s = math.cos(angle), math.sin(angle)
 

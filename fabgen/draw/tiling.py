@@ -1,0 +1,301 @@
+"""Cut a long sheet into pages of the shop's paper at exactly 1:1.
+
+Every page carries absolute stations along both of its long edges and a 100 mm bar each way, so that it is placed by
+tape and errors never add up from page to page. Neighbours overlap; at each overlap both pages print the same join line
+with the same target marks, at a station that is a round number. Frame of a page: origin lower left, x right, y up, mm.
+"""
+
+import math
+from collections.abc import Sequence
+from dataclasses import dataclass, replace
+
+from fabgen.design.drawing import Box, Circle, Item, Line, Sheet, Text, moved
+from fabgen.design.lettering import shortened, text_box, text_width_mm
+from fabgen.design.overlaps import bounds, hits
+from fabgen.design.pen import LETTERING_MM, Pen
+from fabgen.draw.clipping import clipped, contains
+from fabgen.draw.stamp import stamped
+
+_GUTTER_MM, _FOOT_MM, _HEAD_MM = 9.0, 16.5, 10.0
+_STEP_MM = 10.0
+_DETOUR_MM = 40.0
+_LABEL_STEP = 5
+_LABEL_ROOM_MM = 14.0
+_TARGET_MM = 2.0
+
+
+@dataclass(frozen=True, slots=True)
+class Tiling:
+    """A sheet cut into pages.
+
+    Attributes:
+        pages: row by row from the top, each from left to right.
+        rows, columns: how they lie.
+        dropped: lettering that fits on no page whole and found no free place; empty on a sheet drawn with care.
+    """
+
+    pages: tuple[Sheet, ...]
+    rows: int
+    columns: int
+    dropped: tuple[Text, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class _Plan:
+    """Where a sheet is cut on one orientation of the paper: joins and windows on the sheet, room on the page."""
+
+    paper_mm: tuple[float, float]
+    margin_mm: float
+    joins_x: tuple[float, ...]
+    joins_y: tuple[float, ...]
+    columns: tuple[tuple[float, float], ...]
+    rows: tuple[tuple[float, float], ...]
+    lost: int
+
+    @property
+    def room(self) -> Box:
+        """The part of the page for the drawing."""
+        width, height = self.paper_mm
+        m = self.margin_mm
+        return (m + _GUTTER_MM, m + _FOOT_MM, width - m, height - m - _HEAD_MM)
+
+
+def tile(
+    sheet: Sheet,
+    paper_mm: tuple[float, float],
+    *,
+    number: str,
+    revision: str,
+    overlap_mm: float = 10.0,
+    margin_mm: float = 10.0,
+) -> Tiling:
+    """Cut a sheet into pages, upright or across, whichever takes fewer.
+
+    Args:
+        sheet: the drawing at 1:1; `station_at_x0_mm` gives the stations, without it pages carry none.
+        paper_mm: width and height of the paper, in either order.
+        number: drawing number for the foot.
+        revision: for the foot.
+        overlap_mm: least width that neighbours share, centred on the join.
+        margin_mm: edge of the paper that no printer has to reach.
+
+    Returns:
+        The pages; a sheet that fits on one page comes back as one page without joins.
+    """
+    plans = [
+        _plan(sheet, size, overlap_mm, margin_mm)
+        for size in ((max(paper_mm), min(paper_mm)), (min(paper_mm), max(paper_mm)))
+    ]
+    tall = sheet.height_mm > sheet.width_mm
+    plan = min(plans, key=lambda p: (len(p.columns) * len(p.rows), p.lost, (p.paper_mm[0] > p.paper_mm[1]) == tall))
+    windows = [(x0, y0, x1, y1) for y0, y1 in reversed(plan.rows) for x0, x1 in plan.columns]
+    items = [item for item in sheet.items if item.layer != "stamp"]
+    texts, dropped = _placed_texts(items, windows)
+    shapes = [item for item in items if not isinstance(item, Text)] + _join_marks(plan, items)
+    pages = []
+    for k, window in enumerate(windows):
+        kept = [part for shape in shapes for part in clipped(shape, window)] + texts[k]
+        page = _page(sheet, plan, k, window, kept, f"{number} {revision}")
+        pages.append(stamped(page) if sheet.on("stamp") else page)
+    return Tiling(tuple(pages), len(plan.rows), len(plan.columns), tuple(dropped))
+
+
+def _plan(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, margin_mm: float) -> _Plan:
+    empty = _Plan(paper_mm, margin_mm, (), (), (), (), 0)
+    left, bottom, right, top = empty.room
+    whole = [bounds(item) for item in sheet.items if _stays_whole(item)]
+    station_mm = sheet.station_at_x0_mm or 0.0
+    joins_x, lost_x = _joins(
+        sheet.width_mm, right - left, overlap_mm, station_mm, _STEP_MM, [(b[0], b[2]) for b in whole]
+    )
+    joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, [(b[1], b[3]) for b in whole])
+    columns = _spans(joins_x, sheet.width_mm, right - left, overlap_mm)
+    rows = _spans(joins_y, sheet.height_mm, top - bottom, overlap_mm)
+    return replace(empty, joins_x=joins_x, joins_y=joins_y, columns=columns, rows=rows, lost=lost_x + lost_y)
+
+
+def _stays_whole(item: Item) -> bool:
+    """Whether joins look for a place where no page cuts this item: lettering and holes."""
+    return item.layer != "stamp" and (isinstance(item, Text) or (item.layer == "drill" and not isinstance(item, Line)))
+
+
+def _joins(
+    length_mm: float,
+    room_mm: float,
+    overlap_mm: float,
+    origin_mm: float,
+    step_mm: float,
+    whole: Sequence[tuple[float, float]],
+) -> tuple[tuple[float, ...], int]:
+    """Places of the joins along one axis, each at a multiple of the step counted from the origin's value at 0.
+
+    As far apart as the room allows, then moved back, by half a page at most, to where the fewest whole items are lost
+    (those that start before the next page and end after this one), and by 40 mm at most to keep the join line off them.
+    """
+    joins: list[float] = []
+    lost, start = 0, 0.0
+    while length_mm - start > room_mm:
+        end = start + room_mm
+        farthest = math.floor((end - overlap_mm / 2 + origin_mm) / step_mm) * step_mm - origin_mm
+        nearest = max(start + overlap_mm, end - room_mm / 2)
+        costs = []
+        for k in range(max(1, math.ceil((farthest - nearest) / step_mm))):
+            join = farthest - k * step_mm
+            cut = sum(1 for low, high in whole if start <= low < join - overlap_mm / 2 and high > end)
+            crossed = any(_near(low, high, join) for low, high in whole)
+            costs.append((cut, crossed or farthest - join > _DETOUR_MM, -join))
+        cut, _, place = min(costs)
+        lost += cut
+        joins.append(-place)
+        start = joins[-1] - overlap_mm / 2
+    return tuple(joins), lost
+
+
+def _spans(
+    joins: tuple[float, ...], length_mm: float, room_mm: float, overlap_mm: float
+) -> tuple[tuple[float, float], ...]:
+    """From where to where each row or column of pages shows the sheet."""
+    starts = [0.0, *(join - overlap_mm / 2 for join in joins)]
+    return tuple((start, min(start + room_mm, length_mm)) for start in starts)
+
+
+def _placed_texts(items: list[Item], windows: list[Box]) -> tuple[list[list[Item]], list[Text]]:
+    """Lettering of each page: wherever it lies whole; otherwise pushed into the nearest page where it hits nothing."""
+    placed: list[list[Item]] = [[] for _ in windows]
+    dropped = []
+    solid = [item for item in items if _stays_whole(item)]
+    for text in (item for item in items if isinstance(item, Text)):
+        box = text_box(text)
+        homes = [k for k, window in enumerate(windows) if contains(window, box)]
+        for k in homes:
+            placed[k].append(text)
+        if homes:
+            continue
+        pushes = sorted((*_push(box, window), k) for k, window in enumerate(windows))
+        for distance, dx, dy, k in pushes:
+            other = moved(text, dx, dy)
+            assert isinstance(other, Text)
+            if math.isfinite(distance) and not any(hits(other, item) for item in solid if item is not text):
+                placed[k].append(other)
+                break
+        else:
+            dropped.append(text)
+    return placed, dropped
+
+
+def _push(box: Box, window: Box) -> tuple[float, float, float]:
+    """How far a box must move to lie in a window: distance, right, up; infinite when the box is too large."""
+    dx = max(window[0] - box[0], 0.0) or min(window[2] - box[2], 0.0)
+    dy = max(window[1] - box[1], 0.0) or min(window[3] - box[3], 0.0)
+    moved_box = (box[0] + dx, box[1] + dy, box[2] + dx, box[3] + dy)
+    return (math.hypot(dx, dy) if contains(window, moved_box) else math.inf, dx, dy)
+
+
+def _join_marks(plan: _Plan, items: list[Item]) -> list[Item]:
+    """Join lines with two target marks per page side, on the sheet, so that both neighbours print the same ones."""
+    pen = Pen()
+    solid = [bounds(item) for item in items if _stays_whole(item)]
+    for x in plan.joins_x:
+        pen.line("frame", x, plan.rows[0][0], x, plan.rows[-1][1])
+        for low, high in plan.rows:
+            for y in _free_places(low, high, [(b[1], b[3]) for b in solid if _near(b[0], b[2], x)]):
+                _target(pen, x, y)
+    for y in plan.joins_y:
+        pen.line("frame", plan.columns[0][0], y, plan.columns[-1][1], y)
+        for low, high in plan.columns:
+            for x in _free_places(low, high, [(b[0], b[2]) for b in solid if _near(b[1], b[3], y)]):
+                _target(pen, x, y)
+    return pen.items
+
+
+def _near(low: float, high: float, place: float) -> bool:
+    reach = _TARGET_MM + 1
+    return low - reach < place < high + reach
+
+
+def _free_places(low: float, high: float, taken: list[tuple[float, float]]) -> list[float]:
+    """Two places, as near as possible to a third from either end of a span, that are clear of what is taken."""
+    third = (high - low) / 3
+    places = []
+    for wanted in (low + third, high - third):
+        for shift in range(math.floor(third / 2)):
+            free = [p for p in (wanted + shift, wanted - shift) if not any(_near(a, b, p) for a, b in taken)]
+            if free:
+                places.append(free[0])
+                break
+    return places
+
+
+def _target(pen: Pen, x_mm: float, y_mm: float) -> None:
+    pen.items.append(Circle("frame", x_mm, y_mm, _TARGET_MM))
+    pen.cross(x_mm, y_mm, 1.5 * _TARGET_MM, "frame", 45.0)
+
+
+def _page(sheet: Sheet, plan: _Plan, index: int, window: Box, kept: list[Item], mark: str) -> Sheet:
+    """One page: the window's items moved to their place, and everything printed round them."""
+    width, height = plan.paper_mm
+    left, bottom, _, top = plan.room
+    x0 = left
+    y0 = bottom + (top - bottom - (window[3] - window[1])) / 2
+    dx, dy = x0 - window[0], y0 - window[1]
+    frame = (x0, y0, x0 + window[2] - window[0], y0 + window[3] - window[1])
+    station = None if sheet.station_at_x0_mm is None else sheet.station_at_x0_mm - dx
+    pen = Pen()
+    pen.rectangle("frame", *frame)
+    pen.add(moved(item, dx, dy) for item in kept)
+    joins_x = [x + dx for x in plan.joins_x if window[0] < x < window[2]]
+    if station is not None:
+        _ruler(pen, frame, station, joins_x)
+    count, columns = len(plan.rows) * len(plan.columns), len(plan.columns)
+    row, column = divmod(index, columns)
+    _neighbours(pen, plan, frame, (row, column), index)
+    pen.bar_100(left - 4, (bottom + top) / 2 - 50, up=True, label="100 mm across")
+    _foot(pen, plan, f"{mark}   {sheet.title}", f"sheet {index + 1} of {count}, row {row + 1}, column {column + 1}")
+    if station is not None:
+        pen.text(width - plan.margin_mm, plan.margin_mm + 10.6, "Stations in mm from the datum face.", anchor="end")
+    return pen.sheet(f"{sheet.name}-{index + 1:02d}", f"{sheet.title} ({index + 1}/{count})", width, height, station)
+
+
+def _ruler(pen: Pen, frame: Box, station_at_x0_mm: float, joins: list[float]) -> None:
+    """Ticks at every 10 mm of station below and above the window; joins, ends and every 50 mm have their number."""
+    left, bottom, right, top = frame
+    first = math.ceil((left + station_at_x0_mm) / _STEP_MM - 1e-9)
+    last = math.floor((right + station_at_x0_mm) / _STEP_MM + 1e-9)
+    steps = range(first, last + 1)
+    wanted = [round((x + station_at_x0_mm) / _STEP_MM) for x in joins]
+    wanted += [first, last, *(step for step in steps if step % _LABEL_STEP == 0)]
+    lettered: list[int] = []
+    for step in wanted:
+        if all(abs(step - other) * _STEP_MM >= _LABEL_ROOM_MM for other in lettered):
+            lettered.append(step)
+    for step in steps:
+        x, tick = step * _STEP_MM - station_at_x0_mm, 2.0 if step in lettered else 1.2
+        pen.line("dim", x, top, x, top + tick)
+        pen.line("dim", x, bottom, x, bottom - tick)
+        if step in lettered:
+            pen.text(x, top + 2.6, f"{step * _STEP_MM:.0f}", anchor="middle", layer="dim")
+
+
+def _neighbours(pen: Pen, plan: _Plan, frame: Box, place: tuple[int, int], index: int) -> None:
+    """Which page joins on each side."""
+    left, _, right, top = frame
+    (row, column), columns = place, len(plan.columns)
+    if column > 0:
+        pen.text(left, top + 6.8, f"← join to sheet {index}")
+    if column < columns - 1:
+        pen.text(right, top + 6.8, f"join to sheet {index + 2} →", anchor="end")
+    if row > 0:
+        pen.text(plan.room[0] - 5, plan.room[3], f"sheet {index + 1 - columns} →", anchor="end", angle_deg=90)
+    if row < len(plan.rows) - 1:
+        pen.text(plan.room[0] - 5, plan.room[1], f"← sheet {index + 1 + columns}", angle_deg=90)
+
+
+def _foot(pen: Pen, plan: _Plan, name: str, place: str) -> None:
+    """The bar along, and two lines of lettering."""
+    left, right, base = plan.margin_mm, plan.paper_mm[0] - plan.margin_mm, plan.margin_mm
+    pen.bar_100(left + 0.5, base + 7, label="100 mm along")
+    advice = "Print at 100 %; both bars must measure 100 mm."
+    pen.text(right, base + 6, advice, anchor="end")
+    room = right - left - text_width_mm(place, LETTERING_MM) - 6
+    pen.text(left, base + 1, shortened(name, LETTERING_MM, room))
+    pen.text(right, base + 1, place, anchor="end")
