@@ -1,0 +1,156 @@
+"""Values of a design file that are more than one scalar: sections, a material, sizes with two or three numbers."""
+
+import functools
+from dataclasses import dataclass
+from typing import Annotated, Any, cast
+
+from pydantic import BaseModel, ConfigDict, Field, GetCoreSchemaHandler, ValidationError, ValidationInfo
+from pydantic_core import CoreSchema, core_schema
+
+from fabgen.design.design import Material
+from fabgen.read.nearest import suggestion
+from fabgen.read.scalars import Broken, Context, Kind, Length, Number, Text, Word, refuse, scalar_of
+from fabgen.read.yaml_tree import Map, Scalar, Seq
+from fabgen.stock import tables
+
+
+class Keys(BaseModel):
+    """A mapping of the design file: a key is a field's alias, else its name; unknown keys are refused."""
+
+    model_config = ConfigDict(extra="forbid", frozen=True)
+
+
+@dataclass(frozen=True, slots=True)
+class Section:
+    """Wraps a section, a row or a value of the top level.
+
+    When it does not validate, its reasons are kept and the rest of the file goes on.
+    """
+
+    def read(self, value: Any, handler: Any, info: ValidationInfo) -> Any:
+        """The validated section, or None with the reasons left in the context."""
+        context = cast(Context, info.context)
+        try:
+            return handler(value)
+        except ValidationError as error:
+            context.broken.append(Broken(value, info.field_name or "", error))
+            return None
+
+    def __get_pydantic_core_schema__(self, source: Any, handler: GetCoreSchemaHandler) -> CoreSchema:
+        return core_schema.with_info_wrap_validator_function(self.read, handler(source))
+
+
+@dataclass(frozen=True, slots=True)
+class Lengths(Kind):
+    """A fixed number of lengths; with `single`, one length stands for itself.
+
+    Attributes:
+        each: what every length may be.
+        counts: allowed numbers of lengths in a list.
+        single: whether one length without brackets is allowed.
+        example: as a user would write it.
+    """
+
+    each: Length
+    count: int
+    single: bool
+    example: str
+
+    def read(self, value: Any, info: ValidationInfo) -> tuple[float, ...]:
+        """The lengths in mm."""
+        if isinstance(value, Scalar) and self.single:
+            return (self.each.read(value, info),)
+        if not isinstance(value, Seq):
+            scalar_of(value, self.example)
+            refuse("D08", f"takes a list of {self.count} lengths", f"for example {self.example}")
+        if len(value) != self.count:
+            fix = f"for example {self.example}; the decimal mark is a point"
+            refuse("D08", f"takes {self.count} lengths, not {len(value)}", fix)
+        return tuple(self.each.read(item, info) for item in value)
+
+    def schema(self) -> dict[str, Any]:
+        """A list of lengths, or one."""
+        items = {"type": "array", "items": self.each.schema(), "minItems": self.count, "maxItems": self.count}
+        return {"anyOf": [self.each.schema(), items]} if self.single else items
+
+
+class MaterialKeys(Keys):
+    """A material with its properties, for what the table does not hold."""
+
+    name: Annotated[str, Text(60, "EN AW-6082 T6")]
+    kind: Annotated[str, Word(("metal", "plastic", "wood", "grp"))]
+    density_kg_m3: Annotated[float, Number(100, 25000, "2700", "density in kg/m³")] = Field(alias="density")
+    youngs_modulus_gpa: Annotated[float | None, Number(0.01, 1000, "70", "modulus of elasticity in GPa")] = Field(
+        default=None, alias="youngs_modulus"
+    )
+    yield_mpa: Annotated[float | None, Number(1, 5000, "160", "yield or 0.2 % proof stress in MPa")] = Field(
+        default=None, alias="yield"
+    )
+    expansion_per_k: Annotated[float | None, Number(0, 1e-3, "23.4e-6", "linear expansion in 1/K")] = Field(
+        default=None, alias="expansion"
+    )
+    anodic_index_v: Annotated[float | None, Number(-2.5, 0.5, "-0.90", "anodic index in V")] = Field(
+        default=None, alias="anodic_index"
+    )
+    permittivity: Annotated[float | None, Number(1, 100, "2.8", "relative permittivity")] = None
+    conductive: Annotated[str | None, Word(("true", "false"))] = None
+
+
+@dataclass(frozen=True, slots=True)
+class MaterialValue(Kind):
+    """A material: a name of the table, or a mapping with its properties."""
+
+    example: str = "EN AW-6060 T66"
+
+    def read(self, value: Any, info: ValidationInfo) -> Material:
+        """The material in force."""
+        if isinstance(value, Map):
+            return _stated(MaterialKeys.model_validate(value, context=info.context))
+        name = scalar_of(value, self.example)
+        try:
+            return table_material(str(name))
+        except tables.UnknownStockError:
+            fix = suggestion(name, tables.material_names())
+            refuse("D15", f"'{name}' is not in the material table", f"{fix}; or a mapping {{name, kind, density, …}}")
+
+    def schema(self) -> dict[str, Any]:
+        """A name of the table or the mapping."""
+        return {"anyOf": [{"enum": list(tables.material_names())}, MaterialKeys.model_json_schema()]}
+
+
+def _stated(keys: MaterialKeys) -> Material:
+    metal = keys.kind == "metal"
+    index = keys.anodic_index_v
+    return Material(
+        name=keys.name,
+        kind=keys.kind,  # type: ignore[arg-type]  # Word allows exactly these
+        density_kg_m3=keys.density_kg_m3,
+        youngs_modulus_gpa=keys.youngs_modulus_gpa,
+        yield_mpa=keys.yield_mpa,
+        expansion_per_k=keys.expansion_per_k,
+        anodic_index_cv=None if index is None else round(index * 100),
+        permittivity=keys.permittivity,
+        conductive=metal if keys.conductive is None else keys.conductive == "true",
+    )
+
+
+@functools.cache
+def table_material(name: str) -> Material:
+    """A material of the table, as the design carries it.
+
+    Raises:
+        UnknownStockError: the table has no such material.
+    """
+    found = tables.material(name)
+    return Material(
+        name=found.name,
+        kind=found.kind,
+        density_kg_m3=found.density_kg_m3,
+        youngs_modulus_gpa=found.youngs_modulus_gpa,
+        yield_mpa=found.yield_mpa,
+        expansion_per_k=found.expansion_per_k,
+        anodic_index_cv=found.anodic_index_cv,
+        permittivity=found.permittivity,
+        conductive=found.conductive,
+        source=found.source,
+    )

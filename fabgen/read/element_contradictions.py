@@ -1,0 +1,86 @@
+"""Rows against each other, against the mounts they name and against the rods they are cut from."""
+
+from itertools import pairwise
+
+from fabgen.read.fits import default_hole_mm
+from fabgen.read.grammar import ElementKeys, FileKeys
+from fabgen.read.nearest import suggestion
+from fabgen.read.places import key_place, value_place
+from fabgen.read.resolve import resolve_rod
+from fabgen.read.source import Problems
+from fabgen.read.yaml_tree import Map
+
+Row = tuple[ElementKeys, Map]
+
+SAME_STATION_MM = 1e-6
+
+
+def check_elements(keys: FileKeys, rows: list[Row], tree: Map, problems: Problems) -> None:
+    """Report rows that cannot stand together."""
+    if keys.elements is not None and not keys.elements:
+        problems.add("D07", "`elements` has no rows", key_place(tree, "elements"), "add one row per rod")
+    _check_ids(rows, problems)
+    _check_stations(rows, problems)
+    for row, node in rows:
+        _check_mount(row, node, keys, tree, problems)
+        if resolve_rod(row, keys.rods, keys.feed) is None and "rods" not in tree:
+            message = f"nothing says what rod {row.id} is cut from"
+            problems.add("D07", message, node.place, "add rods: {diameter: 4 mm, material: EN AW-6060 T66}")
+
+
+def _check_ids(rows: list[Row], problems: Problems) -> None:
+    seen: dict[str, tuple[ElementKeys, Map]] = {}
+    for row, node in rows:
+        first, first_node = seen.setdefault(row.id.lower(), (row, node))
+        if first is not row:
+            same = "stands twice" if first.id == row.id else f"differs from {first.id} in capitals only"
+            message = f"id: {row.id} {same}, first in line {value_place(first_node, 'id').line}"
+            problems.add("D18", message, value_place(node, "id"), "give it another id")
+    halves = {
+        f"{row.id}-{side}".lower(): row.id for row, _ in rows if row.role == "driven" for side in ("left", "right")
+    }
+    for row, node in rows:
+        if owner := halves.get(row.id.lower()):
+            message = f"id: {row.id} is the name of one half of the driven rod {owner}"
+            problems.add("D18", message, value_place(node, "id"), "give it another id")
+
+
+def _check_stations(rows: list[Row], problems: Problems) -> None:
+    ordered = sorted(rows, key=lambda pair: pair[0].at_mm)
+    for (rear, rear_node), (front, front_node) in pairwise(ordered):
+        if front.at_mm - rear.at_mm <= SAME_STATION_MM:
+            message = f"at: {front.id} stands where {rear.id} stands, line {value_place(rear_node, 'at').line}"
+            problems.add("D17", message, value_place(front_node, "at"), "give every rod a place of its own")
+
+
+def _check_mount(row: ElementKeys, node: Map, keys: FileKeys, tree: Map, problems: Problems) -> None:
+    names = list(keys.mounts or {})
+    if row.role == "driven":
+        if row.mount not in (None, "feed"):
+            message = f"mount: the feed carries the driven rod {row.id}, not a mount"
+            problems.add("D21", message, value_place(node, "mount"), "write mount: feed, or leave it out")
+        return
+    if row.mount == "feed":
+        message = f"mount: the feed carries a driven rod only, and {row.id} is a {row.role}"
+        fix = f"write mount: {names[0]}" if names else "name one of `mounts`"
+        problems.add("D21", message, value_place(node, "mount"), fix)
+        return
+    if "mounts" in tree and keys.mounts is None:
+        return
+    if row.mount is None and len(names) != 1:
+        known = f"one of {', '.join(names)}" if names else "add mounts: {line: {style: insulated-through}}"
+        message = f"`mount` is missing: {row.id} needs one" if names else "`mounts` is missing: a rod needs one"
+        problems.add("D07", message, node.place if names else tree.place, known)
+        return
+    name = row.mount if row.mount is not None else names[0]
+    if name not in names:
+        problems.add("D16", f"mount: there is no mount `{name}`", value_place(node, "mount"), suggestion(name, names))
+        return
+    mount = (keys.mounts or {})[name]
+    rod = resolve_rod(row, keys.rods, keys.feed)
+    if mount is None or rod is None or mount.hole_mm is not None or (keys.shop is None and "shop" in tree):
+        return
+    drills = keys.shop.drills if keys.shop is not None and keys.shop.drills is not None else "metric"
+    if default_hole_mm(mount.style, rod.diameter_mm, drills) is None:
+        message = f"`hole` is missing: no {drills} drill is large enough for the {rod.diameter_mm:g} mm rod {row.id}"
+        problems.add("D07", message, key_place(tree, "mounts", name), "add hole: and the size that you can make")

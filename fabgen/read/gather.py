@@ -1,0 +1,164 @@
+"""Pydantic's reasons become problems with a place, the nearest valid name and an example."""
+
+from typing import Annotated, Any, get_args, get_origin
+
+from pydantic import ValidationError
+from pydantic.fields import FieldInfo
+
+from fabgen.errors import Place
+from fabgen.read.compound import Keys, MaterialKeys, MaterialValue
+from fabgen.read.grammar import FileKeys
+from fabgen.read.nearest import nearest, suggestion
+from fabgen.read.scalars import Broken
+from fabgen.read.source import Problems
+from fabgen.read.yaml_tree import Map, Node, Scalar, Seq
+
+Loc = tuple[int | str, ...]
+
+
+def gather(broken: Broken, root: Map, problems: Problems) -> None:
+    """Report everything that kept one section, row or value from validating.
+
+    Args:
+        broken: the node and its reasons.
+        root: the whole file, where the node's key stands.
+        problems: takes the reports.
+    """
+    info = FileKeys.model_fields[broken.field]
+    key = info.alias or broken.field
+    name = _row_name(broken.node) or key
+    model = _keys_in(info.annotation)
+    for reason in _reasons(broken.error, model):
+        _report(broken.node, root.key(key), name, model, reason, problems)
+
+
+def gather_root(error: ValidationError, root: Map, problems: Problems) -> None:
+    """Report unknown and missing keys of the top level."""
+    for reason in _reasons(error, FileKeys):
+        _report(root, None, "the file", FileKeys, reason, problems)
+
+
+def _reasons(error: ValidationError, model: type[Keys] | None) -> list[Any]:
+    """Pydantic's reasons, without the missing keys that an unknown neighbour was meant to be."""
+    reasons = error.errors(include_url=False, include_input=False)
+    meant = set()
+    for reason in reasons:
+        *above, written = reason["loc"] or ("",)
+        if reason["type"] == "extra_forbidden" and (keys := _model_at(model, tuple(above))) is not None:
+            meant.add((*above, nearest(str(written), aliases(keys))))
+    return [reason for reason in reasons if reason["type"] != "missing" or reason["loc"] not in meant]
+
+
+def _row_name(node: Node) -> str:
+    """What messages call a row of `elements`."""
+    id_ = node.get("id") if isinstance(node, Map) else None
+    return f"row {id_}" if isinstance(id_, Scalar) else ""
+
+
+def _report(
+    node: Node, key: Scalar | None, name: str, model: type[Keys] | None, reason: Any, problems: Problems
+) -> None:
+    """Turn one reason into one problem, unless its value was reported already."""
+    loc: Loc = reason["loc"]
+    kind = reason["type"]
+    if loc and loc[-1] == "[key]":
+        loc = loc[:-1]
+        bad = node.key(str(loc[-1])) if isinstance(node, Map) else None
+        place = bad.place if bad is not None else node.place
+        problems.add(reason["ctx"]["code"], reason["ctx"]["message"], place, reason["ctx"]["fix"])
+        return
+    for depth, part in enumerate(loc):
+        if isinstance(node, Map) and isinstance(part, str) and part in node:
+            key, node, name = node.key(part), node[node.key(part)], part  # type: ignore[index]  # the key is there
+        elif isinstance(node, Seq) and isinstance(part, int):
+            node = node[part]
+        elif kind == "missing" and depth == len(loc) - 1:
+            _report_missing(node, key, name, str(part), _model_at(model, loc[:-1]), problems)
+            return
+    if isinstance(node, Scalar) and node.broken:
+        return
+    if kind == "extra_forbidden":
+        known = aliases(_model_at(model, loc[:-1]) or FileKeys)
+        place = key.place if key is not None else node.place
+        problems.add("D06", f"`{name}` is not a key here", place, suggestion(name, known))
+    elif kind == "fabgen":
+        context = reason["ctx"]
+        problems.add(context["code"], f"{name}: {context['message']}", _value_place(node, key), context["fix"])
+    else:
+        _report_shape(node, key, name, kind, _model_at(model, loc), problems)
+
+
+def _value_place(node: Node, key: Scalar | None) -> Place:
+    """The value's place; the key's when nothing stands there."""
+    return key.place if isinstance(node, Scalar) and not node.width and key is not None else node.place
+
+
+def _report_missing(
+    node: Node, key: Scalar | None, name: str, missing: str, model: type[Keys] | None, problems: Problems
+) -> None:
+    example = _example(model, missing)
+    flow_row = isinstance(node, Map) and node.flow
+    place = node.place if key is None or flow_row else key.place
+    fix = f"add {missing}: {example}" if example else f"add {missing}"
+    problems.add("D07", f"`{missing}` is missing in {name}", place, fix)
+
+
+def _report_shape(
+    node: Node, key: Scalar | None, name: str, kind: str, model: type[Keys] | None, problems: Problems
+) -> None:
+    """A list, mapping or scalar where another is needed."""
+    place = _value_place(node, key)
+    wanted = "a list of rows" if kind == "list_type" else "keys and values"
+    keys = ", ".join(aliases(model)) if model is not None else ""
+    fix = f"write {{key: value}} with the keys {keys}" if keys else "compare with the example of `fabgen new`"
+    if isinstance(node, Scalar) and node.empty:
+        problems.add("D07", f"`{name}` has no value", place, fix)
+    else:
+        problems.add("D08", f"{name} takes {wanted}", place, fix)
+
+
+def aliases(model: type[Keys]) -> list[str]:
+    """The keys of a section, in the order of the grammar."""
+    return [info.alias or name for name, info in model.model_fields.items()]
+
+
+def required(model: type[Keys]) -> list[str]:
+    """The keys that a section must have."""
+    return [info.alias or name for name, info in model.model_fields.items() if info.is_required()]
+
+
+def _field(model: type[Keys], alias: str) -> FieldInfo | None:
+    return next((info for name, info in model.model_fields.items() if (info.alias or name) == alias), None)
+
+
+def _model_at(model: type[Keys] | None, loc: Loc) -> type[Keys] | None:
+    """The model that reads what stands at a path below another model."""
+    for part in loc:
+        if model is None:
+            return None
+        info = _field(model, str(part))
+        if info is None:
+            return None
+        model = MaterialKeys if any(isinstance(m, MaterialValue) for m in info.metadata) else _keys_in(info.annotation)
+    return model
+
+
+def _keys_in(annotation: Any) -> type[Keys] | None:
+    """The model named in an annotation such as `BoomKeys | None`."""
+    if isinstance(annotation, type) and issubclass(annotation, Keys):
+        return annotation
+    parts = get_args(annotation)[:1] if get_origin(annotation) is Annotated else get_args(annotation)
+    return next((found for part in parts if (found := _keys_in(part)) is not None), None)
+
+
+def _example(model: type[Keys] | None, alias: str) -> str:
+    """What a user might write for a key."""
+    info = _field(model, alias) if model is not None else None
+    for metadata in info.metadata if info is not None else ():
+        if example := getattr(metadata, "example", None) or "".join(getattr(metadata, "words", ())[:1]):
+            return str(example)
+    nested = _keys_in(info.annotation) if info is not None else None
+    if nested is None:
+        return ""
+    inner = ", ".join(f"{name}: {_example(nested, name)}" for name in required(nested))
+    return f"{{{inner}}}" if inner else ""

@@ -1,0 +1,91 @@
+"""Reading a design file: all of its problems in one run, or the design with what is worth noting about it."""
+
+import hashlib
+from dataclasses import dataclass
+from pathlib import Path
+
+from pydantic import ValidationError
+
+from fabgen.design.design import Design
+from fabgen.design.findings import Finding
+from fabgen.read.contradictions import find_contradictions
+from fabgen.read.csv_table import insert_table
+from fabgen.read.gather import gather, gather_root
+from fabgen.read.grammar import FileKeys
+from fabgen.read.reasons import Reasons
+from fabgen.read.resolve import resolve
+from fabgen.read.scalars import Context
+from fabgen.read.source import Problems, read_source
+from fabgen.read.yaml_tree import Map, Scalar, parse
+
+
+@dataclass(frozen=True, slots=True)
+class Reading:
+    """A design and how it was read.
+
+    Attributes:
+        design: every value in force.
+        notes: what is readable but deserves a second look; severity warn or note.
+        tree: the file's keys and values with their places.
+        reasons: where each value comes from that the file leaves out, by path.
+    """
+
+    design: Design
+    notes: tuple[Finding, ...]
+    tree: Map
+    reasons: dict[str, str]
+
+
+def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
+    """Read and validate one design file with its table.
+
+    Args:
+        path: the YAML file.
+        shown_as: the name that messages use; the path as given by default.
+
+    Returns:
+        The design, complete, with its notes.
+
+    Raises:
+        DesignErrors: everything that is wrong with the file, in file order.
+        InputError: there is no such file.
+        MachineError: the file cannot be read.
+    """
+    shown = shown_as if shown_as is not None else str(path)
+    source = read_source(path, shown)
+    problems = Problems()
+    tree = parse(source, problems)
+    table = insert_table(tree, path, shown, problems)
+    context = Context(unit=_unit(tree))
+    keys = _validate(tree, context, problems)
+    for broken in context.broken:
+        gather(broken, tree, problems)
+    find_contradictions(keys, tree, problems)
+    problems.stop(shown)
+    reasons = Reasons()
+    sha256 = hashlib.sha256(source.data + table).hexdigest()
+    design = resolve(keys, path.stem, sha256, reasons)
+    return Reading(design, (), tree, reasons.by_path)
+
+
+def _unit(tree: Map) -> str | None:
+    unit = tree.get("units")
+    return str(unit) if isinstance(unit, Scalar) and str(unit) in ("mm", "in") else None
+
+
+def _validate(tree: Map, context: Context, problems: Problems) -> FileKeys:
+    """Validate the file; unknown and missing keys of the top level are reported and then left aside."""
+    try:
+        return FileKeys.model_validate(tree, context=context)
+    except ValidationError as error:
+        gather_root(error, tree, problems)
+        known = dict(tree)
+        for reason in error.errors(include_url=False, include_input=False, include_context=False):
+            key = str(reason["loc"][0])
+            if reason["type"] == "missing":
+                known[key] = Scalar.absent(tree)
+            else:
+                known.pop(key, None)
+        context.broken.clear()
+        context.other_unit.clear()
+        return FileKeys.model_validate(known, context=context)

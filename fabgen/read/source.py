@@ -1,0 +1,132 @@
+"""A text file with its lines, and the list that gathers every problem found in it.
+
+Refused before anything is parsed: files over 1 MB, bytes that are not UTF-8, characters that cannot be printed.
+"""
+
+import re
+from dataclasses import dataclass, field
+from pathlib import Path
+
+from fabgen.errors import DesignErrors, InputError, MachineError, Place, Problem
+
+LARGEST_BYTES = 1_000_000
+"""A design file of a thousand elements has about 100 kB."""
+
+_UNPRINTABLE = re.compile(
+    "[\x00-\x08\x0b\x0c\x0e-\x1f\x7f-\x9f\u200e\u200f\u2028-\u202e\u2066-\u2069\ufeff\ufffe\uffff]"
+)
+_LINE_END = re.compile(r"\r\n|\r|\n")
+
+
+@dataclass(frozen=True, slots=True)
+class Source:
+    """A text file as read.
+
+    Attributes:
+        shown_as: the name that messages use.
+        data: its bytes.
+        text: its text, without a byte order mark.
+        lines: the text in lines, without their ends.
+    """
+
+    shown_as: str
+    data: bytes
+    text: str
+    lines: tuple[str, ...]
+
+    def place(self, line: int, column: int, width: int = 1) -> Place:
+        """The place of a line and column, both counted from 1."""
+        text = self.lines[line - 1] if 0 < line <= len(self.lines) else ""
+        return Place(self.shown_as, line, column, text, width)
+
+
+@dataclass(slots=True)
+class Problems:
+    """Every problem found so far."""
+
+    found: list[Problem] = field(default_factory=list)
+
+    def add(self, code: str, message: str, place: Place, fix: str = "") -> None:
+        """Note one problem."""
+        self.found.append(Problem(code, message, place, fix))
+
+    def stop(self, first_file: str) -> None:
+        """Raise what was found, in file order; nothing happens when nothing was.
+
+        Raises:
+            DesignErrors: there is at least one problem.
+        """
+        if self.found:
+            unique = dict.fromkeys(self.found)
+            raise DesignErrors(tuple(sorted(unique, key=lambda problem: _order(problem, first_file))))
+
+
+def _order(problem: Problem, first_file: str) -> tuple[bool, str, int, int, str, str]:
+    place = problem.place
+    return (place.file != first_file, place.file, place.line, place.column, problem.code, problem.message)
+
+
+def read_source(path: Path, shown_as: str) -> Source:
+    """Read a text file whole.
+
+    Args:
+        path: the file.
+        shown_as: the name that messages use.
+
+    Raises:
+        InputError: there is no such file.
+        MachineError: it cannot be read.
+        DesignErrors: it is too large, not UTF-8, or holds characters that cannot be printed.
+    """
+    try:
+        if path.is_dir():
+            raise InputError(f"{shown_as} is a folder, not a file", "name the file in it")
+        if not path.exists():
+            raise InputError(f"there is no file {shown_as}", "check the name and the folder")
+        if not path.is_file():
+            raise InputError(f"{shown_as} is not a regular file", "name a plain text file")
+        with path.open("rb") as stream:
+            data = stream.read(LARGEST_BYTES + 1)
+    except OSError as error:
+        reason = error.strerror or type(error).__name__
+        raise MachineError(f"{shown_as} cannot be read: {reason}", "check the file's permissions") from error
+    return as_source(data, shown_as)
+
+
+def as_source(data: bytes, shown_as: str) -> Source:
+    """The text of some bytes.
+
+    Args:
+        data: the bytes of a file.
+        shown_as: the name that messages use.
+
+    Raises:
+        DesignErrors: they are too many, not UTF-8, or hold characters that cannot be printed.
+    """
+    problems = Problems()
+    if len(data) > LARGEST_BYTES:
+        place = Place(shown_as, 1, 1)
+        problems.add("D02", "the file is larger than 1 MB", place, "check that this is the right file")
+        problems.stop(shown_as)
+    text, bad_byte = _decode(data)
+    source = Source(shown_as, data, text, tuple(_LINE_END.split(text)))
+    if bad_byte is not None:
+        start = max(text.rfind("\n"), text.rfind("\r")) + 1
+        place = source.place(len(source.lines), len(text) - start + 1)
+        problems.add("D01", f"byte 0x{bad_byte:02x} is not UTF-8 text", place, "save the file as UTF-8")
+    for number, line in enumerate(source.lines, start=1):
+        if match := _UNPRINTABLE.search(line):
+            name = f"U+{ord(match[0]):04X}"
+            place = source.place(number, match.start() + 1)
+            problems.add("D01", f"the character {name} cannot be printed", place, "delete it")
+    problems.stop(shown_as)
+    return source
+
+
+def _decode(data: bytes) -> tuple[str, int | None]:
+    """The text up to the first byte that is not UTF-8, and that byte."""
+    data = data.removeprefix(b"\xef\xbb\xbf")
+    try:
+        return data.decode("utf-8"), None
+    except UnicodeDecodeError as error:
+        return data[: error.start].decode("utf-8"), data[error.start]
