@@ -9,7 +9,7 @@ from dataclasses import dataclass
 from typing import Literal
 
 from fabgen.design.design import Design
-from fabgen.design.ledger import Ledger
+from fabgen.design.ledger import Ledger, Remark
 
 Vector = tuple[float, float, float]
 Axis = Literal["x", "y", "z"]
@@ -184,6 +184,7 @@ class Cut:
         cut_mm: sawn length (folded rods: developed length).
         half_mm: half of it, where the centre mark goes; 0 where there is none.
         projection_mm: how far the rod stands out of the boom or block on each side; 0 where it has no meaning.
+        note: what else is done to the piece, for example a hole across it; empty for most.
     """
 
     piece: str
@@ -196,6 +197,7 @@ class Cut:
     half_mm: float
     projection_mm: float
     tolerance_mm: float
+    note: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -235,6 +237,8 @@ class Arranged:
     """Design and lengths with everything in its place.
 
     Attributes:
+        remarks: what could not be arranged, with where; rules turn them into findings.
+        mast: the mast as a cylinder, for clearances; it is no part of the array.
         mass_g: of the whole array without cable and mast.
         balance_mm: station of the centre of mass, clamp not counted.
         clamp_mm: station of the clamp's middle; None without a clamp or where no place is free.
@@ -249,6 +253,8 @@ class Arranged:
     placed: tuple[Placed, ...]
     interfaces: tuple[Interface, ...]
     cuts: tuple[Cut, ...]
+    remarks: tuple[tuple[str, Remark], ...]
+    mast: Cylinder | None
     mass_g: float
     balance_mm: float
     clamp_mm: float | None

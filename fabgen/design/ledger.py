@@ -14,13 +14,36 @@ class PublishedValue:
         model: its name, as a user would write it or as it is known.
         value_mm: the length it adds.
         valid: whether the case lies inside the range the model itself states.
+        is_bound: the end of a printed range: it widens the spread and cannot be chosen.
+        range_text: that range in words.
         source: citation.
     """
 
     model: str
     value_mm: float
     valid: bool
+    is_bound: bool
+    range_text: str
     source: str
+
+
+@dataclass(frozen=True, slots=True)
+class Remark:
+    """Something to be said about a length: why there is no number, or what to keep in mind.
+
+    Attributes:
+        code: the finding's code it will be reported under.
+        text: one sentence.
+        measured: the case's figure; None where it is no number.
+        required: the limit it is held against.
+        unit: of both.
+    """
+
+    code: str
+    text: str
+    measured: float | None = None
+    required: float | None = None
+    unit: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -35,6 +58,8 @@ class Allowance:
         source: one line: which formula, record or statement.
         published: the published models for the same case, for comparison.
         needed: False where no metal boom takes anything from the rod.
+        missing: the chosen origin gives no number here; `value_mm` is 0 and a rule fails the design.
+        remarks: what has to be said about it.
     """
 
     value_mm: float
@@ -44,6 +69,8 @@ class Allowance:
     source: str = ""
     published: tuple[PublishedValue, ...] = ()
     needed: bool = True
+    missing: bool = False
+    remarks: tuple[Remark, ...] = ()
 
     @property
     def spread_mm(self) -> float:

@@ -1,0 +1,55 @@
+"""The fewest bars, proven by integer programming where counting is not enough."""
+
+from collections.abc import Sequence
+
+import numpy as np
+from scipy.optimize import Bounds, LinearConstraint, milp
+
+_SECONDS = 20.0
+
+
+def fewest_bars(sizes: Sequence[float], room: float, known: list[list[int]]) -> tuple[list[list[int]], bool]:
+    """Pack pieces into the fewest bars.
+
+    The assignment form of bin packing (Martello & Toth, Knapsack Problems, 1990, ch. 8), solved by branch and cut.
+
+    Args:
+        sizes: what each piece uses of a bar, kerf included.
+        room: what a bar offers, in the same unit.
+        known: a valid plan, as lists of indices.
+
+    Returns:
+        The plan with the fewest bars found, and whether none with fewer exists.
+    """
+    count, bars = len(sizes), len(known) - 1
+    pieces = count * bars
+    cost = np.concatenate([np.zeros(pieces), np.ones(bars)])
+    once = np.zeros((count, pieces + bars))
+    fill = np.zeros((bars, pieces + bars))
+    for bar in range(bars):
+        for piece in range(count):
+            once[piece, piece * bars + bar] = 1.0
+            fill[bar, piece * bars + bar] = sizes[piece]
+        fill[bar, pieces + bar] = -room
+    order = np.zeros((max(bars - 1, 0), pieces + bars))
+    for bar in range(bars - 1):
+        order[bar, pieces + bar], order[bar, pieces + bar + 1] = -1.0, 1.0
+    upper = np.ones(pieces + bars)
+    for piece in range(count):
+        upper[piece * bars + min(piece + 1, bars) : (piece + 1) * bars] = 0.0
+    result = milp(
+        cost,
+        constraints=[
+            LinearConstraint(once, 1.0, 1.0),
+            LinearConstraint(fill, -np.inf, 0.0),
+            LinearConstraint(order, -np.inf, 0.0),
+        ],
+        integrality=np.ones(pieces + bars),
+        bounds=Bounds(0.0, upper),
+        options={"time_limit": _SECONDS},
+    )
+    if result.x is None:
+        return known, bool(result.status == 2)
+    taken = result.x[:pieces].reshape(count, bars)
+    nests = [[piece for piece in range(count) if taken[piece, bar] > 0.5] for bar in range(bars)]
+    return [nest for nest in nests if nest], bool(result.status == 0)

@@ -1,0 +1,29 @@
+"""Short forms in which the rules write their findings."""
+
+from fabgen import registry
+from fabgen.design.findings import Finding, Severity
+
+
+def finding(
+    code: str,
+    severity: Severity,
+    where: str,
+    advice: str,
+    *,
+    measured: float | None = None,
+    required: float | None = None,
+    unit: str = "",
+) -> Finding:
+    """One finding, titled by its code's page; numbers rounded to a thousandth.
+
+    Args:
+        code: a code with a page in `fabgen/codes`.
+        severity: fail, warn or note.
+        where: element, hole, part or pair.
+        advice: the cheapest way out.
+        measured: what the design has.
+        required: the limit.
+        unit: of both.
+    """
+    numbers = [None if value is None else round(value, 3) + 0.0 for value in (measured, required)]
+    return Finding(code, severity, where, numbers[0], numbers[1], unit, advice, registry.code_title(code))

@@ -1,0 +1,85 @@
+"""`fabgen build`: write the packages of one or more designs."""
+
+from pathlib import Path
+
+import click
+
+from fabgen.cli import report
+from fabgen.cli.check import DESIGNS
+from fabgen.contents import GROUPS
+from fabgen.errors import FabgenError, InputError
+from fabgen.pipeline import Judged
+from fabgen.pipeline import build as build_package
+from fabgen.pipeline import check as judge_file
+
+
+@click.command()
+@DESIGNS
+@click.option("--output", type=click.Path(path_type=Path), default=Path("output"), show_default=True, help="Folder.")
+@click.option("--only", multiple=True, type=click.Choice(GROUPS), help="Write only this part of the package.")
+@click.option("--stamped", is_flag=True, help="Write a design that is not clear, every sheet stamped.")
+@click.option("--json", "as_json", is_flag=True, help="Print one JSON document.")
+def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stamped: bool, as_json: bool) -> int:
+    """Judge designs and write a fabrication package for each one that is clear."""
+    judged, records, code = _judge_all(designs, quiet=as_json)
+    for path, one in judged:
+        record = report.judged_record(path, one)
+        records.append(record)
+        if not as_json:
+            report.print_judged(one)
+        if not one.clear and not stamped:
+            code = max(code, 1)
+            _tell_kept(output / one.name)
+            continue
+        try:
+            folder = build_package(one, output=output, stamped=not one.clear, only=sorted(set(only)), say=_say)
+        except FabgenError as error:
+            code = max(code, error.exit_code)
+            record["error"] = error.message
+            report.tell(error)
+            continue
+        code = max(code, 0 if one.clear else 1)
+        record["package"] = str(folder)
+        if not as_json:
+            click.echo(str(folder))
+    if as_json:
+        report.print_json({"designs": records})
+    return code
+
+
+def _judge_all(
+    designs: tuple[Path, ...], *, quiet: bool
+) -> tuple[list[tuple[Path, Judged]], list[dict[str, object]], int]:
+    """Judge every design before the first is written; two of one name stop the whole call."""
+    judged: list[tuple[Path, Judged]] = []
+    records: list[dict[str, object]] = []
+    code = 0
+    owners: dict[str, Path] = {}
+    for path in designs:
+        try:
+            one = judge_file(path)
+        except FabgenError as error:
+            code = max(code, error.exit_code)
+            records.append(report.error_record(path, error))
+            if not quiet:
+                report.tell(error)
+            continue
+        key = one.name.casefold()
+        if key in owners:
+            raise InputError(
+                f"{owners[key]} and {path} both are {one.name}", "give one of them another number or revision"
+            )
+        owners[key] = path
+        judged.append((path, one))
+    return judged, records, code
+
+
+def _say(line: str) -> None:
+    click.echo(line, err=True)
+
+
+def _tell_kept(folder: Path) -> None:
+    _say("not clear: nothing was written")
+    if folder.exists():
+        _say(f"  an older package is in {folder}; it was left alone")
+    _say("  --stamped writes it with every sheet marked")

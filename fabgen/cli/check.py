@@ -1,0 +1,42 @@
+"""`fabgen check`: judge designs without writing anything."""
+
+from pathlib import Path
+
+import click
+
+from fabgen.cli import report
+from fabgen.errors import FabgenError, InputError
+from fabgen.pipeline import check as judge_file
+
+DESIGNS = click.argument("designs", nargs=-1, required=True, type=click.Path(path_type=Path))
+
+
+@click.command()
+@DESIGNS
+@click.option("--show", is_flag=True, help="Print every value in force and where it came from; a valid design itself.")
+@click.option("--json", "as_json", is_flag=True, help="Print one JSON document.")
+def check(designs: tuple[Path, ...], show: bool, as_json: bool) -> int:
+    """Judge one or more design files: read, correct, arrange, check. Nothing is written."""
+    if show and (as_json or len(designs) > 1):
+        raise InputError("--show prints one design as YAML", "name one design, without --json")
+    records, code = [], 0
+    for path in designs:
+        try:
+            judged = judge_file(path)
+        except FabgenError as error:
+            code = max(code, error.exit_code)
+            records.append(report.error_record(path, error))
+            if not as_json:
+                report.tell(error)
+            continue
+        code = max(code, 0 if judged.clear else 1)
+        records.append(report.judged_record(path, judged))
+        if show:
+            from fabgen.read.show import show as shown
+
+            click.echo(shown(judged.reading), nl=False)
+        elif not as_json:
+            report.print_judged(judged)
+    if as_json:
+        report.print_json({"designs": records})
+    return code

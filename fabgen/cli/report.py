@@ -1,0 +1,88 @@
+"""Findings and verdicts as text and as JSON."""
+
+import json
+from pathlib import Path
+from typing import Any
+
+import click
+
+from fabgen.design.findings import Finding
+from fabgen.errors import DesignErrors, FabgenError
+from fabgen.pipeline import Judged
+
+_COLOURS = {"fail": "red", "warn": "yellow", "note": "cyan"}
+
+
+def finding_record(finding: Finding) -> dict[str, Any]:
+    """A finding as the package's `findings.json` has it."""
+    return {
+        "code": finding.code,
+        "severity": finding.severity,
+        "where": finding.where,
+        "measured": finding.measured,
+        "required": finding.required,
+        "unit": finding.unit,
+        "advice": finding.advice,
+    }
+
+
+def judged_record(path: Path, judged: Judged) -> dict[str, Any]:
+    """One judged design for `--json`."""
+    design = judged.arranged.design
+    return {
+        "file": str(path),
+        "number": design.number,
+        "revision": design.revision,
+        "verdict": judged.verdict,
+        "status": judged.arranged.ledger.status,
+        "findings": [finding_record(finding) for finding in judged.findings],
+    }
+
+
+def error_record(path: Path, error: FabgenError) -> dict[str, Any]:
+    """One design that could not be judged, for `--json`."""
+    problems = error.problems if isinstance(error, DesignErrors) else ()
+    return {
+        "file": str(path),
+        "error": error.message if not problems else "the design file is wrong",
+        "fix": error.fix,
+        "exit": error.exit_code,
+        "problems": [
+            {
+                "code": problem.code,
+                "file": problem.place.file,
+                "line": problem.place.line,
+                "column": problem.place.column,
+                "message": problem.message,
+                "fix": problem.fix,
+            }
+            for problem in problems
+        ],
+    }
+
+
+def print_json(record: Any) -> None:
+    """Print one JSON document on stdout."""
+    click.echo(json.dumps(record, indent=2, ensure_ascii=False))
+
+
+def print_judged(judged: Judged) -> None:
+    """Print findings, worst first, and the verdict line on stdout."""
+    for finding in judged.findings:
+        click.secho(str(finding), fg=_COLOURS[finding.severity], color=None if _colour() else False)
+    counts = {severity: sum(f.severity == severity for f in judged.findings) for severity in _COLOURS}
+    tally = ", ".join(f"{count} {severity}" for severity, count in counts.items() if count) or "no findings"
+    click.echo(f"{judged.name}: {judged.verdict} ({tally}); {judged.arranged.ledger.status}")
+
+
+def _colour() -> bool:
+    import os
+
+    return not os.environ.get("NO_COLOR")
+
+
+def tell(error: FabgenError) -> None:
+    """Print a failure on stderr: problems of a file as they are, everything else after the program's name."""
+    click.echo(error.message if isinstance(error, DesignErrors) else f"fabgen: {error.message}", err=True)
+    if error.fix:
+        click.echo(f"  {error.fix}", err=True)

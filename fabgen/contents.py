@@ -1,0 +1,83 @@
+"""What a package holds: one function per part of it, each loading only what it needs."""
+
+import importlib.metadata
+import json
+from collections.abc import Callable, Sequence
+from dataclasses import asdict, dataclass
+
+from fabgen import __version__
+from fabgen.design.arranged import Arranged, CutPlan
+from fabgen.design.findings import Finding, clear
+from fabgen.design.package import PackageFile
+
+GROUPS = ("tables", "templates", "bench", "model", "prints", "fixtures", "book")
+"""What `--only` can name."""
+
+Files = tuple[PackageFile, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Order:
+    """What a package is to be written from."""
+
+    arranged: Arranged
+    findings: tuple[Finding, ...]
+    cut_plan: CutPlan
+    stamped: bool
+
+
+def package_files(
+    arranged: Arranged, findings: tuple[Finding, ...], *, stamped: bool, only: Sequence[str], say: Callable[[str], None]
+) -> Files:
+    """All files of a package but its manifest.
+
+    Args:
+        arranged: the arranged design.
+        findings: its judgements.
+        stamped: every sheet carries the stamp of a design that is not cleared.
+        only: parts to write; empty for all.
+        say: takes progress.
+    """
+    from fabgen.arrange.bars import plan
+
+    order = Order(arranged, findings, plan(arranged.cuts, arranged.design.shop), stamped)
+    files = [_findings(findings)]
+    for group in GROUPS:
+        if group not in _WRITERS or (only and group not in only):
+            continue
+        say(f"{arranged.design.name}: {group}")
+        files += _WRITERS[group](order)
+    return tuple(files)
+
+
+def versions() -> dict[str, str]:
+    """Program and libraries that shape the bytes of a package."""
+    names = ("cadquery", "ezdxf", "numpy", "svgwrite", "trimesh", "typst")
+    return {"fabgen": __version__} | {name: importlib.metadata.version(name) for name in names}
+
+
+def _findings(findings: tuple[Finding, ...]) -> PackageFile:
+    records = [{key: value for key, value in asdict(finding).items() if key != "title"} for finding in findings]
+    content = {"verdict": "clear" if clear(findings) else "not clear", "findings": records}
+    text = json.dumps(content, indent=2, ensure_ascii=False) + "\n"
+    return PackageFile("findings.json", text.encode("utf-8"), "what the checks found")
+
+
+def _tables(order: Order) -> Files:
+    from fabgen.export import tables
+
+    return tables.files(order.arranged, order.cut_plan)
+
+
+def _model(order: Order) -> Files:
+    from fabgen.export import glb, step
+    from fabgen.model.assembly import assembly
+
+    items = assembly(order.arranged)
+    return (
+        PackageFile("model/assembly.step", step.assembly_bytes(items), "the whole array, named, coloured, instanced"),
+        PackageFile("model/assembly.glb", glb.assembly_bytes(items), "the whole array for viewing, metres, y up"),
+    )
+
+
+_WRITERS: dict[str, Callable[[Order], Files]] = {"tables": _tables, "model": _model}

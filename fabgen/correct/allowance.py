@@ -1,0 +1,53 @@
+"""Which allowance a rod gets: by what carries it, then by the origin its mount asks for."""
+
+from fabgen.correct.computed import computed
+from fabgen.correct.published import published, published_values
+from fabgen.design.design import AllowanceChoice, Design, Element, Mount
+from fabgen.design.ledger import Allowance, PublishedValue, Remark
+
+
+def allowance(design: Design, element: Element) -> Allowance:
+    """The length to add to one rod, with origin, uncertainty and the published values beside it.
+
+    Args:
+        design: as read.
+        element: one of its elements.
+
+    Returns:
+        The allowance; marked `missing` where the chosen origin gives no number.
+    """
+    if element.mount is None:
+        return _of_feed(design, element)
+    if design.lengths_are == "as-cut":
+        return Allowance(0.0, "none", source="lengths are as cut: nothing is added", needed=False)
+    if element.mount.style == "through-nonmetal" and element.mount.allowance.origin in ("none", "auto"):
+        return Allowance(0.0, "none", source="no metal boom", needed=False)
+    return _of_mount(design, element, element.mount)
+
+
+def _of_feed(design: Design, element: Element) -> Allowance:
+    feed = design.feed_of(element)
+    if feed is not None and feed.allowance.origin == "stated":
+        return _stated(feed.allowance, ())
+    return Allowance(0.0, "none", source="a driven rod's length is set by its match", needed=False)
+
+
+def _of_mount(design: Design, element: Element, mount: Mount) -> Allowance:
+    choice = mount.allowance
+    values = published_values(design, element, mount)
+    if choice.origin == "stated":
+        return _stated(choice, values)
+    if choice.origin == "published":
+        return published(design, choice, values)
+    if choice.origin in ("computed", "auto") and mount.style != "through-nonmetal":
+        return computed(design, element, mount, values)
+    if choice.origin == "measured":
+        remark = Remark("L10", f"mount {mount.name} has no record of a measurement")
+        return Allowance(0.0, "none", published=values, missing=True, remarks=(remark,))
+    return Allowance(0.0, "none", source="asked for", published=values)
+
+
+def _stated(choice: AllowanceChoice, values: tuple[PublishedValue, ...]) -> Allowance:
+    return Allowance(
+        choice.value_mm, "stated", u_mm=choice.uncertainty_mm, source=f"stated: {choice.source}", published=values
+    )

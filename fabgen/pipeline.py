@@ -1,0 +1,85 @@
+"""The program on one screen: read → correct → arrange → check → draw → model → export → book."""
+
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass
+from pathlib import Path
+
+from fabgen.arrange.arrange import arrange
+from fabgen.check.judge import judge
+from fabgen.correct.ledger import correct
+from fabgen.design.arranged import Arranged
+from fabgen.design.findings import Finding, clear, in_order
+from fabgen.read.reader import Reading, read_design
+
+Say = Callable[[str], None]
+"""Takes one line of progress."""
+
+
+@dataclass(frozen=True, slots=True)
+class Judged:
+    """One design, judged by numbers alone."""
+
+    reading: Reading
+    arranged: Arranged
+    findings: tuple[Finding, ...]
+
+    @property
+    def name(self) -> str:
+        """`<number>_<revision>`."""
+        return self.arranged.design.name
+
+    @property
+    def clear(self) -> bool:
+        """Whether nothing fails."""
+        return clear(self.findings)
+
+    @property
+    def verdict(self) -> str:
+        """`clear` or `not clear`."""
+        return "clear" if self.clear else "not clear"
+
+
+def check(path: Path) -> Judged:
+    """Read one design file and judge it; no CAD kernel, no file written.
+
+    Raises:
+        DesignErrors: the file is no valid design.
+    """
+    reading = read_design(path)
+    ledger = correct(reading.design)
+    arranged = arrange(reading.design, ledger)
+    return Judged(reading, arranged, in_order([*reading.notes, *judge(arranged)]))
+
+
+def build(judged: Judged, *, output: Path, stamped: bool = False, only: Sequence[str] = (), say: Say = print) -> Path:
+    """Write the package of a judged design, complete or not at all.
+
+    Args:
+        judged: what `check` returned.
+        output: the output folder.
+        stamped: mark every sheet as not cleared and write beside the real package's name.
+        only: parts of the package to write; empty for all of it.
+        say: takes progress, one line at a time.
+
+    Returns:
+        The package folder.
+
+    Raises:
+        MachineError: the disk or a missing library is in the way; nothing has changed then.
+    """
+    from fabgen.contents import package_files, versions
+    from fabgen.export import package
+
+    design = judged.arranged.design
+    files = package_files(judged.arranged, judged.findings, stamped=stamped, only=only, say=say)
+    name = "_".join([design.name, *(["NOT-CLEARED"] if stamped else []), *(["only", *only] if only else [])])
+    contents = package.manifest(
+        files,
+        number=design.number,
+        revision=design.revision,
+        design_sha256=design.sha256,
+        verdict=judged.verdict,
+        versions=versions(),
+    )
+    say(f"{name}: writing {len(files) + 1} files")
+    return package.write([*files, contents], output=output, name=name)
