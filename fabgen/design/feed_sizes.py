@@ -9,6 +9,7 @@ from fabgen.design.arranged import Box
 from fabgen.design.feed_layout import FeedBlockLayout
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, fastener
 from fabgen.design.part_geometry import disc_mm2, hexagon_corners_mm, integral, teardrop_mm2, under_disc_mm3
+from fabgen.design.saddle_sizes import ENGAGEMENT_MM
 from fabgen.stock.practice import print_practice
 
 
@@ -147,5 +148,5 @@ def least_height_mm(size: FeedBlockLayout) -> float:
     """Lowest rod axis over the boom's top with a whole nut above it and a hold-down screw's head below the floor."""
     # Head, tag and screw move with the rod, so the seat of the nut keeps its distance to the rod's axis.
     nut = size.height_mm - size.trap_top_mm + size.terminal_fastener.nut_height_mm + layout.BEYOND_NUT_MM
-    shortest = next(length for length in SCREW_LENGTHS_MM if length - layout.ENGAGEMENT_MM >= 4.0)
-    return max(nut, shortest - layout.ENGAGEMENT_MM + size.fastener.head_height_mm)
+    shortest = next(length for length in SCREW_LENGTHS_MM if length - ENGAGEMENT_MM >= 4.0)
+    return max(nut, shortest - ENGAGEMENT_MM + size.fastener.head_height_mm)
