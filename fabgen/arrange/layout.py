@@ -1,5 +1,6 @@
 """What one mount, feed or clamp adds to the array, and how a part gets to its place."""
 
+import functools
 from collections.abc import Mapping
 from dataclasses import dataclass, field
 from typing import Literal
@@ -60,20 +61,20 @@ class Layout:
         Raises:
             ValueError: no such part can be made with these numbers.
         """
-        size_of, source = SIZES[part]
-        size = size_of(**parameters)
+        frozen = sorted_parameters(parameters)
+        volume_mm3, shapes = _size(part, frozen)
         placed = Placed(
             name=name,
             owner=owner,
             part=part,
-            parameters=sorted_parameters(parameters),
+            parameters=frozen,
             frame=frame,
-            shapes=tuple(moved(shape, frame) for shape in size.shapes),
+            shapes=tuple(moved(shape, frame) for shape in shapes),
             exact=exact,
-            source=source,
+            source=SIZES[part][1],
             material=material.name,
             metal=material.conductive,
-            mass_g=size.volume_mm3 * material.density_kg_m3 / 1e6,
+            mass_g=volume_mm3 * material.density_kg_m3 / 1e6,
             size=label,
         )
         self.placed.append(placed)
@@ -82,6 +83,13 @@ class Layout:
     def meet(self, first: str, second: str, kind: str, gap_mm: float, fit_mm: float | None = None) -> None:
         """Declare that two parts meet on purpose; see `Interface`."""
         self.interfaces.append(Interface(first, second, kind, gap_mm, fit_mm))
+
+
+@functools.cache
+def _size(part: str, parameters: Parameters) -> tuple[float, tuple[Shape, ...]]:
+    """Volume and local shapes of a distinct part, worked out once."""
+    size = SIZES[part][0](**dict(parameters))
+    return size.volume_mm3, tuple(size.shapes)
 
 
 def sorted_parameters(parameters: Mapping[str, Value]) -> Parameters:
