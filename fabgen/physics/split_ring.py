@@ -47,13 +47,13 @@ def push_ring_strain(*, rod_mm: float, bore_mm: float, outside_mm: float) -> flo
     return max(0.0, neutral * rod_mm / ((neutral + opening) * bore_mm) - 1)
 
 
-def largest_push_ring_outside_mm(*, rod_mm: float, bore_mm: float, strain_limit: float = 0.02) -> float:
+def largest_push_ring_outside_mm(*, rod_mm: float, bore_mm: float, limit_strain: float = 0.02) -> float:
     """The thickest split ring that stays within a strain limit on its rod.
 
     Args:
         rod_mm: rod diameter in mm.
         bore_mm: free bore in mm, below the rod.
-        strain_limit: 0.02 for 2 %.
+        limit_strain: 0.02 for 2 %.
 
     Returns:
         Outside diameter in mm; `math.inf` when any thickness will do.
@@ -63,10 +63,10 @@ def largest_push_ring_outside_mm(*, rod_mm: float, bore_mm: float, strain_limit:
     """
     if not 0 < bore_mm < rod_mm:
         raise ValueError("the bore must lie between zero and the rod's diameter")
-    if rod_mm <= (1 + strain_limit) * bore_mm:
+    if rod_mm <= (1 + limit_strain) * bore_mm:
         return math.inf
     opening = (rod_mm - bore_mm) / 2
-    neutral = opening * (1 + strain_limit) * bore_mm / (rod_mm - (1 + strain_limit) * bore_mm)
+    neutral = opening * (1 + limit_strain) * bore_mm / (rod_mm - (1 + limit_strain) * bore_mm)
     low, high = bore_mm, 2 * bore_mm
     while neutral_radius_mm(bore_mm, high) < neutral:
         high *= 2
