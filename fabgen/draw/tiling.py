@@ -5,6 +5,7 @@ tape and errors never add up from page to page. Neighbours overlap; at each over
 with the same target marks, at a station that is a round number. Frame of a page: origin lower left, x right, y up, mm.
 """
 
+import itertools
 import math
 from collections.abc import Sequence
 from dataclasses import dataclass, replace
@@ -104,13 +105,12 @@ def _plan(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, margin
     empty = _Plan(paper_mm, margin_mm, (), (), (), (), 0)
     left, bottom, right, top = empty.room
     whole = [bounds(item) for item in sheet.items if _stays_whole(item)]
+    along, across = [(box[0], box[2]) for box in whole], [(box[1], box[3]) for box in whole]
     station_mm = sheet.station_at_x0_mm or 0.0
-    joins_x, lost_x = _joins(
-        sheet.width_mm, right - left, overlap_mm, station_mm, _STEP_MM, [(b[0], b[2]) for b in whole]
-    )
-    joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, [(b[1], b[3]) for b in whole])
-    columns = _spans(joins_x, sheet.width_mm, right - left, overlap_mm)
-    rows = _spans(joins_y, sheet.height_mm, top - bottom, overlap_mm)
+    joins_x, lost_x = _joins(sheet.width_mm, right - left, overlap_mm, station_mm, _STEP_MM, along)
+    joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, across)
+    columns = _spans(joins_x, sheet.width_mm, right - left, overlap_mm, along)
+    rows = _spans(joins_y, sheet.height_mm, top - bottom, overlap_mm, across)
     return replace(empty, joins_x=joins_x, joins_y=joins_y, columns=columns, rows=rows, lost=lost_x + lost_y)
 
 
@@ -152,11 +152,19 @@ def _joins(
 
 
 def _spans(
-    joins: tuple[float, ...], length_mm: float, room_mm: float, overlap_mm: float
+    joins: tuple[float, ...], length_mm: float, room_mm: float, overlap_mm: float, whole: Sequence[tuple[float, float]]
 ) -> tuple[tuple[float, float], ...]:
-    """From where to where each row or column of pages shows the sheet."""
+    """From where to where each row or column of pages shows the sheet.
+
+    A page ends half an overlap behind its join, or later where an item that the next page cuts needs it.
+    """
     starts = [0.0, *(join - overlap_mm / 2 for join in joins)]
-    return tuple((start, min(start + room_mm, length_mm)) for start in starts)
+    spans = []
+    for start, following in itertools.pairwise([*starts, length_mm]):
+        end = min(start + room_mm, length_mm)
+        needed = [high for low, high in whole if start <= low < following and high <= end]
+        spans.append((start, min(end, max(following + overlap_mm, *needed, 0.0))))
+    return tuple(spans)
 
 
 def _placed_texts(items: list[Item], windows: list[Box]) -> tuple[list[list[Item]], list[Text]]:
