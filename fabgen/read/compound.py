@@ -1,7 +1,6 @@
 """Values of a design file that are more than one scalar: sections, a material, sizes with two or three numbers."""
 
 import functools
-from dataclasses import dataclass
 from typing import Annotated, Any, cast
 
 from pydantic import BaseModel, ConfigDict, Field, GetCoreSchemaHandler, ValidationError, ValidationInfo
@@ -17,10 +16,9 @@ from fabgen.stock import tables
 class Keys(BaseModel):
     """A mapping of the design file: a key is a field's alias, else its name; unknown keys are refused."""
 
-    model_config = ConfigDict(extra="forbid", frozen=True)
+    model_config = ConfigDict(extra="forbid", frozen=True, defer_build=True)
 
 
-@dataclass(frozen=True, slots=True)
 class Section:
     """Wraps a section, a row or a value of the top level.
 
@@ -40,21 +38,18 @@ class Section:
         return core_schema.with_info_wrap_validator_function(self.read, handler(source))
 
 
-@dataclass(frozen=True, slots=True)
 class Lengths(Kind):
     """A fixed number of lengths; with `single`, one length stands for itself.
 
-    Attributes:
+    Args:
         each: what every length may be.
-        counts: allowed numbers of lengths in a list.
+        count: how many lengths a list has.
         single: whether one length without brackets is allowed.
         example: as a user would write it.
     """
 
-    each: Length
-    count: int
-    single: bool
-    example: str
+    def __init__(self, each: Length, count: int, *, single: bool, example: str) -> None:
+        self.each, self.count, self.single, self.example = each, count, single, example
 
     def read(self, value: Any, info: ValidationInfo) -> tuple[float, ...]:
         """The lengths in mm."""
@@ -78,7 +73,7 @@ class MaterialKeys(Keys):
     """A material with its properties, for what the table does not hold."""
 
     name: Annotated[str, Text(60, "EN AW-6082 T6")]
-    kind: Annotated[str, Word(("metal", "plastic", "wood", "grp"))]
+    kind: Annotated[str, Word("metal", "plastic", "wood", "grp")]
     density_kg_m3: Annotated[float, Number(100, 25000, "2700", "density in kg/m³")] = Field(alias="density")
     youngs_modulus_gpa: Annotated[float | None, Number(0.01, 1000, "70", "modulus of elasticity in GPa")] = Field(
         default=None, alias="youngs_modulus"
@@ -93,14 +88,14 @@ class MaterialKeys(Keys):
         default=None, alias="anodic_index"
     )
     permittivity: Annotated[float | None, Number(1, 100, "2.8", "relative permittivity")] = None
-    conductive: Annotated[str | None, Word(("true", "false"))] = None
+    conductive: Annotated[str | None, Word("true", "false")] = None
 
 
-@dataclass(frozen=True, slots=True)
 class MaterialValue(Kind):
     """A material: a name of the table, or a mapping with its properties."""
 
-    example: str = "EN AW-6060 T66"
+    def __init__(self, example: str = "EN AW-6060 T66") -> None:
+        self.example = example
 
     def read(self, value: Any, info: ValidationInfo) -> Material:
         """The material in force."""

@@ -9,7 +9,7 @@ from fabgen.errors import Place
 from fabgen.read.compound import Keys, MaterialKeys, MaterialValue
 from fabgen.read.grammar import FileKeys
 from fabgen.read.nearest import nearest, suggestion
-from fabgen.read.scalars import Broken
+from fabgen.read.scalars import Broken, Kind
 from fabgen.read.source import Problems
 from fabgen.read.yaml_tree import Map, Node, Scalar, Seq
 
@@ -155,8 +155,8 @@ def _example(model: type[Keys] | None, alias: str) -> str:
     """What a user might write for a key."""
     info = _field(model, alias) if model is not None else None
     for metadata in info.metadata if info is not None else ():
-        if example := getattr(metadata, "example", None) or "".join(getattr(metadata, "words", ())[:1]):
-            return str(example)
+        if isinstance(metadata, Kind):
+            return metadata.example
     nested = _keys_in(info.annotation) if info is not None else None
     if nested is None:
         return ""

@@ -52,9 +52,10 @@ class OverhangKeys(Keys):
 class BoomKeys(Keys):
     """The boom as bought and sawn; solid when `wall` is left out."""
 
-    section: Annotated[Literal["round", "square", "rectangular"], Word(("round", "square", "rectangular"))]
+    section: Annotated[Literal["round", "square", "rectangular"], Word("round", "square", "rectangular")]
     outside_mm: Annotated[
-        tuple[float, ...], Lengths(Length(3, 600, "20 mm", (8, 160)), 2, True, "20 mm, or [30 mm, 20 mm]")
+        tuple[float, ...],
+        Lengths(Length(3, 600, "20 mm", (8, 160)), 2, single=True, example="20 mm, or [30 mm, 20 mm]"),
     ] = Field(alias="outside")
     wall_mm: Annotated[float | None, _WALL] = Field(default=None, alias="wall")
     corner_radius_mm: Annotated[float | None, Length(0, 50, "1 mm")] = Field(default=None, alias="corner_radius")
@@ -68,12 +69,12 @@ class AllowanceKeys(Keys):
 
     origin: Annotated[
         Literal["auto", "measured", "computed", "published", "stated", "none"],
-        Word(("auto", "measured", "computed", "published", "stated", "none")),
+        Word("auto", "measured", "computed", "published", "stated", "none"),
     ]
     model: Annotated[
-        Literal["dl6wu", "lawson", "fishenden-wiblin"] | None, Word(("dl6wu", "lawson", "fishenden-wiblin"))
+        Literal["dl6wu", "lawson", "fishenden-wiblin"] | None, Word("dl6wu", "lawson", "fishenden-wiblin")
     ] = None
-    square_as: Annotated[Literal["side", "lo"] | None, Word(("side", "lo"))] = None
+    square_as: Annotated[Literal["side", "lo"] | None, Word("side", "lo")] = None
     value_mm: Annotated[float | None, Length(-100, 200, "4.6 mm")] = Field(default=None, alias="value")
     uncertainty_mm: Annotated[float | None, Length(0, 50, "0.4 mm")] = Field(default=None, alias="uncertainty")
     source: Annotated[str | None, Text(200, "own readings 2026-03")] = None
@@ -82,7 +83,7 @@ class AllowanceKeys(Keys):
 class BushKeys(Keys):
     """An insulating bush; sizes left out follow from rod, hole and wall."""
 
-    kind: Annotated[Literal["shoulder", "sleeve"] | None, Word(("shoulder", "sleeve"))] = None
+    kind: Annotated[Literal["shoulder", "sleeve"] | None, Word("shoulder", "sleeve")] = None
     material: Annotated[Material | None, MaterialValue("ASA")] = None
     bore_mm: Annotated[float | None, _BORE] = Field(default=None, alias="bore")
     spigot_mm: Annotated[float | None, _HOLE] = Field(default=None, alias="spigot")
@@ -94,7 +95,7 @@ class BushKeys(Keys):
 class KeeperKeys(Keys):
     """What stops a rod sliding; sizes left out follow from the rod."""
 
-    kind: Annotated[Literal["push-ring", "snap"] | None, Word(("push-ring", "snap"))] = None
+    kind: Annotated[Literal["push-ring", "snap"] | None, Word("push-ring", "snap")] = None
     material: Annotated[Material | None, MaterialValue("ASA")] = None
     bore_mm: Annotated[float | None, _BORE] = Field(default=None, alias="bore")
     outside_mm: Annotated[float | None, _HOLE] = Field(default=None, alias="outside")
@@ -109,20 +110,20 @@ class SaddleKeys(Keys):
 
     height_mm: Annotated[float | None, _HEIGHT] = Field(default=None, alias="height")
     bore_mm: Annotated[float | None, _BORE] = Field(default=None, alias="bore")
-    screw: Annotated[str | None, Word(SCREWS)] = None
+    screw: Annotated[str | None, Word(*SCREWS)] = None
     material: Annotated[Material | None, MaterialValue("ASA")] = None
 
 
 class MountKeys(Keys):
     """How rods meet the boom. Which keys go with which style: `contradictions.STYLE_KEYS`."""
 
-    style: Annotated[Style, Word(STYLES)]
+    style: Annotated[Style, Word(*STYLES)]
     hole_mm: Annotated[float | None, _HOLE] = Field(default=None, alias="hole")
     bush: BushKeys | None = None
     keeper: KeeperKeys | None = None
     saddle: SaddleKeys | None = None
-    hold: Annotated[Literal["keepers", "middle-screw"] | None, Word(("keepers", "middle-screw"))] = None
-    bond: Annotated[Literal["weld", "press", "wall-screws"] | None, Word(("weld", "press", "wall-screws"))] = None
+    hold: Annotated[Literal["keepers", "middle-screw"] | None, Word("keepers", "middle-screw")] = None
+    bond: Annotated[Literal["weld", "press", "wall-screws"] | None, Word("weld", "press", "wall-screws")] = None
     allowance: AllowanceKeys | None = None
 
 
@@ -131,26 +132,26 @@ class RodKeys(Keys):
 
     diameter_mm: Annotated[float, _ROD] = Field(alias="diameter")
     material: Annotated[Material, MaterialValue()]
-    finish: Annotated[Finish | None, Word(("bare", "anodised", "painted"))] = None
+    finish: Annotated[Finish | None, Word("bare", "anodised", "painted")] = None
 
 
 class ElementKeys(Keys):
     """One row of the model's table; the rod's keys override `rods`."""
 
     id: Annotated[str, _ELEMENT_ID]
-    role: Annotated[Role, Word(ROLES)]
+    role: Annotated[Role, Word(*ROLES)]
     at_mm: Annotated[float, Length(-100_000, 100_000, "138 mm")] = Field(alias="at")
     length_mm: Annotated[float, Length(5, 12_000, "322 mm")] = Field(alias="length")
     mount: Annotated[str | None, _MOUNT] = None
     diameter_mm: Annotated[float | None, _ROD] = Field(default=None, alias="diameter")
     material: Annotated[Material | None, MaterialValue()] = None
-    finish: Annotated[Finish | None, Word(("bare", "anodised", "painted"))] = None
+    finish: Annotated[Finish | None, Word("bare", "anodised", "painted")] = None
 
 
 class FeedKeys(Keys):
     """The driven element's hardware. Which keys go with which kind: `contradictions.FEED_KEYS`."""
 
-    kind: Annotated[Literal["straight-dipole", "folded-dipole"], Word(("straight-dipole", "folded-dipole"))]
+    kind: Annotated[Literal["straight-dipole", "folded-dipole"], Word("straight-dipole", "folded-dipole")]
     gap_mm: Annotated[float | None, Length(1, 100, "10 mm", (2, 40))] = Field(default=None, alias="gap")
     height_mm: Annotated[float | None, _HEIGHT] = Field(default=None, alias="height")
     cable_mm: Annotated[float | None, Length(0.8, 30, "5 mm", (1.5, 16))] = Field(default=None, alias="cable")
@@ -196,8 +197,8 @@ class ShopKeys(Keys):
     saw_kerf_mm: Annotated[float | None, Length(0, 10, "1.5 mm", (0.3, 5))] = Field(default=None, alias="saw_kerf")
     end_trim_mm: Annotated[float | None, Length(0, 200, "5 mm")] = Field(default=None, alias="end_trim")
     stock: StockKeys | None = None
-    drills: Annotated[Literal["metric", "inch", "both"] | None, Word(("metric", "inch", "both"))] = None
-    paper: Annotated[Literal["A4", "Letter"] | None, Word(("A4", "Letter"))] = None
+    drills: Annotated[Literal["metric", "inch", "both"] | None, Word("metric", "inch", "both")] = None
+    paper: Annotated[Literal["A4", "Letter"] | None, Word("A4", "Letter")] = None
     paper_thickness_mm: Annotated[float | None, Length(0, 1, "0.1 mm")] = Field(default=None, alias="paper_thickness")
 
 
@@ -206,7 +207,7 @@ class PrinterKeys(Keys):
 
     bed_mm: Annotated[
         tuple[float, ...] | None,
-        Lengths(Length(40, 2000, "220 mm", (90, 1200)), 3, False, "[220 mm, 220 mm, 250 mm]"),
+        Lengths(Length(40, 2000, "220 mm", (90, 1200)), 3, single=False, example="[220 mm, 220 mm, 250 mm]"),
     ] = Field(default=None, alias="bed")
     nozzle_mm: Annotated[float | None, Length(0.1, 2, "0.4 mm", (0.15, 1.2))] = Field(default=None, alias="nozzle")
     hole_growth_mm: Annotated[float | None, Length(0, 2, "0.2 mm")] = Field(default=None, alias="hole_growth")
@@ -215,13 +216,13 @@ class PrinterKeys(Keys):
 class FileKeys(Keys):
     """The whole file. What does not validate is None here, and its reasons are in the context."""
 
-    fabgen: Annotated[str | None, Word(("1",)), Section()]
+    fabgen: Annotated[str | None, Word("1"), Section()]
     title: Annotated[str | None, Text(500, "River gauge link"), Section()]
     number: Annotated[str | None, _NUMBER, Section()]
     revision: Annotated[str | None, _REVISION, Section()] = None
     frequency_mhz: Annotated[float | None, Frequency(20, 6000, "434.2 MHz"), Section()] = Field(alias="frequency")
-    units: Annotated[Literal["mm", "in"] | None, Word(("mm", "in")), Section()] = None
-    polarisation: Annotated[Polarisation | None, Word(("horizontal", "vertical")), Section()] = None
+    units: Annotated[Literal["mm", "in"] | None, Word("mm", "in"), Section()] = None
+    polarisation: Annotated[Polarisation | None, Word("horizontal", "vertical"), Section()] = None
     sheet: Annotated[SheetKeys | None, Section()] = None
     boom: Annotated[BoomKeys | None, Section()]
     mounts: Annotated[dict[Annotated[str, _MOUNT_NAME], Annotated[MountKeys | None, Section()]] | None, Section()] = (
@@ -229,7 +230,7 @@ class FileKeys(Keys):
     )
     rods: Annotated[RodKeys | None, Section()] = None
     elements: Annotated[list[Annotated[ElementKeys | None, Section()]] | None, Section()]
-    lengths_are: Annotated[Literal["free-space", "as-cut"] | None, Word(("free-space", "as-cut")), Section()] = None
+    lengths_are: Annotated[Literal["free-space", "as-cut"] | None, Word("free-space", "as-cut"), Section()] = None
     feed: Annotated[FeedKeys | None, Section()] = None
     clamp: Annotated[ClampKeys | None, Section()] = None
     clearance: Annotated[ClearanceKeys | None, Section()] = None

@@ -1,6 +1,5 @@
 """Where values come from that the design file leaves out: filled in and explained in one step."""
 
-from dataclasses import dataclass, field
 from typing import TypeVar
 
 T = TypeVar("T")
@@ -8,11 +7,11 @@ T = TypeVar("T")
 PRACTICE = "default, common practice"
 
 
-@dataclass(slots=True)
 class Reasons:
     """Why each value that the file leaves out is what it is, by its path in the file, such as `boom.corner_radius`."""
 
-    by_path: dict[str, str] = field(default_factory=dict)
+    def __init__(self) -> None:
+        self.by_path: dict[str, str] = {}
 
     def pick(self, path: str, stated: T | None, default: T, reason: str = PRACTICE) -> T:
         """The stated value, else the default with its reason noted.

@@ -6,9 +6,8 @@ A value that is readable but only likely in the other unit leaves a warning in t
 
 import re
 from abc import ABC, abstractmethod
-from dataclasses import dataclass, field
 from datetime import date
-from typing import Any, NoReturn, cast
+from typing import Any, NamedTuple, NoReturn, cast
 
 from pydantic import GetCoreSchemaHandler, GetJsonSchemaHandler, ValidationError, ValidationInfo
 from pydantic_core import CoreSchema, PydanticCustomError, core_schema
@@ -19,8 +18,7 @@ from fabgen.read.yaml_tree import Node, Scalar, Seq
 from fabgen.units import UnitError, in_to_mm, mm_to_in, parse_frequency_mhz, parse_length_mm
 
 
-@dataclass(frozen=True, slots=True)
-class OtherUnit:
+class OtherUnit(NamedTuple):
     """A length that is only likely in the other unit."""
 
     place: Place
@@ -30,8 +28,7 @@ class OtherUnit:
     other_unit: str
 
 
-@dataclass(frozen=True, slots=True)
-class Broken:
+class Broken(NamedTuple):
     """A section, row or value of the top level that did not validate, with pydantic's reasons."""
 
     node: Node
@@ -39,7 +36,6 @@ class Broken:
     error: ValidationError
 
 
-@dataclass(slots=True)
 class Context:
     """What fields need to know about their file, and where they leave what they notice.
 
@@ -49,9 +45,10 @@ class Context:
         broken: sections and rows that did not validate, with the reasons.
     """
 
-    unit: str | None = None
-    other_unit: list[OtherUnit] = field(default_factory=list)
-    broken: list[Broken] = field(default_factory=list)
+    def __init__(self, unit: str | None) -> None:
+        self.unit = unit
+        self.other_unit: list[OtherUnit] = []
+        self.broken: list[Broken] = []
 
 
 def refuse(code: str, message: str, fix: str) -> NoReturn:
@@ -82,7 +79,15 @@ def scalar_of(value: Any, example: str) -> Scalar:
 
 
 class Kind(ABC):
-    """Base of the kinds: plugs `read` into pydantic and `schema` into its JSON Schema."""
+    """Base of the kinds: plugs `read` into pydantic and `schema` into its JSON Schema.
+
+    Plain classes, because these are made at every start of the program and a dataclass costs a millisecond each.
+
+    Attributes:
+        example: as a user would write it.
+    """
+
+    example: str
 
     @abstractmethod
     def read(self, value: Any, info: ValidationInfo) -> Any:
@@ -99,21 +104,20 @@ class Kind(ABC):
         return self.schema()
 
 
-@dataclass(frozen=True, slots=True)
 class Length(Kind):
     """A length.
 
-    Attributes:
+    Args:
         low_mm: smallest allowed.
         high_mm: largest allowed.
         example: as a user would write it.
         likely_mm: what a shop would call normal; decides whether the other unit was meant.
     """
 
-    low_mm: float
-    high_mm: float
-    example: str
-    likely_mm: tuple[float, float] | None = None
+    def __init__(
+        self, low_mm: float, high_mm: float, example: str, likely_mm: tuple[float, float] | None = None
+    ) -> None:
+        self.low_mm, self.high_mm, self.example, self.likely_mm = low_mm, high_mm, example, likely_mm
 
     def read(self, value: Any, info: ValidationInfo) -> float:
         """The length in mm."""
@@ -173,13 +177,11 @@ def _bare_mm(scalar: Scalar) -> float | None:
     return None
 
 
-@dataclass(frozen=True, slots=True)
 class Frequency(Kind):
     """A frequency with its unit."""
 
-    low_mhz: float
-    high_mhz: float
-    example: str
+    def __init__(self, low_mhz: float, high_mhz: float, example: str) -> None:
+        self.low_mhz, self.high_mhz, self.example = low_mhz, high_mhz, example
 
     def read(self, value: Any, _info: ValidationInfo) -> float:
         """The frequency in MHz."""
@@ -200,14 +202,11 @@ class Frequency(Kind):
         return {"type": "string", "description": said, "examples": [self.example]}
 
 
-@dataclass(frozen=True, slots=True)
 class Number(Kind):
     """A plain number; `said` is its meaning and unit."""
 
-    low: float
-    high: float
-    example: str
-    said: str
+    def __init__(self, low: float, high: float, example: str, said: str) -> None:
+        self.low, self.high, self.example, self.said = low, high, example, said
 
     def read(self, value: Any, _info: ValidationInfo) -> float:
         """The number, by the rules of YAML 1.2's core schema for floats, without infinities."""
@@ -228,11 +227,11 @@ class Number(Kind):
         return {"type": "number", "minimum": self.low, "maximum": self.high, "description": self.said}
 
 
-@dataclass(frozen=True, slots=True)
 class Word(Kind):
     """One of a few words."""
 
-    words: tuple[str, ...]
+    def __init__(self, *words: str) -> None:
+        self.words, self.example = words, words[0]
 
     def read(self, value: Any, _info: ValidationInfo) -> str:
         """The word."""
@@ -246,19 +245,17 @@ class Word(Kind):
         return {"enum": list(self.words)}
 
 
-@dataclass(frozen=True, slots=True)
 class Text(Kind):
     """Free text on one line; white space of any kind becomes single spaces.
 
-    Attributes:
+    Args:
         longest: number of characters.
         example: as a user would write it.
         blank: whether nothing may be written.
     """
 
-    longest: int
-    example: str
-    blank: bool = False
+    def __init__(self, longest: int, example: str, *, blank: bool = False) -> None:
+        self.longest, self.example, self.blank = longest, example, blank
 
     def read(self, value: Any, _info: ValidationInfo) -> str:
         """The text."""
@@ -280,21 +277,18 @@ class Text(Kind):
         return {"type": "string", "maxLength": self.longest, "examples": [self.example]}
 
 
-@dataclass(frozen=True, slots=True)
 class Name(Kind):
     """A name that becomes part of file and part names.
 
-    Attributes:
+    Args:
         pattern: the whole name matches it.
         said: the pattern in words.
         example: as a user would write it.
         reserved: words that are taken, in lower case.
     """
 
-    pattern: str
-    said: str
-    example: str
-    reserved: tuple[str, ...] = ()
+    def __init__(self, pattern: str, said: str, example: str, reserved: tuple[str, ...] = ()) -> None:
+        self.pattern, self.said, self.example, self.reserved = pattern, said, example, reserved
 
     def read(self, value: Any, _info: ValidationInfo) -> str:
         """The name as written."""
@@ -314,11 +308,10 @@ class Name(Kind):
         return {"type": ["string", "number"], "pattern": f"^{self.pattern}$", "description": self.said}
 
 
-@dataclass(frozen=True, slots=True)
 class Date(Kind):
     """A calendar date, or nothing."""
 
-    example: str = "2026-03-01"
+    example = "2026-03-01"
 
     def read(self, value: Any, _info: ValidationInfo) -> str:
         """The date as written."""
@@ -338,12 +331,11 @@ class Date(Kind):
         return {"type": "string", "format": "date", "examples": [self.example]}
 
 
-@dataclass(frozen=True, slots=True)
 class WordOrLength(Kind):
     """One of a few words, or a length."""
 
-    words: tuple[str, ...]
-    length: Length
+    def __init__(self, words: tuple[str, ...], length: Length) -> None:
+        self.words, self.length, self.example = words, length, words[0]
 
     def read(self, value: Any, info: ValidationInfo) -> str | float:
         """The word, or the length in mm."""

@@ -4,8 +4,8 @@ Refused before anything is parsed: files over 1 MB, bytes that are not UTF-8, ch
 """
 
 import re
-from dataclasses import dataclass, field
 from pathlib import Path
+from typing import NamedTuple
 
 from fabgen.errors import DesignErrors, InputError, MachineError, Place, Problem
 
@@ -18,8 +18,7 @@ _UNPRINTABLE = re.compile(
 _LINE_END = re.compile(r"\r\n|\r|\n")
 
 
-@dataclass(frozen=True, slots=True)
-class Source:
+class Source(NamedTuple):
     """A text file as read.
 
     Attributes:
@@ -40,11 +39,11 @@ class Source:
         return Place(self.shown_as, line, column, text, width)
 
 
-@dataclass(slots=True)
 class Problems:
     """Every problem found so far."""
 
-    found: list[Problem] = field(default_factory=list)
+    def __init__(self) -> None:
+        self.found: list[Problem] = []
 
     def add(self, code: str, message: str, place: Place, fix: str = "") -> None:
         """Note one problem."""

@@ -6,7 +6,6 @@ Scalars stay text: the field that takes one decides what it is, as YAML 1.2 woul
 
 import re
 from collections.abc import Iterator
-from dataclasses import dataclass, field
 from typing import Any
 
 import yaml
@@ -102,13 +101,13 @@ class Seq(list["Node"]):
 Node = Scalar | Map | Seq
 
 
-@dataclass(slots=True)
 class _Open:
     """A mapping or list that is not closed yet."""
 
-    node: Map | Seq
-    key: Scalar | None = None
-    previous: Scalar | None = field(default=None)
+    def __init__(self, node: Map | Seq) -> None:
+        self.node = node
+        self.key: Scalar | None = None
+        self.previous: Scalar | None = None
 
 
 def parse(source: Source, problems: Problems) -> Map:
