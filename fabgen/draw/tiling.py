@@ -5,24 +5,19 @@ tape and errors never add up from page to page. Neighbours overlap; at each over
 with the same target marks, at a station that is a round number. Frame of a page: origin lower left, x right, y up, mm.
 """
 
-import itertools
 import math
-from collections.abc import Sequence
-from dataclasses import dataclass, replace
+from dataclasses import dataclass
 
-from fabgen.design.drawing import Box, Circle, Item, Line, Sheet, Text, moved
+from fabgen.design.drawing import Box, Circle, Item, Sheet, Text, moved
 from fabgen.design.lettering import shortened, text_box, text_width_mm
 from fabgen.design.overlaps import bounds, hits
 from fabgen.design.pen import LETTERING_MM, Pen
 from fabgen.draw.clipping import clipped, contains
 from fabgen.draw.stamp import stamped
+from fabgen.draw.tile_plan import STATION_STEP_MM, TARGET_MM, Plan, near, plan_pages, stays_whole
 
-_GUTTER_MM, _FOOT_MM, _HEAD_MM = 9.0, 16.5, 10.0
-_STEP_MM = 10.0
-_DETOUR_MM = 40.0
 _LABEL_STEP = 5
 _LABEL_ROOM_MM = 14.0
-_TARGET_MM = 2.0
 
 
 @dataclass(frozen=True, slots=True)
@@ -39,26 +34,6 @@ class Tiling:
     rows: int
     columns: int
     dropped: tuple[Text, ...]
-
-
-@dataclass(frozen=True, slots=True)
-class _Plan:
-    """Where a sheet is cut on one orientation of the paper: joins and windows on the sheet, room on the page."""
-
-    paper_mm: tuple[float, float]
-    margin_mm: float
-    joins_x: tuple[float, ...]
-    joins_y: tuple[float, ...]
-    columns: tuple[tuple[float, float], ...]
-    rows: tuple[tuple[float, float], ...]
-    lost: int
-
-    @property
-    def room(self) -> Box:
-        """The part of the page for the drawing."""
-        width, height = self.paper_mm
-        m = self.margin_mm
-        return (m + _GUTTER_MM, m + _FOOT_MM, width - m, height - m - _HEAD_MM)
 
 
 def tile(
@@ -84,7 +59,7 @@ def tile(
         The pages; a sheet that fits on one page comes back as one page without joins.
     """
     plans = [
-        _plan(sheet, size, overlap_mm, margin_mm)
+        plan_pages(sheet, size, overlap_mm, margin_mm)
         for size in ((max(paper_mm), min(paper_mm)), (min(paper_mm), max(paper_mm)))
     ]
     tall = sheet.height_mm > sheet.width_mm
@@ -101,77 +76,11 @@ def tile(
     return Tiling(tuple(pages), len(plan.rows), len(plan.columns), tuple(dropped))
 
 
-def _plan(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, margin_mm: float) -> _Plan:
-    empty = _Plan(paper_mm, margin_mm, (), (), (), (), 0)
-    left, bottom, right, top = empty.room
-    whole = [bounds(item) for item in sheet.items if _stays_whole(item)]
-    along, across = [(box[0], box[2]) for box in whole], [(box[1], box[3]) for box in whole]
-    station_mm = sheet.station_at_x0_mm or 0.0
-    joins_x, lost_x = _joins(sheet.width_mm, right - left, overlap_mm, station_mm, _STEP_MM, along)
-    joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, across)
-    columns = _spans(joins_x, sheet.width_mm, right - left, overlap_mm, along)
-    rows = _spans(joins_y, sheet.height_mm, top - bottom, overlap_mm, across)
-    return replace(empty, joins_x=joins_x, joins_y=joins_y, columns=columns, rows=rows, lost=lost_x + lost_y)
-
-
-def _stays_whole(item: Item) -> bool:
-    """Whether joins look for a place where no page cuts this item: lettering and holes."""
-    return item.layer != "stamp" and (isinstance(item, Text) or (item.layer == "drill" and not isinstance(item, Line)))
-
-
-def _joins(
-    length_mm: float,
-    room_mm: float,
-    overlap_mm: float,
-    origin_mm: float,
-    step_mm: float,
-    whole: Sequence[tuple[float, float]],
-) -> tuple[tuple[float, ...], int]:
-    """Places of the joins along one axis, each at a multiple of the step counted from the origin's value at 0.
-
-    As far apart as the room allows, then moved back, by half a page at most, to where the fewest whole items are lost
-    (those that start before the next page and end after this one), and by 40 mm at most to keep the join line off them.
-    """
-    joins: list[float] = []
-    lost, start = 0, 0.0
-    while length_mm - start > room_mm:
-        end = start + room_mm
-        farthest = math.floor((end - overlap_mm / 2 + origin_mm) / step_mm) * step_mm - origin_mm
-        nearest = max(start + overlap_mm, end - room_mm / 2)
-        costs = []
-        for k in range(max(1, math.ceil((farthest - nearest) / step_mm))):
-            join = farthest - k * step_mm
-            cut = sum(1 for low, high in whole if start <= low < join - overlap_mm / 2 and high > end)
-            crossed = any(_near(low, high, join) for low, high in whole)
-            costs.append((cut, crossed or farthest - join > _DETOUR_MM, -join))
-        cut, _, place = min(costs)
-        lost += cut
-        joins.append(-place)
-        start = joins[-1] - overlap_mm / 2
-    return tuple(joins), lost
-
-
-def _spans(
-    joins: tuple[float, ...], length_mm: float, room_mm: float, overlap_mm: float, whole: Sequence[tuple[float, float]]
-) -> tuple[tuple[float, float], ...]:
-    """From where to where each row or column of pages shows the sheet.
-
-    A page ends half an overlap behind its join, or later where an item that the next page cuts needs it.
-    """
-    starts = [0.0, *(join - overlap_mm / 2 for join in joins)]
-    spans = []
-    for start, following in itertools.pairwise([*starts, length_mm]):
-        end = min(start + room_mm, length_mm)
-        needed = [high for low, high in whole if start <= low < following and high <= end]
-        spans.append((start, min(end, max(following + overlap_mm, *needed, 0.0))))
-    return tuple(spans)
-
-
 def _placed_texts(items: list[Item], windows: list[Box]) -> tuple[list[list[Item]], list[Text]]:
     """Lettering of each page: wherever it lies whole; otherwise pushed into the nearest page where it hits nothing."""
     placed: list[list[Item]] = [[] for _ in windows]
     dropped = []
-    solid = [item for item in items if _stays_whole(item)]
+    solid = [item for item in items if stays_whole(item)]
     for text in (item for item in items if isinstance(item, Text)):
         box = text_box(text)
         homes = [k for k, window in enumerate(windows) if contains(window, box)]
@@ -199,26 +108,21 @@ def _push(box: Box, window: Box) -> tuple[float, float, float]:
     return (math.hypot(dx, dy) if contains(window, moved_box) else math.inf, dx, dy)
 
 
-def _join_marks(plan: _Plan, items: list[Item]) -> list[Item]:
+def _join_marks(plan: Plan, items: list[Item]) -> list[Item]:
     """Join lines with two target marks per page side, on the sheet, so that both neighbours print the same ones."""
     pen = Pen()
-    solid = [bounds(item) for item in items if _stays_whole(item)]
+    solid = [bounds(item) for item in items if stays_whole(item)]
     for x in plan.joins_x:
         pen.line("frame", x, plan.rows[0][0], x, plan.rows[-1][1])
         for low, high in plan.rows:
-            for y in _free_places(low, high, [(b[1], b[3]) for b in solid if _near(b[0], b[2], x)]):
+            for y in _free_places(low, high, [(b[1], b[3]) for b in solid if near(b[0], b[2], x)]):
                 _target(pen, x, y)
     for y in plan.joins_y:
         pen.line("frame", plan.columns[0][0], y, plan.columns[-1][1], y)
         for low, high in plan.columns:
-            for x in _free_places(low, high, [(b[0], b[2]) for b in solid if _near(b[1], b[3], y)]):
+            for x in _free_places(low, high, [(b[0], b[2]) for b in solid if near(b[1], b[3], y)]):
                 _target(pen, x, y)
     return pen.items
-
-
-def _near(low: float, high: float, place: float) -> bool:
-    reach = _TARGET_MM + 1
-    return low - reach < place < high + reach
 
 
 def _free_places(low: float, high: float, taken: list[tuple[float, float]]) -> list[float]:
@@ -227,7 +131,7 @@ def _free_places(low: float, high: float, taken: list[tuple[float, float]]) -> l
     places = []
     for wanted in (low + third, high - third):
         for shift in range(math.floor(third / 2)):
-            free = [p for p in (wanted + shift, wanted - shift) if not any(_near(a, b, p) for a, b in taken)]
+            free = [p for p in (wanted + shift, wanted - shift) if not any(near(a, b, p) for a, b in taken)]
             if free:
                 places.append(free[0])
                 break
@@ -235,11 +139,11 @@ def _free_places(low: float, high: float, taken: list[tuple[float, float]]) -> l
 
 
 def _target(pen: Pen, x_mm: float, y_mm: float) -> None:
-    pen.items.append(Circle("frame", x_mm, y_mm, _TARGET_MM))
-    pen.cross(x_mm, y_mm, 1.5 * _TARGET_MM, "frame", 45.0)
+    pen.items.append(Circle("frame", x_mm, y_mm, TARGET_MM))
+    pen.cross(x_mm, y_mm, 1.5 * TARGET_MM, "frame", 45.0)
 
 
-def _page(sheet: Sheet, plan: _Plan, index: int, window: Box, kept: list[Item], mark: str) -> Sheet:
+def _page(sheet: Sheet, plan: Plan, index: int, window: Box, kept: list[Item], mark: str) -> Sheet:
     """One page: the window's items moved to their place, and everything printed round them."""
     width, height = plan.paper_mm
     left, bottom, _, top = plan.room
@@ -253,7 +157,7 @@ def _page(sheet: Sheet, plan: _Plan, index: int, window: Box, kept: list[Item], 
     pen.add(moved(item, dx, dy) for item in kept)
     joins_x = [x + dx for x in plan.joins_x if window[0] < x < window[2]]
     if station is not None:
-        _ruler(pen, frame, station, joins_x)
+        _ruler(pen, frame, station, joins_x, width - plan.margin_mm)
     count, columns = len(plan.rows) * len(plan.columns), len(plan.columns)
     row, column = divmod(index, columns)
     _neighbours(pen, plan, frame, (row, column), index)
@@ -264,27 +168,33 @@ def _page(sheet: Sheet, plan: _Plan, index: int, window: Box, kept: list[Item], 
     return pen.sheet(f"{sheet.name}-{index + 1:02d}", f"{sheet.title} ({index + 1}/{count})", width, height, station)
 
 
-def _ruler(pen: Pen, frame: Box, station_at_x0_mm: float, joins: list[float]) -> None:
+def _ruler(pen: Pen, frame: Box, station_at_x0_mm: float, joins: list[float], limit_mm: float) -> None:
     """Ticks at every 10 mm of station below and above the window; joins, ends and every 50 mm have their number."""
     left, bottom, right, top = frame
-    first = math.ceil((left + station_at_x0_mm) / _STEP_MM - 1e-9)
-    last = math.floor((right + station_at_x0_mm) / _STEP_MM + 1e-9)
+    first = math.ceil((left + station_at_x0_mm) / STATION_STEP_MM - 1e-9)
+    last = math.floor((right + station_at_x0_mm) / STATION_STEP_MM + 1e-9)
     steps = range(first, last + 1)
-    wanted = [round((x + station_at_x0_mm) / _STEP_MM) for x in joins]
-    wanted += [first, last, *(step for step in steps if step % _LABEL_STEP == 0)]
+    wanted = [round((x + station_at_x0_mm) / STATION_STEP_MM) for x in joins]
+    wanted += [first, last, last - 1, *(step for step in steps if step % _LABEL_STEP == 0)]
     lettered: list[int] = []
     for step in wanted:
-        if all(abs(step - other) * _STEP_MM >= _LABEL_ROOM_MM for other in lettered):
+        half_mm = text_width_mm(_station(step), LETTERING_MM) / 2
+        fits = step * STATION_STEP_MM - station_at_x0_mm + half_mm <= limit_mm
+        if fits and all(abs(step - other) * STATION_STEP_MM >= _LABEL_ROOM_MM for other in lettered):
             lettered.append(step)
     for step in steps:
-        x, tick = step * _STEP_MM - station_at_x0_mm, 2.0 if step in lettered else 1.2
+        x, tick = step * STATION_STEP_MM - station_at_x0_mm, 2.0 if step in lettered else 1.2
         pen.line("dim", x, top, x, top + tick)
         pen.line("dim", x, bottom, x, bottom - tick)
         if step in lettered:
-            pen.text(x, top + 2.6, f"{step * _STEP_MM:.0f}", anchor="middle", layer="dim")
+            pen.text(x, top + 2.6, _station(step), anchor="middle", layer="dim")
 
 
-def _neighbours(pen: Pen, plan: _Plan, frame: Box, place: tuple[int, int], index: int) -> None:
+def _station(step: int) -> str:
+    return f"{step * STATION_STEP_MM:.0f}"
+
+
+def _neighbours(pen: Pen, plan: Plan, frame: Box, place: tuple[int, int], index: int) -> None:
     """Which page joins on each side."""
     left, _, right, top = frame
     (row, column), columns = place, len(plan.columns)
@@ -298,7 +208,7 @@ def _neighbours(pen: Pen, plan: _Plan, frame: Box, place: tuple[int, int], index
         pen.text(plan.room[0] - 5, plan.room[1], f"← sheet {index + 1 + columns}", angle_deg=90)
 
 
-def _foot(pen: Pen, plan: _Plan, name: str, place: str) -> None:
+def _foot(pen: Pen, plan: Plan, name: str, place: str) -> None:
     """The bar along, and two lines of lettering."""
     left, right, base = plan.margin_mm, plan.paper_mm[0] - plan.margin_mm, plan.margin_mm
     pen.bar_100(left + 0.5, base + 7, label="100 mm along")
