@@ -69,15 +69,36 @@ def _tables(order: Order) -> Files:
     return tables.files(order.arranged, order.cut_plan)
 
 
+def _templates(order: Order) -> Files:
+    from fabgen.draw.sheets import boom_template
+    from fabgen.draw.stamp import stamped
+    from fabgen.draw.tiling import tile
+    from fabgen.export.dxf import dxf
+    from fabgen.export.pdf import pdf
+    from fabgen.export.svg import svg
+    from fabgen.stock.tables import paper_size_mm
+
+    design = order.arranged.design
+    sheets = [stamped(sheet) if order.stamped else sheet for sheet in boom_template.sheets(order.arranged)]
+    files, pages = [], []
+    for sheet in sheets:
+        files.append(PackageFile(f"templates/{sheet.name}.svg", svg(sheet), f"1:1 template of {sheet.name}"))
+        files.append(PackageFile(f"templates/{sheet.name}.dxf", dxf(sheet), f"1:1 template of {sheet.name}"))
+        tiling = tile(sheet, paper_size_mm(design.shop.paper), number=design.number, revision=design.revision)
+        pages += tiling.pages
+    title = f"{design.number} {design.revision} templates"
+    files.append(PackageFile("templates/templates.pdf", pdf(pages, title), "the templates, tiled at exactly 1:1"))
+    return tuple(files)
+
+
 def _model(order: Order) -> Files:
-    from fabgen.export import glb, step
+    from fabgen.export import step
     from fabgen.model.assembly import assembly
 
-    items = assembly(order.arranged)
+    items, name = assembly(order.arranged), order.arranged.design.name
     return (
-        PackageFile("model/assembly.step", step.assembly_bytes(items), "the whole array, named, coloured, instanced"),
-        PackageFile("model/assembly.glb", glb.assembly_bytes(items), "the whole array for viewing, metres, y up"),
+        PackageFile("model/assembly.step", step.assembly_bytes(items, name=name), "the array, named and instanced"),
     )
 
 
-_WRITERS: dict[str, Callable[[Order], Files]] = {"tables": _tables, "model": _model}
+_WRITERS: dict[str, Callable[[Order], Files]] = {"tables": _tables, "templates": _templates, "model": _model}

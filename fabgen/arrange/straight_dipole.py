@@ -110,7 +110,7 @@ def _halves(layout: Layout, design: Design, feed: Feed, line: LedgerLine, size: 
 
 def _lid_screws(layout: Layout, design: Design, feed: Feed, size: FeedBlockSize) -> None:
     element = design.element(feed.element)
-    (x_mm, y_mm), top_mm = size.post_mm, design.boom.top_mm + size.top_mm
+    (x_mm, y_mm), top_mm = size.lid_screw_mm, design.boom.top_mm + size.top_mm
     pilot_fit_mm = size.pilot_mm - fastener(size.lid_screw).diameter_mm
     for count, (along, across) in enumerate(((1, 1), (1, -1), (-1, 1), (-1, -1)), start=1):
         name = f"{element.id} lid screw {count}"

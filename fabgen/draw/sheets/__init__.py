@@ -1,0 +1,1 @@
+"""The sheets of a package: one file each with a function `sheets`."""
