@@ -41,13 +41,14 @@ def undocumented(tree: ast.Module) -> Iterator[str]:
 def loose_records(path: str, tree: ast.Module) -> Iterator[str]:
     """Dataclasses that could be changed after they are made.
 
-    One that caches a property needs its dict; one that gathers, outside the records that stages pass on, starts with
-    empty collections.
+    One that caches a property needs its dict; one that gathers, outside the records that stages pass on, holds
+    collections that grow.
     """
     for node in ast.walk(tree):
         if isinstance(node, ast.ClassDef) and not node.name.startswith("_"):
             text = ast.unparse(node)
-            if "default_factory=" in text and not path.startswith("design/"):
+            gathers = any(kind in text for kind in (": list[", ": dict[", ": set["))
+            if gathers and not path.startswith("design/"):
                 continue
             for mark in map(ast.unparse, node.decorator_list):
                 frozen = "frozen=True" in mark and ("slots=True" in mark or "cached_property" in text)

@@ -41,6 +41,8 @@ DIMENSIONLESS = {
     "relative": "a part of the value it qualifies",
     "measured": "a finding's own field `unit` says it",
     "required": "a finding's own field `unit` says it",
+    "holes": "x, y and diameter in mm, three numbers for each hole",
+    "growth": "one mesh step over its neighbour",
     "node": "a part of a rod's half length, 0 to 1",
     "low": "a bound of an integral, in the integrand's unit",
     "high": "a bound of an integral, in the integrand's unit",
