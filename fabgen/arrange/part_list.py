@@ -5,7 +5,7 @@ from dataclasses import dataclass
 from typing import Any, Protocol
 
 from fabgen.design import part_sizes
-from fabgen.design.arranged import Shape, Source
+from fabgen.design.arranged import Box, Shape, Source
 
 
 class Size(Protocol):
@@ -24,7 +24,7 @@ class Size(Protocol):
 
 @dataclass(frozen=True, slots=True)
 class LidSize:
-    """A feed block's lid; its envelope lies in the block's rabbet."""
+    """A feed block's lid: a plate in the block's rabbet and the wedge that grips the cable."""
 
     block: part_sizes.FeedBlockSize
 
@@ -35,8 +35,13 @@ class LidSize:
 
     @property
     def shapes(self) -> Sequence[Shape]:
-        """The block's envelope holds the lid."""
-        return self.block.shapes
+        """Plate and wedge."""
+        block = self.block
+        (x, y), (x0, x1), (y0, y1) = block.lid_mm, block.slot_x_mm, block.tongue_y_mm
+        return (
+            Box((-x, -y, block.lid_seat_mm), (x, y, block.top_mm)),
+            Box((x0, y0, block.tongue_low_mm), (x1, y1, block.lid_seat_mm)),
+        )
 
 
 def _lid(**parameters: Any) -> LidSize:

@@ -1,0 +1,67 @@
+"""Does anything collide, or stand too near to something it must not touch?"""
+
+from collections.abc import Iterator
+
+from fabgen.check.finding import finding
+from fabgen.check.pairs import near_pairs
+from fabgen.design.arranged import Arranged, Placed
+from fabgen.design.distances import box_of, parts_distance_mm, point_distance_mm
+from fabgen.design.findings import Finding
+
+_MAST_MM = 5.0
+_ADVICE = "move one of them along the boom, or choose a smaller part"
+
+
+def findings(arranged: Arranged) -> Iterator[Finding]:
+    """C10 too near, C11 mast too near, C12 metal near a rod's tip."""
+    for pair in near_pairs(arranged):
+        if pair.interface is None and pair.distance_mm < pair.limit_mm - 1e-9:
+            where = f"{pair.first.name} / {pair.second.name}"
+            yield finding("C10", "fail", where, _ADVICE, measured=pair.distance_mm, required=pair.limit_mm, unit="mm")
+    yield from _mast(arranged)
+    yield from _tips(arranged)
+
+
+def _mast(arranged: Arranged) -> Iterator[Finding]:
+    """The mast against everything that is not the clamp or the boom."""
+    if arranged.mast is None:
+        return
+    for part in arranged.placed:
+        if part.owner in ("clamp", "boom"):
+            continue
+        distance_mm = parts_distance_mm((arranged.mast,), part.shapes)
+        if distance_mm < _MAST_MM - 1e-9:
+            advice = "move the clamp along the boom"
+            yield finding("C11", "fail", part.name, advice, measured=distance_mm, required=_MAST_MM, unit="mm")
+
+
+def _tips(arranged: Arranged) -> Iterator[Finding]:
+    """Metal of the clamp, the mast and the feeds near the tip of another element's rod."""
+    limit_mm = arranged.design.tip_clearance_mm
+    bodies = [(p.name, p.owner, p.shapes) for p in arranged.placed if p.metal and p.part not in ("rod", "boom")]
+    if arranged.mast is not None:
+        bodies.append(("mast", "clamp", (arranged.mast,)))
+    for rod in arranged.placed:
+        if rod.part != "rod":
+            continue
+        for tip in _outer_tips(rod):
+            for name, owner, shapes in bodies:
+                if owner == rod.owner:
+                    continue
+                distance_mm = min(point_distance_mm(tip, shape) for shape in shapes)
+                if distance_mm < limit_mm - 1e-9:
+                    where, advice = (
+                        f"{rod.name} tip / {name}",
+                        "keep metal away from rod tips: the voltage is highest there",
+                    )
+                    yield finding("C12", "fail", where, advice, measured=distance_mm, required=limit_mm, unit="mm")
+
+
+def _outer_tips(rod: Placed) -> list[tuple[float, float, float]]:
+    """Both ends of a whole rod, the outer end of a half rod."""
+    box = box_of(rod.shapes[0])
+    x, z = (box.low[0] + box.high[0]) / 2, (box.low[2] + box.high[2]) / 2
+    ends = [box.low[1], box.high[1]]
+    if box.low[1] * box.high[1] > 0:
+        ends = [max(ends, key=abs)]
+    return [(x, y, z) for y in ends]
