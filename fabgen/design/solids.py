@@ -1,0 +1,46 @@
+"""What the model stage hands to the writers: distinct parts with solids and meshes, and where each of them stands.
+
+The solids are the kernel's own objects, carried through untouched; nothing here loads the kernel.
+"""
+
+from dataclasses import dataclass
+from typing import Any
+
+from fabgen.design.arranged import Frame, Vector
+
+Colour = tuple[float, float, float]
+"""Red, green, blue from 0 to 1, sRGB."""
+
+
+@dataclass(frozen=True, slots=True)
+class Mesh:
+    """A closed surface of triangles in mm, each counter-clockwise seen from outside."""
+
+    vertices_mm: tuple[Vector, ...]
+    triangles: tuple[tuple[int, int, int], ...]
+
+
+@dataclass(frozen=True, slots=True, eq=False)
+class Product:
+    """One distinct part; the same object at every place where the part stands.
+
+    Attributes:
+        name: readable, ASCII, unique within its assembly.
+        solid: the kernel's solid (`cadquery.Solid`) in the part's own frame.
+        mesh: the same surface in triangles.
+        colour: by kind of material.
+    """
+
+    name: str
+    solid: Any
+    mesh: Mesh
+    colour: Colour
+
+
+@dataclass(frozen=True, slots=True)
+class AssemblyItem:
+    """One place of a part: occurrence name, part, and where the part's frame stands."""
+
+    name: str
+    product: Product
+    frame: Frame

@@ -1,0 +1,42 @@
+"""One solid per distinct part, built once by the part's file in `model/parts`."""
+
+import functools
+
+from fabgen import registry
+from fabgen.design.arranged import Frame, Parameters, Placed
+from fabgen.errors import ProgramError
+from fabgen.model import kernel
+from fabgen.model.kernel import cq
+
+GROWTH = "hole_growth_mm"
+
+
+@functools.cache
+def solid_of(part: str, parameters: Parameters = ()) -> cq.Solid:
+    """The solid of a distinct part in the part's own frame.
+
+    Args:
+        part: a file in `model/parts`.
+        parameters: its keyword arguments, as in `Placed.parameters`.
+
+    Raises:
+        ProgramError: there is no such part, or it did not come out as one solid with a volume; a cut that leaves two
+            pieces is valid geometry to the kernel, so pieces are counted.
+    """
+    solid = kernel.solid_of(registry.entry("model/parts", part).function()(**dict(parameters)))
+    if solid.Volume() <= 0:
+        raise ProgramError(f"part {part} came out without a volume")
+    return solid
+
+
+def finished(placed: Placed) -> cq.Solid:
+    """The solid of a placed part as it goes together.
+
+    A printed bore is drawn larger by what it comes out smaller; here it has the size that it comes out with.
+    """
+    return solid_of(placed.part, tuple((name, value) for name, value in placed.parameters if name != GROWTH))
+
+
+def location(frame: Frame) -> cq.Location:
+    """Where a part's frame stands, as the kernel says it."""
+    return cq.Location(cq.Plane(origin=frame.origin, xDir=frame.x, normal=frame.z))
