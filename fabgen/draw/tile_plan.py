@@ -28,17 +28,17 @@ class Plan:
     Attributes:
         paper_mm: width and height of a page.
         margin_mm: edge of the paper that stays empty.
-        joins_x, joins_y: places of the joins on the sheet.
-        columns, rows: from where to where each column and row of pages shows the sheet; rows from below.
+        joins_x_mm, joins_y_mm: places of the joins on the sheet.
+        columns_mm, rows_mm: from where to where each column and row of pages shows the sheet; rows from below.
         lost: how many items that should stay whole are on no page whole.
     """
 
     paper_mm: tuple[float, float]
     margin_mm: float
-    joins_x: tuple[float, ...]
-    joins_y: tuple[float, ...]
-    columns: tuple[tuple[float, float], ...]
-    rows: tuple[tuple[float, float], ...]
+    joins_x_mm: tuple[float, ...]
+    joins_y_mm: tuple[float, ...]
+    columns_mm: tuple[tuple[float, float], ...]
+    rows_mm: tuple[tuple[float, float], ...]
     lost: int
 
     @property
@@ -67,7 +67,9 @@ def plan_pages(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, m
     joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, across)
     columns = _spans(joins_x, sheet.width_mm, right - left, overlap_mm, along)
     rows = _spans(joins_y, sheet.height_mm, top - bottom, overlap_mm, across)
-    return replace(empty, joins_x=joins_x, joins_y=joins_y, columns=columns, rows=rows, lost=lost_x + lost_y)
+    return replace(
+        empty, joins_x_mm=joins_x, joins_y_mm=joins_y, columns_mm=columns, rows_mm=rows, lost=lost_x + lost_y
+    )
 
 
 def stays_whole(item: Item) -> bool:

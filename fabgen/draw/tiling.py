@@ -63,8 +63,10 @@ def tile(
         for size in ((max(paper_mm), min(paper_mm)), (min(paper_mm), max(paper_mm)))
     ]
     tall = sheet.height_mm > sheet.width_mm
-    plan = min(plans, key=lambda p: (len(p.columns) * len(p.rows), p.lost, (p.paper_mm[0] > p.paper_mm[1]) == tall))
-    windows = [(x0, y0, x1, y1) for y0, y1 in reversed(plan.rows) for x0, x1 in plan.columns]
+    plan = min(
+        plans, key=lambda p: (len(p.columns_mm) * len(p.rows_mm), p.lost, (p.paper_mm[0] > p.paper_mm[1]) == tall)
+    )
+    windows = [(x0, y0, x1, y1) for y0, y1 in reversed(plan.rows_mm) for x0, x1 in plan.columns_mm]
     items = [item for item in sheet.items if item.layer != "stamp"]
     texts, dropped = _placed_texts(items, windows)
     shapes = [item for item in items if not isinstance(item, Text)] + _join_marks(plan, items)
@@ -73,7 +75,7 @@ def tile(
         kept = [part for shape in shapes for part in clipped(shape, window)] + texts[k]
         page = _page(sheet, plan, k, window, kept, f"{number} {revision}")
         pages.append(stamped(page) if sheet.on("stamp") else page)
-    return Tiling(tuple(pages), len(plan.rows), len(plan.columns), tuple(dropped))
+    return Tiling(tuple(pages), len(plan.rows_mm), len(plan.columns_mm), tuple(dropped))
 
 
 def _placed_texts(items: list[Item], windows: list[Box]) -> tuple[list[list[Item]], list[Text]]:
@@ -112,14 +114,14 @@ def _join_marks(plan: Plan, items: list[Item]) -> list[Item]:
     """Join lines with two target marks per page side, on the sheet, so that both neighbours print the same ones."""
     pen = Pen()
     solid = [bounds(item) for item in items if stays_whole(item)]
-    for x in plan.joins_x:
-        pen.line("frame", x, plan.rows[0][0], x, plan.rows[-1][1])
-        for low, high in plan.rows:
+    for x in plan.joins_x_mm:
+        pen.line("frame", x, plan.rows_mm[0][0], x, plan.rows_mm[-1][1])
+        for low, high in plan.rows_mm:
             for y in _free_places(low, high, [(b[1], b[3]) for b in solid if near(b[0], b[2], x)]):
                 _target(pen, x, y)
-    for y in plan.joins_y:
-        pen.line("frame", plan.columns[0][0], y, plan.columns[-1][1], y)
-        for low, high in plan.columns:
+    for y in plan.joins_y_mm:
+        pen.line("frame", plan.columns_mm[0][0], y, plan.columns_mm[-1][1], y)
+        for low, high in plan.columns_mm:
             for x in _free_places(low, high, [(b[0], b[2]) for b in solid if near(b[1], b[3], y)]):
                 _target(pen, x, y)
     return pen.items
@@ -155,10 +157,10 @@ def _page(sheet: Sheet, plan: Plan, index: int, window: Box, kept: list[Item], m
     pen = Pen()
     pen.rectangle("frame", *frame)
     pen.add(moved(item, dx, dy) for item in kept)
-    joins_x = [x + dx for x in plan.joins_x if window[0] < x < window[2]]
+    joins_x = [x + dx for x in plan.joins_x_mm if window[0] < x < window[2]]
     if station is not None:
-        _ruler(pen, frame, station, joins_x, width - plan.margin_mm)
-    count, columns = len(plan.rows) * len(plan.columns), len(plan.columns)
+        _ruler(pen, frame, station, joins_x, (left - 1.5, width - plan.margin_mm))
+    count, columns = len(plan.rows_mm) * len(plan.columns_mm), len(plan.columns_mm)
     row, column = divmod(index, columns)
     _neighbours(pen, plan, frame, (row, column), index)
     pen.bar_100(left - 4, (bottom + top) / 2 - 50, up=True, label="100 mm across")
@@ -168,18 +170,18 @@ def _page(sheet: Sheet, plan: Plan, index: int, window: Box, kept: list[Item], m
     return pen.sheet(f"{sheet.name}-{index + 1:02d}", f"{sheet.title} ({index + 1}/{count})", width, height, station)
 
 
-def _ruler(pen: Pen, frame: Box, station_at_x0_mm: float, joins: list[float], limit_mm: float) -> None:
+def _ruler(pen: Pen, frame: Box, station_at_x0_mm: float, joins: list[float], room: tuple[float, float]) -> None:
     """Ticks at every 10 mm of station below and above the window; joins, ends and every 50 mm have their number."""
     left, bottom, right, top = frame
     first = math.ceil((left + station_at_x0_mm) / STATION_STEP_MM - 1e-9)
     last = math.floor((right + station_at_x0_mm) / STATION_STEP_MM + 1e-9)
     steps = range(first, last + 1)
     wanted = [round((x + station_at_x0_mm) / STATION_STEP_MM) for x in joins]
-    wanted += [first, last, last - 1, *(step for step in steps if step % _LABEL_STEP == 0)]
+    wanted += [first, first + 1, last, last - 1, *(step for step in steps if step % _LABEL_STEP == 0)]
     lettered: list[int] = []
     for step in wanted:
-        half_mm = text_width_mm(_station(step), LETTERING_MM) / 2
-        fits = step * STATION_STEP_MM - station_at_x0_mm + half_mm <= limit_mm
+        x, half = step * STATION_STEP_MM - station_at_x0_mm, text_width_mm(_station(step), LETTERING_MM) / 2
+        fits = room[0] <= x - half and x + half <= room[1]
         if fits and all(abs(step - other) * STATION_STEP_MM >= _LABEL_ROOM_MM for other in lettered):
             lettered.append(step)
     for step in steps:
@@ -197,14 +199,14 @@ def _station(step: int) -> str:
 def _neighbours(pen: Pen, plan: Plan, frame: Box, place: tuple[int, int], index: int) -> None:
     """Which page joins on each side."""
     left, _, right, top = frame
-    (row, column), columns = place, len(plan.columns)
+    (row, column), columns = place, len(plan.columns_mm)
     if column > 0:
         pen.text(left, top + 6.8, f"← join to sheet {index}")
     if column < columns - 1:
         pen.text(right, top + 6.8, f"join to sheet {index + 2} →", anchor="end")
     if row > 0:
         pen.text(plan.room[0] - 5, plan.room[3], f"sheet {index + 1 - columns} →", anchor="end", angle_deg=90)
-    if row < len(plan.rows) - 1:
+    if row < len(plan.rows_mm) - 1:
         pen.text(plan.room[0] - 5, plan.room[1], f"← sheet {index + 1 + columns}", angle_deg=90)
 
 

@@ -9,7 +9,7 @@ from typing import Any
 import svgwrite
 
 from fabgen.design.drawing import LAYERS, Arc, Circle, Fill, Item, Layer, Line, Point, Polyline, Sheet, Text
-from fabgen.design.lettering import CAP_EM
+from fabgen.design.lettering import CAP_EM, text_width_mm
 
 FONT_FAMILY = "'DejaVu Sans', sans-serif"
 
@@ -87,6 +87,10 @@ def _text(drawing: Any, item: Text, anchor: Point) -> Any:
         stroke="none",
         style="font-kerning:none;font-variant-ligatures:none;white-space:pre",
     )
+    width = text_width_mm(item.text, item.height_mm)
+    if width > 0:  # a viewer without the font squeezes its own into the room that was reckoned with
+        element.attribs["textLength"] = _number(width)
+        element.attribs["lengthAdjust"] = "spacingAndGlyphs"
     if item.angle_deg:
         x, y = anchor
         element.attribs["transform"] = f"rotate({_number(-item.angle_deg)} {x} {y})"

@@ -7,6 +7,7 @@ import xml.etree.ElementTree as ET
 import pytest
 
 from fabgen.design.drawing import LAYERS, Arc, Sheet, Text
+from fabgen.design.lettering import text_box
 from fabgen.design.pen import Pen
 from fabgen.export.svg import svg
 
@@ -104,6 +105,15 @@ def test_lettering_has_its_height_anchor_and_angle():
     assert text.get("text-anchor") == "middle"
     assert text.get("transform") == "rotate(-90 60 80)"
     assert text.get("font-family").startswith("'DejaVu Sans'")
+
+
+def test_another_font_is_squeezed_into_the_room_that_was_reckoned_with():
+    text = Text("text", 10, 10, "40.000", 2.5)
+    [element] = group(parsed(Sheet("s", "s", 100, 100, (text, Text("text", 5, 5, "")))), "text").findall(f"{NS}text")[
+        :1
+    ]
+    box = text_box(text)
+    assert float(element.get("textLength")) == pytest.approx(box[2] - box[0], abs=1e-5)
 
 
 @pytest.mark.parametrize("bad", ["\x00\x08", "\ud800", "\ufffe", "a\nb\tc"])
