@@ -1,6 +1,8 @@
 """README and DEVELOPERS keep their promises: two commands that run as they stand, a decision for every dependency."""
 
 import re
+import subprocess
+import sys
 import tomllib
 from pathlib import Path
 from typing import Any
@@ -69,6 +71,16 @@ def test_files_that_the_documents_name_exist(root: Path, readme: str, developers
     links = re.findall(r"\]\(([\w./-]+)\)", readme + developers)
     named = re.findall(r"`((?:fabgen|tests|designs)/[\w./-]+\.\w+)`", readme + developers)
     assert [path for path in {*links, *named} if not (root / path).is_file()] == []
+
+
+def test_the_design_in_the_readme_is_clear(root: Path, tmp_path: Path, readme: str) -> None:
+    text = next(block for language, block in fences(readme) if language == "yaml")
+    design = tmp_path / "readme.yaml"
+    design.write_text(text, encoding="utf-8")
+    done = subprocess.run(
+        [sys.executable, "-m", "fabgen", "check", str(design)], cwd=root, capture_output=True, text=True, check=False
+    )
+    assert done.returncode == 0, done.stdout + done.stderr
 
 
 def test_every_command_is_in_the_readme(readme: str) -> None:
