@@ -120,10 +120,17 @@ def _mast_bolts(layout: Layout, clamp: Clamp, size: ClampSize, station_mm: float
     leg_mm = math.ceil(clamp.mast_mm / 2 + size.plate_mm + 2 * nut_mm)
     for count, across_mm in enumerate((-size.leg_t_mm, size.leg_t_mm), start=1):
         _u_bolt(
-            layout, f"mast U-bolt {count}", clamp.mast_mm, leg_mm, Frame(_at(station_mm, away, mast_mm, across_mm), away),
-            legs=[(side * size.leg_x_mm, across_mm) for side in (-1, 1)], station_mm=station_mm, away=away, face_mm=face_mm,
+            layout,
+            f"mast U-bolt {count}",
+            clamp.mast_mm,
+            leg_mm,
+            Frame(_at(station_mm, away, mast_mm, across_mm), z=away),
+            legs=[(side * size.leg_x_mm, across_mm) for side in (-1, 1)],
+            station_mm=station_mm,
+            away=away,
+            face_mm=face_mm,
             up=_minus(away),
-        )  # fmt: skip
+        )
 
 
 def _boom_u_bolts(layout: Layout, design: Design, size: ClampSize, station_mm: float, away: Vector) -> None:
@@ -135,10 +142,17 @@ def _boom_u_bolts(layout: Layout, design: Design, size: ClampSize, station_mm: f
     for count, x_mm in enumerate((-size.bolt_x_mm, size.bolt_x_mm), start=1):
         frame = Frame((station_mm + x_mm, 0.0, 0.0), z=_minus(away), x=turned)
         _u_bolt(
-            layout, f"boom U-bolt {count}", boom.width_mm, leg_mm, frame,
-            legs=[(x_mm, side * size.bolt_t_mm) for side in (-1, 1)], station_mm=station_mm, away=away, face_mm=face_mm,
+            layout,
+            f"boom U-bolt {count}",
+            boom.width_mm,
+            leg_mm,
+            frame,
+            legs=[(x_mm, side * size.bolt_t_mm) for side in (-1, 1)],
+            station_mm=station_mm,
+            away=away,
+            face_mm=face_mm,
             up=away,
-        )  # fmt: skip
+        )
         layout.meet(f"boom U-bolt {count}", "boom", "bow on boom", 0.0)
     if boom.hollow:
         outside_mm = boom.inside_width_mm - TUBE_SLEEVE_PLAY_MM

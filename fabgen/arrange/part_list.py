@@ -54,6 +54,8 @@ SIZES: dict[str, tuple[Callable[..., Size], Source]] = {
     "crush_sleeve": (part_sizes.crush_sleeve_size, "made"),
     "feed_block": (part_sizes.feed_block_size, "printed"),
     "feed_lid": (_lid, "printed"),
+    "folded_rod": (part_sizes.folded_rod_size, "made"),
+    "folded_saddle": (part_sizes.folded_saddle_size, "printed"),
     "nut": (part_sizes.nut_size, "bought"),
     "push_ring": (part_sizes.push_ring_size, "printed"),
     "rod": (part_sizes.rod_size, "made"),

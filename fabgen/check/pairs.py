@@ -22,7 +22,6 @@ GROUPS = {
     "crush_sleeve": "inside boom",
     "feed_block": "feed",
     "feed_lid": "feed",
-    "folded_lid": "feed",
     "folded_rod": "rod",
     "folded_saddle": "feed",
     "nut": "fastener",

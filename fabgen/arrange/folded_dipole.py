@@ -1,0 +1,157 @@
+"""A folded dipole: one rod bent to a flat loop, pushed into a saddle on the boom's top and screwed to it."""
+
+from fabgen.arrange.fasteners import hold_down, nut, screw, screw_length_mm, washer
+from fabgen.arrange.layout import SIDES, Layout, side_name
+from fabgen.design.arranged import Cut, Frame, Vector
+from fabgen.design.design import Design, Feed
+from fabgen.design.feed_layout import TAG_MM
+from fabgen.design.folded_saddle_sizes import RETAINER
+from fabgen.design.ledger import LedgerLine
+from fabgen.design.part_fasteners import fastener
+from fabgen.design.part_sizes import FoldedRodSize, FoldedSaddleSize, folded_rod_size, folded_saddle_size
+from fabgen.stock import tables
+
+_FRONT: Vector = (1.0, 0.0, 0.0)
+_BACK: Vector = (-1.0, 0.0, 0.0)
+
+
+def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[Cut]]:
+    """Bent rod, saddle, screws, holes and the one piece to saw and bend."""
+    element, boom = design.element(feed.element), design.boom
+    diameter_mm = element.rod.diameter_mm
+    saddle_numbers = {
+        "rod_diameter_mm": diameter_mm,
+        "spacing_mm": feed.spacing_mm,
+        "gap_mm": feed.gap_mm,
+        "height_mm": feed.height_mm,
+        "cable_mm": feed.cable_mm,
+        "boom_width_mm": boom.width_mm,
+        "boom_diameter_mm": boom.diameter_mm,
+        "hole_growth_mm": design.printer.hole_growth_mm,
+    }
+    size = folded_saddle_size(
+        rod_diameter_mm=diameter_mm,
+        spacing_mm=feed.spacing_mm,
+        gap_mm=feed.gap_mm,
+        height_mm=feed.height_mm,
+        cable_mm=feed.cable_mm,
+        boom_width_mm=boom.width_mm,
+        boom_diameter_mm=boom.diameter_mm,
+        hole_growth_mm=design.printer.hole_growth_mm,
+    )
+    bent = folded_rod_size(
+        length_mm=line.cut_mm,
+        spacing_mm=feed.spacing_mm,
+        diameter_mm=diameter_mm,
+        gap_mm=feed.gap_mm,
+        cross_hole_mm=size.rod_hole_mm,
+        cross_hole_from_end_mm=size.rod_hole_from_end_mm,
+    )
+    layout, saddle = Layout(), f"{element.id} folded saddle"
+    layout.put(
+        "folded_rod",
+        element.id,
+        {
+            "length_mm": line.cut_mm,
+            "spacing_mm": feed.spacing_mm,
+            "diameter_mm": diameter_mm,
+            "gap_mm": feed.gap_mm,
+            "cross_hole_mm": size.rod_hole_mm,
+            "cross_hole_from_end_mm": size.rod_hole_from_end_mm,
+        },
+        owner=element.id,
+        label=f"folded rod {diameter_mm:g} x {line.cut_mm:.3f}",
+        material=element.rod.material,
+        frame=Frame((element.station_mm, 0.0, boom.top_mm + feed.height_mm)),
+    )
+    layout.put(
+        "folded_saddle",
+        saddle,
+        saddle_numbers,
+        owner=element.id,
+        label=f"folded saddle rod {diameter_mm:g} height {feed.height_mm:g}",
+        material=feed.material,
+        frame=Frame((element.station_mm, 0.0, boom.top_mm)),
+    )
+    fit_mm = size.bore_mm - diameter_mm
+    layout.meet(element.id, saddle, "limbs in slots", 0.0, fit_mm)
+    layout.meet(saddle, "boom", "saddle on boom", 0.0)
+    hold_down(
+        layout,
+        design,
+        owner=element.id,
+        block=saddle,
+        station_mm=element.station_mm,
+        offsets_mm=size.screw_x_mm,
+        seat_mm=size.seat_mm,
+        length_mm=size.screw_length_mm,
+        thread=size.screw,
+        purpose="feed screw",
+    )
+    _terminals(layout, design, feed, size)
+    _retainer(layout, design, feed, size)
+    return layout, [_cut(design, feed, line, bent, size)]
+
+
+def _terminals(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSize) -> None:
+    """A screw along the boom through each fed end, its nut in the saddle's back."""
+    element, bolt = design.element(feed.element), size.terminal_fastener
+    z_mm, saddle = design.boom.top_mm + feed.height_mm, f"{element.id} folded saddle"
+    head_mm = element.station_mm + element.rod.diameter_mm / 2 + TAG_MM
+    for side in SIDES:
+        y_mm = side * size.terminal_y_mm
+        bolt_name, nut_name = (f"{element.id} terminal {what} {side_name(side)}" for what in ("screw", "nut"))
+        seat = (head_mm, y_mm, z_mm)
+        screw(layout, bolt_name, size.terminal, size.terminal_length_mm, owner=element.id, seat=seat, up=_FRONT)
+        trap = (element.station_mm + size.trap_front_mm, y_mm, z_mm)
+        nut(layout, nut_name, size.terminal, owner=element.id, seat=trap, up=_BACK)
+        layout.meet(bolt_name, element.id, "screw across rod", 0.0, size.rod_hole_mm - bolt.diameter_mm)
+        layout.meet(bolt_name, saddle, "screw in block", 0.0, bolt.clearance_mm - bolt.diameter_mm)
+        layout.meet(nut_name, saddle, "nut in trap", 0.0)
+        layout.meet(nut_name, bolt_name, "thread in nut", 0.0, 0.0)
+
+
+def _retainer(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSize) -> None:
+    """A screw over the upper limb whose washer keeps it in its slot."""
+    element, saddle = design.element(feed.element), f"{feed.element} folded saddle"
+    thickness_mm = tables.washer(RETAINER).thickness_mm
+    x_mm, z_mm = element.station_mm + element.rod.diameter_mm / 2, design.boom.top_mm + size.retainer_z_mm
+    ring, bolt = f"{element.id} retainer washer", f"{element.id} retainer screw"
+    washer(layout, ring, RETAINER, owner=element.id, seat=(x_mm, 0.0, z_mm), up=_FRONT)
+    deepest_mm = element.rod.diameter_mm / 2 + thickness_mm - size.back_mm
+    length_mm = max(length for length in (6.0, 8.0, 10.0, 12.0, 16.0) if length <= max(deepest_mm, 6.0))
+    screw(
+        layout,
+        bolt,
+        RETAINER,
+        screw_length_mm(length_mm),
+        owner=element.id,
+        seat=(x_mm + thickness_mm, 0.0, z_mm),
+        up=_FRONT,
+        head="pan",
+    )
+    thread_mm = fastener(RETAINER).diameter_mm
+    layout.meet(ring, element.id, "washer on limb", 0.0)
+    layout.meet(bolt, ring, "head on washer", 0.0, tables.washer(RETAINER).bore_mm - thread_mm)
+    layout.meet(bolt, saddle, "thread in plastic", 0.0, size.pilot_mm - thread_mm)
+
+
+def _cut(design: Design, feed: Feed, line: LedgerLine, bent: FoldedRodSize, size: FoldedSaddleSize) -> Cut:
+    """The rod as sawn, before it is bent; one millimetre of finished length is two of it."""
+    element = design.element(feed.element)
+    return Cut(
+        piece=element.id,
+        element=element.id,
+        stock="rod",
+        rod_mm=element.rod.diameter_mm,
+        material=element.rod.material.name,
+        cut_mm=round(bent.developed_mm, 3),
+        trim_mm=2 * line.trim_mm,
+        half_mm=round(bent.developed_mm / 2, 3),
+        projection_mm=line.cut_mm / 2 - size.y_mm[1],
+        tolerance_mm=line.tolerance_mm,
+        note=(
+            f"bend both ends round {bent.bend_radius_mm:g} to the centre line, {line.cut_mm:g} over the bends; "
+            f"hole {size.rod_hole_mm:g} across, {size.rod_hole_from_end_mm:g} from each end"
+        ),
+    )
