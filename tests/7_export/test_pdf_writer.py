@@ -146,6 +146,15 @@ def test_text_arrives_as_written_and_searchable():
     assert lines.count("100 mm") == 2
 
 
+def test_print_dialogs_are_asked_not_to_scale_and_the_file_stays_sound():
+    data = pdf([recorded()], "a title with /Type/Catalog in it")
+    catalog = pypdf.PdfReader(io.BytesIO(data), strict=True).root_object
+    assert catalog["/ViewerPreferences"]["/PrintScaling"] == "/None"
+    document = pymupdf.open(stream=data)
+    assert not document.is_repaired
+    assert document.page_count == 1
+
+
 def test_title_is_data():
     reader = pypdf.PdfReader(io.BytesIO(pdf([recorded()], '#panic() "<b>" \ud800\n x')))
     assert reader.metadata.title == '#panic() "<b>"    x'
