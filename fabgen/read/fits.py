@@ -3,9 +3,11 @@
 Source: table of printing practice in `stock`, common practice.
 """
 
+import math
 from typing import Literal
 
 from fabgen.design.design import AllowanceChoice, Boom, Bush, Keeper, Material, Mount, Saddle, Style
+from fabgen.physics.split_ring import largest_push_ring_outside_mm
 from fabgen.read.compound import table_material
 from fabgen.read.grammar import AllowanceKeys, BushKeys, KeeperKeys, MountKeys, SaddleKeys
 from fabgen.read.reasons import Reasons
@@ -17,6 +19,15 @@ HOLE_OVER_ROD_MM: dict[Style, float] = {
     "through-nonmetal": 0.1,
 }
 """What the smallest hole is wider than its rod by; common practice."""
+
+SNAP_GRIP_MM = 0.2
+"""What a snap keeper's bore is below the rod; common practice."""
+
+LESSER_GRIPS_MM = (0.25, 0.2, 0.15, 0.1)
+"""Grips of a split ring on rods too thin for the usual one."""
+
+THINNEST_RING_MM = 2.4
+"""What a split ring is wider than its rod by: a wall of three printed lines each side; common practice."""
 
 PRINTED = "ASA"
 """What small outdoor parts are printed in by default: it keeps its strength in sunlight (common practice)."""
@@ -57,7 +68,7 @@ def mount_for_rod(
         bush = _bush(f"{path}.bush", keys.bush or BushKeys.model_construct(), rod_mm, hole_mm, boom, reasons)
     keeper = None
     if hold == "keepers":
-        keeper = _keeper(f"{path}.keeper", keys.keeper or KeeperKeys.model_construct(), rod_mm, bush, hole_mm, reasons)
+        keeper = _keeper(f"{path}.keeper", keys.keeper or KeeperKeys.model_construct(), rod_mm, bush, reasons)
     saddle = None
     if keys.style == "on-top":
         saddle = _saddle(f"{path}.saddle", keys.saddle or SaddleKeys.model_construct(), rod_mm, reasons)
@@ -127,23 +138,61 @@ def _bush(path: str, keys: BushKeys, rod_mm: float, hole_mm: float, boom: Boom, 
     )
 
 
-def _keeper(path: str, keys: KeeperKeys, rod_mm: float, bush: Bush | None, hole_mm: float, reasons: Reasons) -> Keeper:
-    grip = tables.print_practice("split_keeper_grip_mm")
-    stop_mm = bush.flange_mm - 1 if bush is not None else max(hole_mm, rod_mm) + 6
+def _keeper(path: str, keys: KeeperKeys, rod_mm: float, bush: Bush | None, reasons: Reasons) -> Keeper:
+    pick = reasons.pick
+    usual: Literal["push-ring", "snap"] = "push-ring"
+    kind = pick(f"{path}.kind", keys.kind, usual)
+    if kind == "snap":
+        bore_mm, why_bore = _tidy(rod_mm - SNAP_GRIP_MM), f"computed, rod − {SNAP_GRIP_MM:g} mm"
+        outside_mm, why_outside = _tidy(rod_mm + min(3.2, 0.8 * rod_mm)), "computed, rod + 3.2 mm, 1.8 × rod if thin"
+    else:
+        bore_mm, why_bore = default_ring_bore_mm(rod_mm)
+        largest_mm = bush.flange_mm - 1 if bush is not None else rod_mm + 6
+        ring_bore_mm = keys.bore_mm if keys.bore_mm is not None else bore_mm
+        outside_mm, why_outside = default_ring_outside_mm(rod_mm, ring_bore_mm, largest_mm)
     return Keeper(
-        kind=reasons.pick(f"{path}.kind", keys.kind, "push-ring"),
+        kind=kind,
         material=printed_material(f"{path}.material", keys.material, reasons),
-        bore_mm=reasons.pick(f"{path}.bore", keys.bore_mm, _tidy(rod_mm - grip), f"computed, rod − {grip:g} mm"),
-        outside_mm=reasons.pick(f"{path}.outside", keys.outside_mm, _tidy(stop_mm), "computed"),
-        length_mm=reasons.pick(f"{path}.length", keys.length_mm, 5.0),
+        bore_mm=pick(f"{path}.bore", keys.bore_mm, bore_mm, why_bore),
+        outside_mm=pick(f"{path}.outside", keys.outside_mm, outside_mm, why_outside),
+        length_mm=pick(f"{path}.length", keys.length_mm, 6.0 if kind == "snap" else 5.0),
     )
+
+
+def default_ring_bore_mm(rod_mm: float) -> tuple[float, str]:
+    """Bore of a split ring and its reason: the usual grip, or less where that strains the thinnest ring too far."""
+    usual = tables.print_practice("split_keeper_grip_mm")
+    for grip in (usual, *(less for less in LESSER_GRIPS_MM if less < usual)):
+        bore_mm = rod_mm - grip
+        if bore_mm > 0 and _widest_ring_mm(rod_mm, bore_mm) >= rod_mm + THINNEST_RING_MM:
+            why = "" if grip == usual else f": {usual:g} mm would strain it over {_limit_percent():g} %"
+            return _tidy(bore_mm), f"computed, rod − {grip:g} mm{why}"
+    bore_mm = max(rod_mm - LESSER_GRIPS_MM[-1], rod_mm / 2)
+    return _tidy(bore_mm), f"computed, rod − {_tidy(rod_mm - bore_mm):g} mm"
+
+
+def default_ring_outside_mm(rod_mm: float, bore_mm: float, largest_mm: float) -> tuple[float, str]:
+    """Outside of a split ring and its reason: as thick as strain and its seat allow, in steps of 0.5 mm."""
+    if not 0 < bore_mm < rod_mm:
+        return _tidy(rod_mm + 3.2), "computed, rod + 3.2 mm"
+    strained_mm = math.floor(min(_widest_ring_mm(rod_mm, bore_mm), 1000.0) * 2) / 2
+    outside_mm = max(rod_mm + THINNEST_RING_MM, min(strained_mm, largest_mm))
+    return _tidy(outside_mm), f"computed, the thickest ring up to {_limit_percent():g} % strain that its seat covers"
+
+
+def _widest_ring_mm(rod_mm: float, bore_mm: float) -> float:
+    return largest_push_ring_outside_mm(rod_mm=rod_mm, bore_mm=bore_mm, limit_strain=_limit_percent() / 100)
+
+
+def _limit_percent() -> float:
+    return tables.print_practice("largest_keeper_strain_percent")
 
 
 def _saddle(path: str, keys: SaddleKeys, rod_mm: float, reasons: Reasons) -> Saddle:
     clearance = tables.print_practice("saddle_bore_clearance_mm")
-    height_mm = max(10.0, _tidy(rod_mm / 2 + 6))
+    height_mm = max(12.0, _tidy(rod_mm / 2 + 8))
     return Saddle(
-        height_mm=reasons.pick(f"{path}.height", keys.height_mm, height_mm, "computed, rod/2 + 6 mm, at least 10 mm"),
+        height_mm=reasons.pick(f"{path}.height", keys.height_mm, height_mm, "computed, rod/2 + 8 mm, at least 12 mm"),
         bore_mm=reasons.pick(
             f"{path}.bore", keys.bore_mm, _tidy(rod_mm + clearance), f"computed, rod + {clearance:g} mm"
         ),

@@ -12,6 +12,7 @@ from fabgen.read.contradictions import find_contradictions
 from fabgen.read.csv_table import insert_table
 from fabgen.read.gather import gather, gather_root
 from fabgen.read.grammar import FileKeys
+from fabgen.read.notes import notes_on
 from fabgen.read.reasons import Reasons
 from fabgen.read.resolve import resolve
 from fabgen.read.scalars import Context
@@ -65,7 +66,7 @@ def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
     reasons = Reasons()
     sha256 = hashlib.sha256(source.data + table).hexdigest()
     design = resolve(keys, path.stem, sha256, reasons)
-    return Reading(design, (), tree, reasons.by_path)
+    return Reading(design, notes_on(design, keys, context.other_unit), tree, reasons.by_path)
 
 
 def _unit(tree: Map) -> str | None:

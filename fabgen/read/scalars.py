@@ -21,6 +21,7 @@ from fabgen.units import UnitError, in_to_mm, mm_to_in, parse_frequency_mhz, par
 class OtherUnit(NamedTuple):
     """A length that is only likely in the other unit."""
 
+    key: str
     place: Place
     written: str
     read_mm: float
@@ -136,7 +137,8 @@ class Length(Kind):
         if self.likely_mm and not self.likely_mm[0] <= length_mm <= self.likely_mm[1]:
             other = self._other(scalar, length_mm)
             if other is not None:
-                context.other_unit.append(OtherUnit(scalar.place, str(scalar), length_mm, *other))
+                key = (info.field_name or "").removesuffix("_mm")
+                context.other_unit.append(OtherUnit(key, scalar.place, str(scalar), length_mm, *other))
         return length_mm
 
     def _other(self, scalar: Scalar, length_mm: float) -> tuple[float, str] | None:
