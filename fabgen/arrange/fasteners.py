@@ -72,16 +72,23 @@ def nut(layout: Layout, name: str, thread: str, *, owner: str, seat: Vector, up:
     )
 
 
-def washer(layout: Layout, name: str, thread: str, *, owner: str, seat: Vector, up: Vector) -> None:
+def washer(
+    layout: Layout,
+    name: str,
+    thread: str,
+    *,
+    owner: str,
+    seat: Vector,
+    up: Vector,
+    series: Literal["normal", "large"] = "normal",
+) -> None:
     """A stainless washer that lies with its lower face on a point."""
     layout.put(
         "washer",
         name,
-        {
-            "thread": thread,
-        },
+        {"thread": thread, "series": series},
         owner=owner,
-        label=f"washer {thread}",
+        label=f"washer {thread}" if series == "normal" else f"washer {thread} large",
         material=bought_material(),
         frame=Frame(seat, z=up),
         exact=True,

@@ -5,7 +5,6 @@ from fabgen.arrange.layout import SIDES, Layout, side_name
 from fabgen.design.arranged import Cut, Frame, Vector
 from fabgen.design.design import Design, Feed
 from fabgen.design.feed_layout import TAG_MM
-from fabgen.design.folded_saddle_sizes import RETAINER
 from fabgen.design.ledger import LedgerLine
 from fabgen.design.part_fasteners import fastener
 from fabgen.design.part_sizes import FoldedRodSize, FoldedSaddleSize, folded_rod_size, folded_saddle_size
@@ -114,25 +113,26 @@ def _terminals(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSiz
 def _retainer(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSize) -> None:
     """A screw over the upper limb whose washer keeps it in its slot."""
     element, saddle = design.element(feed.element), f"{feed.element} folded saddle"
-    thickness_mm = tables.washer(RETAINER).thickness_mm
+    thread, large = size.retainer, tables.washer(size.retainer, "large")
+    thickness_mm = large.thickness_mm
     x_mm, z_mm = element.station_mm + element.rod.diameter_mm / 2, design.boom.top_mm + size.retainer_z_mm
     ring, bolt = f"{element.id} retainer washer", f"{element.id} retainer screw"
-    washer(layout, ring, RETAINER, owner=element.id, seat=(x_mm, 0.0, z_mm), up=_FRONT)
+    washer(layout, ring, thread, owner=element.id, seat=(x_mm, 0.0, z_mm), up=_FRONT, series="large")
     deepest_mm = element.rod.diameter_mm / 2 + thickness_mm - size.back_mm
     length_mm = max(length for length in (6.0, 8.0, 10.0, 12.0, 16.0) if length <= max(deepest_mm, 6.0))
     screw(
         layout,
         bolt,
-        RETAINER,
+        thread,
         screw_length_mm(length_mm),
         owner=element.id,
         seat=(x_mm + thickness_mm, 0.0, z_mm),
         up=_FRONT,
         head="pan",
     )
-    thread_mm = fastener(RETAINER).diameter_mm
+    thread_mm = fastener(thread).diameter_mm
     layout.meet(ring, element.id, "washer on limb", 0.0)
-    layout.meet(bolt, ring, "head on washer", 0.0, tables.washer(RETAINER).bore_mm - thread_mm)
+    layout.meet(bolt, ring, "head on washer", 0.0, large.bore_mm - thread_mm)
     layout.meet(bolt, saddle, "thread in plastic", 0.0, size.pilot_mm - thread_mm)
 
 
