@@ -27,8 +27,9 @@ from fabgen.physics.array_matrix import (
 )
 from fabgen.physics.blas_threads import one_blas_thread
 from fabgen.physics.thin_rod_kernel import NODES, ComplexArray, FloatArray
+from fabgen.units import SPEED_OF_LIGHT_M_S
 
-LIGHT_MM_MHZ = 299_792.458
+LIGHT_MM_MHZ = SPEED_OF_LIGHT_M_S / 1000
 """Wavelength in mm times frequency in MHz."""
 
 STRAINED_WL = 0.01

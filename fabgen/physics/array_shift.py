@@ -14,6 +14,7 @@ import math
 from dataclasses import dataclass
 
 import numpy as np
+from numpy.typing import NDArray
 from scipy.interpolate import CubicSpline
 
 from fabgen.physics.array import RodArray, solve_band
@@ -44,7 +45,7 @@ class Shift:
     residual: FloatArray
     residual_gain_db: FloatArray
     residual_back_front: FloatArray
-    at_limit: np.ndarray[tuple[int, ...], np.dtype[np.bool_]]
+    at_limit: NDArray[np.bool_]
 
 
 @dataclass(frozen=True, slots=True)

@@ -4,6 +4,8 @@ Source: own study 2026 with a general-purpose thin-wire moment-method library, 2
 its standard kernel differs by 0.08 % in frequency at d = 0.0058 wavelengths.
 """
 
+import math
+
 import pytest
 
 from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, ThinRodRange, solve_array
@@ -52,3 +54,21 @@ def test_thick_rods_are_marked(diameter_mm: float, expected: ThinRodRange, absol
     found = solve_array(array, FREQUENCY_MHZ).thin_rod_range
     assert found is expected
     assert found.absolute_values_hold is absolute
+
+
+def test_skin_effect_of_a_half_wave_dipole() -> None:
+    """Loss resistance of a sinusoidal current: surface resistance over the circumference, times a quarter wavelength.
+
+    C. A. Balanis, "Antenna Theory", chapter 2, conduction loss of a half-wave dipole (from memory).
+    """
+    frequency_mhz, length_mm, diameter_mm, conductivity_s_per_m = 150.0, LIGHT_MM_MHZ / 300, 0.5, 1e6
+    surface_ohm = math.sqrt(math.pi * frequency_mhz * 1e6 * 4e-7 * math.pi / conductivity_s_per_m)
+    loss_ohm = surface_ohm / (math.pi * diameter_mm) * length_mm / 2
+    array = RodArray((0.0,), (length_mm,), (diameter_mm,), 0, conductivity_s_per_m)
+    perfect = RodArray((0.0,), (length_mm,), (diameter_mm,), 0)
+    one_sinusoid = solve_array(array, frequency_mhz, segments=1)
+    added_ohm = one_sinusoid.feed_impedance_ohm - solve_array(perfect, frequency_mhz, segments=1).feed_impedance_ohm
+    assert added_ohm == pytest.approx(loss_ohm * (1 + 1j), rel=2e-3)
+    efficiency = 1 - loss_ohm / one_sinusoid.feed_impedance_ohm.real
+    assert one_sinusoid.efficiency == pytest.approx(efficiency, abs=1e-4)
+    assert solve_array(array, frequency_mhz).efficiency == pytest.approx(efficiency, abs=2e-3)

@@ -9,12 +9,13 @@ from pathlib import Path
 
 import numpy as np
 import pytest
+from scipy.optimize import brentq
 
-from fabgen.physics.array import RodArray, solve_array, solve_band
+from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, solve_array, solve_band
 from fabgen.physics.array_gradient import gradient_band
 from fabgen.physics.array_sampling import BuildChanges, expand_array, respond, sample_band
 from fabgen.physics.array_shift import ShiftGauge, build_shift, shift_gauge, shift_per_mm
-from fabgen.physics.scattering_reactance import with_rods_of
+from fabgen.physics.scattering_reactance import equal_scattering_length, scattering_impedance_ohm, with_rods_of
 
 DESIGN_MHZ = 434.0
 SENSITIVITY_TOLERANCE = 0.10
@@ -119,9 +120,9 @@ def test_an_element_can_cost_front_to_back_without_a_shift(design: RodArray, gau
 
 def test_random_cutting_and_drilling_errors(design: RodArray) -> None:
     """+-0.5 mm on lengths and stations: 95 % of builds within 373 kHz; found 397 for rectangular errors."""
-    gauge = shift_gauge(design, DESIGN_MHZ, points=9)
+    gauge = shift_gauge(design, DESIGN_MHZ, points=7)
     rng = np.random.default_rng(434)
-    builds = (1000, design.count)
+    builds = (800, design.count)
     changes = BuildChanges(rng.uniform(-0.5, 0.5, builds), rng.uniform(-0.5, 0.5, builds), np.zeros(builds))
     sampled = sample_band(design, gauge.frequency_mhz, changes)
     shift = gauge.measure(sampled.gain_dbi, sampled.back_front)
@@ -140,6 +141,28 @@ def test_another_rod_diameter(design: RodArray, gauge: ShiftGauge) -> None:
     cuts_mm = [old - new for old, new in zip(design.length_mm, corrected.length_mm, strict=True)]
     assert min(cuts_mm) == pytest.approx(0.7, abs=0.05)
     assert max(cuts_mm) == pytest.approx(3.7, abs=0.05)
+
+
+@pytest.mark.parametrize(("radius_mm", "resonant_mm"), [(1.0, 471.55), (4.25, 456.93)])
+def test_scattering_resonance_of_a_free_rod(radius_mm: float, resonant_mm: float) -> None:
+    """Half-wave mode of a rod with flat ends, surface integral solution: 0.47155 and 0.45693 wavelengths.
+
+    Found 471.86 and 456.66 mm at a wavelength of 1000 mm: 0.07 %, inside the 0.3 % that the model claims.
+    """
+    frequency_mhz = LIGHT_MM_MHZ / 1000
+
+    def reactance_ohm(length_mm: float) -> float:
+        return scattering_impedance_ohm(length_mm, 2 * radius_mm, frequency_mhz).imag
+
+    assert brentq(reactance_ohm, 430, 495) == pytest.approx(resonant_mm, rel=1e-3)
+
+
+@pytest.mark.parametrize("length_mm", [380.0, 430.0, 485.0])
+def test_a_finer_mesh_gives_the_same_cut(length_mm: float) -> None:
+    frequency_mhz = LIGHT_MM_MHZ / 1000
+    usual = equal_scattering_length(length_mm, 4.0, 8.5, frequency_mhz)
+    finer = equal_scattering_length(length_mm, 4.0, 8.5, frequency_mhz, segments=5)
+    assert usual.length_mm == pytest.approx(finer.length_mm, abs=0.03)
 
 
 def test_there_and_back_is_the_same_rod(design: RodArray) -> None:
