@@ -21,7 +21,8 @@ WALL_Y_MM = 3.0
 RIM_MM = 1.2
 LID_MM = 3.0
 LID_PLAY_MM = 0.3
-POST_MM = 6.5
+POST_MM = 7.0
+LID_SCREW_IN_MM = 4.4
 PILOT_DEPTH_MM = 11.0
 LID_SCREW_LENGTH_MM = 12.0
 TAG_MM = 0.8
@@ -250,9 +251,14 @@ class FeedBlockLayout:
         return self.drawn_mm(tap_drill_mm(self.lid_screw))
 
     @property
-    def post_mm(self) -> tuple[float, float]:
+    def post_inner_mm(self) -> tuple[float, float]:
+        """±x, ±y of the posts' inner faces."""
+        return self.half_x_mm - POST_MM, self.half_y_mm - POST_MM
+
+    @property
+    def lid_screw_mm(self) -> tuple[float, float]:
         """±x, ±y of the four lid screws."""
-        return self.half_x_mm - POST_MM / 2, self.half_y_mm - POST_MM / 2
+        return self.half_x_mm - LID_SCREW_IN_MM, self.half_y_mm - LID_SCREW_IN_MM
 
     # Foot.
 

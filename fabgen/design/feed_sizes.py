@@ -42,9 +42,8 @@ class FeedBlockSize(FeedBlockLayout):
 
     def _open_above_mm3(self) -> float:
         """Rabbet, chamber less posts and rib, and the holes for the lid's screws."""
-        (cx, cy), (rx, ry), (px, py) = self.chamber_mm, self.rabbet_mm, self.post_mm
-        half_post = layout.POST_MM / 2
-        posts = 4 * (cx - px + half_post) * (cy - py + half_post)
+        (cx, cy), (rx, ry), (px, py) = self.chamber_mm, self.rabbet_mm, self.post_inner_mm
+        posts = 4 * (cx - px) * (cy - py)
         chamber = (4 * cx * cy - posts) * (self.lid_seat_mm - self.height_mm)
         rib = 2 * self.rib_half_mm * self.gap_mm * (self.rib_top_mm - self.height_mm)
         pilots = 4 * disc_mm2(self.pilot_mm) * layout.PILOT_DEPTH_MM

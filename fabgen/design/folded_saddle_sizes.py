@@ -31,10 +31,11 @@ from fabgen.design.saddle_sizes import (
     ENGAGEMENT_MM,
     FOOT_SHARE,
 )
-from fabgen.stock.fasteners import tap_drill_mm
+from fabgen.stock.fasteners import tap_drill_mm, washer
 from fabgen.stock.practice import print_practice
 
-RETAINER = "M3"
+RETAINERS = ("M3", "M4", "M5", "M6")
+RETAINER_WALL_MM = 1.2
 PROUD_MM = 0.3
 TIE_MM = (1.8, 3.6)
 TIE_PLAY_MM = 1.0
@@ -120,8 +121,13 @@ class FoldedSaddleSize:
 
     @property
     def trap_flats_mm(self) -> float:
-        """Nut trap across flats, a corner towards +y."""
+        """Nut trap across flats, flats towards ±y: printed lying, its roof is a short bridge."""
         return self.terminal_fastener.nut_across_flats_mm + layout.NUT_PLAY_MM
+
+    @property
+    def tallest_mm(self) -> float:
+        """What is taken out along z at the fed limb: its slot or the nut traps."""
+        return max(self.drawn_bore_mm, hexagon_corners_mm(self.trap_flats_mm))
 
     @property
     def back_mm(self) -> float:
@@ -174,14 +180,27 @@ class FoldedSaddleSize:
         return self.height_mm + self.spacing_mm
 
     @property
+    def retainer(self) -> str:
+        """Thread of the screw that holds the upper limb: the smallest whose large washer reaches nearly to its axis."""
+        for name in RETAINERS:
+            reach = washer(name, "large").outside_mm / 2 - self.retainer_offset_mm(name)
+            if reach >= -self.rod_diameter_mm / 8:
+                return name
+        return RETAINERS[-1]
+
+    def retainer_offset_mm(self, name: str) -> float:
+        """From the upper limb's axis to that screw's."""
+        return (self.drawn_bore_mm + self.drawn_mm(tap_drill_mm(name))) / 2 + RETAINER_WALL_MM
+
+    @property
     def retainer_z_mm(self) -> float:
-        """Level of the screw whose washer holds the upper limb, at y = 0."""
-        return self.upper_mm + self.drawn_bore_mm / 2 + self.pilot_mm / 2 + 0.8
+        """Level of that screw, at y = 0."""
+        return self.upper_mm + self.retainer_offset_mm(self.retainer)
 
     @property
     def pilot_mm(self) -> float:
         """Drawn diameter of that screw's hole; it forms its thread in it."""
-        return self.drawn_mm(tap_drill_mm(RETAINER))
+        return self.drawn_mm(tap_drill_mm(self.retainer))
 
     @property
     def top_mm(self) -> float:
@@ -211,15 +230,14 @@ class FoldedSaddleSize:
     @property
     def tie_z_mm(self) -> tuple[float, ...]:
         """Levels of the ties: two where there is room under the fed limb, else one."""
-        room = self.height_mm - max(self.drawn_bore_mm, self.trap_flats_mm) / 2 - 1.5
+        room = self.height_mm - self.tallest_mm / 2 - 1.5
         upper = room - TIE_MM[1] / 2
         return (4.0, upper) if upper - 4.0 >= TIE_MM[1] + 2.0 else (upper,)
 
     @property
     def y_mm(self) -> tuple[float, float]:
         """The column across the boom."""
-        trap = hexagon_corners_mm(self.trap_flats_mm) / 2
-        low = max(self.foot_width_mm / 2, self.terminal_y_mm + trap + 2.0)
+        low = max(self.foot_width_mm / 2, self.terminal_y_mm + self.trap_flats_mm / 2 + 2.0)
         return -low, max(self.tie_y_mm[1] + TIE_MM[0] / 2 + 2.4, low)
 
     @property
@@ -314,10 +332,9 @@ def folded_saddle_size(
         terminal=terminal_for(rod_diameter_mm) if terminal is None else terminal,
         hole_growth_mm=hole_growth_mm,
     )
-    tallest = max(size.drawn_bore_mm, size.trap_flats_mm)
-    least = size.ear_mm + FILLET_MM + tallest / 2
+    least = size.ear_mm + FILLET_MM + size.tallest_mm / 2
     if height_mm < least:
         raise ValueError(f"a folded dipole's saddle for a rod of {rod_diameter_mm:g} mm needs a height of {least:g} mm")
-    if spacing_mm < tallest + 2 * print_practice("structural_wall_mm"):
+    if spacing_mm < size.tallest_mm + 2 * print_practice("structural_wall_mm"):
         raise ValueError(f"limbs {spacing_mm:g} mm apart leave no wall between their slots")
     return size

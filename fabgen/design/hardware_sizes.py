@@ -2,6 +2,7 @@
 
 import math
 from dataclasses import dataclass
+from typing import Literal
 
 from fabgen.design.arranged import Box, Cylinder
 from fabgen.design.part_geometry import PI, disc_mm2, hexagon_corners_mm, hexagon_mm2, integral, ring_mm2
@@ -237,11 +238,11 @@ def nut_size(*, thread: str = "M3") -> NutSize:
     return NutSize(fasteners.thread(thread).diameter_mm, row.across_flats_mm, row.height_mm)
 
 
-def washer_size(*, thread: str = "M3") -> TubeSize:
+def washer_size(*, thread: str = "M3", series: Literal["normal", "large"] = "normal") -> TubeSize:
     """Sizes of a plain washer.
 
     Raises:
         UnknownStockError: no such thread in the tables.
     """
-    row = fasteners.washer(thread)
+    row = fasteners.washer(thread, series)
     return TubeSize(row.thickness_mm, row.bore_mm, row.outside_mm)

@@ -55,8 +55,11 @@ def solid_of(part: cq.Workplane) -> cq.Solid:
 
 
 def volume_mm3(part: cq.Workplane) -> float:
-    """Volume of a part by the kernel."""
-    return float(solid_of(part).Volume())
+    """Volume of a part by the kernel, integrated to a relative error of 1e-6.
+
+    Without a stated error the kernel is off by 2e-5 where one cylinder trims another.
+    """
+    return float(solid_of(part).Volume(1e-6))
 
 
 def bounds_mm(part: cq.Workplane) -> Bounds:

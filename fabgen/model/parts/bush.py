@@ -1,7 +1,7 @@
 """Shoulder bush: insulates a rod in one boom wall, flange outside, spigot in the hole.
 
-Frame: axis = local z outward, origin on the boom wall's outer surface at the hole's axis; flange z ≥ 0, spigot below. On a
-round boom, whose axis is local x, the flange's foot is concave. Printed flange down, the bore upright: no support.
+Frame: axis = local z outward, origin on the boom wall's outer surface at the hole's axis; flange z ≥ 0, spigot below.
+On a round boom, whose axis is local x, the flange's foot is concave. Printed flange down, the bore upright: no support.
 """
 
 from fabgen.design.part_sizes import BushSize, bush_size

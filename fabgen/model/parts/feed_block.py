@@ -1,9 +1,10 @@
 """Feed block of a split straight dipole: two half rods, a rib that sets the gap, terminals, cable grip, drain.
 
 Frame: origin on the boom's top (round: its crown) under the rods, local x along the boom, y along the rods, z up. Half
-rods enter from ±y as far as the rib. Nuts go into their traps from below before the block is screwed on the boom. Printed
-standing on its foot: the lying bores are teardrops, a round boom's cradle is a teardrop too and carries the boom between
-45° and 60°, and the nut traps are closed by a membrane of 0.3 mm, a bridge that the terminal screw breaks through.
+rods enter from ±y as far as the rib. Nuts go into their traps from below before the block is screwed on the boom.
+Printed standing on its foot: the lying bores are teardrops, a round boom's cradle is a teardrop too and carries the
+boom between 45° and 60°, and the nut traps are closed by a membrane of 0.3 mm, a bridge that the terminal screw breaks
+through.
 """
 
 from fabgen.design import feed_layout as layout
@@ -68,23 +69,15 @@ def feed_block(
 
 
 def _opened_above(size: FeedBlockSize) -> list[cq.Shape]:
-    (cx, cy), (rx, ry), (px, py) = size.chamber_mm, size.rabbet_mm, size.post_mm
-    above, half = size.top_mm + 1, layout.POST_MM / 2
-    keep: list[cq.Shape] = [
-        box(
-            (-size.rib_half_mm, size.rib_half_mm),
-            (-size.gap_mm / 2, size.gap_mm / 2),
-            (size.height_mm, size.rib_top_mm),
-        )
-    ]
+    (cx, cy), (rx, ry), above = size.chamber_mm, size.rabbet_mm, size.top_mm + 1
+    half_rib, gap = size.rib_half_mm, size.gap_mm / 2
+    keep: list[cq.Shape] = [box((-half_rib, half_rib), (-gap, gap), (size.height_mm, size.rib_top_mm))]
     pilots: list[cq.Shape] = []
-    for side_x in (-1, 1):
-        for side_y in (-1, 1):
-            at = (side_x * px, side_y * py)
-            keep.append(
-                box((at[0] - half, at[0] + half), (at[1] - half, at[1] + half), (size.height_mm, size.lid_seat_mm))
-            )
-            pilots.append(upright(size.pilot_mm, at, (size.lid_seat_mm - layout.PILOT_DEPTH_MM, above)))
+    (px, py), (sx, sy) = size.post_inner_mm, size.lid_screw_mm
+    for x, post_x in ((-sx, (-cx, -px)), (sx, (px, cx))):
+        for y, post_y in ((-sy, (-cy, -py)), (sy, (py, cy))):
+            keep.append(box(post_x, post_y, (size.height_mm, size.lid_seat_mm)))
+            pilots.append(upright(size.pilot_mm, (x, y), (size.lid_seat_mm - layout.PILOT_DEPTH_MM, above)))
     chamber = box((-cx, cx), (-cy, cy), (size.height_mm, size.lid_seat_mm)).cut(*keep)
     return [chamber, box((-rx, rx), (-ry, ry), (size.lid_seat_mm, above)), *pilots]
 

@@ -58,7 +58,7 @@ def feed_lid(
         lid_screw=lid_screw,
         hole_growth_mm=hole_growth_mm,
     )
-    (x, y), (px, py) = size.lid_mm, size.post_mm
+    (x, y), (px, py) = size.lid_mm, size.lid_screw_mm
     plate = box((-x, x), (-y, y), (size.lid_seat_mm, size.top_mm))
     hole = size.drawn_mm(fastener(size.lid_screw).clearance_mm)
     holes = [

@@ -41,10 +41,10 @@ def folded_rod(
         cross_hole_from_end_mm=cross_hole_from_end_mm,
     )
     d, straight = size.diameter_mm, size.straight_mm / 2
-    pieces: list[cq.Shape] = [
-        cylinder(d, (0.0, side * size.gap_mm / 2, 0.0), (0.0, side, 0.0), size.fed_mm) for side in (-1.0, 1.0)
-    ]
-    pieces += [_bend(size, side) for side in (-1.0, 1.0)]
+    pieces: list[cq.Shape] = []
+    for side in (-1.0, 1.0):
+        pieces.append(cylinder(d, (0.0, side * size.gap_mm / 2, 0.0), (0.0, side, 0.0), size.fed_mm))
+        pieces.append(_bend(size, side))
     solid = fused(cylinder(d, (0.0, -straight, size.spacing_mm), Y, 2 * straight), *pieces)
     if size.cross_hole_mm:
         at = size.gap_mm / 2 + size.cross_hole_from_end_mm

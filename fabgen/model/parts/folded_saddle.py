@@ -1,9 +1,9 @@
 """Saddle of a folded dipole: carries both limbs of the bent rod, its terminals and the cable.
 
-Frame: origin on the boom's top (round: its crown) under the fed limb, local x along the boom, y along the limbs, z up. The
-bent rod is pushed into both slots from +x; a screw with a large washer in front of the column holds the upper limb in its
-middle, two terminal screws the fed ends, cable ties the cable. Printed lying on its −y side: slots and bore upright, lying
-screw holes as teardrops, nut traps corner up, the concave foot within 45°: no support.
+Frame: origin on the boom's top (round: its crown) under the fed limb, local x along the boom, y along the limbs, z up.
+The bent rod is pushed into both slots from +x; a screw with a large washer in front of the column holds the upper limb
+in its middle, two terminal screws the fed ends, cable ties the cable. Printed lying on its −y side: slots upright,
+lying screw holes as teardrops, nut traps with a flat up, the concave foot within 45°: no support.
 """
 
 from fabgen.design import folded_saddle_sizes as sizes
@@ -97,7 +97,7 @@ def _terminals(size: FoldedSaddleSize) -> list[cq.Shape]:
     tools: list[cq.Shape] = []
     for y in (-size.terminal_y_mm, size.terminal_y_mm):
         tools.append(teardrop(hole, (behind, y, size.height_mm), X, Y, -behind))
-        tools.append(hexagon(size.trap_flats_mm, (behind, y, size.height_mm), X, Y, size.trap_front_mm - behind))
+        tools.append(hexagon(size.trap_flats_mm, (behind, y, size.height_mm), X, Z, size.trap_front_mm - behind))
     return tools
 
 

@@ -43,15 +43,9 @@ def snap_keeper(
     )
     high, half, end = size.length_mm, size.mouth_mm / 2, size.outside_mm / 2 + 1
     flare = half + end - size.flare_start_mm
-    # Corners (u, v) = (−y, x).
-    mouth = [
-        (-half, 0.0),
-        (half, 0.0),
-        (half, size.flare_start_mm),
-        (flare, end),
-        (-flare, end),
-        (-half, size.flare_start_mm),
-    ]
+    start = size.flare_start_mm
+    # Corners are (u, v) = (−y, x).
+    mouth = [(-half, 0.0), (half, 0.0), (half, start), (flare, end), (-flare, end), (-half, start)]
     ring = upright(size.outside_mm, (0.0, 0.0), (0.0, high))
     bore = upright(size.drawn_bore_mm, (0.0, 0.0), (-1.0, high + 1))
     return part_of(ring.cut(bore, prism(mouth, (0.0, 0.0, -1.0), Z, X, high + 2)))

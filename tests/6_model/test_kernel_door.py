@@ -1,0 +1,62 @@
+"""The door to the CAD kernel: what it says when the kernel does not load, and what it refuses."""
+
+import os
+import subprocess
+import sys
+
+import pytest
+
+from fabgen.errors import MachineError, ProgramError
+from fabgen.model.kernel import bounds_mm, cq, on_bed, part_of, solid_of, volume_mm3
+
+
+def import_kernel_with(tmp_path, root, message):
+    """Import the door in a fresh interpreter whose cadquery fails to load; its stdout."""
+    (tmp_path / "cadquery.py").write_text(f"raise ImportError({message!r})\n", encoding="utf-8")
+    script = (
+        "from fabgen.errors import MachineError\n"
+        "try:\n    import fabgen.model.kernel\n"
+        "except MachineError as error:\n    print(error.exit_code, error.message, '|', error.fix)\n"
+    )
+    path = os.pathsep.join([str(tmp_path), str(root)])
+    done = subprocess.run(
+        [sys.executable, "-c", script],
+        env=os.environ | {"PYTHONPATH": path},
+        capture_output=True,
+        text=True,
+        check=True,
+    )
+    return done.stdout
+
+
+def test_missing_system_library_is_named_with_its_package(tmp_path, root):
+    said = import_kernel_with(tmp_path, root, "libGL.so.1: cannot open shared object file: No such file or directory")
+    assert said.startswith("3 ")
+    assert "libGL.so.1" in said
+    assert "libgl1" in said.partition("|")[2]
+
+
+def test_any_other_failure_to_load_is_a_machine_error_too(tmp_path, root):
+    said = import_kernel_with(tmp_path, root, "No module named 'OCP'")
+    assert said.startswith("3 ")
+    assert "libgl1" not in said
+
+
+def test_a_machine_error_exits_with_three():
+    assert MachineError("x").exit_code == 3
+
+
+def test_a_part_in_two_pieces_is_the_programs_error():
+    two = cq.Workplane().box(1, 1, 1).union(cq.Workplane("XY", origin=(5, 0, 0)).box(1, 1, 1)).val()
+    with pytest.raises(ProgramError, match="2 solids"):
+        part_of(two)
+    with pytest.raises(ProgramError):
+        solid_of(cq.Workplane(two))
+
+
+def test_measures_of_a_known_box():
+    part = cq.Workplane("XY", origin=(1, 2, 3)).box(2, 4, 6)
+    assert volume_mm3(part) == pytest.approx(48.0, rel=1e-12)
+    assert bounds_mm(part) == ((0.0, 0.0, 0.0), (2.0, 4.0, 6.0))
+    low, high = bounds_mm(on_bed(part.translate((0, 0, -7))))
+    assert (low[2], high[2]) == pytest.approx((0.0, 6.0), abs=1e-9)
