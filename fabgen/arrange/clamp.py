@@ -21,7 +21,8 @@ BOLT = "M6"
 U_BOLT_MM = 6.0
 EDGE_MM = 12.0
 """Hole axis to the plate's edge: 2 d of M6 (EN 1993-1-8 asks for 1.2 d at least)."""
-NUT_ROOM_MM = 2.0
+ROOM_MM = 2.0
+"""Between a washer and whatever stands beside it."""
 SLEEVE_OUTSIDE_MM, SLEEVE_BORE_MM = 10.0, 6.4
 SLEEVE_MATERIAL = "EN AW-6060 T66"
 TUBE_SLEEVE_WALL_MM, TUBE_SLEEVE_PLAY_MM = 2.0, 0.2
@@ -60,16 +61,15 @@ class ClampSize:
 def clamp_size(design: Design, clamp: Clamp) -> ClampSize:
     """Plate and holes for a boom and a mast."""
     _, across_mm = _extents(design)
-    nut_half_mm = tables.nut(BOLT).across_corners_mm / 2
+    half_mm = tables.washer(BOLT).outside_mm / 2
     leg_x_mm = (clamp.mast_mm + U_BOLT_MM) / 2
     if design.boom.section == "round":
         bolt_t_mm = (across_mm + U_BOLT_MM) / 2
-        bolt_x_mm = math.ceil(leg_x_mm + 2 * nut_half_mm + NUT_ROOM_MM)
-        leg_t_mm = math.ceil(bolt_t_mm)
+        bolt_x_mm = math.ceil(leg_x_mm + 2 * half_mm + ROOM_MM)
     else:
         bolt_t_mm = 0.0
-        bolt_x_mm = math.ceil(clamp.mast_mm / 2 + nut_half_mm + NUT_ROOM_MM)
-        leg_t_mm = math.ceil(across_mm / 2 + nut_half_mm + NUT_ROOM_MM)
+        bolt_x_mm = math.ceil(clamp.mast_mm / 2 + half_mm + ROOM_MM)
+    leg_t_mm = math.ceil(across_mm / 2 + half_mm + ROOM_MM)
     return ClampSize(
         width_mm=2.0 * (max(bolt_x_mm, leg_x_mm) + EDGE_MM),
         height_mm=2.0 * (max(bolt_t_mm, leg_t_mm) + EDGE_MM),
