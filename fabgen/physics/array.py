@@ -206,6 +206,20 @@ class ArraySolution:
         return -20 * math.log10(abs(self.back_front))
 
 
+def mismatch(impedance_ohm: ComplexArray, reference_ohm: float) -> FloatArray:
+    """Standing wave ratio of impedances.
+
+    Args:
+        impedance_ohm: impedances, any shape.
+        reference_ohm: impedance they are referred to.
+
+    Returns:
+        SWR, 1 for a perfect match.
+    """
+    reflection = np.abs((impedance_ohm - reference_ohm) / (impedance_ohm + reference_ohm))
+    return np.asarray((1 + reflection) / (1 - reflection))
+
+
 @dataclass(frozen=True, slots=True)
 class BandResponse:
     """Response of one array over a band; one entry per frequency.
@@ -238,8 +252,7 @@ class BandResponse:
         Returns:
             SWR, 1 for a perfect match.
         """
-        reflection = np.abs((self.feed_impedance_ohm - reference_ohm) / (self.feed_impedance_ohm + reference_ohm))
-        return np.asarray((1 + reflection) / (1 - reflection))
+        return mismatch(self.feed_impedance_ohm, reference_ohm)
 
 
 def solve_array(array: RodArray, frequency_mhz: float, *, segments: int = 4) -> ArraySolution:

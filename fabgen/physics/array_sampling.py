@@ -13,7 +13,7 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from fabgen.physics.array import LIGHT_MM_MHZ, RodArray
+from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, mismatch
 from fabgen.physics.array_loss import impedance_matrix, rod_loss
 from fabgen.physics.array_matrix import (
     ETA_OHM,
@@ -79,8 +79,7 @@ class SampledResponse:
         Returns:
             SWR.
         """
-        reflection = np.abs((self.feed_impedance_ohm - reference_ohm) / (self.feed_impedance_ohm + reference_ohm))
-        return np.asarray((1 + reflection) / (1 - reflection))
+        return mismatch(self.feed_impedance_ohm, reference_ohm)
 
 
 @dataclass(frozen=True, slots=True)

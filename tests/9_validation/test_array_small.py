@@ -6,9 +6,10 @@ its standard kernel differs by 0.08 % in frequency at d = 0.0058 wavelengths.
 
 import math
 
+import numpy as np
 import pytest
 
-from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, ThinRodRange, solve_array
+from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, ThinRodRange, mismatch, solve_array
 
 FREQUENCY_MHZ = LIGHT_MM_MHZ / 1000.0
 """A wavelength of 1000 mm."""
@@ -72,3 +73,9 @@ def test_skin_effect_of_a_half_wave_dipole() -> None:
     efficiency = 1 - loss_ohm / one_sinusoid.feed_impedance_ohm.real
     assert one_sinusoid.efficiency == pytest.approx(efficiency, abs=1e-4)
     assert solve_array(array, frequency_mhz).efficiency == pytest.approx(efficiency, abs=2e-3)
+
+
+def test_mismatch() -> None:
+    """SWR of 100, 25 and 50 + j50 ohm on 50 ohm: 2, 2 and 2.618, textbook."""
+    found = mismatch(np.array([100, 25, 50 + 50j]), 50.0)
+    assert found == pytest.approx([2.0, 2.0, (3 + math.sqrt(5)) / 2])
