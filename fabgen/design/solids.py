@@ -44,3 +44,18 @@ class AssemblyItem:
     name: str
     product: Product
     frame: Frame
+
+
+@dataclass(frozen=True, slots=True)
+class Print:
+    """One distinct printed part as it lies on the bed (z = 0), bores drawn larger by the printer's growth.
+
+    Attributes:
+        stem: of its files, ASCII, without a space.
+        product: solid and mesh in print pose.
+        quantity: how many the array needs.
+    """
+
+    stem: str
+    product: Product
+    quantity: int
