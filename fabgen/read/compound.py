@@ -110,7 +110,7 @@ class MaterialValue(Kind):
 
     def schema(self) -> dict[str, Any]:
         """A name of the table or the mapping."""
-        return {"anyOf": [{"enum": list(tables.material_names())}, MaterialKeys.model_json_schema()]}
+        return {"anyOf": [{"enum": list(tables.material_names())}, {"type": "object", "$comment": "Material"}]}
 
 
 def _stated(keys: MaterialKeys) -> Material:

@@ -73,11 +73,12 @@ def mount_for_rod(
     if keys.style == "on-top":
         saddle = _saddle(f"{path}.saddle", keys.saddle or SaddleKeys.model_construct(), rod_mm, reasons)
     origin: Literal["auto", "none"] = "none" if keys.style == "through-nonmetal" else "auto"
+    why = "no metal beside the rod" if origin == "none" else "measured, else solved, else closed form"
     return Mount(
         name=name,
         style=keys.style,
         hole_mm=hole_mm,
-        allowance=allowance_choice(f"{path}.allowance", keys.allowance, origin, reasons),
+        allowance=allowance_choice(f"{path}.allowance", keys.allowance, origin, why, reasons),
         bush=bush,
         keeper=keeper,
         saddle=saddle,
@@ -87,11 +88,10 @@ def mount_for_rod(
 
 
 def allowance_choice(
-    path: str, keys: AllowanceKeys | None, origin: Literal["auto", "none"], reasons: Reasons
+    path: str, keys: AllowanceKeys | None, origin: Literal["auto", "none"], why: str, reasons: Reasons
 ) -> AllowanceChoice:
     """The allowance's origin as stated, else the default one."""
     if keys is None:
-        why = "measured, else solved, else closed form" if origin == "auto" else "nothing takes length away here"
         return AllowanceChoice(reasons.pick(f"{path}.origin", None, origin, f"default: {why}"))
     if keys.origin == "published":
         return AllowanceChoice(

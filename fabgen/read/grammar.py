@@ -3,16 +3,18 @@
 Everything optional is None here: defaults and fits are filled in by `resolve`, in one place, with their reasons.
 """
 
-from typing import Annotated, Literal
+from typing import Annotated, Any, Literal
 
-from pydantic import Field
+from pydantic import Field, model_validator
 
 from fabgen.design.design import Finish, Material, Polarisation, Role, Style
 from fabgen.read.compound import Keys, Lengths, MaterialValue, Section
 from fabgen.read.scalars import Date, Frequency, Length, Name, Number, Text, Word, WordOrLength
+from fabgen.read.yaml_tree import Scalar
 
 ROLES = ("reflector", "driven", "director")
 STYLES = ("bonded-through", "insulated-through", "on-top", "through-nonmetal")
+ORIGINS = ("auto", "measured", "computed", "published", "stated", "none")
 PART_NAMES = ("boom", "feed", "clamp", "mast")
 
 _ELEMENT_ID = Name("[A-Za-z][A-Za-z0-9_-]{0,15}", "a letter, then at most 15 of A-Z a-z 0-9 _ -", "D1", PART_NAMES)
@@ -65,11 +67,11 @@ class BoomKeys(Keys):
 
 
 class AllowanceKeys(Keys):
-    """Where a mount's allowance comes from."""
+    """Where a mount's allowance comes from; `allowance: auto` is short for `allowance: {origin: auto}`."""
 
     origin: Annotated[
         Literal["auto", "measured", "computed", "published", "stated", "none"],
-        Word("auto", "measured", "computed", "published", "stated", "none"),
+        Word(*ORIGINS),
     ]
     model: Annotated[
         Literal["dl6wu", "lawson", "fishenden-wiblin"] | None, Word("dl6wu", "lawson", "fishenden-wiblin")
@@ -78,6 +80,12 @@ class AllowanceKeys(Keys):
     value_mm: Annotated[float | None, Length(-100, 200, "4.6 mm")] = Field(default=None, alias="value")
     uncertainty_mm: Annotated[float | None, Length(0, 50, "0.4 mm")] = Field(default=None, alias="uncertainty")
     source: Annotated[str | None, Text(200, "own readings 2026-03")] = None
+
+    @model_validator(mode="before")
+    @classmethod
+    def _from_word(cls, value: Any) -> Any:
+        """Read a single word as the origin."""
+        return {"origin": value} if isinstance(value, Scalar) and not value.empty else value
 
 
 class BushKeys(Keys):
@@ -115,7 +123,7 @@ class SaddleKeys(Keys):
 
 
 class MountKeys(Keys):
-    """How rods meet the boom. Which keys go with which style: `contradictions.STYLE_KEYS`."""
+    """How rods meet the boom; which other keys have a meaning depends on the style."""
 
     style: Annotated[Style, Word(*STYLES)]
     hole_mm: Annotated[float | None, _HOLE] = Field(default=None, alias="hole")
@@ -149,7 +157,7 @@ class ElementKeys(Keys):
 
 
 class FeedKeys(Keys):
-    """The driven element's hardware. Which keys go with which kind: `contradictions.FEED_KEYS`."""
+    """The driven element's hardware; `spacing` belongs to a folded dipole."""
 
     kind: Annotated[Literal["straight-dipole", "folded-dipole"], Word("straight-dipole", "folded-dipole")]
     gap_mm: Annotated[float | None, Length(1, 100, "10 mm", (2, 40))] = Field(default=None, alias="gap")

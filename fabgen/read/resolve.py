@@ -33,6 +33,7 @@ from fabgen.read.reasons import Reasons
 from fabgen.stock.tables import ToleranceClass
 
 AS_CUT = "lengths_are: as-cut, nothing is added"
+MATCH = "the match sets the driven rod's length"
 CLAMP_MATERIAL = "EN AW-6061 T6"
 
 
@@ -148,7 +149,7 @@ def _feeds(keys: FeedKeys | None, rows: list[ElementKeys], as_cut: bool, reasons
         return ()
     first = min(driven, key=lambda row: row.at_mm)
     pick = reasons.pick
-    allowance = allowance_choice("feed.allowance", keys.allowance, "none", reasons)
+    allowance = allowance_choice("feed.allowance", keys.allowance, "none", MATCH, reasons)
     if as_cut:
         reasons.by_path["feed.allowance.origin"] = AS_CUT
         allowance = AllowanceChoice("none")

@@ -243,8 +243,9 @@ class Word(Kind):
         return str(scalar)
 
     def schema(self) -> dict[str, Any]:
-        """The list of words."""
-        return {"enum": list(self.words)}
+        """The words, and what YAML makes of those that look like a number or a truth value."""
+        typed = {"1": 1, "true": True, "false": False}
+        return {"enum": [*self.words, *(typed[word] for word in self.words if word in typed)]}
 
 
 class Text(Kind):
@@ -276,7 +277,8 @@ class Text(Kind):
 
     def schema(self) -> dict[str, Any]:
         """A text of limited length."""
-        return {"type": "string", "maxLength": self.longest, "examples": [self.example]}
+        kinds = ["string", "null"] if self.blank else ["string", "number"]
+        return {"type": kinds, "maxLength": self.longest, "examples": [self.example]}
 
 
 class Name(Kind):
@@ -330,7 +332,7 @@ class Date(Kind):
 
     def schema(self) -> dict[str, Any]:
         """A text of that form."""
-        return {"type": "string", "format": "date", "examples": [self.example]}
+        return {"type": ["string", "null"], "format": "date", "examples": [self.example]}
 
 
 class WordOrLength(Kind):
