@@ -68,13 +68,13 @@ def _open(name: Scalar, path: Path, shown: str, problems: Problems) -> Source | 
         problems.add("D23", message, name.place, "put the table beside the design file; for example elements.csv")
         return None
     folder = path.parent
-    table = folder / name
+    table = folder / str(name)
     if table.is_symlink() and table.resolve().parent != folder.resolve():
         message = f"table: {name} is a link that leads out of the design file's folder"
         problems.add("D23", message, name.place, "copy the table beside the design file")
         return None
     try:
-        return read_source(table, str(Path(shown).with_name(name)))
+        return read_source(table, str(Path(shown).with_name(table.name)))
     except DesignErrors as error:
         problems.found += error.problems
     except InputError as error:
