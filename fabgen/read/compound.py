@@ -7,8 +7,10 @@ from pydantic import BaseModel, ConfigDict, Field, GetCoreSchemaHandler, Validat
 from pydantic_core import CoreSchema, core_schema
 
 from fabgen.design.design import Material
+from fabgen.read.kind import Broken, Context, Kind, refuse, scalar_of
 from fabgen.read.nearest import suggestion
-from fabgen.read.scalars import Broken, Context, Kind, Length, Number, Text, Word, refuse, scalar_of
+from fabgen.read.quantities import Length, Number
+from fabgen.read.words import Text, Word
 from fabgen.read.yaml_tree import Map, Scalar, Seq
 from fabgen.stock import tables
 

@@ -8,8 +8,8 @@ from pydantic.fields import FieldInfo
 from fabgen.errors import Place
 from fabgen.read.compound import Keys, MaterialKeys, MaterialValue
 from fabgen.read.grammar import FileKeys
+from fabgen.read.kind import Broken, Kind
 from fabgen.read.nearest import nearest, suggestion
-from fabgen.read.scalars import Broken, Kind
 from fabgen.read.source import Problems
 from fabgen.read.yaml_tree import Map, Node, Scalar, Seq
 

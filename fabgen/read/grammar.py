@@ -9,7 +9,8 @@ from pydantic import Field, model_validator
 
 from fabgen.design.design import Finish, Material, Polarisation, Role, Style
 from fabgen.read.compound import Keys, Lengths, MaterialValue, Section
-from fabgen.read.scalars import Date, Frequency, Length, Name, Number, Text, Word, WordOrLength
+from fabgen.read.quantities import Frequency, Length, Number, WordOrLength
+from fabgen.read.words import Date, Name, Text, Word
 from fabgen.read.yaml_tree import Scalar
 
 ROLES = ("reflector", "driven", "director")

@@ -7,7 +7,7 @@ from fabgen import registry
 from fabgen.design.design import Design, Element
 from fabgen.design.findings import Finding, Severity, in_order
 from fabgen.read.grammar import FileKeys
-from fabgen.read.scalars import OtherUnit
+from fabgen.read.kind import OtherUnit
 from fabgen.units import in_to_mm, mm_to_in
 
 USUAL_LENGTH_WL = (0.25, 0.7)

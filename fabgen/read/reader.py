@@ -12,10 +12,10 @@ from fabgen.read.contradictions import find_contradictions
 from fabgen.read.csv_table import insert_table
 from fabgen.read.gather import gather, gather_root
 from fabgen.read.grammar import FileKeys
+from fabgen.read.kind import Context
 from fabgen.read.notes import notes_on
 from fabgen.read.reasons import Reasons
 from fabgen.read.resolve import resolve
-from fabgen.read.scalars import Context
 from fabgen.read.source import Problems, read_source
 from fabgen.read.yaml_tree import Map, Scalar, parse
 
