@@ -53,7 +53,7 @@ def screw(
         owner=owner,
         label=f"screw {thread} x {length_mm:g} {head}",
         material=bought_material(),
-        frame=Frame(seat, z=up),
+        frame=_frame(seat, up),
     )
 
 
@@ -68,7 +68,7 @@ def nut(layout: Layout, name: str, thread: str, *, owner: str, seat: Vector, up:
         owner=owner,
         label=f"nut {thread}",
         material=bought_material(),
-        frame=Frame(seat, z=up),
+        frame=_frame(seat, up),
     )
 
 
@@ -90,9 +90,14 @@ def washer(
         owner=owner,
         label=f"washer {thread}" if series == "normal" else f"washer {thread} large",
         material=bought_material(),
-        frame=Frame(seat, z=up),
+        frame=_frame(seat, up),
         exact=True,
     )
+
+
+def _frame(seat: Vector, up: Vector) -> Frame:
+    """A turned part's frame: its axis counts, its x axis only has to lie across it."""
+    return Frame(seat, z=up, x=(0.0, 1.0, 0.0) if up[0] else (1.0, 0.0, 0.0))
 
 
 def screw_length_mm(at_least_mm: float) -> float:
