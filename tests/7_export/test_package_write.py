@@ -1,0 +1,179 @@
+"""A package is there as a whole or not at all, whatever happens while it is written."""
+
+import errno
+import json
+import os
+import stat
+import subprocess
+import sys
+import textwrap
+from pathlib import Path
+
+import pytest
+
+from fabgen.design.package import PackageFile
+from fabgen.errors import MachineError, ProgramError
+from fabgen.export import package
+
+OLD = (PackageFile("manifest.json", b"old manifest", "m"), PackageFile("tables/a.csv", b"old a", "a"))
+NEW = (
+    PackageFile("manifest.json", b"new manifest", "m"),
+    PackageFile("tables/a.csv", b"new a", "a"),
+    PackageFile("model/b.step", b"new b", "b"),
+)
+
+
+def contents(folder: Path) -> dict[str, bytes]:
+    return {str(path.relative_to(folder)): path.read_bytes() for path in folder.rglob("*") if path.is_file()}
+
+
+def expected(files: tuple[PackageFile, ...]) -> dict[str, bytes]:
+    return {file.path: file.data for file in files}
+
+
+def test_a_new_package_replaces_the_old_one_whole(tmp_path: Path) -> None:
+    package.write(OLD, output=tmp_path, name="X-1_A")
+    folder = package.write(NEW, output=tmp_path, name="X-1_A")
+    assert contents(folder) == expected(NEW)
+    assert sorted(path.name for path in tmp_path.iterdir()) == [".fabgen.lock", "X-1_A"]
+
+
+def test_without_the_exchange_two_renames_do_the_same(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    monkeypatch.setattr(package, "_exchange", lambda first, second: False)
+    package.write(OLD, output=tmp_path, name="X-1_A")
+    package.write(NEW, output=tmp_path, name="X-1_A")
+    assert contents(tmp_path / "X-1_A") == expected(NEW)
+
+
+KILLER = textwrap.dedent(
+    """
+    import os, sys
+    from pathlib import Path
+    from fabgen.design.package import PackageFile
+    from fabgen.export import package
+
+    output, deadly, exchange = Path(sys.argv[1]), int(sys.argv[2]), sys.argv[3] == "exchange"
+    count = 0
+
+    def mortal(function):
+        def wrapped(*args, **keywords):
+            global count
+            count += 1
+            if count == deadly:
+                os._exit(9)
+            return function(*args, **keywords)
+        return wrapped
+
+    for owner, name in ((os, "fsync"), (os, "mkdir"), (os, "rmdir"), (os, "unlink"), (Path, "rename"), (Path, "open"),
+                        (package, "_exchange")):
+        setattr(owner, name, mortal(getattr(owner, name)))
+    if not exchange:
+        package._exchange = lambda first, second: False
+    files = [PackageFile(n, b"new " + n.encode(), "x") for n in ("manifest.json", "tables/a.csv", "model/b.step")]
+    package.write(files, output=output, name="X-1_A")
+    """
+)
+
+
+@pytest.mark.parametrize("way", ["exchange", "renames"])
+def test_a_kill_at_any_step_leaves_the_old_package_or_the_new_one(tmp_path: Path, way: str) -> None:
+    new = {n: b"new " + n.encode() for n in ("manifest.json", "tables/a.csv", "model/b.step")}
+    seen = set()
+    for deadly in range(1, 60):
+        output = tmp_path / str(deadly)
+        package.write(OLD, output=output, name="X-1_A")
+        environment = os.environ | {"PYTHONPATH": str(Path(package.__file__).parents[2])}
+        run = subprocess.run([sys.executable, "-c", KILLER, str(output), str(deadly), way], env=environment, check=False)
+        target = output / "X-1_A"
+        if not target.exists():
+            assert way == "renames"
+            package.write(OLD, output=output, name="other")
+            package._repair(target, output / ".X-1_A.new", output / ".X-1_A.old")
+        found = contents(target)
+        assert found in (expected(OLD), new)
+        seen.add("old" if found == expected(OLD) else "new")
+        package.write(NEW, output=output, name="X-1_A")
+        assert contents(target) == expected(NEW)
+        assert not [path for path in output.iterdir() if path.name.startswith(".X-1_A")]
+        if run.returncode == 0:
+            break
+        assert run.returncode == 9
+    else:
+        pytest.fail("the run never finished")
+    assert seen == {"old", "new"}
+
+
+def test_a_full_disk_changes_nothing(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    package.write(OLD, output=tmp_path, name="X-1_A")
+    calls = []
+
+    def full(descriptor: int) -> None:
+        calls.append(descriptor)
+        if len(calls) == 2:
+            raise OSError(errno.ENOSPC, os.strerror(errno.ENOSPC), "somewhere")
+
+    monkeypatch.setattr(os, "fsync", full)
+    with pytest.raises(MachineError, match="the disk is full") as raised:
+        package.write(NEW, output=tmp_path, name="X-1_A")
+    assert raised.value.exit_code == 3
+    assert contents(tmp_path / "X-1_A") == expected(OLD)
+    assert sorted(path.name for path in tmp_path.iterdir()) == [".fabgen.lock", "X-1_A"]
+
+
+def test_a_file_where_the_output_folder_should_be(tmp_path: Path) -> None:
+    (tmp_path / "output").write_text("mine")
+    with pytest.raises(MachineError, match="a file stands where the folder should be"):
+        package.write(NEW, output=tmp_path / "output", name="X-1_A")
+    assert (tmp_path / "output").read_text() == "mine"
+
+
+def test_a_file_where_the_package_should_be(tmp_path: Path) -> None:
+    (tmp_path / "X-1_A").write_text("mine")
+    with pytest.raises(MachineError, match="is not a folder"):
+        package.write(NEW, output=tmp_path, name="X-1_A")
+    assert (tmp_path / "X-1_A").read_text() == "mine"
+
+
+def test_a_link_where_the_package_should_be_is_not_followed(tmp_path: Path) -> None:
+    (tmp_path / "elsewhere").mkdir()
+    (tmp_path / "output").mkdir()
+    (tmp_path / "output" / "X-1_A").symlink_to(tmp_path / "elsewhere")
+    with pytest.raises(MachineError, match="is not a folder"):
+        package.write(NEW, output=tmp_path / "output", name="X-1_A")
+    assert list((tmp_path / "elsewhere").iterdir()) == []
+
+
+@pytest.mark.skipif(os.geteuid() == 0, reason="root may write everywhere")
+def test_a_folder_without_permission(tmp_path: Path) -> None:
+    locked = tmp_path / "locked"
+    locked.mkdir()
+    locked.chmod(stat.S_IRUSR | stat.S_IXUSR)
+    with pytest.raises(MachineError, match="no permission"):
+        package.write(NEW, output=locked / "output", name="X-1_A")
+
+
+@pytest.mark.parametrize("name", ["../X", "a/b", "", ".", "..", "/X"])
+def test_names_never_lead_outside_the_output_folder(tmp_path: Path, name: str) -> None:
+    with pytest.raises(ProgramError):
+        package.write(NEW, output=tmp_path / "output", name=name)
+    assert list(tmp_path.iterdir()) == []
+
+
+@pytest.mark.parametrize("path", ["../x", "/x", "a/../../x"])
+def test_files_never_lead_outside_the_package(tmp_path: Path, path: str) -> None:
+    with pytest.raises(ProgramError):
+        package.write((PackageFile(path, b"", ""),), output=tmp_path / "output", name="X-1_A")
+    assert [p.name for p in tmp_path.rglob("*")] == ["output", ".fabgen.lock"]
+
+
+def test_the_manifest_lists_every_file_with_its_hash() -> None:
+    made = package.manifest(
+        NEW[1:], number="X-1", revision="A", design_sha256="0" * 64, verdict="clear", versions={"fabgen": "1"}
+    )
+    record = json.loads(made.data)
+    assert list(record) == ["fabgen", "number", "revision", "design_sha256", "verdict", "versions", "files"]
+    assert [file["path"] for file in record["files"]] == ["model/b.step", "tables/a.csv"]
+    # SHA-256 of the six bytes `new b` and `new a`, by another implementation.
+    openssl = subprocess.run(["openssl", "dgst", "-sha256", "-r"], input=b"new b", capture_output=True, check=False)
+    if openssl.returncode == 0:
+        assert record["files"][0]["sha256"] == openssl.stdout.decode().split()[0]
