@@ -29,12 +29,14 @@ TAG_MM = 0.8
 NUT_PLAY_MM = 0.25
 BEYOND_NUT_MM = 0.4
 LEAST_UNDER_ROD_MM = 2.5
-MEMBRANE_MM = 0.3
+STEP_MM = 0.4
 LAND_MM = 1.4
 GRIP = 0.85
 TONGUE_MM = 3.0
 TONGUE_PLAY_MM = 0.2
 TONGUE_REACH_MM = 10.0
+TONGUE_OVER_FOOT_MM = 2.0
+LEAST_GRIP_MM = 5.0
 TOOTH_MM = 0.5
 TIP_MM = (1.2, 4.0)
 DRAIN_MM = 4.0
@@ -122,6 +124,20 @@ class FeedBlockLayout:
         """Nut trap across flats, flats towards ±y."""
         return self.terminal_fastener.nut_across_flats_mm + NUT_PLAY_MM
 
+    @property
+    def step_mm(self) -> float:
+        """Width along x of the step in the trap's roof, narrower than the screw's hole and wider than the screw.
+
+        The roof prints in two bridges, first along y beside the step, then across it: no support and no drilling out.
+        """
+        bolt = self.terminal_fastener
+        return self.drawn_mm((bolt.diameter_mm + bolt.clearance_mm) / 2)
+
+    @property
+    def terminal_gap_mm(self) -> float:
+        """Smallest distance between a terminal screw and the block."""
+        return (self.step_mm - self.terminal_fastener.diameter_mm) / 2
+
     # Rib and hold-down screws.
 
     @property
@@ -200,7 +216,7 @@ class FeedBlockLayout:
     @property
     def tongue_low_mm(self) -> float:
         """Level of the wedge's tip."""
-        return max(self.height_mm - TONGUE_REACH_MM, self.bottom_mm + 2.0)
+        return max(self.height_mm - TONGUE_REACH_MM, self.bottom_mm + TONGUE_OVER_FOOT_MM)
 
     @property
     def tooth_z_mm(self) -> tuple[float, ...]:

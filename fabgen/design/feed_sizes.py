@@ -57,9 +57,10 @@ class FeedBlockSize(FeedBlockLayout):
     def _upright_mm3(self) -> float:
         """Terminal holes with their traps, hold-down holes, cable slot and drain."""
         hole = self.drawn_mm(self.terminal_fastener.clearance_mm)
-        ceiling = self.trap_top_mm + layout.MEMBRANE_MM
+        ceiling = self.trap_top_mm + layout.STEP_MM
         below_axis = self.height_mm - self.drawn_bore_mm / 2 - ceiling
         terminal = disc_mm2(hole) * below_axis + under_disc_mm3(self.drawn_bore_mm, hole)
+        terminal += self.step_mm * self.trap_flats_mm * layout.STEP_MM
         trap = self._down_mm3(self.terminal_y_mm, self.trap_flats_mm, self._trap_chord_mm, self.trap_top_mm)
         hold = self._hole_down_mm3(0.0, self.drawn_mm(self.fastener.clearance_mm), self.seat_mm)
         hold += disc_mm2(self.counterbore_mm) * (self.height_mm - self.seat_mm)
@@ -144,8 +145,10 @@ def terminal_for(rod_diameter_mm: float) -> str:
 
 
 def least_height_mm(size: FeedBlockLayout) -> float:
-    """Lowest rod axis over the boom's top with a whole nut above it and a hold-down screw's head below the floor."""
+    """Lowest rod axis over the boom's top: a whole nut above it, hold-down heads below the floor, the cable gripped."""
     # Head, tag and screw move with the rod, so the seat of the nut keeps its distance to the rod's axis.
     nut = size.height_mm - size.trap_top_mm + size.terminal_fastener.nut_height_mm + layout.BEYOND_NUT_MM
     shortest = next(length for length in SCREW_LENGTHS_MM if length - ENGAGEMENT_MM >= 4.0)
-    return max(nut, shortest - ENGAGEMENT_MM + size.fastener.head_height_mm)
+    head = shortest - ENGAGEMENT_MM + size.fastener.head_height_mm
+    grip = size.bottom_mm + layout.TONGUE_OVER_FOOT_MM + layout.TIP_MM[1] + layout.LEAST_GRIP_MM
+    return max(nut, head, grip)

@@ -120,6 +120,11 @@ class FoldedSaddleSize:
         return self.tip_mm + layout.BEYOND_NUT_MM + self.terminal_fastener.nut_height_mm
 
     @property
+    def terminal_gap_mm(self) -> float:
+        """Smallest distance between a terminal screw and the saddle."""
+        return (self.drawn_mm(self.terminal_fastener.clearance_mm) - self.terminal_fastener.diameter_mm) / 2
+
+    @property
     def trap_flats_mm(self) -> float:
         """Nut trap across flats, flats towards ±y: printed lying, its roof is a short bridge."""
         return self.terminal_fastener.nut_across_flats_mm + layout.NUT_PLAY_MM

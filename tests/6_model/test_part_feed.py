@@ -91,16 +91,15 @@ def straight_parts(case):
 @pytest.mark.parametrize("case", cases(STRAIGHT))
 def test_straight_feed_goes_together(case):
     size, parts = straight_parts(case)
-    membrane = layout.MEMBRANE_MM * 3.2 * size.terminal_fastener.diameter_mm**2 / 4
     for (a, first), (b, second) in itertools.combinations(parts.items(), 2):
         pair = f"{a} / {b}"
         room = shared_mm3(first, second)
         if "nut" in pair and "terminal" in pair and a.split()[-1] == b.split()[-1]:
             continue  # thread in thread: both are drawn at the thread's diameter and share a face
-        if "block" in pair and "terminal" in pair:
-            assert 0 < room < membrane, pair  # the screw breaks through the membrane over the nut trap
-        else:
-            assert room < NONE_MM3, pair
+        assert room < NONE_MM3, pair
+    for name in ("left", "right"):
+        gap = parts[f"terminal {name}"].distance(parts["block"])
+        assert gap == pytest.approx(size.terminal_gap_mm, abs=1e-6)
 
 
 @pytest.mark.parametrize("case", cases(STRAIGHT))
@@ -226,11 +225,14 @@ def folded_parts(case):
 
 @pytest.mark.parametrize("case", cases(FOLDED))
 def test_folded_feed_goes_together(case):
-    _, parts = folded_parts(case)
+    size, parts = folded_parts(case)
     for (a, first), (b, second) in itertools.combinations(parts.items(), 2):
         if "nut" in f"{a}{b}" and "terminal" in f"{a}{b}" and a.split()[-1] == b.split()[-1]:
             continue  # thread in thread: both are drawn at the thread's diameter and share a face
         assert shared_mm3(first, second) < NONE_MM3, f"{a} / {b}"
+    for name in ("left", "right"):
+        gap = parts[f"terminal {name}"].distance(parts["saddle"])
+        assert gap == pytest.approx(size.terminal_gap_mm, abs=1e-6)
 
 
 @pytest.mark.parametrize("case", cases(FOLDED))

@@ -3,8 +3,7 @@
 Frame: origin on the boom's top (round: its crown) under the rods, local x along the boom, y along the rods, z up. Half
 rods enter from ±y as far as the rib. Nuts go into their traps from below before the block is screwed on the boom.
 Printed standing on its foot: the lying bores are teardrops, a round boom's cradle is a teardrop too and carries the
-boom between 45° and 60°, and the nut traps are closed by a membrane of 0.3 mm, a bridge that the terminal screw breaks
-through.
+boom between 45° and 60°, and the nut traps' roofs are stepped, so that each layer is a short bridge.
 """
 
 from fabgen.design import feed_layout as layout
@@ -93,13 +92,13 @@ def _rods(size: FeedBlockSize) -> list[cq.Shape]:
 
 
 def _terminals(size: FeedBlockSize) -> list[cq.Shape]:
-    hole = size.drawn_mm(size.terminal_fastener.clearance_mm)
-    low = size.bottom_mm - 1
+    hole, low, roof = size.drawn_mm(size.terminal_fastener.clearance_mm), size.bottom_mm - 1, size.trap_top_mm
+    step, half = size.step_mm / 2, size.trap_flats_mm / 2
     tools: list[cq.Shape] = []
-    for side in (-1, 1):
-        y = side * size.terminal_y_mm
-        tools.append(upright(hole, (0.0, y), (size.trap_top_mm + layout.MEMBRANE_MM, size.height_mm)))
-        tools.append(hexagon(size.trap_flats_mm, (0.0, y, low), Z, X, size.trap_top_mm - low))
+    for y in (-size.terminal_y_mm, size.terminal_y_mm):
+        tools.append(hexagon(size.trap_flats_mm, (0.0, y, low), Z, X, roof - low))
+        tools.append(box((-step, step), (y - half, y + half), (roof, roof + layout.STEP_MM)))
+        tools.append(upright(hole, (0.0, y), (roof + layout.STEP_MM, size.height_mm)))
     return tools
 
 

@@ -3,7 +3,8 @@
 Frame: origin on the boom's top (round: its crown) under the fed limb, local x along the boom, y along the limbs, z up.
 The bent rod is pushed into both slots from +x; a screw with a large washer in front of the column holds the upper limb
 in its middle, two terminal screws the fed ends, cable ties the cable. Printed lying on its −y side: slots upright,
-lying screw holes as teardrops, nut traps with a flat up, the concave foot within 45°: no support.
+lying screw holes as teardrops, the concave foot within 45°; the roofs of the nut traps, the tie slots and the rib's
+underside are bridges no longer than a slot is wide. No support.
 """
 
 from fabgen.design import folded_saddle_sizes as sizes
