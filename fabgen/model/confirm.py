@@ -1,0 +1,152 @@
+"""The kernel's word on every near pair: solids against the numbers they were arranged by.
+
+Formulae come first and decide; here each distinct relative placement is built and measured once. A disagreement is a
+mistake of the program, never of the design.
+"""
+
+import functools
+import itertools
+from collections.abc import Iterable
+from typing import Protocol
+
+from OCP.BRepExtrema import BRepExtrema_DistShapeShape
+
+from fabgen.design.arranged import Box, Cylinder, Frame, Interface, Placed
+from fabgen.design.distances import distance_mm
+from fabgen.errors import ProgramError
+from fabgen.model.fits import Fit, fits
+from fabgen.model.kernel import bounds_mm, cq
+from fabgen.model.neighbourhood import Body, neighbourhood, relative
+from fabgen.model.solids import location
+
+DISTANCE_TOLERANCE_MM = 1e-6
+OVERLAP_TOLERANCE_MM3 = 1e-6
+_LEAST_GRIP = 0.3
+"""Least part of a full ring that a grip may be: slit, mouth and lead-ins take the rest."""
+
+
+class Near(Protocol):
+    """A near pair as the checks class it."""
+
+    @property
+    def first(self) -> Placed:
+        """One part."""
+
+    @property
+    def second(self) -> Placed:
+        """The other."""
+
+    @property
+    def interface(self) -> Interface | None:
+        """How they are meant to meet; None where they are meant to stay apart."""
+
+    @property
+    def limit_mm(self) -> float:
+        """Least distance of parts meant to stay apart."""
+
+    @property
+    def distance_mm(self) -> float:
+        """By formula, never more than the true distance."""
+
+
+def confirm(pairs: Iterable[Near]) -> int:
+    """Hold the solids of all near pairs against the formulae.
+
+    Args:
+        pairs: every near pair, classed. One that is nearer than its limit has its finding already and is let pass.
+
+    Returns:
+        How many pairs were confirmed.
+
+    Raises:
+        ProgramError: solids and numbers contradict each other; the message names the pair.
+    """
+    count = 0
+    for pair in pairs:
+        if pair.interface is None and pair.distance_mm < pair.limit_mm:
+            continue
+        wrong = _contradiction(pair)
+        if wrong:
+            raise ProgramError(f"{pair.first.name} and {pair.second.name}: {wrong}")
+        count += 1
+    return count
+
+
+def _contradiction(pair: Near) -> str:
+    """What the solids say against the numbers; empty when they agree."""
+    first, own = neighbourhood(pair.first, pair.second, pair.distance_mm)
+    second, others = neighbourhood(pair.second, pair.first, pair.distance_mm)
+    frame = relative(own, others)
+    exact = _formula_is_exact(pair.first, pair.second)
+    if pair.interface is None and not exact and _boxes_apart_mm(first, second, frame) >= pair.distance_mm > 0:
+        return ""
+    apart_mm = _distance_mm(first, second, frame)
+    overlap_mm3 = _overlap_mm3(first, second, frame) if apart_mm <= DISTANCE_TOLERANCE_MM else 0.0
+    if pair.interface:
+        found = fits(first, second, frame) if pair.interface.fit_mm is not None else ()
+        return _against_interface(pair.interface, apart_mm, overlap_mm3, found)
+    if overlap_mm3 > OVERLAP_TOLERANCE_MM3:
+        return f"the solids overlap by {overlap_mm3:.6f} mm³"
+    short_mm = pair.distance_mm - apart_mm
+    if (abs(short_mm) if exact else short_mm) > DISTANCE_TOLERANCE_MM:
+        return f"the solids are {apart_mm:.6f} mm apart, by formula {pair.distance_mm:.6f} mm"
+    return ""
+
+
+def _against_interface(interface: Interface, apart_mm: float, overlap_mm3: float, found: tuple[Fit, ...]) -> str:
+    """What the solids say against a declared interface."""
+    kind = f"the interface '{interface.kind}'"
+    if abs(apart_mm - interface.gap_mm) > DISTANCE_TOLERANCE_MM:
+        return f"{kind} asks for a gap of {interface.gap_mm:.6f} mm, the solids have {apart_mm:.6f} mm"
+    if interface.fit_mm is None:
+        return f"{kind} overlaps by {overlap_mm3:.6f} mm³" if overlap_mm3 > OVERLAP_TOLERANCE_MM3 else ""
+    fit = next((fit for fit in found if abs(fit.fit_mm - interface.fit_mm) <= DISTANCE_TOLERANCE_MM), None)
+    if fit is None:
+        seen = ", ".join(f"{fit.fit_mm:.6f}" for fit in found) or "none"
+        return f"{kind} asks for a fit of {interface.fit_mm:.6f} mm, the solids have {seen}"
+    if not _LEAST_GRIP * fit.ring_mm3 - OVERLAP_TOLERANCE_MM3 <= overlap_mm3 <= fit.ring_mm3 + OVERLAP_TOLERANCE_MM3:
+        return f"{kind} overlaps by {overlap_mm3:.6f} mm³, the full ring is {fit.ring_mm3:.6f} mm³"
+    return ""
+
+
+def _formula_is_exact(first: Placed, second: Placed) -> bool:
+    """Whether the formula is the distance itself: parts that are their shapes, and no cylinders that cross."""
+    return (
+        first.exact
+        and second.exact
+        and not any(
+            isinstance(a, Cylinder) and isinstance(b, Cylinder) and a.axis != b.axis
+            for a in first.shapes
+            for b in second.shapes
+        )
+    )
+
+
+@functools.cache
+def _bounds_mm(body: Body) -> Box:
+    low, high = bounds_mm(cq.Workplane(body.solid))
+    return Box(low, high)
+
+
+def _boxes_apart_mm(first: Body, second: Body, frame: Frame) -> float:
+    """Distance between the kernel's own boxes round two solids: never more than the distance of the solids."""
+    box = _bounds_mm(second)
+    ends = [(box.low[i], box.high[i]) for i in range(3)]
+    corners = [frame.point((x, y, z)) for x, y, z in itertools.product(*ends)]
+    low, high = (tuple(bound(corner[i] for corner in corners) for i in range(3)) for bound in (min, max))
+    return distance_mm(_bounds_mm(first), Box((low[0], low[1], low[2]), (high[0], high[1], high[2])))
+
+
+@functools.cache
+def _distance_mm(first: Body, second: Body, frame: Frame) -> float:
+    """Smallest distance of two bodies, the second standing at `frame` in the first one's frame."""
+    measured = BRepExtrema_DistShapeShape(first.solid.wrapped, second.solid.moved(location(frame)).wrapped)
+    if not measured.IsDone():
+        raise ProgramError(f"the kernel found no distance between {first.part} and {second.part}")
+    return float(measured.Value())
+
+
+@functools.cache
+def _overlap_mm3(first: Body, second: Body, frame: Frame) -> float:
+    """Common volume of two bodies."""
+    return float(first.solid.intersect(second.solid.moved(location(frame))).Volume())
