@@ -4,7 +4,7 @@ from fabgen.arrange.drilling import PIECE
 from fabgen.design.arranged import Cut
 from fabgen.design.design import Design, Element
 from fabgen.design.ledger import LedgerLine
-from fabgen.stock import tables
+from fabgen.design.shop_tolerance import shop_tolerance_mm
 
 
 def rod_cut(design: Design, element: Element, line: LedgerLine) -> Cut:
@@ -26,7 +26,6 @@ def rod_cut(design: Design, element: Element, line: LedgerLine) -> Cut:
 def boom_cut(design: Design) -> Cut:
     """The boom; the datum end is sawn square first."""
     boom = design.boom
-    tolerance_mm = design.shop.stated_tolerance_mm or tables.linear_tolerance_mm(boom.length_mm, design.shop.tolerance)
     return Cut(
         piece=PIECE,
         element="boom",
@@ -37,5 +36,5 @@ def boom_cut(design: Design) -> Cut:
         trim_mm=0.0,
         half_mm=0.0,
         projection_mm=0.0,
-        tolerance_mm=tolerance_mm,
+        tolerance_mm=shop_tolerance_mm(design.shop, boom.length_mm),
     )

@@ -4,6 +4,7 @@ from dataclasses import dataclass
 
 from fabgen.design.arranged import Hole, Wall
 from fabgen.design.design import Design
+from fabgen.design.shop_tolerance import shop_tolerance_mm
 from fabgen.stock import tables
 
 PIECE = "boom"
@@ -45,7 +46,7 @@ def hole_rows(design: Design, openings: list[Opening]) -> tuple[Hole, ...]:
             across_mm=round(opening.across_mm, 6),
             diameter_mm=opening.diameter_mm,
             pilot_mm=pilot_mm(opening.diameter_mm),
-            tolerance_mm=station_tolerance_mm(design, opening.station_mm),
+            tolerance_mm=shop_tolerance_mm(design.shop, opening.station_mm),
             drill=drill_name(design, opening.diameter_mm),
             purpose=opening.purpose,
         )
@@ -64,13 +65,3 @@ def pilot_mm(diameter_mm: float) -> float:
 def drill_name(design: Design, diameter_mm: float) -> str:
     """The drill of the shop's series nearest to a hole's diameter."""
     return tables.nearest_drill(diameter_mm, design.shop.drills).name
-
-
-def station_tolerance_mm(design: Design, station_mm: float) -> float:
-    """± on a station: the stated tolerance, or ISO 2768-1 for a length of that size.
-
-    ISO 2768-1 begins at 0.5 mm; a shorter distance takes its first row.
-    """
-    if design.shop.stated_tolerance_mm > 0:
-        return design.shop.stated_tolerance_mm
-    return tables.linear_tolerance_mm(max(station_mm, 0.5), design.shop.tolerance)

@@ -10,8 +10,8 @@ from fractions import Fraction
 from fabgen.correct.allowance import allowance
 from fabgen.design.design import Design, Element
 from fabgen.design.ledger import Allowance, Ledger, LedgerLine
+from fabgen.design.shop_tolerance import shop_tolerance_mm
 from fabgen.physics.half_wave import shift_khz
-from fabgen.stock import tables
 
 DRIVEN_TRIM = 0.02
 """Trim offered on a driven rod, as a share of its length: its match decides. Source: common practice."""
@@ -45,17 +45,10 @@ def _line(design: Design, element: Element) -> LedgerLine:
         rod_change_u_mm=0.0,
         rounding_mm=(cut - modelled - added) / 1000,
         cut_mm=cut_mm,
-        tolerance_mm=cut_tolerance_mm(design, cut_mm),
+        tolerance_mm=shop_tolerance_mm(design.shop, cut_mm),
         trim_mm=_trim_mm(design, element, found),
         shift_khz=abs(shift_khz(frequency_mhz=design.frequency_mhz, length_mm=element.length_mm, change_mm=found.u_mm)),
     )
-
-
-def cut_tolerance_mm(design: Design, length_mm: float) -> float:
-    """± on a sawn length: the stated tolerance, or ISO 2768-1 by size."""
-    if design.shop.stated_tolerance_mm > 0:
-        return design.shop.stated_tolerance_mm
-    return tables.linear_tolerance_mm(length_mm, design.shop.tolerance)
 
 
 def _um(length_mm: float) -> int:
