@@ -53,7 +53,7 @@ class BushSize:
     @property
     def spigot_wall_mm(self) -> float:
         """Plastic between rod bore and hole."""
-        return (self.spigot_mm - self.drawn_bore_mm) / 2
+        return (self.spigot_mm - self.bore_mm) / 2
 
     @property
     def lead_in_mm(self) -> float:
@@ -91,9 +91,9 @@ class BushSize:
     def shapes(self) -> tuple[Cylinder, Cylinder]:
         """Flange and spigot in the local frame; on a round tube the flange is drawn down to its rim's foot."""
         low, high = -self.foot_drop_mm, self.flange_height_mm
-        flange = Cylinder("z", (0.0, 0.0, (low + high) / 2), self.flange_mm, high - low, self.drawn_bore_mm)
+        flange = Cylinder("z", (0.0, 0.0, (low + high) / 2), self.flange_mm, high - low, self.bore_mm)
         length = self.spigot_length_mm
-        spigot = Cylinder("z", (0.0, 0.0, -length / 2), self.spigot_mm, length, self.drawn_bore_mm)
+        spigot = Cylinder("z", (0.0, 0.0, -length / 2), self.spigot_mm, length, self.bore_mm)
         return flange, spigot
 
 
@@ -167,7 +167,7 @@ def sleeve_size(
 
 
 def _require_possible(size: BushSize) -> None:
-    if size.spigot_wall_mm <= 0:
+    if size.spigot_mm <= size.drawn_bore_mm + 2 * size.bore_edge_mm + 2 * size.lead_in_mm:
         raise ValueError(f"a bore of {size.drawn_bore_mm:.3f} mm leaves no wall in a spigot of {size.spigot_mm:.3f} mm")
     if size.flange_mm <= size.spigot_mm:
         raise ValueError(

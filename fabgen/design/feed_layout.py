@@ -131,7 +131,7 @@ class FeedBlockLayout:
         The roof prints in two bridges, first along y beside the step, then across it: no support and no drilling out.
         """
         bolt = self.terminal_fastener
-        return self.drawn_mm((bolt.diameter_mm + bolt.clearance_mm) / 2)
+        return (bolt.diameter_mm + bolt.clearance_mm) / 2
 
     @property
     def terminal_gap_mm(self) -> float:
@@ -143,7 +143,7 @@ class FeedBlockLayout:
     @property
     def rib_half_mm(self) -> float:
         """Half the rib's length along the boom."""
-        return self.drawn_bore_mm / 2 + 1.5
+        return self.bore_mm / 2 + 1.5
 
     @property
     def rib_top_mm(self) -> float:
@@ -157,8 +157,8 @@ class FeedBlockLayout:
 
     @property
     def counterbore_mm(self) -> float:
-        """Drawn diameter of the hole for a hold-down head."""
-        return self.drawn_mm(self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM)
+        """Diameter of the hole for a hold-down head."""
+        return self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM
 
     @property
     def screw_x_mm(self) -> tuple[float, float]:
@@ -183,7 +183,7 @@ class FeedBlockLayout:
     def slot_x_mm(self) -> tuple[float, float]:
         """The cable slot along the boom."""
         trap = hexagon_corners_mm(self.trap_flats_mm)
-        low = max(self.drawn_bore_mm, trap) / 2 + LAND_MM
+        low = max(self.bore_mm, trap) / 2 + LAND_MM
         return low, low + self.cable_mm + 2 * TONGUE_PLAY_MM
 
     @property
@@ -205,7 +205,7 @@ class FeedBlockLayout:
     @property
     def drain_at_mm(self) -> tuple[float, float]:
         """x, y of the drain."""
-        return -self.cable_at_mm[0], -(self.slot_y_mm[0] + self.drawn_mm(DRAIN_MM) / 2)
+        return -self.cable_at_mm[0], -(self.slot_y_mm[0] + DRAIN_MM / 2)
 
     @property
     def tongue_y_mm(self) -> tuple[float, float]:
@@ -263,8 +263,8 @@ class FeedBlockLayout:
 
     @property
     def pilot_mm(self) -> float:
-        """Drawn diameter of the holes in which the lid's screws form their thread."""
-        return self.drawn_mm(tap_drill_mm(self.lid_screw))
+        """Diameter of the holes in which the lid's screws form their thread."""
+        return tap_drill_mm(self.lid_screw)
 
     @property
     def post_inner_mm(self) -> tuple[float, float]:

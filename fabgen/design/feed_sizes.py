@@ -46,7 +46,7 @@ class FeedBlockSize(FeedBlockLayout):
         posts = 4 * (cx - px) * (cy - py)
         chamber = (4 * cx * cy - posts) * (self.lid_seat_mm - self.height_mm)
         rib = 2 * self.rib_half_mm * self.gap_mm * (self.rib_top_mm - self.height_mm)
-        pilots = 4 * disc_mm2(self.pilot_mm) * layout.PILOT_DEPTH_MM
+        pilots = 4 * disc_mm2(self.drawn_mm(self.pilot_mm)) * layout.PILOT_DEPTH_MM
         return 4 * rx * ry * layout.LID_MM + chamber - rib + pilots
 
     def _rods_mm3(self) -> float:
@@ -60,10 +60,10 @@ class FeedBlockSize(FeedBlockLayout):
         ceiling = self.trap_top_mm + layout.STEP_MM
         below_axis = self.height_mm - self.drawn_bore_mm / 2 - ceiling
         terminal = disc_mm2(hole) * below_axis + under_disc_mm3(self.drawn_bore_mm, hole)
-        terminal += self.step_mm * self.trap_flats_mm * layout.STEP_MM
+        terminal += self.drawn_mm(self.step_mm) * self.trap_flats_mm * layout.STEP_MM
         trap = self._down_mm3(self.terminal_y_mm, self.trap_flats_mm, self._trap_chord_mm, self.trap_top_mm)
         hold = self._hole_down_mm3(0.0, self.drawn_mm(self.fastener.clearance_mm), self.seat_mm)
-        hold += disc_mm2(self.counterbore_mm) * (self.height_mm - self.seat_mm)
+        hold += disc_mm2(self.drawn_mm(self.counterbore_mm)) * (self.height_mm - self.seat_mm)
         (x0, x1), (y0, y1) = self.slot_x_mm, self.slot_y_mm
         slot = self._down_mm3((y0 + y1) / 2, y1 - y0, lambda _: x1 - x0, self.height_mm)
         drain = self._hole_down_mm3(self.drain_at_mm[1], self.drawn_mm(layout.DRAIN_MM), self.height_mm)

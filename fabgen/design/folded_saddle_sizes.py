@@ -122,7 +122,7 @@ class FoldedSaddleSize:
     @property
     def terminal_gap_mm(self) -> float:
         """Smallest distance between a terminal screw and the saddle."""
-        return (self.drawn_mm(self.terminal_fastener.clearance_mm) - self.terminal_fastener.diameter_mm) / 2
+        return (self.terminal_fastener.clearance_mm - self.terminal_fastener.diameter_mm) / 2
 
     @property
     def trap_flats_mm(self) -> float:
@@ -132,7 +132,7 @@ class FoldedSaddleSize:
     @property
     def tallest_mm(self) -> float:
         """What is taken out along z at the fed limb: its slot or the nut traps."""
-        return max(self.drawn_bore_mm, hexagon_corners_mm(self.trap_flats_mm))
+        return max(self.bore_mm, hexagon_corners_mm(self.trap_flats_mm))
 
     @property
     def back_mm(self) -> float:
@@ -148,8 +148,8 @@ class FoldedSaddleSize:
 
     @property
     def counterbore_mm(self) -> float:
-        """Drawn diameter of the hole for a hold-down head."""
-        return self.drawn_mm(self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM)
+        """Diameter of the hole for a hold-down head."""
+        return self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM
 
     @property
     def screw_length_mm(self) -> float:
@@ -195,7 +195,7 @@ class FoldedSaddleSize:
 
     def retainer_offset_mm(self, name: str) -> float:
         """From the upper limb's axis to that screw's."""
-        return (self.drawn_bore_mm + self.drawn_mm(tap_drill_mm(name))) / 2 + RETAINER_WALL_MM
+        return (self.bore_mm + tap_drill_mm(name)) / 2 + RETAINER_WALL_MM
 
     @property
     def retainer_z_mm(self) -> float:
@@ -204,8 +204,8 @@ class FoldedSaddleSize:
 
     @property
     def pilot_mm(self) -> float:
-        """Drawn diameter of that screw's hole; it forms its thread in it."""
-        return self.drawn_mm(tap_drill_mm(self.retainer))
+        """Diameter of that screw's hole; it forms its thread in it."""
+        return tap_drill_mm(self.retainer)
 
     @property
     def top_mm(self) -> float:
@@ -265,7 +265,7 @@ class FoldedSaddleSize:
         column = depth * ((y1 - y0) * self.top_mm + self._foot_mm2(y0, y1))
         slots = (disc_mm2(bore) / 2 + bore * self.front_mm) * (2 * (y1 - y0) - self.gap_mm)
         ties = 2 * len(self.tie_z_mm) * TIE_MM[0] * TIE_MM[1] * depth
-        retainer = teardrop_mm2(self.pilot_mm) * depth
+        retainer = teardrop_mm2(self.drawn_mm(self.pilot_mm)) * depth
         return ears + fillets + column - slots - ties - retainer - 2 * (self._terminal_mm3() + self._hold_down_mm3())
 
     @property
@@ -301,7 +301,7 @@ class FoldedSaddleSize:
         """One hold-down screw's hole and counterbore."""
         clearance = self.drawn_mm(self.fastener.clearance_mm)
         shank = teardrop_mm2(clearance) * self.seat_mm + under_teardrop_mm3(self.boom_diameter_mm, clearance)
-        return shank + teardrop_mm2(self.counterbore_mm) * self.fastener.head_height_mm
+        return shank + teardrop_mm2(self.drawn_mm(self.counterbore_mm)) * self.fastener.head_height_mm
 
 
 def folded_saddle_size(

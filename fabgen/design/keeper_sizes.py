@@ -40,7 +40,7 @@ class PushRingSize:
     @property
     def wall_mm(self) -> float:
         """Radial thickness."""
-        return (self.outside_mm - self.drawn_bore_mm) / 2
+        return (self.outside_mm - self.bore_mm) / 2
 
     @property
     def lead_in_mm(self) -> float:
@@ -70,8 +70,8 @@ class PushRingSize:
 
     @property
     def shapes(self) -> tuple[Cylinder]:
-        """The ring in the local frame, slit closed, bore as drawn."""
-        return (_ring(self.outside_mm, self.drawn_bore_mm, self.length_mm),)
+        """The ring in the local frame, slit closed."""
+        return (_ring(self.outside_mm, self.bore_mm, self.length_mm),)
 
 
 @dataclass(frozen=True, slots=True)
@@ -138,8 +138,8 @@ class SnapKeeperSize:
 
     @property
     def shapes(self) -> tuple[Cylinder]:
-        """The clip in the local frame, mouth closed, bore as drawn."""
-        return (_ring(self.outside_mm, self.drawn_bore_mm, self.length_mm),)
+        """The clip in the local frame, mouth closed."""
+        return (_ring(self.outside_mm, self.bore_mm, self.length_mm),)
 
 
 def push_ring_size(
@@ -164,7 +164,7 @@ def push_ring_size(
         slit_mm=slit_mm,
         hole_growth_mm=hole_growth_mm,
     )
-    if size.wall_mm <= 0 or not 0 < slit_mm < size.drawn_bore_mm:
+    if size.outside_mm <= size.drawn_bore_mm + 2 * size.lead_in_mm or not 0 < slit_mm < size.drawn_bore_mm:
         raise ValueError(
             f"no ring of {size.drawn_bore_mm:.3f} × {size.outside_mm:.3f} mm with a slit of {slit_mm:.3f} mm"
         )

@@ -58,10 +58,14 @@ class SaddleSize:
         """The hold-down screw's sizes."""
         return fastener(self.screw)
 
+    def drawn_mm(self, hole_mm: float) -> float:
+        """What a printed hole is drawn as."""
+        return hole_mm + self.hole_growth_mm
+
     @property
     def drawn_bore_mm(self) -> float:
         """Bore of the solid."""
-        return self.bore_mm + self.hole_growth_mm
+        return self.drawn_mm(self.bore_mm)
 
     @property
     def screw_length_mm(self) -> float:
@@ -81,18 +85,18 @@ class SaddleSize:
 
     @property
     def counterbore_mm(self) -> float:
-        """Drawn diameter of the hole for the head."""
-        return self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM + self.hole_growth_mm
+        """Diameter of the hole for the head."""
+        return self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM
 
     @property
     def clearance_mm(self) -> float:
-        """Drawn diameter of the hole for the shank."""
-        return self.fastener.clearance_mm + self.hole_growth_mm
+        """Diameter of the hole for the shank."""
+        return self.fastener.clearance_mm
 
     @property
     def column_half_mm(self) -> float:
         """Half the column's thickness along the boom, and the radius of its top."""
-        return self.drawn_bore_mm / 2 + self.wall_mm
+        return self.bore_mm / 2 + self.wall_mm
 
     @property
     def fillet_mm(self) -> float:
@@ -141,9 +145,9 @@ class SaddleSize:
         foot = under_strip_mm2(self.boom_diameter_mm, self.foot_width_mm)
         if self.boom_diameter_mm:
             foot += (self.width_mm - self.foot_width_mm) * self.foot_drop_mm
-        screw = teardrop_mm2(self.clearance_mm) * self.seat_mm
-        screw += teardrop_mm2(self.counterbore_mm) * self.fastener.head_height_mm
-        screw += under_teardrop_mm3(self.boom_diameter_mm, self.clearance_mm)
+        screw = teardrop_mm2(self.drawn_mm(self.clearance_mm)) * self.seat_mm
+        screw += teardrop_mm2(self.drawn_mm(self.counterbore_mm)) * self.fastener.head_height_mm
+        screw += under_teardrop_mm3(self.boom_diameter_mm, self.drawn_mm(self.clearance_mm))
         return profile * self.width_mm + foot * self.length_mm - 2 * screw
 
     @property
@@ -175,7 +179,7 @@ def saddle_size(
         ValueError: the rod lies too low for any plastic under its bore.
     """
     least_wall = print_practice("recommended_wall_mm")
-    head = fastener(screw).head_diameter_mm + COUNTERBORE_PLAY_MM + hole_growth_mm
+    head = fastener(screw).head_diameter_mm + COUNTERBORE_PLAY_MM
     least = math.sqrt(2) * head + 2 * least_wall
     wanted = FOOT_SHARE * boom_diameter_mm if boom_diameter_mm else boom_width_mm
     size = SaddleSize(
@@ -188,7 +192,7 @@ def saddle_size(
         screw=screw,
         hole_growth_mm=hole_growth_mm,
     )
-    if height_mm < size.drawn_bore_mm / 2 + least_wall:
+    if height_mm < size.bore_mm / 2 + least_wall:
         raise ValueError(
             f"a rod of {rod_diameter_mm:g} mm at {height_mm:g} mm leaves less than {least_wall:g} mm under its bore"
         )

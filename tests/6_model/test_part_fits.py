@@ -60,6 +60,23 @@ def test_growth_goes_to_the_bore_and_nowhere_else():
     assert diameters_mm(built("bush", hole_growth_mm=0.25)) == {4.45, 7.8, 12.0}
 
 
+@pytest.mark.parametrize(
+    "name", ["bush", "sleeve", "push_ring", "snap_keeper", "saddle", "feed_block", "folded_saddle"]
+)
+def test_growth_moves_nothing(name):
+    """A printer's correction must not move a drilled hole or an outside face: only openings grow."""
+    sizes = [getattr(part_sizes, f"{name}_size")(hole_growth_mm=growth) for growth in (0.0, 0.3)]
+    drawn = {"hole_growth_mm", "volume_mm3", "lid_volume_mm3", "drawn_bore_mm", "shapes"}
+    for quantity in [q for q in dir(sizes[0]) if not q.startswith("_") and q not in drawn]:
+        first, second = (getattr(size, quantity) for size in sizes)
+        if not callable(first):
+            assert first == second, quantity
+    assert sizes[0].shapes == sizes[1].shapes
+    plain, grown = (solid_of(built(name, hole_growth_mm=growth)) for growth in (0.0, 0.3))
+    assert plain.intersect(grown).Volume(1e-6) == pytest.approx(grown.Volume(1e-6), rel=1e-7)
+    assert grown.Volume() < plain.Volume()
+
+
 def test_round_foot_is_the_booms_own_cylinder():
     part = built("bush", boom_diameter_mm=25.0)
     assert bores_mm(part) == {4.2, 25.0}

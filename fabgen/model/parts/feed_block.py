@@ -76,7 +76,9 @@ def _opened_above(size: FeedBlockSize) -> list[cq.Shape]:
     for x, post_x in ((-sx, (-cx, -px)), (sx, (px, cx))):
         for y, post_y in ((-sy, (-cy, -py)), (sy, (py, cy))):
             keep.append(box(post_x, post_y, (size.height_mm, size.lid_seat_mm)))
-            pilots.append(upright(size.pilot_mm, (x, y), (size.lid_seat_mm - layout.PILOT_DEPTH_MM, above)))
+            pilots.append(
+                upright(size.drawn_mm(size.pilot_mm), (x, y), (size.lid_seat_mm - layout.PILOT_DEPTH_MM, above))
+            )
     chamber = box((-cx, cx), (-cy, cy), (size.height_mm, size.lid_seat_mm)).cut(*keep)
     return [chamber, box((-rx, rx), (-ry, ry), (size.lid_seat_mm, above)), *pilots]
 
@@ -93,7 +95,7 @@ def _rods(size: FeedBlockSize) -> list[cq.Shape]:
 
 def _terminals(size: FeedBlockSize) -> list[cq.Shape]:
     hole, low, roof = size.drawn_mm(size.terminal_fastener.clearance_mm), size.bottom_mm - 1, size.trap_top_mm
-    step, half = size.step_mm / 2, size.trap_flats_mm / 2
+    step, half = size.drawn_mm(size.step_mm) / 2, size.trap_flats_mm / 2
     tools: list[cq.Shape] = []
     for y in (-size.terminal_y_mm, size.terminal_y_mm):
         tools.append(hexagon(size.trap_flats_mm, (0.0, y, low), Z, X, roof - low))
@@ -107,7 +109,7 @@ def _hold_downs(size: FeedBlockSize) -> list[cq.Shape]:
     tools: list[cq.Shape] = []
     for x in size.screw_x_mm:
         tools.append(upright(shank, (x, 0.0), (size.bottom_mm - 1, size.seat_mm + 0.5)))
-        tools.append(upright(size.counterbore_mm, (x, 0.0), (size.seat_mm, size.height_mm)))
+        tools.append(upright(size.drawn_mm(size.counterbore_mm), (x, 0.0), (size.seat_mm, size.height_mm)))
     return tools
 
 

@@ -68,7 +68,9 @@ def folded_saddle(
         for x, side in ((size.back_mm, -1), (size.front_mm, 1))
     ]
     tools = [*_slots(size), *_terminals(size), *_hold_downs(size), *_ties(size)]
-    tools.append(teardrop(size.pilot_mm, (size.back_mm - 1, 0.0, size.retainer_z_mm), X, Y, _depth(size) + 2))
+    tools.append(
+        teardrop(size.drawn_mm(size.pilot_mm), (size.back_mm - 1, 0.0, size.retainer_z_mm), X, Y, _depth(size) + 2)
+    )
     if size.boom_diameter_mm:
         tools.append(boom_round(size.boom_diameter_mm, 4 * (size.x_mm[1] - size.x_mm[0])))
     return part_of(fused(column, base, *fillets).cut(*tools))
@@ -107,7 +109,9 @@ def _hold_downs(size: FoldedSaddleSize) -> list[cq.Shape]:
     tools: list[cq.Shape] = []
     for x in size.screw_x_mm:
         tools.append(teardrop(shank, (x, 0.0, low), Z, Y, size.seat_mm - low + 0.5))
-        tools.append(teardrop(size.counterbore_mm, (x, 0.0, size.seat_mm), Z, Y, size.ear_mm - size.seat_mm + 1))
+        tools.append(
+            teardrop(size.drawn_mm(size.counterbore_mm), (x, 0.0, size.seat_mm), Z, Y, size.ear_mm - size.seat_mm + 1)
+        )
     return tools
 
 

@@ -73,8 +73,8 @@ def screw_hole(size: SaddleSize, x_mm: float) -> list[cq.Shape]:
     """Tools for one hold-down screw: shank and counterbore, apex towards +y."""
     low = -size.foot_drop_mm - 1
     return [
-        teardrop(size.clearance_mm, (x_mm, 0.0, low), Z, Y, size.seat_mm - low + 0.5),
-        teardrop(size.counterbore_mm, (x_mm, 0.0, size.seat_mm), Z, Y, size.ear_mm - size.seat_mm + 1),
+        teardrop(size.drawn_mm(size.clearance_mm), (x_mm, 0.0, low), Z, Y, size.seat_mm - low + 0.5),
+        teardrop(size.drawn_mm(size.counterbore_mm), (x_mm, 0.0, size.seat_mm), Z, Y, size.ear_mm - size.seat_mm + 1),
     ]
 
 
