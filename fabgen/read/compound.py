@@ -59,11 +59,14 @@ class Lengths(Kind):
             return (self.each.read(value, info),)
         if not isinstance(value, Seq):
             scalar_of(value, self.example)
-            refuse("D08", f"takes a list of {self.count} lengths", f"for example {self.example}")
+            refuse("D08", f"takes a list of {self.count} lengths", f"for example {self._list()}")
         if len(value) != self.count:
-            fix = f"for example {self.example}; the decimal mark is a point"
+            fix = "the decimal mark is a point, a comma separates; for example " + self._list()
             refuse("D08", f"takes {self.count} lengths, not {len(value)}", fix)
         return tuple(self.each.read(item, info) for item in value)
+
+    def _list(self) -> str:
+        return self.example if self.example.startswith("[") else "[30 mm, 20 mm]"
 
     def schema(self) -> dict[str, Any]:
         """A list of lengths, or one."""
@@ -108,7 +111,8 @@ class MaterialValue(Kind):
             return table_material(str(name))
         except tables.UnknownStockError:
             fix = suggestion(name, tables.material_names())
-            refuse("D15", f"'{name}' is not in the material table", f"{fix}; or a mapping {{name, kind, density, …}}")
+            other = "or state its properties: {name: …, kind: …, density: …}"
+            refuse("D15", f"'{name}' is not in the material table", f"{fix} {other}")
 
     def schema(self) -> dict[str, Any]:
         """A name of the table or the mapping."""

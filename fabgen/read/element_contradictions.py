@@ -2,7 +2,7 @@
 
 from itertools import pairwise
 
-from fabgen.read.fits import default_hole_mm
+from fabgen.read.fits import HOLE_OVER_ROD_MM, default_hole_mm
 from fabgen.read.grammar import ElementKeys, FileKeys
 from fabgen.read.nearest import suggestion
 from fabgen.read.places import key_place, value_place
@@ -23,9 +23,12 @@ def check_elements(keys: FileKeys, rows: list[Row], tree: Map, problems: Problem
     _check_stations(rows, problems)
     for row, node in rows:
         _check_mount(row, node, keys, tree, problems)
-        if resolve_rod(row, keys.rods, keys.feed) is None and "rods" not in tree:
-            message = f"nothing says what rod {row.id} is cut from"
-            problems.add("D07", message, node.place, "add rods: {diameter: 4 mm, material: EN AW-6060 T66}")
+    bare = [(row, node) for row, node in rows if resolve_rod(row, keys.rods, keys.feed) is None]
+    if bare and "rods" not in tree:
+        names = ", ".join(row.id for row, _ in bare[:4]) + (f" and {len(bare) - 4} more" if len(bare) > 4 else "")
+        message = f"`rods` is missing: nothing says what {names} are cut from"
+        fix = "add rods: {diameter: 4 mm, material: EN AW-6060 T66}"
+        problems.add("D07", message, bare[0][1].place, fix)
 
 
 def _check_ids(rows: list[Row], problems: Problems) -> None:
@@ -82,5 +85,10 @@ def _check_mount(row: ElementKeys, node: Map, keys: FileKeys, tree: Map, problem
         return
     drills = keys.shop.drills if keys.shop is not None and keys.shop.drills is not None else "metric"
     if default_hole_mm(mount.style, rod.diameter_mm, drills) is None:
-        message = f"`hole` is missing: no {drills} drill is large enough for the {rod.diameter_mm:g} mm rod {row.id}"
-        problems.add("D07", message, key_place(tree, "mounts", name), "add hole: and the size that you can make")
+        message = f"`hole` is missing: no {drills} drill is large enough for a {rod.diameter_mm:g} mm rod"
+        problems.add(
+            "D07",
+            message,
+            key_place(tree, "mounts", name),
+            f"add hole: {rod.diameter_mm + HOLE_OVER_ROD_MM[mount.style]:g} mm, or the size that you can make",
+        )

@@ -7,11 +7,19 @@ from pydantic.fields import FieldInfo
 
 from fabgen.errors import Place
 from fabgen.read.compound import Keys, MaterialKeys, MaterialValue
-from fabgen.read.grammar import FileKeys
+from fabgen.read.grammar import ElementKeys, FileKeys
 from fabgen.read.kind import Broken, Kind
 from fabgen.read.nearest import nearest, suggestion
 from fabgen.read.source import Problems
 from fabgen.read.yaml_tree import Map, Node, Scalar, Seq
+
+_EXAMPLES = {
+    "boom": "{section: square, outside: 20 mm, wall: 1.5 mm, material: EN AW-6060 T66, "
+    "overhang: {rear: 70 mm, front: 70 mm}}",
+    "overhang": "{rear: 70 mm, front: 70 mm}",
+    "elements": "and one row per rod, - {id: R, role: reflector, at: 0 mm, length: 340 mm}",
+}
+"""What a whole section could look like."""
 
 Loc = tuple[int | str, ...]
 
@@ -108,9 +116,12 @@ def _report_shape(
 ) -> None:
     """A list, mapping or scalar where another is needed."""
     place = _value_place(node, key)
-    wanted = "a list of rows" if kind == "list_type" else "keys and values"
-    keys = ", ".join(aliases(model)) if model is not None else ""
-    fix = f"write {{key: value}} with the keys {keys}" if keys else "compare with the example of `fabgen new`"
+    if kind == "list_type":
+        wanted, fix = "a list of rows", "begin every row with `- `, or write table: file.csv"
+    else:
+        wanted = "keys and values"
+        fix = f"write {{key: value}} with the keys {', '.join(aliases(model))}" if model else "write key: value"
+        name = "a row" if model is ElementKeys else name
     if isinstance(node, Scalar) and node.empty:
         problems.add("D07", f"`{name}` has no value", place, fix)
     else:
@@ -153,12 +164,10 @@ def _keys_in(annotation: Any) -> type[Keys] | None:
 
 def _example(model: type[Keys] | None, alias: str) -> str:
     """What a user might write for a key."""
+    if alias in _EXAMPLES:
+        return _EXAMPLES[alias]
     info = _field(model, alias) if model is not None else None
     for metadata in info.metadata if info is not None else ():
         if isinstance(metadata, Kind):
             return metadata.example
-    nested = _keys_in(info.annotation) if info is not None else None
-    if nested is None:
-        return ""
-    inner = ", ".join(f"{name}: {_example(nested, name)}" for name in required(nested))
-    return f"{{{inner}}}" if inner else ""
+    return ""

@@ -58,7 +58,7 @@ class BoomKeys(Keys):
     section: Annotated[Literal["round", "square", "rectangular"], Word("round", "square", "rectangular")]
     outside_mm: Annotated[
         tuple[float, ...],
-        Lengths(Length(3, 600, "20 mm", (8, 160)), 2, single=True, example="20 mm, or [30 mm, 20 mm]"),
+        Lengths(Length(3, 600, "20 mm", (8, 160)), 2, single=True, example="20 mm"),
     ] = Field(alias="outside")
     wall_mm: Annotated[float | None, _WALL] = Field(default=None, alias="wall")
     corner_radius_mm: Annotated[float | None, Length(0, 50, "1 mm")] = Field(default=None, alias="corner_radius")
@@ -150,7 +150,7 @@ class ElementKeys(Keys):
     id: Annotated[str, _ELEMENT_ID]
     role: Annotated[Role, Word(*ROLES)]
     at_mm: Annotated[float, Length(-100_000, 100_000, "138 mm")] = Field(alias="at")
-    length_mm: Annotated[float, Length(5, 12_000, "322 mm")] = Field(alias="length")
+    length_mm: Annotated[float, Length(5, 12_000, "322 mm", (20, 5500))] = Field(alias="length")
     mount: Annotated[str | None, _MOUNT] = None
     diameter_mm: Annotated[float | None, _ROD] = Field(default=None, alias="diameter")
     material: Annotated[Material | None, MaterialValue()] = None

@@ -24,4 +24,4 @@ def suggestion(written: str, known: Iterable[str]) -> str:
     near = nearest(written, words)
     if not near:
         return f"known here: {listed}"
-    return f"did you mean `{near}`?" + (f" Known here: {listed}" if len(words) <= _FEW else "")
+    return f"did you mean `{near}`?" + (f" Known here: {listed}" if 1 < len(words) <= _FEW else "")

@@ -8,6 +8,7 @@ from fabgen.design.design import Design, Element
 from fabgen.design.findings import Finding, Severity, in_order
 from fabgen.read.grammar import FileKeys
 from fabgen.read.kind import OtherUnit
+from fabgen.read.quantities import without_unit
 from fabgen.units import in_to_mm, mm_to_in
 
 USUAL_LENGTH_WL = (0.25, 0.7)
@@ -25,7 +26,7 @@ def notes_on(design: Design, keys: FileKeys, other_unit: list[OtherUnit]) -> tup
         keys: the file as written.
         other_unit: values that are only likely in the other unit.
     """
-    found = [_other_unit(value) for value in other_unit]
+    found = [_other_unit(value) for value in other_unit if value.key != "length"]
     found += _lengths(design, keys.units)
     found += _spacings(design)
     found += _order(keys)
@@ -48,7 +49,7 @@ def _finding(
 
 def _other_unit(value: OtherUnit) -> Finding:
     where = f"{value.key}, {value.place.file} line {value.place.line}"
-    number = value.written.rstrip("\"″' abcdefghijklmnopqrstuvwxyz")
+    number = without_unit(value.written)
     advice = f"if {number} {value.other_unit} was meant ({value.other_mm:.4g} mm), write `{number} {value.other_unit}`"
     return _finding("D30", "warn", where, advice, value.read_mm, "mm")
 

@@ -36,46 +36,56 @@ class Length(Kind):
         try:
             length_mm = parse_length_mm(scalar, context.unit)
         except UnitError as error:
-            self._refuse(scalar, error)
+            self._refuse(scalar, error, context.unit)
+        likely = self.likely_mm is None or self.likely_mm[0] <= length_mm <= self.likely_mm[1]
+        other = None if likely else self._other(scalar, length_mm, context.unit)
         if not self.low_mm <= length_mm <= self.high_mm:
-            fix = f"{self.low_mm:g} mm to {self.high_mm:g} mm; for example {self.example}"
-            other = self._other(scalar, length_mm)
+            fix = f"allowed are {self._range(context.unit)}; for example {self.example}"
             if other is not None:
-                fix += f"; {scalar.strip()} in the other unit would be {other[0]:.4g} mm: write the unit"
+                fix += f"; was {without_unit(scalar)} {other[1]} meant ({other[0]:.4g} mm)?"
             refuse("D12", f"'{scalar}' is out of range", fix)
-        if self.likely_mm and not self.likely_mm[0] <= length_mm <= self.likely_mm[1]:
-            other = self._other(scalar, length_mm)
-            if other is not None:
-                key = (info.field_name or "").removesuffix("_mm")
-                context.other_unit.append(OtherUnit(key, scalar.place, str(scalar), length_mm, *other))
+        if other is not None:
+            key = (info.field_name or "").removesuffix("_mm")
+            context.other_unit.append(OtherUnit(key, scalar.place, str(scalar), length_mm, *other))
         return length_mm
 
-    def _other(self, scalar: Scalar, length_mm: float) -> tuple[float, str] | None:
+    def _range(self, unit: str | None) -> str:
+        """The allowed range, in inches too for those who write inches."""
+        inches = f" ({mm_to_in(self.low_mm):.3g} in to {mm_to_in(self.high_mm):.4g} in)" if unit == "in" else ""
+        return f"{self.low_mm:g} mm to {self.high_mm:g} mm{inches}"
+
+    def _other(self, scalar: Scalar, length_mm: float, unit: str | None) -> tuple[float, str] | None:
         """The same number in the other unit, in mm, when that is likely."""
-        if self.likely_mm is None:
+        written = scalar.strip()[len(without_unit(scalar)) :].strip() or unit
+        if self.likely_mm is None or written not in ("mm", "in", '"', "″"):
             return None
-        inch = any(mark in scalar for mark in ("in", '"', "″", "ft", "'"))
-        other = (mm_to_in(length_mm), "mm") if inch else (in_to_mm(length_mm), "in")
+        other = (in_to_mm(length_mm), "in") if written == "mm" else (mm_to_in(length_mm), "mm")
         return other if self.likely_mm[0] <= other[0] <= self.likely_mm[1] else None
 
-    def _refuse(self, scalar: Scalar, error: UnitError) -> NoReturn:
+    def _refuse(self, scalar: Scalar, error: UnitError, unit: str | None) -> NoReturn:
         """Refuse with the code that fits: a comma, a missing unit, or no length at all."""
-        code = "D13" if "," in scalar else "D10"
-        fix = error.fix
+        code, fix = "D13" if "," in scalar else "D10", error.fix
         if code == "D10" and (bare := _bare_mm(scalar)) is not None:
-            code = "D11"
-            in_inches = in_to_mm(bare)
+            code, in_inches = "D11", in_to_mm(bare)
             low, high = self.likely_mm or (self.low_mm, self.high_mm)
-            if low <= bare <= high and low <= in_inches <= high:
-                fix = f"{scalar} mm and {scalar} in ({in_inches:.4g} mm) are both likely: write the unit or set `units`"
+            if bare and low <= bare <= high and low <= in_inches <= high:
+                both = f"{scalar} mm and {scalar} in ({in_inches:.4g} mm) are both likely"
+                fix = f"{both}: write the unit, or `units` for the whole file"
             else:
-                fix += ", or set `units: mm` or `units: in` for the whole file"
-        refuse(code, error.message, f"{fix}; for example {self.example}" if self.example not in fix else fix)
+                fix += ", or `units: mm` or `units: in` for the whole file"
+        elif not any(given in fix for given in (self.example, "like", "example")):
+            fix += f"; for example {self.example}"
+        refuse(code, error.message, f"{fix}; allowed are {self._range(unit)}")
 
     def schema(self) -> dict[str, Any]:
         """A text with a unit or a bare number."""
         said = f"a length, {self.low_mm:g} mm to {self.high_mm:g} mm"
         return {"type": ["string", "number"], "description": said, "examples": [self.example]}
+
+
+def without_unit(written: str) -> str:
+    """The number of a length as written, for a message that proposes another unit."""
+    return written.strip().rstrip("\"″' abcdefghijklmnopqrstuvwxyz")
 
 
 def _bare_mm(scalar: Scalar) -> float | None:
@@ -103,7 +113,7 @@ class Frequency(Kind):
             code = "D13" if "," in scalar else "D11" if re.fullmatch(r"[0-9.]+", scalar) else "D10"
             refuse(code, error.message, error.fix)
         if not self.low_mhz <= frequency_mhz <= self.high_mhz:
-            limits = f"{self.low_mhz:g} MHz to {self.high_mhz:g} MHz"
+            limits = f"allowed are {self.low_mhz:g} MHz to {self.high_mhz:g} MHz"
             refuse("D12", f"'{scalar}' is out of range", f"{limits}; for example {self.example}")
         return frequency_mhz
 

@@ -70,8 +70,10 @@ def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
 
 
 def _unit(tree: Map) -> str | None:
-    unit = tree.get("units")
-    return str(unit) if isinstance(unit, Scalar) and str(unit) in ("mm", "in") else None
+    """The unit of bare lengths; when `units` itself is wrong, one report of that is enough."""
+    if "units" not in tree:
+        return None
+    return "in" if str(tree["units"]) == "in" else "mm"
 
 
 def _validate(tree: Map, context: Context, problems: Problems) -> FileKeys:

@@ -285,25 +285,36 @@ def _report_syntax(error: yaml.MarkedYAMLError, source: Source, problems: Proble
         problems.add("D03", "a tab in the indentation; YAML takes spaces only", place, "use two spaces per level")
     if tabs:
         return
-    mark = error.problem_mark or error.context_mark
+    problem, context = str(error.problem or ""), str(error.context or "")
+    message, fix = _plain_words(problem, context)
+    mark, noticed = error.problem_mark or error.context_mark, ""
+    opened = error.context_mark
+    if opened is not None and mark is not None and any(words in context for words in _POINT_AT_OPENING):
+        if mark.line > opened.line:
+            noticed = f", noticed in line {min(mark.line + 1, len(source.lines))}"
+        mark = opened if noticed else mark
     line, column = (mark.line + 1, mark.column + 1) if mark else (1, 1)
     if line > len(source.lines):
         line, column = len(source.lines), len(source.lines[-1]) + 1
-    message, fix = _plain_words(str(error.problem or ""), str(error.context or ""))
-    if error.context_mark is not None and "while parsing a flow" in str(error.context or ""):
-        message += f", in what opens in line {error.context_mark.line + 1}"
-    problems.add("D03", message, source.place(line, column), fix)
+    problems.add("D03", message + noticed, source.place(line, column), fix)
 
+
+_POINT_AT_OPENING = ("quoted scalar", "flow mapping", "flow sequence", "simple key")
+"""Where the parser stops late, the place where the open bracket, quote or key begins is the better one to show."""
 
 _SYNTAX = (
-    ("mapping values are not allowed", "a `:` stands where no key can be", "put a text with a colon in quotes"),
+    (
+        "mapping values are not allowed",
+        "a `:` stands where no key can be",
+        "indent alike; quote texts with a colon",
+    ),
     ("while scanning a quoted scalar", "a quote is not closed", "close it on the same line"),
     ("did not find expected ',' or", "a comma or a closing bracket is missing", "separate values with commas"),
     ("did not find expected key", "a key does not line up with its neighbours", "indent keys of one level alike"),
     ("did not find expected '-'", "a row does not line up with its neighbours", "begin every row with `- `"),
     ("could not find expected ':'", "a key without `:`", "write key: value"),
     ("cannot start any token", "a character that cannot begin a value", "put the value in quotes"),
-    ("block sequence entries are not allowed", "a `-` stands where no row can be", "begin rows on their own line"),
+    ("block sequence entries are not", "a `-` stands where no row can be", "begin rows on their own line"),
     ("unknown escape character", "an unknown escape in double quotes", "use single quotes"),
 )
 
