@@ -1,6 +1,5 @@
 """What a package holds: one function per part of it, each loading only what it needs."""
 
-import importlib.metadata
 import json
 from collections.abc import Callable, Sequence
 from dataclasses import asdict, dataclass
@@ -52,6 +51,8 @@ def package_files(
 
 def versions() -> dict[str, str]:
     """Program and libraries that shape the bytes of a package."""
+    import importlib.metadata
+
     names = ("cadquery", "ezdxf", "numpy", "svgwrite", "trimesh", "typst")
     return {"fabgen": __version__} | {name: importlib.metadata.version(name) for name in names}
 

@@ -1,8 +1,12 @@
-"""Design and lengths become stations, holes, placed parts, interfaces and pieces to saw, all as numbers."""
+"""Design and lengths become stations, holes, placed parts, interfaces and pieces to saw, all as numbers.
+
+Each style of mount and each kind of feed is a module of its own name, loaded when a design uses it.
+"""
 
 import math
+from importlib import import_module
 
-from fabgen.arrange import bonded_through, clamp, feed, insulated_through, on_top, through_nonmetal
+from fabgen.arrange import clamp, feed
 from fabgen.arrange.clamp_place import clamp_station_mm
 from fabgen.arrange.cuts import boom_cut, rod_cut
 from fabgen.arrange.drilling import PIECE, hole_rows
@@ -12,12 +16,6 @@ from fabgen.design.design import Design, Element
 from fabgen.design.ledger import Ledger, Remark
 from fabgen.physics.sections import boom_section
 
-_STYLES = {
-    "bonded-through": bonded_through,
-    "insulated-through": insulated_through,
-    "on-top": on_top,
-    "through-nonmetal": through_nonmetal,
-}
 CABLE_DENSITY_KG_M3 = 1900.0
 """Coaxial cable as a round bar: 37 g/m at 5 mm. Source: from memory, typical of solid-polyethylene cable."""
 
@@ -69,7 +67,8 @@ def _lay_out(layout: Layout, design: Design, element: Element, ledger: Ledger) -
     if carried_by is not None:
         part, cuts = feed.lay_out(design, carried_by, line)
     elif element.mount is not None:
-        part = _STYLES[element.mount.style].lay_out(design, element, element.mount, line)
+        style = import_module("fabgen.arrange." + element.mount.style.replace("-", "_"))
+        part = style.lay_out(design, element, element.mount, line)
         cuts = [rod_cut(design, element, line)]
     else:
         raise ValueError("no feed carries this driven element")

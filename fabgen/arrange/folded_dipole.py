@@ -5,9 +5,10 @@ from fabgen.arrange.layout import SIDES, Layout, side_name
 from fabgen.design.arranged import Cut, Frame, Vector
 from fabgen.design.design import Design, Feed
 from fabgen.design.feed_layout import TAG_MM
+from fabgen.design.folded_rod_sizes import FoldedRodSize, folded_rod_size
+from fabgen.design.folded_saddle_sizes import FoldedSaddleSize, folded_saddle_size
 from fabgen.design.ledger import LedgerLine
 from fabgen.design.part_fasteners import fastener
-from fabgen.design.part_sizes import FoldedRodSize, FoldedSaddleSize, folded_rod_size, folded_saddle_size
 from fabgen.stock import tables
 
 _FRONT: Vector = (1.0, 0.0, 0.0)

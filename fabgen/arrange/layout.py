@@ -1,12 +1,11 @@
 """What one mount, feed or clamp adds to the array, and how a part gets to its place."""
 
-import functools
 from collections.abc import Mapping
 from dataclasses import dataclass, field
 from typing import Literal
 
 from fabgen.arrange.drilling import Opening
-from fabgen.arrange.part_list import SIZES
+from fabgen.arrange.part_list import PARTS, size_of
 from fabgen.design.arranged import Axis, Box, Cylinder, Frame, Interface, Parameters, Placed, Shape, Vector
 from fabgen.design.design import Material
 from fabgen.design.ledger import Remark
@@ -62,7 +61,7 @@ class Layout:
             ValueError: no such part can be made with these numbers.
         """
         frozen = sorted_parameters(parameters)
-        volume_mm3, shapes = _size(part, frozen)
+        volume_mm3, shapes = size_of(part, frozen)
         placed = Placed(
             name=name,
             owner=owner,
@@ -71,7 +70,7 @@ class Layout:
             frame=frame,
             shapes=tuple(moved(shape, frame) for shape in shapes),
             exact=exact,
-            source=SIZES[part][1],
+            source=PARTS[part][1],
             material=material.name,
             metal=material.conductive,
             mass_g=volume_mm3 * material.density_kg_m3 / 1e6,
@@ -83,13 +82,6 @@ class Layout:
     def meet(self, first: str, second: str, kind: str, gap_mm: float, fit_mm: float | None = None) -> None:
         """Declare that two parts meet on purpose; see `Interface`."""
         self.interfaces.append(Interface(first, second, kind, gap_mm, fit_mm))
-
-
-@functools.cache
-def _size(part: str, parameters: Parameters) -> tuple[float, tuple[Shape, ...]]:
-    """Volume and local shapes of a distinct part, worked out once."""
-    size = SIZES[part][0](**dict(parameters))
-    return size.volume_mm3, tuple(size.shapes)
 
 
 def sorted_parameters(parameters: Mapping[str, Value]) -> Parameters:

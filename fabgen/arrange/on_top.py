@@ -6,7 +6,7 @@ from fabgen.arrange.rods import keeper_pair, straight_rod
 from fabgen.design.arranged import Frame
 from fabgen.design.design import Design, Element, Mount, Saddle
 from fabgen.design.ledger import LedgerLine
-from fabgen.design.part_sizes import SaddleSize, saddle_size
+from fabgen.design.saddle_sizes import SaddleSize, saddle_size
 
 
 def lay_out(design: Design, element: Element, mount: Mount, line: LedgerLine) -> Layout:

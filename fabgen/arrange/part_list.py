@@ -1,11 +1,11 @@
-"""Every part that can be placed: where its sizes come from and who makes it."""
+"""Every part that can be placed: which function of `design` knows its sizes, and who makes it."""
 
-from collections.abc import Callable, Sequence
-from dataclasses import dataclass
-from typing import Any, Protocol
+import functools
+import importlib
+from collections.abc import Sequence
+from typing import Protocol, cast
 
-from fabgen.design import part_sizes
-from fabgen.design.arranged import Box, Shape, Source
+from fabgen.design.arranged import Parameters, Shape, Source
 
 
 class Size(Protocol):
@@ -22,48 +22,35 @@ class Size(Protocol):
         ...
 
 
-@dataclass(frozen=True, slots=True)
-class LidSize:
-    """A feed block's lid: a plate in the block's rabbet and the wedge that grips the cable."""
-
-    block: part_sizes.FeedBlockSize
-
-    @property
-    def volume_mm3(self) -> float:
-        """Volume of the lid's solid."""
-        return self.block.lid_volume_mm3
-
-    @property
-    def shapes(self) -> Sequence[Shape]:
-        """Plate and wedge."""
-        block = self.block
-        (x, y), (x0, x1), (y0, y1) = block.lid_mm, block.slot_x_mm, block.tongue_y_mm
-        return (
-            Box((-x, -y, block.lid_seat_mm), (x, y, block.top_mm)),
-            Box((x0, y0, block.tongue_low_mm), (x1, y1, block.lid_seat_mm)),
-        )
-
-
-def _lid(**parameters: Any) -> LidSize:
-    return LidSize(part_sizes.feed_block_size(**parameters))
-
-
-SIZES: dict[str, tuple[Callable[..., Size], Source]] = {
-    "bush": (part_sizes.bush_size, "printed"),
-    "clamp_plate": (part_sizes.clamp_plate_size, "made"),
-    "crush_sleeve": (part_sizes.crush_sleeve_size, "made"),
-    "feed_block": (part_sizes.feed_block_size, "printed"),
-    "feed_lid": (_lid, "printed"),
-    "folded_rod": (part_sizes.folded_rod_size, "made"),
-    "folded_saddle": (part_sizes.folded_saddle_size, "printed"),
-    "nut": (part_sizes.nut_size, "bought"),
-    "push_ring": (part_sizes.push_ring_size, "printed"),
-    "rod": (part_sizes.rod_size, "made"),
-    "saddle": (part_sizes.saddle_size, "printed"),
-    "screw": (part_sizes.screw_size, "bought"),
-    "sleeve": (part_sizes.sleeve_size, "printed"),
-    "snap_keeper": (part_sizes.snap_keeper_size, "printed"),
-    "u_bolt": (part_sizes.u_bolt_size, "bought"),
-    "washer": (part_sizes.washer_size, "bought"),
+PARTS: dict[str, tuple[str, Source]] = {
+    "bush": ("bush_sizes.bush_size", "printed"),
+    "clamp_plate": ("hardware_sizes.clamp_plate_size", "made"),
+    "crush_sleeve": ("hardware_sizes.crush_sleeve_size", "made"),
+    "feed_block": ("feed_sizes.feed_block_size", "printed"),
+    "feed_lid": ("feed_lid_sizes.feed_lid_size", "printed"),
+    "folded_rod": ("folded_rod_sizes.folded_rod_size", "made"),
+    "folded_saddle": ("folded_saddle_sizes.folded_saddle_size", "printed"),
+    "nut": ("hardware_sizes.nut_size", "bought"),
+    "push_ring": ("keeper_sizes.push_ring_size", "printed"),
+    "rod": ("hardware_sizes.rod_size", "made"),
+    "saddle": ("saddle_sizes.saddle_size", "printed"),
+    "screw": ("hardware_sizes.screw_size", "bought"),
+    "sleeve": ("bush_sizes.sleeve_size", "printed"),
+    "snap_keeper": ("keeper_sizes.snap_keeper_size", "printed"),
+    "u_bolt": ("hardware_sizes.u_bolt_size", "bought"),
+    "washer": ("hardware_sizes.washer_size", "bought"),
 }
-"""Part name in `model/parts` → function of its sizes, and whether it is printed, bought or made in the shop."""
+"""Part in `model/parts` → module and function in `design`, loaded when the part is first placed; and who makes it."""
+
+
+@functools.cache
+def size_of(part: str, parameters: Parameters) -> tuple[float, tuple[Shape, ...]]:
+    """Volume in mm³ and local shapes of a distinct part, worked out once.
+
+    Raises:
+        ValueError: no such part can be made with these numbers.
+    """
+    module, _, function = PARTS[part][0].partition(".")
+    found = getattr(importlib.import_module(f"fabgen.design.{module}"), function)
+    size = cast(Size, found(**dict(parameters)))
+    return size.volume_mm3, tuple(size.shapes)

@@ -6,9 +6,9 @@ from fabgen.arrange.rods import drilled_rod
 from fabgen.design.arranged import Cut, Frame
 from fabgen.design.design import Design, Feed
 from fabgen.design.feed_layout import LID_SCREW_LENGTH_MM
+from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
 from fabgen.design.ledger import LedgerLine
 from fabgen.design.part_fasteners import fastener
-from fabgen.design.part_sizes import FeedBlockSize, feed_block_size
 
 
 def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[Cut]]:
