@@ -11,6 +11,7 @@ import hashlib
 import json
 import os
 import shutil
+import sys
 from collections.abc import Iterator, Sequence
 from pathlib import Path, PurePosixPath
 from typing import Any
@@ -18,10 +19,8 @@ from typing import Any
 from fabgen.design.package import PackageFile
 from fabgen.errors import MachineError, ProgramError
 
-try:
+if sys.platform != "win32":
     import fcntl
-except ImportError:  # pragma: no cover - not on this system
-    fcntl = None  # type: ignore[assignment]
 
 _AT_FDCWD = -100
 _RENAME_EXCHANGE = 2
@@ -152,11 +151,9 @@ def _sync_folder(folder: Path) -> None:
 @contextlib.contextmanager
 def _locked(output: Path) -> Iterator[None]:
     """Hold the output folder; a second run waits."""
-    if fcntl is None:
-        yield
-        return
     with (output / ".fabgen.lock").open("w") as lock:
-        fcntl.flock(lock, fcntl.LOCK_EX)
+        if sys.platform != "win32":
+            fcntl.flock(lock, fcntl.LOCK_EX)
         yield
 
 
