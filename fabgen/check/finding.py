@@ -3,6 +3,8 @@
 from fabgen import registry
 from fabgen.design.findings import Finding, Severity
 
+_ROUNDING_MM = 1e-9
+
 
 def finding(
     code: str,
@@ -27,3 +29,18 @@ def finding(
     """
     numbers = [None if value is None else round(value, 3) + 0.0 for value in (measured, required)]
     return Finding(code, severity, where, numbers[0], numbers[1], unit, advice, registry.code_title(code))
+
+
+def too_small(value_mm: float, *, fail_mm: float, warn_mm: float) -> tuple[Severity, float] | None:
+    """How bad it is that a distance is small, with the limit that it misses; None when it is large enough.
+
+    Args:
+        value_mm: the distance.
+        fail_mm: below it the design fails.
+        warn_mm: below it the design is warned about.
+    """
+    if value_mm < fail_mm - _ROUNDING_MM:
+        return "fail", fail_mm
+    if value_mm < warn_mm - _ROUNDING_MM:
+        return "warn", warn_mm
+    return None

@@ -4,20 +4,29 @@ from collections.abc import Iterator
 
 from fabgen.check.finding import finding
 from fabgen.design.arranged import Arranged
-from fabgen.design.findings import Finding
+from fabgen.design.findings import Finding, Severity
+from fabgen.design.ledger import Allowance, Remark
 
 
 def findings(arranged: Arranged) -> Iterator[Finding]:
     """L01 to L10: what stage `correct` remarked; a missing value fails."""
     for line in arranged.ledger.lines:
         for remark in line.allowance.remarks:
-            missing = line.allowance.missing and remark.code != "L05"
+            severity = _severity(line.allowance, remark)
             yield finding(
                 remark.code,
-                "fail" if missing else "warn" if remark.code == "L02" else "note",
+                severity,
                 line.element,
-                f"{remark.text}" + ("; state a value or choose another origin" if missing else ""),
+                remark.text + ("; state a value or choose another origin" if severity == "fail" else ""),
                 measured=remark.measured,
                 required=remark.required,
                 unit=remark.unit,
             )
+
+
+def _severity(allowance: Allowance, remark: Remark) -> Severity:
+    if remark.code == "L05":
+        return "note"
+    if allowance.missing:
+        return "fail"
+    return "warn" if remark.code == "L02" else "note"

@@ -1,0 +1,273 @@
+"""In what order the parts go on, and which of them cannot go on in any.
+
+Every part belongs to a task, a phase of the work on one element. A task waits for others: a rod for its bushes, a block
+for the nuts under its floor, everything that stands in the boom's bore for the sleeves that are pushed in from its end.
+A rod goes in along itself, from the left or the right; what lies in its way on both sides must come after it.
+"""
+
+import heapq
+from bisect import bisect_left, bisect_right
+from collections import defaultdict
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass
+from enum import IntEnum
+from itertools import groupby
+from typing import Literal
+
+from fabgen.design.arranged import Arranged, Box, Placed
+
+
+class Phase(IntEnum):
+    """The phases of the work in the order in which they are usually done."""
+
+    SLEEVES = 1
+    CLAMP = 2
+    NUTS = 3
+    BLOCKS = 4
+    BUSHES = 5
+    RODS = 6
+    JOINTS = 7
+    KEEPERS = 8
+    TERMINALS = 9
+    LIDS = 10
+    MAST = 11
+
+
+WORDS = {
+    Phase.SLEEVES: "Push the sleeves into the boom from its end, to the clamp's place, and pin them with the bolts.",
+    Phase.CLAMP: "Bolt the clamp's plate to the boom.",
+    Phase.NUTS: "Press the nuts into the traps of the feed's block; they cannot be reached later.",
+    Phase.BLOCKS: "Screw the blocks to the boom's top, their arrows forward.",
+    Phase.BUSHES: "Push the bushes into the walls from outside, flanges out.",
+    Phase.RODS: "Push each rod through from its side and centre it.",
+    Phase.JOINTS: "Make the joints between rods and boom: bright metal, on both sides.",
+    Phase.KEEPERS: "Push a keeper on from each tip until it meets its seat.",
+    Phase.TERMINALS: "Fit the terminal screws with their tags, finger tight, then half a turn.",
+    Phase.LIDS: "Bring the cable in with a drip loop, measure the match, trim, then close the lid.",
+    Phase.MAST: "Hang the array on the mast with its U-bolts.",
+}
+
+_PHASES = {
+    "crush_sleeve": Phase.SLEEVES,
+    "saddle": Phase.BLOCKS,
+    "feed_block": Phase.BLOCKS,
+    "folded_saddle": Phase.BLOCKS,
+    "bush": Phase.BUSHES,
+    "sleeve": Phase.BUSHES,
+    "rod": Phase.RODS,
+    "folded_rod": Phase.RODS,
+    "push_ring": Phase.KEEPERS,
+    "snap_keeper": Phase.KEEPERS,
+    "feed_lid": Phase.LIDS,
+    "nut": Phase.NUTS,
+}
+_SCREWS = {
+    "saddle screw": Phase.BLOCKS,
+    "feed screw": Phase.BLOCKS,
+    "lid screw": Phase.LIDS,
+    "terminal": Phase.TERMINALS,
+    "retainer": Phase.TERMINALS,
+}
+_AFTER = {
+    Phase.BLOCKS: (Phase.NUTS,),
+    Phase.RODS: (Phase.BUSHES, Phase.BLOCKS),
+    Phase.JOINTS: (Phase.RODS,),
+    Phase.KEEPERS: (Phase.RODS,),
+    Phase.TERMINALS: (Phase.RODS,),
+    Phase.LIDS: (Phase.TERMINALS, Phase.RODS),
+}
+"""What a task waits for on its own element."""
+
+_IN_BORE = (Phase.CLAMP, Phase.BLOCKS, Phase.BUSHES, Phase.RODS)
+_RINGS = ("bush", "sleeve", "push_ring")
+
+Task = tuple[Phase, str]
+
+
+@dataclass(frozen=True, slots=True)
+class Step:
+    """One step of the work.
+
+    Attributes:
+        number: counted from 1.
+        text: what to do.
+        elements: whose parts these are.
+        parts: occurrence names that go on in this step.
+    """
+
+    number: int
+    text: str
+    elements: tuple[str, ...]
+    parts: tuple[str, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Stuck:
+    """Something that cannot go on: a closed `loop` that nothing can thread, or an `order` that waits for itself."""
+
+    element: str
+    kind: Literal["loop", "order"]
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class AssemblyOrder:
+    """The steps, and what has no place among them."""
+
+    steps: tuple[Step, ...]
+    stuck: tuple[Stuck, ...]
+
+
+def assembly_order(arranged: Arranged) -> AssemblyOrder:
+    """A possible order of assembly, the usual one where there is a choice.
+
+    Args:
+        arranged: the arranged design.
+
+    Returns:
+        Its steps, and what cannot be put on.
+    """
+    tasks = _tasks(arranged)
+    waits = _waits(tasks)
+    for rod, ways in _blocked_rods(arranged):
+        _let_through((Phase.RODS, rod.owner), ways, waits)
+    ordered = _sorted(tasks, waits)
+    stuck = [*_loops(arranged), *map(_waiting, tasks.keys() - set(ordered))]
+    return AssemblyOrder(_steps(tasks, ordered), tuple(sorted(stuck, key=lambda s: (s.kind, s.element, s.text))))
+
+
+def _waiting(task: Task) -> Stuck:
+    return Stuck(task[1], "order", f"{task[0].name.lower()} wait for something that waits for them")
+
+
+def phase_of(part: Placed) -> Phase:
+    """The phase in which a part goes on."""
+    if part.owner == "clamp" and part.part != "crush_sleeve":
+        return Phase.MAST if part.name.startswith("mast") else Phase.CLAMP
+    for words, phase in _SCREWS.items():
+        if part.part in ("screw", "washer") and words in part.name:
+            return phase
+    return _PHASES.get(part.part, Phase.JOINTS)
+
+
+def _tasks(arranged: Arranged) -> dict[Task, list[str]]:
+    """Every task with the parts that go on in it; a welded or pressed joint has none."""
+    tasks: dict[Task, list[str]] = defaultdict(list)
+    for part in arranged.placed:
+        if part.part != "boom":
+            tasks[phase_of(part), part.owner].append(part.name)
+    for element in arranged.design.elements:
+        if element.mount and element.mount.bond and (Phase.RODS, element.id) in tasks:
+            tasks.setdefault((Phase.JOINTS, element.id), [])
+    return dict(tasks)
+
+
+def _waits(tasks: Mapping[Task, list[str]]) -> dict[Task, set[Task]]:
+    """What each task waits for."""
+    sleeves = {task for task in tasks if task[0] is Phase.SLEEVES}
+    waits = {}
+    for phase, owner in tasks:
+        own = {(before, owner) for before in _AFTER.get(phase, ())} & tasks.keys()
+        waits[phase, owner] = own | (sleeves if phase in _IN_BORE else set())
+    return waits
+
+
+def _blocked_rods(arranged: Arranged) -> list[tuple[Placed, list[set[Task]]]]:
+    """Rods that have something of another element in their way on every side they could come from."""
+    others = sorted(
+        ((box, part) for part in arranged.placed if part.part not in ("boom", "rod") for box in _boxes(part)),
+        key=lambda pair: pair[0].low[0],
+    )
+    starts = [box.low[0] for box, _ in others]
+    widest_mm = max((box.high[0] - box.low[0] for box, _ in others), default=0.0)
+    blocked = []
+    for rod in (part for part in arranged.placed if part.part == "rod"):
+        bar = _boxes(rod)[0]
+        near = others[bisect_left(starts, bar.low[0] - widest_mm) : bisect_right(starts, bar.high[0])]
+        sides = [side for side in (1, -1) if side * (bar.low[1] + bar.high[1]) >= -1e-6]
+        ways = [
+            {(phase_of(part), part.owner) for box, part in near if _in_way(bar, rod, box, part, side)} for side in sides
+        ]
+        if all(ways):
+            blocked.append((rod, ways))
+    return blocked
+
+
+def _in_way(bar: Box, rod: Placed, box: Box, part: Placed, side: int) -> bool:
+    """Whether a part stands where a rod comes from on one side, beyond its tip or beside it."""
+    if part.owner == rod.owner or min(bar.high[0], box.high[0]) - max(bar.low[0], box.low[0]) <= 1e-6:
+        return False
+    if min(bar.high[2], box.high[2]) - max(bar.low[2], box.low[2]) <= 1e-6:
+        return False
+    return box.high[1] > 0 if side > 0 else box.low[1] < 0
+
+
+def _boxes(part: Placed) -> list[Box]:
+    return [shape if isinstance(shape, Box) else shape.box for shape in part.shapes]
+
+
+def _let_through(rod: Task, ways: Iterable[set[Task]], waits: dict[Task, set[Task]]) -> None:
+    """Let what is in a rod's way on one side wait for it: a side on which the rod waits for none of it."""
+    ways = list(ways)
+    needed = _all_before(rod, waits)
+    side = next((way for way in ways if not way & needed), ways[0])
+    for task in side:
+        waits[task].add(rod)
+
+
+def _all_before(task: Task, waits: Mapping[Task, set[Task]]) -> set[Task]:
+    """Everything a task waits for, at once or in the end."""
+    found: set[Task] = set()
+    stack = [task]
+    while stack:
+        for before in waits[stack.pop()] - found:
+            found.add(before)
+            stack.append(before)
+    return found
+
+
+def _sorted(tasks: Mapping[Task, list[str]], waits: Mapping[Task, set[Task]]) -> list[Task]:
+    """Tasks in an order that keeps every wait, the earliest phase first; those in a circle are left out."""
+    place = {task: count for count, task in enumerate(tasks)}
+    left = {task: len(before) for task, before in waits.items()}
+    followers: dict[Task, list[Task]] = defaultdict(list)
+    for task, before in waits.items():
+        for other in before:
+            followers[other].append(task)
+    ready = [(task[0], place[task], task) for task, count in left.items() if count == 0]
+    heapq.heapify(ready)
+    ordered = []
+    while ready:
+        *_, task = heapq.heappop(ready)
+        ordered.append(task)
+        for follower in followers[task]:
+            left[follower] -= 1
+            if left[follower] == 0:
+                heapq.heappush(ready, (follower[0], place[follower], follower))
+    return ordered
+
+
+def _loops(arranged: Arranged) -> Iterable[Stuck]:
+    """Bent rods that would have to be threaded: through the boom, or into a closed ring."""
+    rings = {part.owner: part for part in arranged.placed if part.part in _RINGS}
+    top_mm = arranged.design.boom.top_mm
+    for part in arranged.placed:
+        if part.part != "folded_rod":
+            continue
+        if min(box.low[2] for box in _boxes(part)) < top_mm - 1e-6:
+            yield Stuck(
+                part.owner, "loop", "a closed loop cannot be threaded through the boom: carry it above the boom"
+            )
+        elif part.owner in rings:
+            ring = rings[part.owner]
+            yield Stuck(part.owner, "loop", f"a closed loop cannot be threaded into {ring.name}: use an open saddle")
+
+
+def _steps(tasks: Mapping[Task, list[str]], ordered: list[Task]) -> tuple[Step, ...]:
+    """Neighbouring tasks of one phase become one step."""
+    steps = []
+    for number, (phase, group) in enumerate(groupby(ordered, key=lambda task: task[0]), start=1):
+        own = list(group)
+        parts = tuple(name for task in own for name in tasks[task])
+        steps.append(Step(number, WORDS[phase], tuple(owner for _, owner in own), parts))
+    return tuple(steps)
