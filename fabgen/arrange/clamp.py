@@ -206,7 +206,8 @@ def _washer_and_nut(layout: Layout, name: str, seat: Vector, up: Vector, bolt: s
     layout.meet(ring, PLATE, "washer on plate", 0.0)
     layout.meet(hexagon, ring, "nut on washer", 0.0)
     layout.meet(hexagon, bolt, "thread in nut", 0.0, 0.0)
-    layout.meet(ring, bolt, "bolt in washer", 0.0, tables.washer(BOLT).bore_mm - U_BOLT_MM)
+    play_mm = tables.washer(BOLT).bore_mm - U_BOLT_MM
+    layout.meet(ring, bolt, "bolt in washer", play_mm / 2, play_mm)
 
 
 def _through_bolts(layout: Layout, design: Design, size: ClampSize, station_mm: float, away: Vector) -> None:
