@@ -57,12 +57,16 @@ def _um(length_mm: float) -> int:
 
 def _cut_um(design: Design, element: Element, ideal_um: int) -> int:
     """The shop's step nearest to the ideal length; of a split dipole each half is a step."""
-    step_um = Fraction(design.shop.cut_step_mm).limit_denominator(1_000_000) * 1000
-    feed = design.feed_of(element)
+    step_mm, feed = design.shop.cut_step_mm, design.feed_of(element)
     if feed is not None and feed.kind == "straight-dipole":
         gap_um = _um(feed.gap_mm)
-        return gap_um + 2 * round(round(Fraction(ideal_um - gap_um, 2) / step_um) * step_um)
-    return round(round(Fraction(ideal_um) / step_um) * step_um)
+        return gap_um + 2 * _nearest_step_um(Fraction(ideal_um - gap_um, 2), step_mm)
+    return _nearest_step_um(Fraction(ideal_um), step_mm)
+
+
+def _nearest_step_um(length_um: Fraction | int, step_mm: float) -> int:
+    step_um = Fraction(step_mm).limit_denominator(1_000_000) * 1000
+    return round(round(Fraction(length_um) / step_um) * step_um)
 
 
 def _trim_mm(design: Design, element: Element, found: Allowance) -> float:

@@ -1,0 +1,202 @@
+"""From modelled to cut: columns add up as printed, origins and uncertainties are what they say."""
+
+import csv
+import io
+import math
+from collections.abc import Callable
+
+import pytest
+from hypothesis import given
+from hypothesis import strategies as st
+
+from fabgen.correct.ledger import correct
+from fabgen.design.design import Design
+from fabgen.design.ledger import Allowance, Ledger, LedgerLine
+from fabgen.export.tables import lengths_csv
+from fabgen.physics import published_boom
+
+Variant = Callable[..., Design]
+COMPUTED = "allowance: {origin: computed}"
+
+
+def line(design: Design, element: str) -> LedgerLine:
+    return correct(design).line(element)
+
+
+def printed(ledger: Ledger) -> list[dict[str, str]]:
+    return list(csv.DictReader(io.StringIO(lengths_csv(ledger).decode("utf-8"))))
+
+
+@pytest.mark.parametrize(
+    "replacements",
+    [
+        (),
+        (("length: 311.3", "length: 12 1/64 in"),),
+        (("cut_step: 0.5 mm", "cut_step: 1/64 in"),),
+        (("cut_step: 0.5 mm", "cut_step: 0.7 mm"), (COMPUTED, "allowance: {origin: published, model: dl6wu}")),
+    ],
+)
+def test_the_printed_columns_add_up(variant: Variant, replacements: tuple[tuple[str, str], ...]) -> None:
+    for row in printed(correct(variant(*replacements))):
+        micrometres = {k: round(1000 * float(v)) for k, v in row.items() if k.endswith("_mm")}
+        total = sum(micrometres[k] for k in ("modelled_mm", "allowance_mm", "rod_change_mm", "rounding_mm"))
+        assert total == micrometres["cut_mm"], row
+
+
+def test_a_cut_is_a_whole_number_of_the_shops_steps_and_the_nearest_one(variant: Variant) -> None:
+    for found in correct(variant()).lines:
+        if found.role != "driven":
+            assert found.cut_mm / 0.5 == pytest.approx(round(found.cut_mm / 0.5), abs=1e-9)
+        assert abs(found.rounding_mm) <= 0.25 + 1e-9
+
+
+def test_each_half_of_a_split_dipole_is_a_whole_step(variant: Variant) -> None:
+    found = line(variant(("cut_step: 0.5 mm", "cut_step: 1 mm")), "DE")
+    assert (found.cut_mm - 10.0) / 2 == pytest.approx(160.0)  # (329.2 - 10) / 2 = 159.6
+    assert found.rounding_mm == pytest.approx(0.8)
+
+
+def test_a_published_value_carries_the_spread_of_all_printed_ones(variant: Variant) -> None:
+    """Bonded through a 20 mm round boom at 432.2 MHz: 10.721 by DL6WU's curve, 14.0 and 15.0 by the two rules in D.
+
+    Source: reference sheet of published models, computed from the closed form; tolerance 0.001 mm.
+    """
+    bonded = (
+        "style: insulated-through\n    hole: 8 mm\n    bush: {kind: shoulder, material: ASA}\n"
+        "    keeper: {kind: push-ring, material: ASA}\n    allowance: {origin: computed}"
+    )
+    design = variant(
+        (bonded, "style: bonded-through\n    bond: weld\n    allowance: {origin: published, model: dl6wu}"),
+        ("section: square", "section: round"),
+        ("  corner_radius: 1 mm\n", ""),
+        ("frequency: 434 MHz", "frequency: 432.2 MHz"),
+    )
+    found = line(design, "D1").allowance
+    assert found.value_mm == pytest.approx(10.721, abs=1e-3)
+    assert found.origin == "published"
+    values = {value.model: value.value_mm for value in found.published}
+    assert values == pytest.approx({"dl6wu": 10.721, "lawson": 14.0, "fishenden-wiblin": 15.0}, abs=1e-3)
+    assert found.u_mm == pytest.approx((15.0 - 10.721) / math.sqrt(12), abs=1e-3)
+    assert found.correlated_u_mm == found.u_mm
+
+
+def test_a_square_boom_may_be_read_as_los_equivalent(variant: Variant) -> None:
+    side = variant((COMPUTED, "allowance: {origin: published, model: dl6wu}"))
+    lo = variant((COMPUTED, "allowance: {origin: published, model: dl6wu, square_as: lo}"))
+    wavelength = side.wavelength_mm
+    assert line(side, "D1").allowance.value_mm == pytest.approx(published_boom.dl6wu_insulated_mm(20.0, wavelength))
+    expected = published_boom.dl6wu_insulated_mm(20.0 * published_boom.LO_SQUARE, wavelength)
+    assert line(lo, "D1").allowance.value_mm == pytest.approx(expected)
+    assert [remark.code for remark in line(side, "D1").allowance.remarks] == ["L03"]
+
+
+def test_a_model_without_a_rule_for_the_mount_gives_no_number(variant: Variant) -> None:
+    found = line(variant((COMPUTED, "allowance: {origin: published, model: lawson}")), "D1").allowance
+    assert found.missing
+    assert (found.value_mm, found.origin) == (0.0, "none")
+    assert found.remarks[0].code == "L01"
+
+
+def test_beyond_its_range_a_published_curve_is_remarked(variant: Variant) -> None:
+    design = variant(
+        (COMPUTED, "allowance: {origin: published, model: dl6wu}"),
+        ("outside: 20 mm", "outside: 40 mm"),
+        ("kind: straight-dipole, gap: 10 mm, height: 18 mm", "kind: straight-dipole, gap: 10 mm, height: 22 mm"),
+    )
+    remark = next(r for r in line(design, "D1").allowance.remarks if r.code == "L02")
+    assert remark.measured == pytest.approx(40.0 / design.wavelength_mm)
+    assert remark.required == 0.055
+
+
+def test_a_computed_value_depends_on_the_rods_own_length(variant: Variant) -> None:
+    ledger = correct(variant())
+    assert ledger.line("R").allowance.value_mm > ledger.line("D1").allowance.value_mm
+    assert ledger.line("D1").allowance.value_mm > ledger.line("D7").allowance.value_mm
+    assert "theory, unmeasured" in ledger.line("D1").allowance.source
+
+
+def test_outside_the_computed_range_there_is_no_number_but_reasons(variant: Variant) -> None:
+    design = variant(("overhang: {rear: 60 mm", "overhang: {rear: 25 mm"), ("clamp: {at: balance, mast: 38 mm}\n", ""))
+    found = line(design, "R").allowance
+    assert found.missing
+    assert any("boom's end" in remark.text for remark in found.remarks if remark.code == "L04")
+
+
+def test_a_stated_value_is_taken_as_it_is(variant: Variant) -> None:
+    stated = "allowance: {origin: stated, value: 4.6 mm, uncertainty: 0.4 mm, source: our own coupon}"
+    found = line(variant((COMPUTED, stated)), "D1")
+    assert (found.allowance.value_mm, found.allowance.u_mm, found.allowance.origin) == (4.6, 0.4, "stated")
+    assert "our own coupon" in found.allowance.source
+    assert found.trim_mm == 1.0
+
+
+def test_lengths_as_cut_get_nothing(variant: Variant) -> None:
+    ledger = correct(variant(("lengths_are: free-space", "lengths_are: as-cut")))
+    assert {found.allowance.value_mm for found in ledger.lines} == {0.0}
+    assert ledger.status == "allowances: none needed"
+
+
+def test_a_driven_rod_gets_a_trim_margin_and_no_allowance(variant: Variant) -> None:
+    found = line(variant(), "DE")
+    assert (found.allowance.value_mm, found.allowance.origin) == (0.0, "none")
+    assert found.trim_mm == 7.0  # 2 % of 329.2 mm, up to the next half millimetre
+
+
+def test_a_driven_rods_allowance_may_be_stated(variant: Variant) -> None:
+    stated = "cable: 5 mm, allowance: {origin: stated, value: -2 mm, uncertainty: 1 mm, source: last build}}"
+    assert line(variant(("cable: 5 mm}", stated)), "DE").allowance.value_mm == -2.0
+
+
+def test_a_wooden_boom_takes_nothing(variant: Variant) -> None:
+    ledger = correct(variant(base="sonde-finder-401.yaml"))
+    assert all(found.allowance.value_mm == 0 and found.allowance.u_mm == 0 for found in ledger.lines)
+    assert ledger.status == "allowances: none needed"
+
+
+def test_u_in_khz_is_that_of_a_half_wave_rod(variant: Variant) -> None:
+    found = line(variant(), "D1")
+    assert found.shift_khz == pytest.approx(434e3 * found.allowance.u_mm / 311.3, rel=1e-9)
+
+
+def test_u_combines_in_quadrature_with_the_tolerance_as_a_rectangle(variant: Variant) -> None:
+    found = line(variant(), "D1")
+    expected = math.sqrt(found.allowance.u_mm**2 + (0.5 / math.sqrt(3)) ** 2)
+    assert found.u_mm == pytest.approx(expected)
+
+
+def test_the_status_names_the_weakest_origin() -> None:
+    def ledger(*origins: str) -> Ledger:
+        lines = [
+            LedgerLine(
+                element=f"D{k}",
+                role="director",
+                station_mm=0,
+                rod_mm=4,
+                modelled_mm=300,
+                rod_change_mm=0,
+                allowance=Allowance(1.0, origin),
+                rod_change_u_mm=0,
+                rounding_mm=0,
+                cut_mm=301,
+                tolerance_mm=0.5,
+                trim_mm=0,
+                shift_khz=0,
+            )
+            for k, origin in enumerate(origins)
+        ]
+        return Ledger(tuple(lines))
+
+    assert ledger("measured", "computed").status == "allowances: computed"
+    assert ledger("computed", "published").status == "allowances: published"
+    assert ledger("published", "stated", "measured").status == "allowances: stated"
+    assert ledger("none", "stated").status == "allowances: none"
+
+
+@given(step=st.sampled_from([0.1, 0.25, 0.5, 1.0, 25.4 / 64]), length=st.floats(250.0, 400.0))
+def test_rounding_never_moves_a_length_by_more_than_half_a_step(step: float, length: float) -> None:
+    from fractions import Fraction
+
+    from fabgen.correct.ledger import _nearest_step_um
+
+    cut = _nearest_step_um(round(Fraction(length) * 1000), step)
+    assert abs(cut - 1000 * length) <= 500 * step + 1

@@ -1,0 +1,144 @@
+"""Stations, holes, parts, pieces and the clamp, as numbers."""
+
+import math
+from collections.abc import Callable
+
+import pytest
+
+from fabgen.arrange.arrange import arrange
+from fabgen.correct.ledger import correct
+from fabgen.design.arranged import Arranged, Hole
+from fabgen.design.design import Design
+
+Variant = Callable[..., Design]
+ROUND = (("section: square", "section: round"), ("  corner_radius: 1 mm\n", ""), ("outside: 20 mm", "outside: 25 mm"))
+
+
+def arranged(design: Design) -> Arranged:
+    return arrange(design, correct(design))
+
+
+def holes(found: Arranged, element: str, purpose: str) -> list[Hole]:
+    return [hole for hole in found.holes if (hole.element, hole.purpose) == (element, purpose)]
+
+
+def test_a_through_hole_is_two_rows_with_one_number(variant: Variant) -> None:
+    left, right = holes(arranged(variant()), "R", "bush")
+    assert (left.station_mm, left.wall, left.angle_deg) == (60.0, "+y", 90.0)
+    assert (right.station_mm, right.wall, right.angle_deg) == (60.0, "-y", 270.0)
+    assert left.number == right.number == "H01"
+    assert (left.diameter_mm, left.pilot_mm, left.drill) == (8.0, 2.5, "8 mm")
+
+
+def test_round_booms_name_their_wall_round(variant: Variant) -> None:
+    assert {hole.wall for hole in arranged(variant(*ROUND)).holes} == {"round"}
+
+
+def test_stations_count_from_the_datum_face(variant: Variant) -> None:
+    found = arranged(variant(("at: 0,", "at: -37.5,")))
+    assert holes(found, "R", "bush")[0].station_mm == 60.0
+    assert holes(found, "D1", "bush")[0].station_mm == 60.0 + 190.0 + 37.5
+
+
+def test_boom_and_halves_are_on_the_cut_list(variant: Variant) -> None:
+    cuts = {cut.piece: cut for cut in arranged(variant()).cuts}
+    assert cuts["boom"].cut_mm == 60 + 1744 + 60
+    assert cuts["DE-left"].cut_mm == cuts["DE-right"].cut_mm == (329.0 - 10.0) / 2
+    assert cuts["DE-left"].note.startswith("hole 2.2 across")
+    assert cuts["D1"].half_mm == cuts["D1"].cut_mm / 2
+    assert cuts["D1"].projection_mm == (cuts["D1"].cut_mm - 20) / 2
+
+
+def test_a_folded_rod_is_cut_to_its_developed_length(variant: Variant) -> None:
+    """2(L − s − d) + π s − gap, our own geometry; L 329, s 30, d 4, gap 10."""
+    folded = "kind: folded-dipole, spacing: 30 mm"
+    cuts = {cut.piece: cut for cut in arranged(variant(("kind: straight-dipole", folded))).cuts}
+    assert cuts["DE"].cut_mm == pytest.approx(2 * (329 - 30 - 4) + math.pi * 30 - 10, abs=1e-3)
+
+
+def test_the_balance_point_balances(variant: Variant) -> None:
+    """Moments about the balance point vanish: boom, parts and the cable's run, the clamp left out."""
+    found = arranged(variant())
+    masses = [(p.mass_g, p.frame.origin[0]) for p in found.placed if p.owner not in ("boom", "clamp")]
+    boom = found.part("boom")
+    masses.append((boom.mass_g, found.design.boom.length_mm / 2))
+    cable_g = math.pi / 4 * 5**2 * abs(found.balance_mm - 191.0) * 1900 / 1e6
+    masses.append((cable_g, (191.0 + found.balance_mm) / 2))
+    moment = sum(mass * (x - found.balance_mm) for mass, x in masses)
+    assert abs(moment) < 1.0  # g·mm of some 900 g on 1.9 m
+
+
+def test_the_boom_weighs_what_its_section_says(variant: Variant) -> None:
+    """20 × 20 × 1.5 with 1 mm corners: 20² − 17² less (4 − π)·1² outside, sharp inside; EN AW-6060 2700 kg/m³."""
+    area = 20**2 - 17**2 - (4 - math.pi)
+    assert arranged(variant()).part("boom").mass_g == pytest.approx(area * 1864 * 2700e-6, rel=1e-9)
+
+
+def test_the_clamp_takes_the_free_place_nearest_to_the_balance_point(variant: Variant) -> None:
+    found = arranged(variant())
+    assert found.clamp_mm is not None
+    low, high = found.clamp_mm - found.clamp_width_mm / 2, found.clamp_mm + found.clamp_width_mm / 2
+    for element in found.design.elements:
+        assert not low - 5 < element.station_mm < high + 5
+    assert abs(found.clamp_mm - found.balance_mm) <= 0.5
+
+
+def test_a_crowded_balance_point_moves_the_clamp(variant: Variant) -> None:
+    found = arranged(variant(("at: 915,", "at: 795,")))
+    assert found.clamp_mm is not None
+    assert abs(found.clamp_mm - found.balance_mm) > 10
+    others = [element.station_mm for element in found.design.elements]
+    assert min(abs(found.clamp_mm - other) for other in others) > found.clamp_width_mm / 2 + 5
+
+
+def test_with_vertical_rods_the_clamp_goes_behind_the_rearmost(variant: Variant) -> None:
+    vertical = variant(("polarisation: horizontal", "polarisation: vertical"), ("rear: 60 mm", "rear: 160 mm"))
+    found = arranged(vertical)
+    assert found.clamp_mm is not None
+    assert found.clamp_mm + found.clamp_width_mm / 2 < 160 - 5
+    assert found.mast is not None
+    assert found.mast.axis == "y"
+
+
+def test_without_room_there_is_no_clamp_but_a_remark(variant: Variant) -> None:
+    found = arranged(variant(("polarisation: horizontal", "polarisation: vertical")))
+    assert found.clamp_mm is None
+    assert [(where, remark.code) for where, remark in found.remarks] == [("clamp", "C01")]
+    assert not [part for part in found.placed if part.owner == "clamp"]
+
+
+def test_a_feed_that_cannot_be_made_is_remarked_and_left_out(variant: Variant) -> None:
+    found = arranged(variant(("height: 18 mm, cable", "height: 10 mm, cable")))
+    assert [(where, remark.code) for where, remark in found.remarks] == [("DE", "F01")]
+    assert not [part for part in found.placed if part.owner == "DE"]
+    assert "DE" in [cut.piece for cut in found.cuts]
+
+
+def test_every_interface_joins_two_placed_parts(variant: Variant) -> None:
+    for replacements in [(), ROUND, (("kind: straight-dipole", "kind: folded-dipole, spacing: 30 mm"),)]:
+        found = arranged(variant(*replacements))
+        names = [part.name for part in found.placed]
+        assert len(names) == len(set(names))
+        assert all(name.isascii() for name in names)
+        for interface in found.interfaces:
+            assert interface.first in names
+            assert interface.second in names
+
+
+def test_the_turning_radius_reaches_the_farthest_tip(variant: Variant) -> None:
+    found = arranged(variant())
+    assert found.clamp_mm is not None
+    tips = [math.hypot(line.station_mm - found.clamp_mm, line.cut_mm / 2) for line in found.ledger.lines]
+    ends = [found.clamp_mm, found.design.boom.length_mm - found.clamp_mm]
+    assert found.turning_radius_mm == pytest.approx(max(tips + ends), abs=1e-3)
+
+
+def test_a_bonded_rod_screwed_at_its_walls_gets_two_screws_from_the_top(variant: Variant) -> None:
+    insulated = (
+        "style: insulated-through\n    hole: 8 mm\n    bush: {kind: shoulder, material: ASA}\n"
+        "    keeper: {kind: push-ring, material: ASA}"
+    )
+    design = variant((insulated, "style: bonded-through\n    bond: wall-screws"))
+    rows = holes(arranged(design), "D1", "bond screw")
+    # Side wall inside at 8.5 mm, the screw 3 mm from it; M3 is tapped from 2.5 mm (ISO 261 pitch 0.5).
+    assert [(h.wall, h.across_mm, h.diameter_mm) for h in rows] == [("+z", -5.5, 2.5), ("+z", 5.5, 2.5)]
