@@ -24,12 +24,17 @@ class Entry:
     Attributes:
         name: the file's stem; the folder's convention says which function of that module it offers.
         module: dotted import path.
-        summary: first line of the module's docstring.
+        path: the file.
     """
 
     name: str
     module: str
-    summary: str
+    path: Path
+
+    @property
+    def summary(self) -> str:
+        """First line of the module's docstring, read when it is asked for."""
+        return summary(self.path)
 
     def function(self, name: str | None = None) -> Callable[..., Any]:
         """Import the module and return its function `name` (by default the one named like the file).
@@ -49,7 +54,7 @@ def entries(folder: str) -> tuple[Entry, ...]:
     place = ROOT / folder
     package = "fabgen." + folder.replace("/", ".")
     return tuple(
-        Entry(path.stem, f"{package}.{path.stem}", summary(path))
+        Entry(path.stem, f"{package}.{path.stem}", path)
         for path in sorted(place.glob("*.py"))
         if not path.stem.startswith("_")
     )
@@ -64,7 +69,7 @@ def entry(folder: str, name: str) -> Entry:
     path = ROOT / folder / f"{name}.py"
     if not path.is_file():
         raise ProgramError(f"fabgen/{folder} has no {name}.py")
-    return Entry(name, f"fabgen.{folder.replace('/', '.')}.{name}", summary(path))
+    return Entry(name, f"fabgen.{folder.replace('/', '.')}.{name}", path)
 
 
 def summary(path: Path) -> str:

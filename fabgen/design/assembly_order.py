@@ -14,7 +14,8 @@ from enum import IntEnum
 from itertools import groupby
 from typing import Literal
 
-from fabgen.design.arranged import Arranged, Box, Placed
+from fabgen.design.arranged import Arranged, Placed, Shape
+from fabgen.design.spans import span_mm
 
 
 class Phase(IntEnum):
@@ -80,6 +81,7 @@ _AFTER = {
 
 _IN_BORE = (Phase.CLAMP, Phase.BLOCKS, Phase.BUSHES, Phase.RODS)
 _RINGS = ("bush", "sleeve", "push_ring")
+_TOUCH_MM = 1e-6
 
 Task = tuple[Phase, str]
 
@@ -175,40 +177,39 @@ def _waits(tasks: Mapping[Task, list[str]]) -> dict[Task, set[Task]]:
 def _blocked_rods(arranged: Arranged) -> list[tuple[Placed, list[set[Task]]]]:
     """Rods that have something of another element in their way on every side they could come from."""
     others = sorted(
-        ((box, part) for part in arranged.placed if part.part not in ("boom", "rod") for box in _boxes(part)),
-        key=lambda pair: pair[0].low[0],
+        ((shape, part) for part in arranged.placed if part.part not in ("boom", "rod") for shape in part.shapes),
+        key=lambda pair: span_mm(pair[0], 0),
     )
-    starts = [box.low[0] for box, _ in others]
-    widest_mm = max((box.high[0] - box.low[0] for box, _ in others), default=0.0)
+    spans = [span_mm(shape, 0) for shape, _ in others]
+    starts = [low for low, _ in spans]
+    widest_mm = max((high - low for low, high in spans), default=0.0)
     blocked = []
     for rod in (part for part in arranged.placed if part.part == "rod"):
-        bar = _boxes(rod)[0]
-        near = others[bisect_left(starts, bar.low[0] - widest_mm) : bisect_right(starts, bar.high[0])]
-        sides = [side for side in (1, -1) if side * (bar.low[1] + bar.high[1]) >= -1e-6]
+        bar = rod.shapes[0]
+        low, high = span_mm(bar, 0)
+        near = others[bisect_left(starts, low - widest_mm) : bisect_right(starts, high)]
+        crossing = [
+            (shape, part)
+            for shape, part in near
+            if part.owner != rod.owner and _overlap(bar, shape, 0) and _overlap(bar, shape, 2)
+        ]
         ways = [
-            {(phase_of(part), part.owner) for box, part in near if _in_way(bar, rod, box, part, side)} for side in sides
+            {(phase_of(part), part.owner) for shape, part in crossing if side * span_mm(shape, 1)[side > 0] > 0}
+            for side in (1, -1)
+            if side * sum(span_mm(bar, 1)) >= -_TOUCH_MM
         ]
         if all(ways):
             blocked.append((rod, ways))
     return blocked
 
 
-def _in_way(bar: Box, rod: Placed, box: Box, part: Placed, side: int) -> bool:
-    """Whether a part stands where a rod comes from on one side, beyond its tip or beside it."""
-    if part.owner == rod.owner or min(bar.high[0], box.high[0]) - max(bar.low[0], box.low[0]) <= 1e-6:
-        return False
-    if min(bar.high[2], box.high[2]) - max(bar.low[2], box.low[2]) <= 1e-6:
-        return False
-    return box.high[1] > 0 if side > 0 else box.low[1] < 0
+def _overlap(first: Shape, second: Shape, axis: int) -> bool:
+    (low, high), (other_low, other_high) = span_mm(first, axis), span_mm(second, axis)
+    return min(high, other_high) - max(low, other_low) > _TOUCH_MM
 
 
-def _boxes(part: Placed) -> list[Box]:
-    return [shape if isinstance(shape, Box) else shape.box for shape in part.shapes]
-
-
-def _let_through(rod: Task, ways: Iterable[set[Task]], waits: dict[Task, set[Task]]) -> None:
+def _let_through(rod: Task, ways: list[set[Task]], waits: dict[Task, set[Task]]) -> None:
     """Let what is in a rod's way on one side wait for it: a side on which the rod waits for none of it."""
-    ways = list(ways)
     needed = _all_before(rod, waits)
     side = next((way for way in ways if not way & needed), ways[0])
     for task in side:
@@ -254,7 +255,7 @@ def _loops(arranged: Arranged) -> Iterable[Stuck]:
     for part in arranged.placed:
         if part.part != "folded_rod":
             continue
-        if min(box.low[2] for box in _boxes(part)) < top_mm - 1e-6:
+        if min(span_mm(shape, 2)[0] for shape in part.shapes) < top_mm - 1e-6:
             yield Stuck(
                 part.owner, "loop", "a closed loop cannot be threaded through the boom: carry it above the boom"
             )

@@ -2,11 +2,11 @@
 
 from collections.abc import Iterator
 
-from fabgen.check.extents import local_extent_mm
 from fabgen.check.finding import finding
 from fabgen.check.printed import LYING_ON_SIDE, distinct_prints, owners
 from fabgen.design.arranged import Arranged, Placed
 from fabgen.design.findings import Finding
+from fabgen.design.spans import local_size_mm
 
 
 def findings(arranged: Arranged) -> Iterator[Finding]:
@@ -30,7 +30,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
 
 def standing_mm(part: Placed) -> tuple[float, float, float]:
     """Short and long side of the footprint, and height, as a part is printed."""
-    x_mm, y_mm, z_mm = local_extent_mm(part)
+    x_mm, y_mm, z_mm = local_size_mm(part)
     if part.part in LYING_ON_SIDE:
         return min(x_mm, z_mm), max(x_mm, z_mm), y_mm
     return min(x_mm, y_mm), max(x_mm, y_mm), z_mm

@@ -14,8 +14,9 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     """H05: the nearest drill is off by more than half of what a drilled hole varies (IT12)."""
     series = arranged.design.shop.drills
     largest_mm = tables.drills(series)[-1].diameter_mm
+    nearest_of = {mm: tables.nearest_drill(mm, series) for mm in {hole.diameter_mm for hole in arranged.holes}}
     for hole, *_ in drillings(arranged):
-        nearest = tables.nearest_drill(hole.diameter_mm, series)
+        nearest = nearest_of[hole.diameter_mm]
         if abs(nearest.diameter_mm - hole.diameter_mm) <= drilled_over_mm(hole.diameter_mm) / 2:
             continue
         advice = (

@@ -2,11 +2,11 @@
 
 from collections.abc import Iterator
 
-from fabgen.check.extents import extent
 from fabgen.check.finding import finding
 from fabgen.check.holes import drillings, place
 from fabgen.design.arranged import Arranged, Hole, Placed
 from fabgen.design.findings import Finding
+from fabgen.design.spans import part_span_mm
 
 BLOCKS = ("feed_block", "folded_saddle", "saddle")
 
@@ -43,5 +43,5 @@ def _on_top(hole: Hole) -> bool:
 
 def _over_mm(part: Placed, hole: Hole) -> float:
     """How far a hole reaches into a part's length along the boom."""
-    box, radius_mm = extent(part), hole.diameter_mm / 2
-    return min(hole.station_mm + radius_mm, box.high[0]) - max(hole.station_mm - radius_mm, box.low[0])
+    (low, high), radius_mm = part_span_mm(part, 0), hole.diameter_mm / 2
+    return min(hole.station_mm + radius_mm, high) - max(hole.station_mm - radius_mm, low)

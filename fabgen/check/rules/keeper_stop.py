@@ -2,12 +2,12 @@
 
 from collections.abc import Iterator
 
-from fabgen.check.extents import extent
 from fabgen.check.finding import finding, too_small
 from fabgen.check.tolerances import drilled_over_mm
 from fabgen.design.arranged import Arranged, Placed
 from fabgen.design.design import Mount
 from fabgen.design.findings import Finding
+from fabgen.design.spans import part_span_mm
 
 RIM_MM = 1.0
 """What a keeper should rest on, each side. Source: common practice."""
@@ -49,5 +49,5 @@ def _on_tip(keeper: Placed, rod: Placed) -> Iterator[Finding]:
 
 def _reach_mm(part: Placed) -> float:
     """How far a part reaches to the side, from the boom's middle."""
-    box = extent(part)
-    return max(abs(box.low[1]), abs(box.high[1]))
+    low, high = part_span_mm(part, 1)
+    return max(abs(low), abs(high))

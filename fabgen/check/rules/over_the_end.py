@@ -2,10 +2,10 @@
 
 from collections.abc import Iterator
 
-from fabgen.check.extents import extent
 from fabgen.check.finding import finding
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding
+from fabgen.design.spans import part_span_mm
 
 BLOCKS = ("clamp_plate", "feed_block", "folded_saddle", "saddle")
 
@@ -16,8 +16,8 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     for part in arranged.placed:
         if part.part not in BLOCKS:
             continue
-        box = extent(part)
-        over_mm = max(-box.low[0], box.high[0] - length_mm)
+        low, high = part_span_mm(part, 0)
+        over_mm = max(-low, high - length_mm)
         if over_mm > 1e-9:
             clamp = part.part == "clamp_plate"
             advice = (
