@@ -8,7 +8,7 @@ frequency: 1296.2 MHz
 units: mm
 boom: {{section: square, outside: 12 mm, wall: 1.5 mm, corner_radius: 1 mm, material: EN AW-6060 T66, overhang: {{rear: 110 mm, front: 30 mm}}}}
 mounts:
-  line: {{style: insulated-through, hole: 4.5 mm, bush: {{kind: shoulder, material: POM-C, spigot: 4.4 mm}}, keeper: {{kind: push-ring, material: POM-C}}, allowance: {{origin: published, model: dl6wu}}}}
+  line: {{style: insulated-through, hole: 4.8 mm, bush: {{kind: shoulder, material: POM-C}}, keeper: {{kind: push-ring, material: POM-C}}, allowance: {{origin: published, model: dl6wu}}}}
 rods: {{diameter: 2 mm, material: EN AW-6060 T66}}
 elements:
 """
@@ -21,7 +21,7 @@ def design_text(count: int) -> str:
     """A design file with `count` elements, most of them directors 55 mm apart."""
     rows = [
         "  - {id: R, role: reflector, at: 0, length: 111.0}",
-        "  - {id: DE, role: driven, at: 46.0, length: 106.0, mount: feed}",
+        "  - {id: DE, role: driven, at: 46.0, length: 106.0, mount: feed, diameter: 4 mm}",
     ]
     for k in range(1, count - 1):
         length = 101.0 - 6.0 * (1 - 0.97**k)
