@@ -96,8 +96,8 @@ def washer(
 
 
 def _frame(seat: Vector, up: Vector) -> Frame:
-    """A turned part's frame: its axis counts, its x axis only has to lie across it."""
-    return Frame(seat, z=up, x=(0.0, 1.0, 0.0) if up[0] else (1.0, 0.0, 0.0))
+    """A fastener's frame: its axis, and its x axis so that a nut's flats face ±y in the traps of both feeds."""
+    return Frame(seat, z=up, x=(0.0, 0.0, 1.0) if up[0] else (1.0, 0.0, 0.0))
 
 
 def screw_length_mm(at_least_mm: float) -> float:

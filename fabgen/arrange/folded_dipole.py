@@ -105,8 +105,8 @@ def _terminals(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSiz
         screw(layout, bolt_name, size.terminal, size.terminal_length_mm, owner=element.id, seat=seat, up=_FRONT)
         trap = (element.station_mm + size.trap_front_mm, y_mm, z_mm)
         nut(layout, nut_name, size.terminal, owner=element.id, seat=trap, up=_BACK)
-        layout.meet(bolt_name, element.id, "screw across rod", 0.0, size.rod_hole_mm - bolt.diameter_mm)
-        layout.meet(bolt_name, saddle, "screw in block", 0.0, bolt.clearance_mm - bolt.diameter_mm)
+        layout.meet(bolt_name, element.id, "screw across rod", size.rod_gap_mm, 2 * size.rod_gap_mm)
+        layout.meet(bolt_name, saddle, "screw in block", size.terminal_gap_mm, bolt.clearance_mm - bolt.diameter_mm)
         layout.meet(nut_name, saddle, "nut in trap", 0.0)
         layout.meet(nut_name, bolt_name, "thread in nut", 0.0, 0.0)
 
@@ -132,7 +132,7 @@ def _retainer(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSize
         head="pan",
     )
     thread_mm = fastener(thread).diameter_mm
-    layout.meet(ring, element.id, "washer on limb", 0.0)
+    layout.meet(ring, element.id, "washer on limb", size.retainer_gap_mm)
     layout.meet(bolt, ring, "head on washer", 0.0, large.bore_mm - thread_mm)
     layout.meet(bolt, saddle, "thread in plastic", 0.0, size.pilot_mm - thread_mm)
 

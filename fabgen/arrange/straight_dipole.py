@@ -86,8 +86,8 @@ def _halves(layout: Layout, design: Design, feed: Feed, line: LedgerLine, size: 
         trap = (element.station_mm, y_mm, top_mm + size.trap_top_mm)
         screw(layout, bolt_name, size.terminal, size.terminal_length_mm, owner=element.id, seat=head)
         nut(layout, nut_name, size.terminal, owner=element.id, seat=trap, up=DOWN)
-        layout.meet(bolt_name, piece, "screw across rod", 0.0, size.rod_hole_mm - bolt.diameter_mm)
-        layout.meet(bolt_name, block, "screw in block", 0.0, bolt.clearance_mm - bolt.diameter_mm)
+        layout.meet(bolt_name, piece, "screw across rod", size.rod_gap_mm, 2 * size.rod_gap_mm)
+        layout.meet(bolt_name, block, "screw in block", size.terminal_gap_mm, bolt.clearance_mm - bolt.diameter_mm)
         layout.meet(nut_name, block, "nut in trap", 0.0)
         layout.meet(nut_name, bolt_name, "thread in nut", 0.0, 0.0)
         cuts.append(

@@ -97,6 +97,11 @@ class FeedBlockLayout:
         return max(2 * self.rod_hole_mm, 3.5)
 
     @property
+    def rod_gap_mm(self) -> float:
+        """Distance between a terminal screw and its hole in the rod, all round."""
+        return (self.rod_hole_mm - self.terminal_fastener.diameter_mm) / 2
+
+    @property
     def terminal_y_mm(self) -> float:
         """±y of the terminal screws."""
         return self.gap_mm / 2 + self.rod_hole_from_end_mm

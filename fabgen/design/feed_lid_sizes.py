@@ -4,6 +4,7 @@ from dataclasses import dataclass
 from typing import Any
 
 from fabgen.design.arranged import Box
+from fabgen.design.feed_layout import TOOTH_MM
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
 
 
@@ -20,12 +21,12 @@ class FeedLidSize:
 
     @property
     def shapes(self) -> tuple[Box, Box]:
-        """Plate and wedge."""
+        """Plate and wedge, its ridges held."""
         block = self.block
         (x, y), (x0, x1), (y0, y1) = block.lid_mm, block.slot_x_mm, block.tongue_y_mm
         return (
             Box((-x, -y, block.lid_seat_mm), (x, y, block.top_mm)),
-            Box((x0, y0, block.tongue_low_mm), (x1, y1, block.lid_seat_mm)),
+            Box((x0, y0 - TOOTH_MM, block.tongue_low_mm), (x1, y1, block.lid_seat_mm)),
         )
 
 

@@ -25,12 +25,7 @@ from fabgen.design.part_geometry import (
     under_strip_mm2,
     under_teardrop_mm3,
 )
-from fabgen.design.saddle_sizes import (
-    COUNTERBORE_PLAY_MM,
-    EAR_WALL_MM,
-    ENGAGEMENT_MM,
-    FOOT_SHARE,
-)
+from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, EAR_WALL_MM, ENGAGEMENT_MM, FOOT_SHARE
 from fabgen.stock.fasteners import tap_drill_mm, washer
 from fabgen.stock.practice import print_practice
 
@@ -79,8 +74,6 @@ class FoldedSaddleSize:
         """Where along x the column ends in front: the limbs stand a little proud for tags to press on."""
         return self.rod_diameter_mm / 2 - PROUD_MM
 
-    # Terminals.
-
     @property
     def terminal_fastener(self) -> Fastener:
         """The terminal screw's sizes."""
@@ -95,6 +88,11 @@ class FoldedSaddleSize:
     def rod_hole_from_end_mm(self) -> float:
         """From a fed end to the middle of that hole."""
         return max(2 * self.rod_hole_mm, 3.5)
+
+    @property
+    def rod_gap_mm(self) -> float:
+        """Distance between a terminal screw and its hole in the rod, all round."""
+        return (self.rod_hole_mm - self.terminal_fastener.diameter_mm) / 2
 
     @property
     def terminal_y_mm(self) -> float:
@@ -138,8 +136,6 @@ class FoldedSaddleSize:
     def back_mm(self) -> float:
         """Where along x the column ends behind: the terminal screws' tips stay inside."""
         return self.tip_mm - 0.2
-
-    # Hold-down screws and upper limb.
 
     @property
     def fastener(self) -> Fastener:
@@ -193,6 +189,13 @@ class FoldedSaddleSize:
                 return name
         return RETAINERS[-1]
 
+    @property
+    def retainer_gap_mm(self) -> float:
+        """Distance between its washer and the upper limb: 0 where the washer reaches over the limb's axis."""
+        short = self.retainer_offset_mm(self.retainer) - washer(self.retainer, "large").outside_mm / 2
+        radius = self.rod_diameter_mm / 2
+        return math.hypot(radius, max(0.0, short)) - radius
+
     def retainer_offset_mm(self, name: str) -> float:
         """From the upper limb's axis to that screw's."""
         return (self.bore_mm + tap_drill_mm(name)) / 2 + RETAINER_WALL_MM
@@ -211,8 +214,6 @@ class FoldedSaddleSize:
     def top_mm(self) -> float:
         """Level of the top."""
         return self.retainer_z_mm + self.pilot_mm / 2 + 2.4
-
-    # Across: ears, column, cable.
 
     @property
     def ear_y_mm(self) -> float:

@@ -5,6 +5,7 @@ the part's local frame and the volume of its solid; the solids take their number
 """
 
 from fabgen.design.bush_sizes import BushSize, bush_size, sleeve_size
+from fabgen.design.feed_lid_sizes import FeedLidSize, feed_lid_size
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
 from fabgen.design.folded_rod_sizes import FoldedRodSize, folded_rod_size
 from fabgen.design.folded_saddle_sizes import FoldedSaddleSize, folded_saddle_size
@@ -30,6 +31,7 @@ __all__ = [
     "BushSize",
     "ClampPlateSize",
     "FeedBlockSize",
+    "FeedLidSize",
     "FoldedRodSize",
     "FoldedSaddleSize",
     "NutSize",
@@ -44,6 +46,7 @@ __all__ = [
     "clamp_plate_size",
     "crush_sleeve_size",
     "feed_block_size",
+    "feed_lid_size",
     "folded_rod_size",
     "folded_saddle_size",
     "nut_size",

@@ -252,7 +252,8 @@ def test_washer_holds_the_upper_limb(case):
     ring = at(washer(thread=size.retainer, series="large"), size.rod_diameter_mm / 2, 0, size.retainer_z_mm, FORWARD)
     assert shared_mm3(ring, parts["saddle"]) < NONE_MM3
     assert shared_mm3(ring, parts["rod"]) < NONE_MM3
-    assert ring.distance(parts["rod"]) == pytest.approx(0.0, abs=0.15)
+    assert ring.distance(parts["rod"]) == pytest.approx(size.retainer_gap_mm, abs=1e-6)
+    assert size.retainer_gap_mm < 0.3
     assert shared_mm3(parts["rod"].translate(cq.Vector(0.7, 0, 0)), ring) > 0.1
 
 

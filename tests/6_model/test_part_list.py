@@ -15,7 +15,7 @@ PARTS = [entry.name for entry in registry.entries("model/parts")]
 BED_MM = (220.0, 220.0, 250.0)
 """The printer of the contract's example design."""
 
-SIZED = [name for name in PARTS if hasattr(part_sizes, f"{name}_size")] + ["feed_lid"]
+SIZED = [name for name in PARTS if hasattr(part_sizes, f"{name}_size")]
 CLOSED_FORM = 1e-7
 """Relative: the kernel integrates trimmed faces to 1e-6 and does better; plane-faced parts agree to 1e-12."""
 
@@ -67,10 +67,7 @@ def test_part_is_the_same_twice(name):
 
 @pytest.mark.parametrize("name", SIZED)
 def test_volume_is_the_closed_form(name):
-    if name == "feed_lid":
-        formula = part_sizes.feed_block_size().lid_volume_mm3
-    else:
-        formula = getattr(part_sizes, f"{name}_size")().volume_mm3
+    formula = getattr(part_sizes, f"{name}_size")().volume_mm3
     assert volume_mm3(default(name)) == pytest.approx(formula, rel=CLOSED_FORM)
 
 
@@ -78,7 +75,7 @@ def test_sized_parts_are_not_an_empty_list():
     assert len(SIZED) >= 16
 
 
-@pytest.mark.parametrize("name", SIZED[:-1])
+@pytest.mark.parametrize("name", SIZED)
 def test_part_lies_within_its_envelope(name):
     size = getattr(part_sizes, f"{name}_size")()
     boxes = [shape if not hasattr(shape, "box") else shape.box for shape in size.shapes]
