@@ -6,6 +6,7 @@ from dataclasses import asdict, dataclass
 
 from fabgen import __version__
 from fabgen.design.arranged import Arranged, CutPlan
+from fabgen.design.drawing import Sheet
 from fabgen.design.findings import Finding, clear
 from fabgen.design.package import PackageFile
 
@@ -71,25 +72,42 @@ def _tables(order: Order) -> Files:
 
 
 def _templates(order: Order) -> Files:
-    from fabgen.draw.sheets import boom_template
-    from fabgen.draw.stamp import stamped
+    from fabgen.draw.sheet_list import sheets_of
     from fabgen.draw.tiling import tile
-    from fabgen.export.dxf import dxf
     from fabgen.export.pdf import pdf
-    from fabgen.export.svg import svg
     from fabgen.stock.tables import paper_size_mm
 
     design = order.arranged.design
-    sheets = [stamped(sheet) if order.stamped else sheet for sheet in boom_template.sheets(order.arranged)]
-    files, pages = [], []
-    for sheet in sheets:
-        files.append(PackageFile(f"templates/{sheet.name}.svg", svg(sheet), f"1:1 template of {sheet.name}"))
-        files.append(PackageFile(f"templates/{sheet.name}.dxf", dxf(sheet), f"1:1 template of {sheet.name}"))
+    files: list[PackageFile] = []
+    pages: list[Sheet] = []
+    for sheet in sheets_of("templates", order.arranged, order.cut_plan, stamp=order.stamped):
+        files += _drawn(f"templates/{sheet.name}", sheet, f"1:1 template of {sheet.name}")
         tiling = tile(sheet, paper_size_mm(design.shop.paper), number=design.number, revision=design.revision)
         pages += tiling.pages
     title = f"{design.number} {design.revision} templates"
     files.append(PackageFile("templates/templates.pdf", pdf(pages, title), "the templates, tiled at exactly 1:1"))
     return tuple(files)
+
+
+def _bench(order: Order) -> Files:
+    from fabgen.draw.sheet_list import sheets_of
+    from fabgen.export.pdf import pdf
+
+    design = order.arranged.design
+    pages = sheets_of("bench", order.arranged, order.cut_plan, stamp=order.stamped)
+    files = [PackageFile("bench.pdf", pdf(pages, f"{design.number} {design.revision} bench"), "for the drill press")]
+    for sheet in sheets_of("drawings", order.arranged, order.cut_plan, stamp=order.stamped):
+        files += _drawn(f"drawings/{sheet.name}", sheet, sheet.title)
+        files.append(PackageFile(f"drawings/{sheet.name}.pdf", pdf([sheet], sheet.title), sheet.title))
+    return tuple(files)
+
+
+def _drawn(stem: str, sheet: Sheet, purpose: str) -> list[PackageFile]:
+    """One sheet as SVG and DXF."""
+    from fabgen.export.dxf import dxf
+    from fabgen.export.svg import svg
+
+    return [PackageFile(f"{stem}.svg", svg(sheet), purpose), PackageFile(f"{stem}.dxf", dxf(sheet), purpose)]
 
 
 def _model(order: Order) -> Files:

@@ -1,74 +1,197 @@
-"""Put a hole's lettering where it covers nothing: the nearest free place out of a fixed list."""
+"""Put lettering where it covers nothing: no hole, no line, no other lettering.
 
-from collections.abc import Sequence
-from dataclasses import dataclass
+Coordinates are the sheet's, in mm. A place is tried against everything that was drawn before, so what must stay where
+it is goes first.
+"""
 
-from fabgen.design.drawing import Anchor, Box, Fill, Item, Text
-from fabgen.design.lettering import text_width_mm
+import math
+from collections import defaultdict
+from collections.abc import Iterable, Iterator, Sequence
+from typing import NamedTuple
+
+from fabgen.design.drawing import Anchor, Box, Circle, Fill, Item, Line, Text
+from fabgen.design.lettering import text_box, text_width_mm
 from fabgen.design.overlaps import bounds
 from fabgen.design.pen import Pen
+from fabgen.draw.clipping import clipped
 
-_CLEAR_MM = 0.6
-_HEIGHTS_MM = (2.0, 1.8)
-_LEADING = 1.45
-_REACHES_MM = (1.5, 6.0, 14.0, 26.0, 40.0, 60.0)
+SMALLEST_MM = 1.8
+"""Smallest lettering. Source: ISO 3098-1, nominal sizes (from memory)."""
+
+_CLEAR_MM = 0.45
+_LIFT_MM = 0.6
+_LEADING = 1.5
+_BESIDE_MM = 1.2
+_REACHES_MM = (5.0, 9.0, 14.0, 20.0, 28.0)
+_BIN_MM, _LONG_MM = 20.0, 120.0
 
 
-@dataclass(slots=True)
-class FreePlaces:
-    """Boxes that lettering has to keep off, and the room it has to stay in."""
+class Spot(NamedTuple):
+    """A hole to be lettered.
 
-    room: Box
-    taken: list[Box]
+    Attributes:
+        x_mm, y_mm: its centre.
+        radius_mm: its radius.
+        low_mm, high_mm: lower and upper edge of its wall, which its lettering does not leave.
+    """
 
-    def keep_off(self, items: Sequence[Item]) -> None:
-        """Add the boxes of holes, arrows and texts."""
-        self.taken += [bounds(item) for item in items if item.layer == "drill" or isinstance(item, Fill | Text)]
+    x_mm: float
+    y_mm: float
+    radius_mm: float
+    low_mm: float
+    high_mm: float
 
-    def letter(self, pen: Pen, lines: Sequence[str], x_mm: float, y_mm: float, radius_mm: float) -> bool:
-        """Letter some lines beside a hole, with a leader where they stand away from it.
 
-        Args:
-            pen: records them.
-            lines: from the top down.
-            x_mm: the hole's centre.
-            y_mm: the hole's centre.
-            radius_mm: of the hole.
+class Drawn:
+    """What lettering has to keep off, found quickly by its place along x."""
 
-        Returns:
-            False when no place was free; nothing is lettered then.
-        """
-        for height_mm in _HEIGHTS_MM:
-            width_mm = max(text_width_mm(line, height_mm) for line in lines)
-            block_mm = height_mm * (1 + _LEADING * (len(lines) - 1))
-            for reach_mm in _REACHES_MM:
-                for side in (1, -1):
-                    for lift_mm in (0.0, radius_mm + block_mm / 2 + 1.0, -radius_mm - block_mm / 2 - 1.0):
-                        near = x_mm + side * (radius_mm + reach_mm)
-                        x0 = near if side > 0 else near - width_mm
-                        y0 = y_mm + lift_mm - block_mm / 2
-                        box = (
-                            x0 - _CLEAR_MM,
-                            y0 - 0.4 * height_mm,
-                            x0 + width_mm + _CLEAR_MM,
-                            y0 + block_mm + _CLEAR_MM,
-                        )
-                        if not self._free(box):
-                            continue
-                        anchor: Anchor = "start" if side > 0 else "end"
-                        for count, line in enumerate(lines):
-                            level = y0 + block_mm - height_mm - count * height_mm * _LEADING
-                            pen.text(near, level, line, height_mm, anchor=anchor)
-                        if reach_mm > _REACHES_MM[0]:
-                            end = near - side * 0.8
-                            pen.line("dim", x_mm + side * radius_mm, y_mm, end, y0 + block_mm / 2)
-                        self.taken.append(box)
-                        return True
+    def __init__(self, items: Iterable[Item]) -> None:
+        self._bins: dict[int, list[tuple[Box, Item]]] = defaultdict(list)
+        self._long: list[tuple[Box, Item]] = []
+        self.add(items)
+
+    def add(self, items: Iterable[Item]) -> None:
+        """Add items that were drawn."""
+        for item in items:
+            box = bounds(item)
+            if box[2] - box[0] > _LONG_MM:
+                self._long.append((box, item))
+            else:
+                for k in range(math.floor(box[0] / _BIN_MM), math.floor(box[2] / _BIN_MM) + 1):
+                    self._bins[k].append((box, item))
+
+    def is_free(self, box: Box) -> bool:
+        """Whether nothing runs through a box."""
+        return not any(_touches(box, around, item) for around, item in self._near(box))
+
+    def is_open(self, line: Line) -> bool:
+        """Whether a leader crosses no hole, arrow or lettering; it may cross lines."""
+        for around, item in self._near(bounds(line)):
+            solid = item.layer == "drill" or isinstance(item, Fill | Text)
+            if solid and clipped(line, around):
+                return False
+        return True
+
+    def _near(self, box: Box) -> Iterator[tuple[Box, Item]]:
+        yield from self._long
+        for k in range(math.floor(box[0] / _BIN_MM), math.floor(box[2] / _BIN_MM) + 1):
+            yield from self._bins[k]
+
+
+def letter_hole(pen: Pen, drawn: Drawn, spot: Spot, above: Sequence[str], below: Sequence[str]) -> bool:
+    """Letter a hole on its own wall: beside it, else farther along with a leader.
+
+    Args:
+        pen: records the lettering.
+        drawn: what it keeps off; what is lettered is added.
+        spot: the hole.
+        above: what stands above the hole's axis, in order of reading; its words may be put on lines of their own.
+        below: what stands below it.
+
+    Returns:
+        False when no place was free; nothing is lettered then.
+    """
+    texts = _beside(drawn, spot, above, below) or _led(drawn, spot, [" ".join(above), " ".join(below)])
+    for item in texts:
+        pen.items.append(item)
+    drawn.add(texts)
+    return bool(texts)
+
+
+def usual_height_mm(room_mm: float) -> float:
+    """Height of lettering that suits the room between a wall's centre line and its edge."""
+    return next((h for h in (2.5, 2.0) if room_mm >= 1.5 * h + _LIFT_MM + _CLEAR_MM), SMALLEST_MM)
+
+
+def _beside(drawn: Drawn, spot: Spot, above: Sequence[str], below: Sequence[str]) -> list[Item]:
+    """The first free block right or left of the hole."""
+    usual = usual_height_mm((spot.high_mm - spot.low_mm) / 2)
+    one, two = ([" ".join(above)], [" ".join(below)]), (list(above), list(below))
+    stacked = [" ".join(above), " ".join(below)]
+    trials = [(usual, *one), (SMALLEST_MM, *one), (usual, *two), (SMALLEST_MM, *two)]
+    trials += [(h, up, down) for h in (usual, SMALLEST_MM) for up, down in ((stacked, []), ([], stacked))]
+    trials += [(SMALLEST_MM, [*above, *below], []), (SMALLEST_MM, [], [*above, *below])]
+    for height_mm, up, down in trials:
+        for side in (1, -1):
+            block = _block(spot, up, down, height_mm, spot.x_mm + side * (spot.radius_mm + _BESIDE_MM), side)
+            if _fits(drawn, spot, block):
+                return list(block)
+    return []
+
+
+def _led(drawn: Drawn, spot: Spot, lines: list[str]) -> list[Item]:
+    """A block farther along the wall with a leader to the hole's edge."""
+    for height_mm in (usual_height_mm((spot.high_mm - spot.low_mm) / 2), SMALLEST_MM):
+        for reach_mm in _REACHES_MM:
+            for side in (1, -1):
+                for up, down in ((lines, []), ([], lines)):
+                    x_mm = spot.x_mm + side * (spot.radius_mm + reach_mm)
+                    block = _block(spot, up, down, height_mm, x_mm, side)
+                    if not _fits(drawn, spot, block):
+                        continue
+                    middle = (text_box(block[0])[3] + text_box(block[-1])[1]) / 2
+                    turn = math.atan2(middle - spot.y_mm, x_mm - side * 0.6 - spot.x_mm)
+                    start = (spot.radius_mm + 0.05) * math.cos(turn), (spot.radius_mm + 0.05) * math.sin(turn)
+                    leader = Line("dim", spot.x_mm + start[0], spot.y_mm + start[1], x_mm - side * 0.6, middle)
+                    if drawn.is_open(leader):
+                        return [*block, leader]
+    return []
+
+
+def _block(spot: Spot, up: list[str], down: list[str], height_mm: float, x_mm: float, side: int) -> list[Text]:
+    """Lines above and below the hole's axis, from the top down, starting or ending at x."""
+    anchor: Anchor = "start" if side > 0 else "end"
+    pitch = height_mm * _LEADING
+    depth = -text_box(Text("text", 0.0, 0.0, up[-1], height_mm))[1] if up else 0.0
+    tops = [spot.y_mm + _LIFT_MM + depth + pitch * (len(up) - 1 - k) for k in range(len(up))]
+    bottoms = [spot.y_mm - _LIFT_MM - 1.06 * height_mm - pitch * k for k in range(len(down))]
+    return [
+        Text("text", x_mm, y, line, height_mm, anchor)
+        for y, line in zip([*tops, *bottoms], [*up, *down], strict=True)
+        if line
+    ]
+
+
+def _fits(drawn: Drawn, spot: Spot, block: list[Text]) -> bool:
+    boxes = [text_box(text) for text in block]
+    if any(box[1] < spot.low_mm or box[3] > spot.high_mm for box in boxes):
         return False
+    return all(drawn.is_free(_grown(box)) for box in boxes)
 
-    def _free(self, box: Box) -> bool:
-        x0, y0, x1, y1 = box
-        left, low, right, high = self.room
-        if x0 < left or x1 > right or y0 < low or y1 > high:
-            return False
-        return all(x1 <= a or x0 >= c or y1 <= b or y0 >= d for a, b, c, d in self.taken)
+
+def free_place(drawn: Drawn, width_mm: float, height_mm: float, wanted: Iterable[tuple[float, float]]) -> Box | None:
+    """The first of some places (lower left corners) at which a box of that size covers nothing; None without one."""
+    for x, y in wanted:
+        box = (x, y, x + width_mm, y + height_mm)
+        if drawn.is_free(_grown(box)):
+            return box
+    return None
+
+
+def mark_hole(pen: Pen, drawn: Drawn, spot: Spot, number: str) -> bool:
+    """Letter a hole's number alone, as small as lettering may be; False when even that finds no place."""
+    width = text_width_mm(number, SMALLEST_MM)
+    for drop in (_LIFT_MM, -_LIFT_MM - SMALLEST_MM):
+        for aside in (spot.radius_mm + 0.8, -spot.radius_mm - 0.8 - width):
+            text = Text("text", spot.x_mm + aside, spot.y_mm + drop, number, SMALLEST_MM)
+            if _fits(drawn, spot, [text]):
+                pen.items.append(text)
+                drawn.add([text])
+                return True
+    return False
+
+
+def _grown(box: Box) -> Box:
+    return (box[0] - _CLEAR_MM, box[1] - _CLEAR_MM, box[2] + _CLEAR_MM, box[3] + _CLEAR_MM)
+
+
+def _touches(box: Box, around: Box, item: Item) -> bool:
+    if box[0] > around[2] or around[0] > box[2] or box[1] > around[3] or around[1] > box[3]:
+        return False
+    if isinstance(item, Circle) and item.layer == "drill":
+        dx = max(box[0] - item.x_mm, 0.0, item.x_mm - box[2])
+        dy = max(box[1] - item.y_mm, 0.0, item.y_mm - box[3])
+        return math.hypot(dx, dy) < item.radius_mm
+    if item.layer == "drill" or isinstance(item, Fill | Text):
+        return True
+    return bool(clipped(item, box))

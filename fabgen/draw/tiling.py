@@ -45,7 +45,7 @@ def tile(
     overlap_mm: float = 10.0,
     margin_mm: float = 10.0,
 ) -> Tiling:
-    """Cut a sheet into pages, upright or across, whichever takes fewer.
+    """Cut a sheet into pages, upright or across, whichever takes fewer; every page gets its own bars and stamp.
 
     Args:
         sheet: the drawing at 1:1; `station_at_x0_mm` gives the stations, without it pages carry none.
@@ -67,7 +67,7 @@ def tile(
         plans, key=lambda p: (len(p.columns_mm) * len(p.rows_mm), p.lost, (p.paper_mm[0] > p.paper_mm[1]) == tall)
     )
     windows = [(x0, y0, x1, y1) for y0, y1 in reversed(plan.rows_mm) for x0, x1 in plan.columns_mm]
-    items = [item for item in sheet.items if item.layer != "stamp"]
+    items = [item for item in sheet.items if item.layer not in ("stamp", "scale")]
     texts, dropped = _placed_texts(items, windows)
     shapes = [item for item in items if not isinstance(item, Text)] + _join_marks(plan, items)
     pages = []

@@ -1,81 +1,213 @@
 """1:1 paper to mark a boom piece from: its walls laid flat, every hole with its station and drill."""
 
-from fabgen.design.arranged import Arranged, Hole, Piece
-from fabgen.design.drawing import Sheet
-from fabgen.design.pen import Pen
+import math
+from collections import defaultdict
+from collections.abc import Iterable
+
+from fabgen.design.arranged import Arranged, CutPlan, Hole, Piece, Wall
+from fabgen.design.drawing import Box, Sheet
+from fabgen.design.lettering import shortened, text_width_mm
+from fabgen.design.pen import Pen, spread
+from fabgen.draw.clipping import clipped
 from fabgen.draw.development import Development, development
-from fabgen.draw.lettering_place import FreePlaces
+from fabgen.draw.lettering_place import SMALLEST_MM, Drawn, Spot, free_place, letter_hole, mark_hole, usual_height_mm
+from fabgen.draw.words import ABOUT_BARS, WALLS, boom_size, drill_words, wall_of
 from fabgen.units import format_mm
 
-_SIDE_MM, _FOOT_MM, _HEAD_MM = 14.0, 20.0, 14.0
-_WALL_NAMES = {"+z": "TOP", "+y": "LEFT", "-y": "RIGHT", "-z": "BOTTOM"}
-_DOT_MM, _CROSS_MM = 0.8, 3.0
+PLACE = "templates"
+
+_LEFT_MM, _RIGHT_MM, _FOOT_MM = 20.0, 10.0, 18.0
+_BAR_X_MM, _BAR_Y_MM = 8.0, 7.0
+_CROSS_MM, _DOT_MM = 3.0, 0.8
+_STATION_STEP_MM, _TICK_MM = 50.0, 1.5
+_LINE_MM = 165.0
+"""Longest line of lettering: it stays whole on a page of the shop's paper, upright or across."""
+_NAME_PITCH_MM = 110.0
+_ARROW_MM = 9.0
 
 
-def sheets(arranged: Arranged) -> list[Sheet]:
-    """One sheet per boom piece; station 0 is the datum face, printed face outwards."""
+def sheets(arranged: Arranged, _: CutPlan) -> list[Sheet]:
+    """One sheet per boom piece; x is the station, printed face outwards."""
     return [_template(arranged, piece) for piece in arranged.pieces]
 
 
 def _template(arranged: Arranged, piece: Piece) -> Sheet:
-    design = arranged.design
-    laid = development(design.boom, design.shop.paper_thickness_mm)
-    pen = Pen()
-    left, right = _SIDE_MM, _SIDE_MM + piece.end_mm - piece.start_mm
+    laid = development(arranged.design.boom, arranged.design.shop.paper_thickness_mm)
+    left, right = _LEFT_MM, _LEFT_MM + piece.end_mm - piece.start_mm
     base = _FOOT_MM - laid.low_mm
+    paper = (left, base + laid.low_mm, right, base + laid.high_mm + laid.flap_mm)
     holes = [hole for hole in arranged.holes if hole.piece == piece.name]
-    width_mm = max(right + _SIDE_MM, 2 * _SIDE_MM + 100.0)
-    height_mm = base + laid.high_mm + _HEAD_MM
-    _surface(pen, laid, left, right, base)
-    places = FreePlaces((left + 0.5, base + laid.low_mm + 0.5, right - 0.5, base + laid.high_mm - 0.5), [])
-    _walls(pen, laid, left, right, base)
+    pen, shift = Pen(), left - piece.start_mm
+    _surface(pen, laid, paper, base)
     for hole in holes:
-        _hole(pen, laid, hole, left - piece.start_mm, base)
-    places.keep_off(pen.items)
-    for hole in holes:
-        lines = [f"{hole.element} {format_mm(hole.station_mm)}", f"{hole.number} drill {hole.drill}"]
-        x_mm, y_mm = left + hole.station_mm - piece.start_mm, base + laid.centre_mm(hole)
-        places.letter(pen, lines, x_mm, y_mm, hole.diameter_mm / 2)
-    pen.text(left, base + laid.high_mm + 8.0, f"{design.number} {design.revision}  {piece.name}  1:1", 3.5)
-    pen.text(
-        left, base + laid.high_mm + 3.0, "datum end at this edge; printed face outwards; arrow points forward", 2.0
-    )
-    pen.bar_100(left, 8.0)
-    return pen.sheet(piece.name, f"{design.title}: {piece.name}", width_mm, height_mm, piece.start_mm - left)
+        _hole(pen, laid, hole, shift, base)
+    _stations(pen, piece, paper)
+    drawn = Drawn(pen.items)
+    crowded = [hole for hole in holes if not _lettered(pen, drawn, _spot(laid, hole, shift, base), hole)]
+    _wall_names(pen, drawn, laid, paper, base)
+    head_mm = _crowded(pen, crowded, shift, paper[3] + 8.0)
+    _ends(pen, paper, left, right)
+    top_mm = _heading(pen, arranged, piece, laid, head_mm)
+    pen.bar_100(_BAR_X_MM, _FOOT_MM, up=True, label="100 mm across")
+    pen.bar_100(left, _BAR_Y_MM, label="100 mm along")
+    width_mm = max(right + _RIGHT_MM, left + _LINE_MM + 5.0)
+    height_mm = max(top_mm + 4.0, _FOOT_MM + 106.0)
+    return pen.sheet(piece.name, f"{arranged.design.title}: {piece.name}", width_mm, height_mm, piece.start_mm - left)
 
 
-def _surface(pen: Pen, laid: Development, left: float, right: float, base: float) -> None:
-    """Edges, folds and cuts."""
-    low, high = base + laid.low_mm, base + laid.high_mm
-    if laid.cuts_mm:
+def _surface(pen: Pen, laid: Development, paper: Box, base: float) -> None:
+    """Edges, folds, seam and centre lines."""
+    left, low, right, high = paper
+    if laid.folds_mm or laid.radius_mm:
+        pen.rectangle("outline", left, low, right, high - laid.flap_mm)
+        pen.polyline("frame", [(left, high - laid.flap_mm), (left, high), (right, high), (right, high - laid.flap_mm)])
+    else:
         for face in laid.faces:
             pen.rectangle("outline", left, base + face.low_mm, right, base + face.high_mm)
-    else:
-        pen.rectangle("outline", left, low, right, high)
     for fold in laid.folds_mm:
-        pen.line("fold", left, base + fold, right, base + fold)
-
-
-def _walls(pen: Pen, laid: Development, left: float, right: float, base: float) -> None:
-    """Centre lines, wall names and the arrow forward."""
-    named = [(face.middle_mm, face.high_mm, _WALL_NAMES[face.wall]) for face in laid.faces]
-    if laid.radius_mm:
-        quarter = laid.radius_mm * 1.5707963267948966
-        named = [(0.0, quarter / 2, "TOP"), (quarter, 1.5 * quarter, "LEFT"), (-quarter, -quarter / 2, "RIGHT")]
-    for middle, edge, name in named:
-        pen.line("centre", left, base + middle, right, base + middle)
-        pen.text(left + 2.0, base + edge - 1.2, name, 2.0, level="top")
-        end = left + 16.0
-        pen.line("text", end, base + edge - 2.2, end + 8.0, base + edge - 2.2)
-        pen.arrow(end + 10.0, base + edge - 2.2, 0, layer="text")
+        if fold < laid.high_mm:
+            pen.line("fold", left, base + fold, right, base + fold)
+    for _, middle in laid.centre_lines_mm:
+        if laid.low_mm < middle < laid.high_mm:
+            pen.line("centre", left, base + middle, right, base + middle)
 
 
 def _hole(pen: Pen, laid: Development, hole: Hole, shift: float, base: float) -> None:
-    x_mm, y_mm = shift + hole.station_mm, base + laid.centre_mm(hole)
-    outline = laid.outline_mm(hole)
-    if outline:
-        pen.polyline("drill", [(shift + x, base + y) for x, y in outline], closed=True)
+    """Circle or developed outline, cross and pilot dot; on a seam drawn at both edges, cut where the paper ends."""
+    x_mm, reach_mm = shift + hole.station_mm, hole.diameter_mm / 2 + _CROSS_MM
+    for centre in laid.centres_mm(hole):
+        mark, y_mm = Pen(), base + centre
+        outline = laid.outline_mm(hole)
+        if outline:
+            rise = y_mm - laid.centre_mm(hole)
+            mark.polyline("drill", [(shift + x, rise + y) for x, y in outline], closed=True)
+        else:
+            mark.circle("drill", x_mm, y_mm, hole.diameter_mm / 2)
+        mark.cross(x_mm, y_mm, reach_mm)
+        mark.dot(x_mm, y_mm, _DOT_MM)
+        window = (x_mm - 999.0, base + laid.low_mm, x_mm + 999.0, base + laid.high_mm + laid.flap_mm)
+        pen.add(part for item in mark.items for part in (clipped(item, window) if laid.radius_mm else [item]))
+
+
+def _stations(pen: Pen, piece: Piece, paper: Box) -> None:
+    """Ticks outside both edges with their station, to place the paper by tape."""
+    left, low, right, high = paper
+    first = math.ceil(piece.start_mm / _STATION_STEP_MM)
+    for k in range(first, math.floor(piece.end_mm / _STATION_STEP_MM) + 1):
+        x = left + k * _STATION_STEP_MM - piece.start_mm
+        pen.line("dim", x, low, x, low - _TICK_MM)
+        pen.line("dim", x, high, x, high + _TICK_MM)
+        if k % 2 == 0 and right - x > 6.0:
+            label = f"{k * _STATION_STEP_MM:.0f}"
+            pen.text(x, low - _TICK_MM - 0.8, label, 2.0, anchor="middle", level="top", layer="dim")
+            pen.text(x, high + _TICK_MM + 0.8, label, 2.0, anchor="middle", layer="dim")
+
+
+def _spot(laid: Development, hole: Hole, shift: float, base: float) -> Spot:
+    centre = laid.centre_mm(hole)
+    face = min(laid.faces, key=lambda face: max(face.low_mm - centre, centre - face.high_mm))
+    high_mm = face.high_mm + (laid.flap_mm if centre == laid.high_mm else 0.0)
+    return Spot(shift + hole.station_mm, base + centre, hole.diameter_mm / 2, base + face.low_mm, base + high_mm)
+
+
+def _lettered(pen: Pen, drawn: Drawn, spot: Spot, hole: Hole) -> bool:
+    """Letter a hole on its wall: element and station over its axis, number and drill under it."""
+    above = [hole.element, format_mm(hole.station_mm)]
+    if letter_hole(pen, drawn, spot, above, [hole.number, drill_words(hole)]):
+        return True
+    mark_hole(pen, drawn, spot, hole.number)
+    return False
+
+
+def _wall_names(pen: Pen, drawn: Drawn, laid: Development, paper: Box, base: float) -> None:
+    """Each wall's name with an arrow forward, again and again along it, and what to do with the flap."""
+    left, _, right, high = paper
+    centres: dict[Wall, float] = dict(laid.centre_lines_mm)
+    for face in laid.faces:
+        half = laid.radius_mm and face.wall == "-z"
+        middle = face.middle_mm if half else centres[face.wall]
+        height = usual_height_mm((face.high_mm - face.low_mm) / 2)
+        lift = -height / 2 if half else 0.75
+        _along(pen, drawn, WALLS[face.wall], height, base + middle + lift, (left, right))
+    if laid.flap_mm:
+        seam = "Flap for tape: slide it under the opposite edge, which then lies on the thick line."
+        _along(pen, drawn, seam, 2.0, high - laid.flap_mm / 2 - 1.0, (left, right), arrow=False)
+
+
+def _along(
+    pen: Pen, drawn: Drawn, words: str, height_mm: float, y_mm: float, ends: tuple[float, float], *, arrow: bool = True
+) -> None:
+    """Letter words at every step along the paper where a free place is near."""
+    width = text_width_mm(words, height_mm)
+    room = width + (_ARROW_MM + 2.0 if arrow else 0.0)
+    left, right = ends[0] + 3.0, ends[1] - 3.0 - room
+    start = left
+    while start <= max(left, right):
+        step = _NAME_PITCH_MM if arrow else 2 * _NAME_PITCH_MM
+        places = (min(max(left, start + d), max(left, right)) for k in range(28) for d in ((2.0 * k, -2.0 * k)))
+        found = free_place(drawn, room + 5.0, 1.06 * height_mm, ((x - 2.5, y_mm) for x in places))
+        if found:
+            items = Pen()
+            x = found[0] + 2.5
+            items.text(x, y_mm, words, height_mm)
+            if arrow:
+                tip, level = x + room, y_mm + height_mm / 2
+                items.line("text", x + width + 2.0, level, tip - 2.5, level)
+                items.arrow(tip, level, 0, layer="text")
+            pen.add(items.items)
+            drawn.add(items.items)
+        start += step
+
+
+def _crowded(pen: Pen, holes: Iterable[Hole], shift: float, from_y_mm: float) -> float:
+    """Holes whose lettering has no place on their wall: upright above the paper; returns where that ends."""
+    rows: dict[str, list[Hole]] = defaultdict(list)
+    for hole in holes:
+        rows[hole.number].append(hole)
+    if not rows:
+        return from_y_mm
+    groups = sorted(rows.values(), key=lambda group: group[0].station_mm)
+    xs = [shift + group[0].station_mm for group in groups]
+    y_mm, longest = from_y_mm + 4.0, 0.0
+    for group, x, slot in zip(groups, xs, spread(xs, 1.6 * SMALLEST_MM), strict=True):
+        walls = " + ".join(wall_of(hole) for hole in group)
+        first = group[0]
+        words = f"{first.number} {walls}  {first.element} {format_mm(first.station_mm)} {drill_words(first)}"
+        pen.polyline("dim", [(x, from_y_mm), (x, from_y_mm + 1.0), (slot, y_mm - 0.5)])
+        pen.text(slot, y_mm, words, SMALLEST_MM, angle_deg=90, level="middle")
+        longest = max(longest, text_width_mm(words, SMALLEST_MM))
+    return y_mm + longest + 2.0
+
+
+def _ends(pen: Pen, paper: Box, left: float, right: float) -> None:
+    """Which end is which, lettered along them outside the paper."""
+    middle = (paper[1] + paper[3]) / 2
+    pen.text(left - 2.0, middle, "DATUM END", 2.5, anchor="middle", angle_deg=90)
+    pen.text(right + 4.5, middle, "FRONT END", 2.5, anchor="middle", angle_deg=90)
+
+
+def _heading(pen: Pen, arranged: Arranged, piece: Piece, laid: Development, from_y_mm: float) -> float:
+    """What this is and how to use it; returns where it ends."""
+    design, x = arranged.design, _LEFT_MM
+    if laid.radius_mm:
+        how = "Cut out, wrap round the boom, its TOP line on the scribed TOP line; the seam runs along the bottom."
+    elif laid.folds_mm:
+        how = "Cut out, fold on the dashed lines, wrap round the boom; the seam lies at the bottom right corner."
     else:
-        pen.circle("drill", x_mm, y_mm, hole.diameter_mm / 2)
-    pen.cross(x_mm, y_mm, hole.diameter_mm / 2 + _CROSS_MM)
-    pen.dot(x_mm, y_mm, _DOT_MM)
+        how = "Cut the strips apart; each lies on the face it names, its edges along the boom's edges."
+    paper = f", paper {design.shop.paper_thickness_mm:g} mm thick" if laid.flap_mm else ""
+    lines = [
+        f"Reckoned for {boom_size(design.boom)}{paper}. {arranged.ledger.status.capitalize()}.",
+        "Stations in mm from the datum face. LEFT and RIGHT are seen looking forward; arrows point forward.",
+        "Printed face outwards, DATUM END flush with the sawn rear end.",
+        how,
+        f"Scale 1:1. {ABOUT_BARS}",
+        shortened(design.title, 2.5, _LINE_MM),
+    ]
+    y = from_y_mm
+    for line in lines:
+        pen.text(x, y, shortened(line, 2.0, _LINE_MM), 2.0)
+        y += 3.6
+    name = f"{design.number} {design.revision}   {piece.name}   {format_mm(piece.end_mm - piece.start_mm)} mm"
+    pen.text(x, y + 0.6, shortened(name, 3.5, _LINE_MM), 3.5)
+    return y + 5.0

@@ -1,0 +1,42 @@
+"""Words that several sheets share: names of walls, what a hole is, how large a boom is."""
+
+from collections.abc import Sequence
+
+from fabgen.design.arranged import Hole, Wall
+from fabgen.design.design import Boom
+
+WALLS: dict[Wall, str] = {"+z": "TOP", "+y": "LEFT", "-y": "RIGHT", "-z": "BOTTOM"}
+"""Looking forward from the datum end."""
+
+ABOUT_BARS = "Print at 100 %; both bars must measure 100 mm."
+
+_PLAIN = {"rod", "bush"}
+_SIDES: dict[int, Wall] = {0: "+z", 90: "+y", 180: "-z", 270: "-y"}
+
+
+def wall_of(hole: Hole) -> str:
+    """Name of the wall a hole is in; on a round boom the side its axis points to."""
+    if hole.wall != "round":
+        return WALLS[hole.wall]
+    side = _SIDES.get(round(hole.angle_deg) % 360)
+    return WALLS[side] if side and abs(hole.angle_deg - round(hole.angle_deg)) < 1e-9 else f"{hole.angle_deg:g}°"
+
+
+def drill_words(hole: Hole) -> str:
+    """The drill, and what the hole is for unless a rod goes through it."""
+    return f"drill {hole.drill}" if hole.purpose in _PLAIN else f"drill {hole.drill}  {hole.purpose}"
+
+
+def boom_size(boom: Boom) -> str:
+    """Section and size: `square tube 20 × 20 × 1.5, corner radius 1`."""
+    size = f"⌀{boom.width_mm:g}" if boom.section == "round" else f"{boom.width_mm:g} × {boom.height_mm:g}"
+    kind = f"{boom.section} {'tube' if boom.hollow else 'bar'} {size}"
+    kind += f" × {boom.wall_mm:g}" if boom.hollow else ""
+    return f"{kind}, corner radius {boom.corner_radius_mm:g}" if boom.corner_radius_mm else kind
+
+
+def ids(names: Sequence[str], most: int = 6) -> str:
+    """Some element ids, the middle of a long list left out and counted."""
+    if len(names) <= most:
+        return ", ".join(names)
+    return f"{', '.join(names[: most - 2])} … {names[-1]} ({len(names)})"
