@@ -12,7 +12,7 @@ pytestmark = pytest.mark.house
 
 LENGTHS = {"mm", "mm2", "mm3", "mm4", "m", "wl", "wl2", "deg", "rad"}
 MASSES_AND_LOADS = {"g", "kg", "g_mm", "kg_m3", "n", "n_mm", "mpa", "gpa", "pa"}
-ELECTRICAL = {"hz", "khz", "mhz", "ohm", "siemens", "s_m", "db", "dbi", "v", "pf", "nh"}
+ELECTRICAL = {"hz", "khz", "mhz", "ohm", "siemens", "s_m", "db", "dbi", "v", "pf", "nh", "w", "w_m2"}
 OTHER = {"m_s", "c", "s", "percent"}
 UNITS = LENGTHS | MASSES_AND_LOADS | ELECTRICAL | OTHER
 # Names without a unit suffix, and why they need none.

@@ -1,0 +1,125 @@
+"""The build book: one HTML page that opens offline in any browser and prints on A4.
+
+Other stages hand over what they made; the book arranges it and adds words, which live in text files: `templates/`,
+the `.html` beside each section, and `words/`. A section is a file in `sections/` with the constant `PLACE`, its place
+in the book, and a function `content(book)` that returns what its template needs, or None where it has nothing to say.
+The template of the same name sets `title`. `SHOWS_LENGTHS` marks a section with lengths that may rest on theory,
+`NEW_PAGE` one that is taken to the bench by itself.
+"""
+
+import importlib
+from collections.abc import Mapping, Sequence
+from dataclasses import dataclass
+from pathlib import Path
+from typing import Any
+
+import jinja2
+from markupsafe import Markup
+
+from fabgen import registry
+from fabgen.book import wording
+from fabgen.book.figures import Figure
+from fabgen.design.arranged import Arranged, CutPlan
+from fabgen.design.findings import Finding, clear
+
+Content = Mapping[str, Any]
+SECTIONS = "book/sections"
+THEORY = "theory, unmeasured"
+_HERE = Path(__file__).parent
+
+
+@dataclass(frozen=True, slots=True)
+class Book:
+    """What a section can write from.
+
+    Attributes:
+        arranged: the arranged design.
+        findings: its judgements, worst first.
+        cut_plan: which piece is sawn from which bar.
+        views: the array as a whole, as drawn.
+        pictures: the printed parts, keyed by the size name of the parts list.
+        stamped: the design is not clear and every page says so.
+    """
+
+    arranged: Arranged
+    findings: tuple[Finding, ...]
+    cut_plan: CutPlan
+    views: tuple[Figure, ...] = ()
+    pictures: tuple[Figure, ...] = ()
+    stamped: bool = False
+
+    @property
+    def verdict(self) -> str:
+        """`clear` or `not clear`."""
+        return "clear" if clear(self.findings) else "not clear"
+
+    @property
+    def computed(self) -> bool:
+        """Whether any length rests on a computed allowance that nobody measured."""
+        return any(line.allowance.origin == "computed" for line in self.arranged.ledger.lines)
+
+    @property
+    def status(self) -> str:
+        """The ledger's status line; a computed allowance is called theory."""
+        return self.arranged.ledger.status + (f" – {THEORY}" if self.computed else "")
+
+
+@dataclass(frozen=True, slots=True)
+class Section:
+    """One section, written.
+
+    Attributes:
+        name: its file's stem, the anchor on the page.
+        title: its heading.
+        body: its HTML.
+        theory: it shows lengths that rest on a computed allowance.
+        new_page: it begins on a page of its own, to be taken to the bench.
+    """
+
+    name: str
+    title: str
+    body: Markup
+    theory: bool
+    new_page: bool
+
+
+def book_html(book: Book) -> bytes:
+    """The book of a design.
+
+    Args:
+        book: everything it is written from.
+
+    Returns:
+        One HTML document in UTF-8: styles and drawings inside it, no script, no address outside itself.
+    """
+    environment = _environment()
+    page = environment.get_template("page.html")
+    return page.render(book=book, sections=sections(book, environment)).encode("utf-8") + b"\n"
+
+
+def sections(book: Book, environment: jinja2.Environment | None = None) -> tuple[Section, ...]:
+    """Every section of `sections/` that has something to say, in the order of their places."""
+    environment = environment or _environment()
+    modules = [(entry.name, importlib.import_module(entry.module)) for entry in registry.entries(SECTIONS)]
+    written = []
+    for name, module in sorted(modules, key=lambda named: (named[1].PLACE, named[0])):
+        content = module.content(book)
+        if content is not None:
+            made = environment.get_template(f"{name}.html").make_module({**content, "book": book})
+            theory, new_page = book.computed and hasattr(module, "SHOWS_LENGTHS"), hasattr(module, "NEW_PAGE")
+            body = Markup(str(made))  # noqa: S704 # the template escaped it
+            written.append(Section(name, str(vars(made)["title"]), body, theory, new_page))
+    return tuple(written)
+
+
+def _environment() -> jinja2.Environment:
+    folders: Sequence[Path] = (_HERE / "templates", _HERE / "sections")
+    environment = jinja2.Environment(
+        loader=jinja2.FileSystemLoader(folders),
+        autoescape=True,
+        undefined=jinja2.StrictUndefined,
+        trim_blocks=True,
+        lstrip_blocks=True,
+    )
+    environment.filters.update(wording.FILTERS)
+    return environment

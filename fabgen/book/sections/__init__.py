@@ -1,0 +1,1 @@
+"""The sections of the book: one file each, found by listing this folder."""
