@@ -9,7 +9,7 @@ from collections import defaultdict
 from collections.abc import Iterable, Iterator, Sequence
 from typing import NamedTuple
 
-from fabgen.design.drawing import Anchor, Box, Circle, Fill, Item, Line, Text
+from fabgen.design.drawing import Anchor, Box, Circle, Fill, Item, Line, Point, Text
 from fabgen.design.lettering import text_box, text_width_mm
 from fabgen.design.overlaps import bounds
 from fabgen.design.pen import Pen
@@ -33,6 +33,7 @@ class Spot(NamedTuple):
         x_mm, y_mm: its centre.
         radius_mm: its radius.
         low_mm, high_mm: lower and upper edge of its wall, which its lettering does not leave.
+        left_mm, right_mm: ends of its wall.
     """
 
     x_mm: float
@@ -40,6 +41,8 @@ class Spot(NamedTuple):
     radius_mm: float
     low_mm: float
     high_mm: float
+    left_mm: float
+    right_mm: float
 
 
 class Drawn:
@@ -156,12 +159,14 @@ def _fits(drawn: Drawn, spot: Spot, block: list[Text]) -> bool:
     boxes = [text_box(text) for text in block]
     if any(box[1] < spot.low_mm or box[3] > spot.high_mm for box in boxes):
         return False
+    if any(box[0] < spot.left_mm or box[2] > spot.right_mm for box in boxes):
+        return False
     return all(drawn.is_free(_grown(box)) for box in boxes)
 
 
-def free_place(drawn: Drawn, width_mm: float, height_mm: float, wanted: Iterable[tuple[float, float]]) -> Box | None:
+def free_place(drawn: Drawn, width_mm: float, height_mm: float, wanted_mm: Iterable[Point]) -> Box | None:
     """The first of some places (lower left corners) at which a box of that size covers nothing; None without one."""
-    for x, y in wanted:
+    for x, y in wanted_mm:
         box = (x, y, x + width_mm, y + height_mm)
         if drawn.is_free(_grown(box)):
             return box

@@ -43,7 +43,7 @@ def _template(arranged: Arranged, piece: Piece) -> Sheet:
         _hole(pen, laid, hole, shift, base)
     _stations(pen, piece, paper)
     drawn = Drawn(pen.items)
-    crowded = [hole for hole in holes if not _lettered(pen, drawn, _spot(laid, hole, shift, base), hole)]
+    crowded = [hole for hole in holes if not _lettered(pen, drawn, _spot(laid, hole, shift, base, paper), hole)]
     _wall_names(pen, drawn, laid, paper, base)
     head_mm = _crowded(pen, crowded, shift, paper[3] + 8.0)
     _ends(pen, paper, left, right)
@@ -103,11 +103,12 @@ def _stations(pen: Pen, piece: Piece, paper: Box) -> None:
             pen.text(x, high + _TICK_MM + 0.8, label, 2.0, anchor="middle", layer="dim")
 
 
-def _spot(laid: Development, hole: Hole, shift: float, base: float) -> Spot:
+def _spot(laid: Development, hole: Hole, shift: float, base: float, paper: Box) -> Spot:
     centre = laid.centre_mm(hole)
     face = min(laid.faces, key=lambda face: max(face.low_mm - centre, centre - face.high_mm))
     high_mm = face.high_mm + (laid.flap_mm if centre == laid.high_mm else 0.0)
-    return Spot(shift + hole.station_mm, base + centre, hole.diameter_mm / 2, base + face.low_mm, base + high_mm)
+    x_mm, radius_mm = shift + hole.station_mm, hole.diameter_mm / 2
+    return Spot(x_mm, base + centre, radius_mm, base + face.low_mm, base + high_mm, paper[0], paper[2])
 
 
 def _lettered(pen: Pen, drawn: Drawn, spot: Spot, hole: Hole) -> bool:
