@@ -1,5 +1,6 @@
 """Hole rows: which walls a hole opens, with which drill, and how far its station may be off."""
 
+import functools
 from dataclasses import dataclass
 
 from fabgen.design.arranged import Hole, Wall
@@ -47,7 +48,7 @@ def hole_rows(design: Design, openings: list[Opening]) -> tuple[Hole, ...]:
             diameter_mm=opening.diameter_mm,
             pilot_mm=pilot_mm(opening.diameter_mm),
             tolerance_mm=shop_tolerance_mm(design.shop, opening.station_mm),
-            drill=drill_name(design, opening.diameter_mm),
+            drill=drill_name(opening.diameter_mm, design.shop.drills),
             purpose=opening.purpose,
         )
         for count, opening in enumerate(ordered, start=1)
@@ -62,6 +63,7 @@ def pilot_mm(diameter_mm: float) -> float:
     return 2.0 if diameter_mm <= 5.0 else 2.5
 
 
-def drill_name(design: Design, diameter_mm: float) -> str:
-    """The drill of the shop's series nearest to a hole's diameter."""
-    return tables.nearest_drill(diameter_mm, design.shop.drills).name
+@functools.cache
+def drill_name(diameter_mm: float, series: tables.DrillSeries) -> str:
+    """The drill of a series nearest to a hole's diameter."""
+    return tables.nearest_drill(diameter_mm, series).name

@@ -70,9 +70,12 @@ class Frame:
 
     def point(self, local: Vector) -> Vector:
         """A local point in the array's frame."""
-        axes = (self.x, self.y, self.z)
-        x, y, z = (self.origin[i] + sum(local[k] * axes[k][i] for k in range(3)) for i in range(3))
-        return (x, y, z)
+        (a, b, c), (u, v, w), o = local, (self.x, self.y, self.z), self.origin
+        return (
+            o[0] + a * u[0] + b * v[0] + c * w[0],
+            o[1] + a * u[1] + b * v[1] + c * w[1],
+            o[2] + a * u[2] + b * v[2] + c * w[2],
+        )
 
 
 @dataclass(frozen=True, slots=True)
@@ -97,10 +100,11 @@ class Cylinder:
     def box(self) -> Box:
         """The smallest box round it."""
         radius, half = self.diameter_mm / 2, self.length_mm / 2
-        reach = tuple(half if axis == self.axis else radius for axis in "xyz")
-        low = tuple(c - r for c, r in zip(self.centre, reach, strict=True))
-        high = tuple(c + r for c, r in zip(self.centre, reach, strict=True))
-        return Box((low[0], low[1], low[2]), (high[0], high[1], high[2]))
+        x, y, z = self.centre
+        a = half if self.axis == "x" else radius
+        b = half if self.axis == "y" else radius
+        c = half if self.axis == "z" else radius
+        return Box((x - a, y - b, z - c), (x + a, y + b, z + c))
 
 
 Shape = Box | Cylinder

@@ -67,7 +67,9 @@ def _box_and_cylinder(box: Box, cylinder: Cylinder) -> float:
     near = math.hypot(*(max(0.0, box.low[i] - centre[i], centre[i] - box.high[i]) for i in across))
     far = math.hypot(*(max(abs(box.low[i] - centre[i]), abs(box.high[i] - centre[i])) for i in across))
     radial = max(0.0, near - radius, bore - far)
-    return math.hypot(radial, _gap(box, cylinder.box, along))
+    half = cylinder.length_mm / 2
+    apart = max(0.0, box.low[along] - centre[along] - half, centre[along] - half - box.high[along])
+    return math.hypot(radial, apart)
 
 
 def _cylinders(first: Cylinder, second: Cylinder) -> float:
@@ -81,4 +83,5 @@ def _cylinders(first: Cylinder, second: Cylinder) -> float:
     radii = (first.diameter_mm / 2, second.diameter_mm / 2)
     inside = (first.bore_mm / 2 - centres - radii[1], second.bore_mm / 2 - centres - radii[0])
     radial = max(0.0, centres - sum(radii), *inside)
-    return math.hypot(radial, _gap(first.box, second.box, along))
+    apart = abs(first.centre[along] - second.centre[along]) - (first.length_mm + second.length_mm) / 2
+    return math.hypot(radial, max(0.0, apart))

@@ -4,8 +4,8 @@ from collections.abc import Iterator
 
 from fabgen.check.finding import finding
 from fabgen.check.pairs import near_pairs
-from fabgen.design.arranged import Arranged, Placed
-from fabgen.design.distances import box_of, parts_distance_mm, point_distance_mm
+from fabgen.design.arranged import Arranged, Box, Placed, Vector
+from fabgen.design.distances import bounding_box, box_of, parts_distance_mm, point_distance_mm
 from fabgen.design.findings import Finding
 
 _MAST_MM = 5.0
@@ -38,15 +38,16 @@ def _mast(arranged: Arranged) -> Iterator[Finding]:
 def _tips(arranged: Arranged) -> Iterator[Finding]:
     """Metal of the clamp, the mast and the feeds near the tip of another element's rod."""
     limit_mm = arranged.design.tip_clearance_mm
-    bodies = [(p.name, p.owner, p.shapes) for p in arranged.placed if p.metal and p.part not in ("rod", "boom")]
+    metals = [(p.name, p.owner, p.shapes) for p in arranged.placed if p.metal and p.part not in ("rod", "boom")]
     if arranged.mast is not None:
-        bodies.append(("mast", "clamp", (arranged.mast,)))
+        metals.append(("mast", "clamp", (arranged.mast,)))
+    bodies = [(name, owner, shapes, bounding_box(shapes)) for name, owner, shapes in metals]
     for rod in arranged.placed:
         if rod.part != "rod":
             continue
         for tip in _outer_tips(rod):
-            for name, owner, shapes in bodies:
-                if owner == rod.owner:
+            for name, owner, shapes, box in bodies:
+                if owner == rod.owner or not _near(tip, box, limit_mm):
                     continue
                 distance_mm = min(point_distance_mm(tip, shape) for shape in shapes)
                 if distance_mm < limit_mm - 1e-9:
@@ -55,6 +56,10 @@ def _tips(arranged: Arranged) -> Iterator[Finding]:
                         "keep metal away from rod tips: the voltage is highest there",
                     )
                     yield finding("C12", "fail", where, advice, measured=distance_mm, required=limit_mm, unit="mm")
+
+
+def _near(point: Vector, box: Box, reach_mm: float) -> bool:
+    return all(box.low[i] - reach_mm < point[i] < box.high[i] + reach_mm for i in range(3))
 
 
 def _outer_tips(rod: Placed) -> list[tuple[float, float, float]]:
