@@ -54,7 +54,7 @@ def versions() -> dict[str, str]:
     """Program and libraries that shape the bytes of a package."""
     import importlib.metadata
 
-    names = ("cadquery", "ezdxf", "numpy", "svgwrite", "trimesh", "typst")
+    names = ("cadquery", "ezdxf", "jinja2", "numpy", "svgwrite", "trimesh", "typst")
     return {"fabgen": __version__} | {name: importlib.metadata.version(name) for name in names}
 
 
@@ -120,4 +120,30 @@ def _model(order: Order) -> Files:
     )
 
 
-_WRITERS: dict[str, Callable[[Order], Files]] = {"tables": _tables, "templates": _templates, "model": _model}
+def _book(order: Order) -> Files:
+    from fabgen.book.book import Book, book_html
+    from fabgen.book.figures import figure
+    from fabgen.export.svg import svg
+    from fabgen.model.assembly import assembly
+    from fabgen.model.pictures import assembly_picture, part_picture
+    from fabgen.model.prints import prints
+
+    views = [assembly_picture(assembly(order.arranged), name=order.arranged.design.name)]
+    pictures = [part_picture(each.product) for each in prints(order.arranged)]
+    book = Book(
+        order.arranged,
+        order.findings,
+        order.cut_plan,
+        views=tuple(figure(sheet, svg(sheet)) for sheet in views),
+        pictures=tuple(figure(sheet, svg(sheet)) for sheet in pictures),
+        stamped=order.stamped,
+    )
+    return (PackageFile("book.html", book_html(book), "the build book: opens offline in any browser"),)
+
+
+_WRITERS: dict[str, Callable[[Order], Files]] = {
+    "tables": _tables,
+    "templates": _templates,
+    "model": _model,
+    "book": _book,
+}

@@ -5,6 +5,8 @@ from dataclasses import dataclass
 
 from markupsafe import Markup
 
+from fabgen.design.drawing import Sheet
+
 _PROLOGUE = re.compile(r"\A\s*(?:<\?xml[^>]*\?>\s*)?(?:<!DOCTYPE[^>]*>\s*)?")
 _OPENING = re.compile(r"<svg\b[^>]*>")
 _SIZE = re.compile(r'\s(?:width|height|baseProfile|version|xmlns:(?:ev|xlink))="[^"]*"')
@@ -41,3 +43,13 @@ class Figure:
         body = _OPENING.sub(lambda found: _SIZE.sub("", found[0]), body, count=1)
         sized = body.replace("<svg", f'<svg role="img" style="width:{self.width_mm:g}mm"', 1)
         return Markup(_ID.sub("", sized))  # noqa: S704 # the program's own writer escapes text
+
+
+def figure(sheet: Sheet, svg: bytes) -> Figure:
+    """A recorded sheet as a figure.
+
+    Args:
+        sheet: what was drawn; its title becomes the caption.
+        svg: the same sheet, written.
+    """
+    return Figure(sheet.name, sheet.title, svg.decode("utf-8"), sheet.width_mm, sheet.height_mm)

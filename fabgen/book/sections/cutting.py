@@ -9,7 +9,6 @@ from fabgen.units import format_mm
 
 PLACE = 60
 SHOWS_LENGTHS = True
-NEW_PAGE = True
 WIDTH_MM = 178.0
 HEIGHT_MM = 13.0
 LETTERS_MM, SMALL_MM = 2.0, 1.7

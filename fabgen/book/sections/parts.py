@@ -8,7 +8,6 @@ from fabgen.design.arranged import Placed, Source
 
 PLACE = 80
 SHOWS_LENGTHS = True
-NEW_PAGE = True
 
 
 @dataclass(frozen=True, slots=True)
