@@ -8,20 +8,20 @@ from scipy.optimize import Bounds, LinearConstraint, milp
 _SECONDS = 20.0
 
 
-def fewest_bars(sizes: Sequence[float], room: float, known: list[list[int]]) -> tuple[list[list[int]], bool]:
+def fewest_bars(sizes_mm: Sequence[float], room_mm: float, known: list[list[int]]) -> tuple[list[list[int]], bool]:
     """Pack pieces into the fewest bars.
 
     The assignment form of bin packing (Martello & Toth, Knapsack Problems, 1990, ch. 8), solved by branch and cut.
 
     Args:
-        sizes: what each piece uses of a bar, kerf included.
-        room: what a bar offers, in the same unit.
+        sizes_mm: what each piece uses of a bar, kerf included.
+        room_mm: what a bar offers, in the same unit.
         known: a valid plan, as lists of indices.
 
     Returns:
         The plan with the fewest bars found, and whether none with fewer exists.
     """
-    count, bars = len(sizes), len(known) - 1
+    count, bars = len(sizes_mm), len(known) - 1
     pieces = count * bars
     cost = np.concatenate([np.zeros(pieces), np.ones(bars)])
     once = np.zeros((count, pieces + bars))
@@ -29,8 +29,8 @@ def fewest_bars(sizes: Sequence[float], room: float, known: list[list[int]]) -> 
     for bar in range(bars):
         for piece in range(count):
             once[piece, piece * bars + bar] = 1.0
-            fill[bar, piece * bars + bar] = sizes[piece]
-        fill[bar, pieces + bar] = -room
+            fill[bar, piece * bars + bar] = sizes_mm[piece]
+        fill[bar, pieces + bar] = -room_mm
     order = np.zeros((max(bars - 1, 0), pieces + bars))
     for bar in range(bars - 1):
         order[bar, pieces + bar], order[bar, pieces + bar + 1] = -1.0, 1.0

@@ -36,7 +36,7 @@ GROUPS = {
 }
 
 _TOOL_MM, _FREE_MM, _METAL_MM, _CLAMP_MM = 1.0, 0.2, 3.0, 5.0
-LIMITS: dict[frozenset[str], tuple[float | None, float | None]] = {
+LIMITS_MM: dict[frozenset[str], tuple[float | None, float | None]] = {
     frozenset({"boom"}): (None, None),
     frozenset({"boom", "rod"}): (1.0, None),
     frozenset({"boom", "insulator"}): (0.0, None),
@@ -121,7 +121,7 @@ def _limit_mm(first: Placed, second: Placed) -> float:
     except KeyError as error:
         raise ProgramError(f"part {error} belongs to no group of check/pairs.py") from error
     together = first.owner == second.owner or "boom" in (first.owner, second.owner)
-    limit_mm = LIMITS.get(groups, (None, None))[0 if together else 1]
+    limit_mm = LIMITS_MM.get(groups, (None, None))[0 if together else 1]
     if limit_mm is None:
         raise ProgramError(f"{first.name} and {second.name} stand near each other and nobody declared that pair")
     return limit_mm

@@ -5,7 +5,7 @@ from pathlib import Path
 import click
 
 from fabgen.cli import report
-from fabgen.cli.check import DESIGNS
+from fabgen.cli.commands.check import DESIGNS
 from fabgen.contents import GROUPS
 from fabgen.errors import FabgenError, InputError
 from fabgen.pipeline import Judged
