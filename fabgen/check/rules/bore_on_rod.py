@@ -28,7 +28,8 @@ def _bore(element: Element) -> Iterator[Finding]:
     slides_mm = tables.print_practice("diametral_undersize_press_mm")
     usual_mm = tables.print_practice("bush_bore_clearance_mm" if mount and mount.bush else "saddle_bore_clearance_mm")
     fix = f"write bore: {element.rod.diameter_mm + usual_mm:g} mm, or leave it out"
-    worst = f"prints are good to ±{printed_accuracy_mm():g} mm (common practice): try the fit gauge first"
+    off_mm = printed_accuracy_mm()
+    worst = f"as printed {play_mm - off_mm:.2f} to {play_mm + off_mm:.2f} mm until the fit gauge says better"
     if play_mm <= 0:
         yield finding("F02", "fail", element.id, fix, measured=play_mm, required=0.0, unit="mm")
     elif play_mm < slides_mm - 1e-9:

@@ -44,7 +44,7 @@ def _opposite(arranged: Arranged, screw: Placed, tip_mm: float) -> Iterator[Find
     room_mm = tip_mm + boom.top_mm - boom.wall_mm
     if missed := too_small(room_mm, fail_mm=0.0, warn_mm=BEFORE_WALL_MM):
         severity, limit_mm = missed
-        advice = f"the tip of {screw.name} meets the opposite wall; use a shorter screw or washers under its head"
+        advice = "a screw into the top meets the opposite wall; use a higher boom, a shorter screw or washers"
         yield finding("F11", severity, screw.owner, advice, measured=room_mm, required=limit_mm, unit="mm")
 
 

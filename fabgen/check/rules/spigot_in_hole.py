@@ -4,7 +4,7 @@ import math
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding
-from fabgen.check.tolerances import drilled_over_mm
+from fabgen.check.tolerances import drilled_over_mm, printed_accuracy_mm
 from fabgen.design.arranged import Arranged
 from fabgen.design.design import Boom, Bush, Element
 from fabgen.design.findings import Finding
@@ -28,15 +28,19 @@ def _play(element: Element, bush: Bush, hole_mm: float) -> Iterator[Finding]:
     """A drilled hole never comes out smaller than its drill, so the drawn play is the tightest."""
     play_mm = hole_mm - bush.spigot_mm
     slides_mm = tables.print_practice("diametral_undersize_press_mm")
-    loose_mm = play_mm + drilled_over_mm(hole_mm)
+    off_mm = printed_accuracy_mm()
+    worst = (
+        f"as printed and drilled {play_mm - off_mm:.2f} to {play_mm + off_mm + drilled_over_mm(hole_mm):.2f} mm "
+        "until the fit gauge says better"
+    )
     fix = f"write spigot: {hole_mm - tables.print_practice('spigot_clearance_mm'):g} mm, or leave it out"
     if play_mm <= 0:
         yield finding("F03", "fail", element.id, fix, measured=play_mm, required=0.0, unit="mm")
     elif play_mm < slides_mm - 1e-9:
-        advice = f"a press fit that splits a print along its layers; {fix}"
+        advice = f"a press fit that splits a print along its layers; {fix}; {worst}"
         yield finding("F03", "warn", element.id, advice, measured=play_mm, required=slides_mm, unit="mm")
     elif play_mm > LOOSEST_MM:
-        advice = f"the bush stands askew, up to {loose_mm:.3f} mm in a hole drilled too large (IT12); {fix}"
+        advice = f"the bush stands askew; {fix}; {worst}"
         yield finding("F03", "warn", element.id, advice, measured=play_mm, required=LOOSEST_MM, unit="mm")
 
 

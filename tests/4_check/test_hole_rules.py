@@ -1,0 +1,130 @@
+"""H: holes against ends, each other, walls, drills and what stands on them."""
+
+import pytest
+
+
+def test_a_hole_near_the_end(found, advice):
+    """EN 1993-1-8 Table 3.3 (secondary source): 1.2 d, of 8 mm 9.6; shop rule 2 d: 16.
+
+    D2 stands 10 mm from the front end at station 387: ±0.5 on it and ±0.3 on a boom of 397 mm (ISO 2768-1 m: 0.5 each
+    up to 400).
+    """
+    assert found("hole_to_end") == []
+    assert found("hole_to_end", {"boom.overhang.front": 10}) == [("H01", "fail", "D2", 10 - 0.5 - 0.5, 9.6)]
+    assert "10.000 mm on the drawing" in advice("hole_to_end", {"boom.overhang.front": 10})
+    assert found("hole_to_end", {"boom.overhang.front": 16}) == [("H01", "warn", "D2", 16 - 0.5 - 0.8, 16)]
+    assert found("hole_to_end", {"boom.overhang.front": 17.3}) == []
+    assert found("hole_to_end", {"boom.overhang.rear": 9.7}) == [("H01", "fail", "R", 9.7 - 0.2, 9.6)]
+    assert found("hole_to_end", {"boom.overhang.rear": 16.2}) == []
+
+
+def test_a_hole_past_the_end(found):
+    assert found("hole_to_end", {"boom.overhang.front": 3}) == [("H08", "fail", "D2", 3, 4)]
+    assert found("hole_to_end", {"boom.overhang.front": 4})[0][0] == "H01"
+
+
+def test_holes_near_each_other(found):
+    """EN 1993-1-8 Table 3.3 (secondary source): 2.2 d, of 8 mm 17.6; ±0.2 on 6 to 30 mm (ISO 2768-1 m)."""
+    assert found("hole_to_hole") == []
+    assert found("hole_to_hole", {"elements.D2.at": 207}) == [("H02", "fail", "D1 to D2", 17 - 0.2, 17.6)]
+    assert found("hole_to_hole", {"elements.D2.at": 207.8}) == [("H02", "warn", "D1 to D2", 17.6, 24)]
+    assert found("hole_to_hole", {"elements.D2.at": 214.2}) == []
+
+
+def test_round_booms_are_measured_along_the_surface(found, on_top):
+    """A quarter turn from D1's hole of 8 mm to D2's tapped hole of 2.5 on the crown, at one station.
+
+    π/4 × 20 = 15.708 less 0.2 is under 3 × 5.25 = 15.75, π/4 × 22 is not.
+    """
+    changes = {"mounts.above": on_top, "elements.D2.mount": "above", "elements.D1.mount": "line"}
+    changes |= {"boom.section": "round", "boom.corner_radius": None, "elements.R.mount": "line"}
+    changes |= {"elements.D2.at": 199.29, "boom.outside": 20, "clamp": None}
+    ((code, severity, where, measured, required),) = found("hole_to_hole", changes)
+    assert (code, severity, required) == ("H02", "warn", 15.75)
+    assert "saddle screw" in where
+    assert measured == pytest.approx(15.508, abs=0.005)
+    assert found("hole_to_hole", changes | {"boom.outside": 22}) == []
+
+
+def test_unequal_holes_count_by_their_mean(found, on_top):
+    """Two saddles 20 mm apart: screw of one 2 mm from the screw of the other, both 2.5 mm."""
+    changes = {"mounts.line": on_top, "elements.D2.at": 210, "clamp": None}
+    ((code, severity, _, _, required),) = found("hole_to_hole", changes)
+    assert (code, severity, required) == ("H02", "fail", 2.2 * 2.5)
+
+
+@pytest.mark.parametrize(
+    ("outside_mm", "expected"),
+    [
+        # flat beside the hole: half the side, less the wall or the corner's radius, less half the hole
+        (10, [("H04", "fail", "R, D1, D2", -0.5, 0)]),
+        (12, [("H03", "fail", "R, D1, D2", 0.5 - 0.1, 1.5)]),
+        (15, [("H03", "warn", "R, D1, D2", 7.5 - 0.2, 9.6)]),
+        (20, []),
+    ],
+)
+def test_wall_beside_a_hole(found, outside_mm, expected):
+    """EN 1993-1-8 Table 3.3 (secondary source): 1.2 d, of 8 mm 9.6."""
+    assert found("hole_in_wall", {"boom.outside": outside_mm, "clamp": None}) == expected
+
+
+def test_the_net_section_is_told(advice):
+    """15 x 15 x 1.5, corners 1 mm, 8 mm through both side walls: 24 of 80.1 mm² and 1098 of 2445 mm⁴ are gone."""
+    text = advice("hole_in_wall", {"boom.outside": 15, "clamp": None})
+    assert "keeps 70% of the metal and at least 55% of the bending strength" in text
+
+
+def test_wall_beside_a_hole_in_a_round_tube(found):
+    """Tube 14 x 1.5: bore 11, so (11 − 8)/2 = 1.5 beside the hole, 1.3 at the worst."""
+    changes = {"boom.section": "round", "boom.corner_radius": None, "clamp": None}
+    assert found("hole_in_wall", changes | {"boom.outside": 14}) == [("H03", "fail", "R, D1, D2", 1.3, 1.5)]
+    assert found("hole_in_wall", changes | {"boom.outside": 20}) == []
+
+
+def test_a_large_corner_counts(found):
+    assert found("hole_in_wall", {"boom.corner_radius": 6.1, "clamp": None}) == [("H04", "fail", "R, D1, D2", -0.1, 0)]
+
+
+def test_a_solid_bar_has_no_wall_to_lose(found):
+    """An 8 mm hole leaves 1 mm beside it in a bar of 10 mm: below 1.2 d it warns."""
+    changes = {"boom.outside": 10, "boom.wall": None, "boom.corner_radius": 0, "clamp": None}
+    assert found("hole_in_wall", changes) == [("H03", "warn", "R, D1, D2", 4.9, 9.6)]
+
+
+def test_drills(found, advice):
+    """Metric drills grow by 0.25 mm above 14 mm (BS 328, secondary source); half of IT12 is 0.09 mm there."""
+    assert found("drill_sizes") == []
+    odd = {"boom.outside": 40, "mounts.line.hole": 14.1, "clamp": None}
+    assert found("drill_sizes", odd) == [("H05", "warn", "R, D1, D2", 14.1, 14)]
+    assert "14 mm" in advice("drill_sizes", odd)
+    assert found("drill_sizes", odd | {"mounts.line.hole": 14.08}) == []
+    large = {"boom.outside": 60, "mounts.line.hole": 30, "clamp": None}
+    assert found("drill_sizes", large) == [("H05", "warn", "R, D1, D2", 30, 25)]
+    assert "hole saw" in advice("drill_sizes", large)
+
+
+def test_inch_drills(found):
+    """5/16 in is 7.9375 mm and the letter O 8.026: near enough to 8; 7.5 mm lies between M 7.493 and 19/64 7.541."""
+    assert found("drill_sizes", {"shop.drills": "inch"}) == []
+
+
+def test_a_hole_under_the_clamp(found):
+    """The plate is wider than the hole of D1 at station 270, which lies under it whole: 8 mm."""
+    assert found("hole_under_part") == []
+    assert found("hole_under_part", {"clamp.at": 270}) == [("H06", "fail", "D1", 8, 0)]
+
+
+def test_a_hole_beside_the_clamp_only_weakens(found, on_top):
+    """Screws of a saddle stand in the top wall, the plate on the side."""
+    changes = {"mounts.line": on_top, "clamp.at": 270}
+    assert [(code, severity) for code, severity, *_ in found("hole_under_part", changes)] == [("H06", "warn")]
+
+
+def test_a_hole_under_a_foreign_block(found, made, on_top):
+    changes = {"mounts.line": on_top, "elements.D1.at": 150, "clamp": None}
+    screws = [hole for hole in made(changes).holes if hole.element in ("DE", "D1")]
+    reported = {where for code, _, where, *_ in found("hole_under_part", changes) for where in where.split(", ")}
+    assert reported
+    assert reported <= {f"{hole.element} {hole.purpose} {hole.number}" for hole in screws}
+    assert {code for code, *_ in found("hole_under_part", changes)} == {"H07"}
+    assert found("hole_under_part", {"mounts.line": on_top, "clamp": None}) == []
