@@ -144,6 +144,7 @@ def _book(order: Order) -> Files:
 _WRITERS: dict[str, Callable[[Order], Files]] = {
     "tables": _tables,
     "templates": _templates,
+    "bench": _bench,
     "model": _model,
     "book": _book,
 }

@@ -4,6 +4,7 @@ from collections.abc import Sequence
 
 from fabgen.design.arranged import Hole, Wall
 from fabgen.design.design import Boom
+from fabgen.design.ledger import Ledger
 
 WALLS: dict[Wall, str] = {"+z": "TOP", "+y": "LEFT", "-y": "RIGHT", "-z": "BOTTOM"}
 """Looking forward from the datum end."""
@@ -40,3 +41,10 @@ def ids(names: Sequence[str], most: int = 6) -> str:
     if len(names) <= most:
         return ", ".join(names)
     return f"{', '.join(names[: most - 2])} … {names[-1]} ({len(names)})"
+
+
+def allowance_words(ledger: Ledger) -> str:
+    """The status line, and what kind of knowledge that is."""
+    said = {"computed": "theory, unmeasured", "published": "published models, unmeasured"}
+    kind = said.get(ledger.status.rpartition(" ")[2])
+    return f"{ledger.status} ({kind})" if kind else ledger.status

@@ -11,7 +11,7 @@ from fabgen.design.pen import Pen, spread
 from fabgen.draw.clipping import clipped
 from fabgen.draw.development import Development, development
 from fabgen.draw.lettering_place import SMALLEST_MM, Drawn, Spot, free_place, letter_hole, mark_hole, usual_height_mm
-from fabgen.draw.words import ABOUT_BARS, WALLS, boom_size, drill_words, wall_of
+from fabgen.draw.words import ABOUT_BARS, WALLS, allowance_words, boom_size, drill_words, wall_of
 from fabgen.units import format_mm
 
 PLACE = "templates"
@@ -198,7 +198,7 @@ def _heading(pen: Pen, arranged: Arranged, piece: Piece, laid: Development, from
         how = "Cut the strips apart; each lies on the face it names, its edges along the boom's edges."
     paper = f", paper {design.shop.paper_thickness_mm:g} mm thick" if laid.flap_mm else ""
     lines = [
-        f"Reckoned for {boom_size(design.boom)}{paper}. {arranged.ledger.status.capitalize()}.",
+        f"Reckoned for {boom_size(design.boom)}{paper}; {allowance_words(arranged.ledger)}.",
         "Stations in mm from the datum face. LEFT and RIGHT are seen looking forward; arrows point forward.",
         "Printed face outwards, DATUM END flush with the sawn rear end.",
         how,
