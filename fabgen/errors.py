@@ -103,8 +103,6 @@ class DesignErrors(InputError):
 
 def _excerpt(text: str, offset: int, longest: int = 120) -> tuple[str, int]:
     """Cut a long line round the marked column; control characters become spaces."""
-    text = "".join(c if c.isprintable() else " " for c in text)
-    if len(text) <= longest:
-        return text, min(offset, len(text))
     start = max(0, min(offset - longest // 2, len(text) - longest))
-    return text[start : start + longest], offset - start
+    cut = "".join(c if c.isprintable() else " " for c in text[start : start + longest])
+    return cut, min(offset - start, len(cut))

@@ -11,6 +11,7 @@ from fabgen.errors import DesignErrors, InputError
 from fabgen.read.gather import aliases, required
 from fabgen.read.grammar import ElementKeys
 from fabgen.read.nearest import nearest, suggestion
+from fabgen.read.places import key_place
 from fabgen.read.source import Problems, Source, read_source
 from fabgen.read.yaml_tree import Map, Scalar, Seq
 
@@ -47,7 +48,7 @@ def insert_table(tree: Map, path: Path, shown: str, problems: Problems) -> bytes
     name = elements.get("table")
     if not isinstance(name, Scalar) or name.empty:
         if "table" in elements or not elements:
-            place = name.place if isinstance(name, Scalar) and name.width else key.place
+            place = key_place(elements, "table") if "table" in elements else key.place
             problems.add("D07", "`table` needs the name of a CSV file", place, "for example table: elements.csv")
         return b""
     source = _open(name, path, shown, problems)
@@ -130,7 +131,10 @@ def _header(source: Source, number: int, problems: Problems) -> list[Scalar]:
 
 
 def _row(source: Source, number: int, header: list[Scalar], problems: Problems) -> Map | None:
+    before = len(problems.found)
     cells = _cells(source, number, problems)
+    if len(problems.found) > before:
+        return None
     if len(cells) > len(header):
         place = source.place(number, cells[len(header)].column, cells[len(header)].width)
         message = f"this row has {len(cells)} cells, the header has {len(header)} columns"

@@ -54,7 +54,7 @@ def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
     """
     shown = shown_as if shown_as is not None else str(path)
     source = read_source(path, shown)
-    problems = Problems()
+    problems = Problems(shown)
     tree = parse(source, problems)
     table = insert_table(tree, path, shown, problems)
     context = Context(unit=_unit(tree))
@@ -62,7 +62,7 @@ def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
     for broken in context.broken:
         gather(broken, tree, problems)
     find_contradictions(keys, tree, problems)
-    problems.stop(shown)
+    problems.stop()
     reasons = Reasons()
     sha256 = hashlib.sha256(source.data + table).hexdigest()
     design = resolve(keys, path.stem, sha256, reasons)

@@ -4,6 +4,7 @@ Refused before anything is parsed: files over 1 MB, bytes that are not UTF-8, ch
 """
 
 import re
+from dataclasses import replace
 from pathlib import Path
 from typing import NamedTuple
 
@@ -11,6 +12,9 @@ from fabgen.errors import DesignErrors, InputError, MachineError, Place, Problem
 
 LARGEST_BYTES = 1_000_000
 """A design file of a thousand elements has about 100 kB."""
+
+MOST_PROBLEMS = 500
+"""A file with more problems than this is told the first of them and the number of the rest."""
 
 _UNPRINTABLE = re.compile(
     "[\x00-\x08\x0b\x0c\x0e-\x1f\x7f-\x9f\u200e\u200f\u2028-\u202e\u2066-\u2069\ufeff\ufffe\uffff]"
@@ -40,24 +44,40 @@ class Source(NamedTuple):
 
 
 class Problems:
-    """Every problem found so far."""
+    """Every problem found so far.
 
-    def __init__(self) -> None:
+    Args:
+        first_file: the design file's name; its problems are told before those of its table.
+    """
+
+    def __init__(self, first_file: str) -> None:
+        self.first_file = first_file
         self.found: list[Problem] = []
 
     def add(self, code: str, message: str, place: Place, fix: str = "") -> None:
-        """Note one problem."""
-        self.found.append(Problem(code, message, place, fix))
+        """Note one problem; a file that is nothing but problems is given up.
 
-    def stop(self, first_file: str) -> None:
+        Raises:
+            DesignErrors: there are far too many.
+        """
+        self.found.append(Problem(code, message, place, fix))
+        if len(self.found) >= 20 * MOST_PROBLEMS:
+            self.stop()
+
+    def stop(self) -> None:
         """Raise what was found, in file order; nothing happens when nothing was.
 
         Raises:
             DesignErrors: there is at least one problem.
         """
-        if self.found:
-            unique = dict.fromkeys(self.found)
-            raise DesignErrors(tuple(sorted(unique, key=lambda problem: _order(problem, first_file))))
+        if not self.found:
+            return
+        ordered = sorted(dict.fromkeys(self.found), key=lambda problem: _order(problem, self.first_file))
+        told = ordered[:MOST_PROBLEMS]
+        if len(ordered) > len(told):
+            last = told[-1]
+            told[-1] = replace(last, message=f"{last.message} (and {len(ordered) - len(told)} more problems below)")
+        raise DesignErrors(tuple(told))
 
 
 def _order(problem: Problem, first_file: str) -> tuple[bool, str, int, int, str, str]:
@@ -102,11 +122,11 @@ def as_source(data: bytes, shown_as: str) -> Source:
     Raises:
         DesignErrors: they are too many, not UTF-8, or hold characters that cannot be printed.
     """
-    problems = Problems()
+    problems = Problems(shown_as)
     if len(data) > LARGEST_BYTES:
         place = Place(shown_as, 1, 1)
         problems.add("D02", "the file is larger than 1 MB", place, "check that this is the right file")
-        problems.stop(shown_as)
+        problems.stop()
     text, bad_byte = _decode(data)
     source = Source(shown_as, data, text, tuple(_LINE_END.split(text)))
     if bad_byte is not None:
@@ -118,7 +138,7 @@ def as_source(data: bytes, shown_as: str) -> Source:
             name = f"U+{ord(match[0]):04X}"
             place = source.place(number, match.start() + 1)
             problems.add("D01", f"the character {name} cannot be printed", place, "delete it")
-    problems.stop(shown_as)
+    problems.stop()
     return source
 
 

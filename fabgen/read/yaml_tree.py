@@ -129,13 +129,13 @@ def parse(source: Source, problems: Problems) -> Map:
             builder.take(event)
     except yaml.MarkedYAMLError as error:
         _report_syntax(error, source, problems)
-        problems.stop(source.shown_as)
+        problems.stop()
     root = builder.root
     if not isinstance(root, Map):
         place = root.place if root is not None and not _is_empty(root) else source.place(1, 1)
         said = "is empty" if root is None or _is_empty(root) else "does not hold keys and values at its top level"
         problems.add("D08", f"the file {said}", place, "begin with: fabgen: 1")
-        problems.stop(source.shown_as)
+        problems.stop()
         raise AssertionError
     return root
 
@@ -180,7 +180,7 @@ class _Builder:
             if len(self.stack) > DEEPEST:
                 message = f"the file nests deeper than {DEEPEST} levels"
                 self.problems.add("D02", message, node.place, "a design needs five levels")
-                self.problems.stop(self.source.shown_as)
+                self.problems.stop()
         elif kind is yaml.MappingEndEvent or kind is yaml.SequenceEndEvent:
             self.stack.pop()
         elif kind is yaml.AliasEvent:
@@ -196,7 +196,7 @@ class _Builder:
                 place = self.source.place(mark.line + 1, mark.column + 1, 3)
                 message = "a second document begins here; a file holds one array"
                 self.problems.add("D04", message, place, "put the second array in a file of its own")
-                self.problems.stop(self.source.shown_as)
+                self.problems.stop()
 
     def _scalar(self, event: Any) -> Scalar:
         start, end = event.start_mark, event.end_mark
