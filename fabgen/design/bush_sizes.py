@@ -173,6 +173,9 @@ def _require_possible(size: BushSize) -> None:
         raise ValueError(
             f"a flange of {size.flange_mm:.3f} mm makes no shoulder on a spigot of {size.spigot_mm:.3f} mm"
         )
+    if 0 < size.boom_diameter_mm <= size.flange_mm:
+        raise ValueError(
+            f"a flange of {size.flange_mm:.3f} mm is wider than a round boom of {size.boom_diameter_mm:.3f} mm"
+        )
     if size.spigot_length_mm <= drop_mm(size.boom_diameter_mm, size.spigot_mm / 2) + size.lead_in_mm:
         raise ValueError(f"a spigot of {size.spigot_length_mm:.3f} mm does not reach into the round tube's hole")
-    drop_mm(size.boom_diameter_mm, size.flange_mm / 2)

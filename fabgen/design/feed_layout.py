@@ -16,6 +16,7 @@ from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, ENGAGEMENT_MM
 from fabgen.stock.fasteners import tap_drill_mm
 
 TERMINALS = ("M2", "M2.5", "M3", "M4", "M5")
+BESIDE_HOLE_MM = 0.35
 WALL_X_MM = 2.4
 WALL_Y_MM = 3.0
 RIM_MM = 1.2

@@ -115,7 +115,7 @@ def feed_block_size(
     """Sizes of a feed block; the terminal screw is the largest whose hole takes at most 0.6 of the rod.
 
     Raises:
-        ValueError: the rods lie too low for nut traps and hold-down screws.
+        ValueError: the rods lie too low for nut traps, hold-down screws and cable grip, or are too thin to drill.
     """
     size = FeedBlockSize(
         rod_diameter_mm=rod_diameter_mm,
@@ -126,7 +126,7 @@ def feed_block_size(
         boom_diameter_mm=boom_diameter_mm,
         bore_mm=rod_diameter_mm + print_practice("saddle_bore_clearance_mm") if bore_mm is None else bore_mm,
         screw=screw,
-        terminal=terminal_for(rod_diameter_mm) if terminal is None else terminal,
+        terminal=terminal_for(rod_diameter_mm, terminal),
         lid_screw=lid_screw,
         hole_growth_mm=hole_growth_mm,
     )
@@ -138,10 +138,21 @@ def feed_block_size(
     return size
 
 
-def terminal_for(rod_diameter_mm: float) -> str:
-    """The terminal thread for a rod: the largest whose hole takes at most 0.6 of it, M2 at least."""
-    fitting = [name for name in layout.TERMINALS if fastener(name).clearance_fine_mm <= 0.6 * rod_diameter_mm]
-    return fitting[-1] if fitting else layout.TERMINALS[0]
+def terminal_for(rod_diameter_mm: float, wanted: str | None = None) -> str:
+    """The terminal thread for a rod: the wanted one, else the largest whose hole takes at most 0.6 of the rod.
+
+    Raises:
+        ValueError: the rod is too thin to be drilled for it.
+    """
+    holes = {name: fastener(name).clearance_fine_mm for name in layout.TERMINALS}
+    fitting = [name for name, hole_mm in holes.items() if hole_mm <= 0.6 * rod_diameter_mm]
+    thread = wanted or (fitting[-1] if fitting else layout.TERMINALS[0])
+    hole_mm = fastener(thread).clearance_fine_mm
+    if rod_diameter_mm < hole_mm + 2 * layout.BESIDE_HOLE_MM:
+        raise ValueError(
+            f"a rod of {rod_diameter_mm:g} mm is too thin for a terminal screw {thread} in a hole of {hole_mm:g} mm"
+        )
+    return thread
 
 
 def least_height_mm(size: FeedBlockLayout) -> float:

@@ -335,7 +335,7 @@ def folded_saddle_size(
         boom_diameter_mm=boom_diameter_mm,
         bore_mm=rod_diameter_mm + play if bore_mm is None else bore_mm,
         screw=screw,
-        terminal=terminal_for(rod_diameter_mm) if terminal is None else terminal,
+        terminal=terminal_for(rod_diameter_mm, terminal),
         hole_growth_mm=hole_growth_mm,
     )
     least = size.ear_mm + FILLET_MM + size.tallest_mm / 2

@@ -182,6 +182,8 @@ def test_folded_rod_has_the_developed_length_of_its_centre_line():
         ("saddle_size", {"height_mm": 3.0}),
         ("saddle_size", {"width_mm": 5.0}),
         ("feed_block_size", {"height_mm": 6.0}),
+        ("feed_block_size", {"rod_diameter_mm": 2.0}),
+        ("folded_saddle_size", {"terminal": "M4"}),
         ("folded_saddle_size", {"height_mm": 8.0}),
         ("folded_saddle_size", {"spacing_mm": 8.0}),
         ("folded_rod_size", {"length_mm": 40.0}),
