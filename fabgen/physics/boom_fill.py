@@ -41,8 +41,8 @@ def impedance_matrix(mesh: Mesh) -> Complexes:
     area = triangle_areas(mesh)
     near = [_near_pairs(mesh, image) for image, _ in mesh.images]
     matrix = _quadrature_part(mesh, area, near)
-    matrix += _static_part(mesh, area, near)
-    matrix = 0.5 * (matrix + matrix.T)
+    matrix += 0.5 * _static_part(mesh, area, near)
+    matrix = matrix + matrix.T
     return 1j * WAVE_NUMBER * ETA_OHM / (4 * np.pi) * matrix
 
 
@@ -121,37 +121,41 @@ def _point_operators(mesh: Mesh, area: Floats) -> tuple[Floats, list[sparse.csr_
 
 
 def _quadrature_part(mesh: Mesh, area: Floats, near: list[sparse.csr_matrix]) -> Complexes:
+    """Half of the matrix without near static parts: adding its transpose makes it whole."""
     points, currents, charges = _point_operators(mesh, area)
     per_triangle = len(points) // len(area)
     result = np.zeros((mesh.count, mesh.count), dtype=np.complex128)
     for start in range(0, len(area), _BLOCK_TRIANGLES):
-        triangles = slice(start, min(start + _BLOCK_TRIANGLES, len(area)))
-        rows = slice(triangles.start * per_triangle, triangles.stop * per_triangle)
-        kernels = np.zeros((4, rows.stop - rows.start, len(points)), dtype=np.complex128)
+        field = slice(start, min(start + _BLOCK_TRIANGLES, len(area)))
+        rows = slice(field.start * per_triangle, field.stop * per_triangle)
+        onward = slice(rows.start, None)
+        kernels = np.zeros((4, rows.stop - rows.start, len(points) - rows.start), dtype=np.complex128)
         for (image, sign), pairs in zip(mesh.images, near, strict=True):
-            kernel = _kernel(points[rows], points * np.array(image), pairs[triangles].toarray(), per_triangle)
+            static = np.repeat(~pairs[field, field.start :].toarray(), per_triangle, axis=1)
+            source = points[onward] * np.array(image)
+            kernel = _kernel(points[rows], source, np.repeat(static, per_triangle, axis=0))
             for slot, factor in enumerate((*image, 1)):
                 if sign * factor > 0:
                     kernels[slot] += kernel
                 else:
                     kernels[slot] -= kernel
+        kernels[:, :, : rows.stop - rows.start] *= 0.5
         for axis in range(3):
-            result += currents[axis][rows].T @ (currents[axis].T @ kernels[axis].T).T
-        result -= charges[rows].T @ (charges.T @ kernels[3].T).T / WAVE_NUMBER**2
+            result += currents[axis][rows].T @ (currents[axis][onward].T @ kernels[axis].T).T
+        result -= charges[rows].T @ (charges[onward].T @ kernels[3].T).T / WAVE_NUMBER**2
     return result
 
 
-def _kernel(field: Floats, source: Floats, near: NDArray[np.bool_], per_triangle: int) -> Complexes:
-    """exp(-jkR)/R, without its static part between near triangles."""
-    r = np.zeros((len(field), len(source)))
+def _kernel(field: Floats, source: Floats, with_static: NDArray[np.bool_]) -> Complexes:
+    """exp(-jkR)/R, its static part only where asked for."""
+    r = np.zeros(with_static.shape)
     for axis in range(3):
         r += (field[:, None, axis] - source[None, :, axis]) ** 2
     np.sqrt(r, out=r)
     np.maximum(r, 1e-12, out=r)
     half_sine, half_cosine = np.sin(0.5 * WAVE_NUMBER * r), np.cos(0.5 * WAVE_NUMBER * r)
-    far = np.repeat(np.repeat(~near, per_triangle, axis=0), per_triangle, axis=1)
     kernel = np.empty(r.shape, dtype=np.complex128)
-    kernel.real = (far - 2 * half_sine**2) / r
+    kernel.real = (with_static - 2 * half_sine**2) / r
     kernel.imag = -2 * half_sine * half_cosine / r
     return kernel
 

@@ -55,7 +55,7 @@ class Fineness:
 
 DEFAULT = Fineness()
 FINE = Fineness(
-    up=6, along=4, over=6, on_top_segments=5, growth=1.4, rod_step_wl=0.025, boom_step_wl=0.03, near_step=0.7
+    up=5, along=4, over=5, on_top_segments=5, growth=1.4, rod_step_wl=0.025, boom_step_wl=0.03, near_step=0.7
 )
 
 

@@ -80,16 +80,13 @@ def range_misses(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) -
         frequency_mhz: design frequency.
 
     Returns:
-        Every limit missed; empty inside the range: boom .005 to .055 wavelengths (square bonded to .045, where
-        its fit ends), rod diameter .0015 to .0085, boom at least 1.25 rod diameters, rod length .39 to .495, hole
+        Every limit missed; empty inside the range: boom .005 to .055 wavelengths, rod diameter .0015 to .0085, boom at least 1.25 rod diameters, rod length .39 to .495, hole
         at most 0.85 of the bore, on top a gap of at least .02 diameters and a height of at most 2.5 boom widths
         and .11 wavelengths.
     """
     wl_mm = wavelength_mm(frequency_mhz)
-    square_bonded = mount.section is Section.SQUARE and mount.style is Style.BONDED_THROUGH
-    largest_wl = 0.045 if square_bonded else 0.055
     sizes = (
-        (mount.outside_mm / wl_mm, 0.005, largest_wl, Reason.BOOM_TOO_SMALL, Reason.BOOM_TOO_LARGE),
+        (mount.outside_mm / wl_mm, 0.005, 0.055, Reason.BOOM_TOO_SMALL, Reason.BOOM_TOO_LARGE),
         (mount.rod_diameter_mm / wl_mm, 0.0015, 0.0085, Reason.ROD_TOO_THIN, Reason.ROD_TOO_THICK),
         (rod_length_mm / wl_mm, 0.39, 0.495, Reason.ROD_TOO_SHORT, Reason.ROD_TOO_LONG),
     )

@@ -204,7 +204,11 @@ def _first_guess_wl(mount: BoomMount, rod_length_mm: float, frequency_mhz: float
 
 
 def solve_at(
-    mount: BoomMount, rod_length_mm: float, frequency_mhz: float, fineness: Fineness = DEFAULT
+    mount: BoomMount,
+    rod_length_mm: float,
+    frequency_mhz: float,
+    fineness: Fineness = DEFAULT,
+    guess_mm: float | None = None,
 ) -> tuple[float, int]:
     """Allowance of one rod at one mesh size.
 
@@ -213,6 +217,7 @@ def solve_at(
         rod_length_mm: modelled (free) rod length L0.
         frequency_mhz: design frequency.
         fineness: mesh fineness.
+        guess_mm: allowance to start from; left out: the nearest closed form's.
 
     Returns:
         Allowance in mm and the number of unknowns of the boom mesh.
@@ -225,7 +230,8 @@ def solve_at(
         raise ValueError("; ".join(miss.reason.value for miss in misses))
     wl_mm = wavelength_mm(frequency_mhz)
     wanted, diameter = rod_length_mm / wl_mm, mount.rod_diameter_mm / wl_mm
-    mounted = wanted + _first_guess_wl(mount, rod_length_mm, frequency_mhz)
+    guess_wl = _first_guess_wl(mount, rod_length_mm, frequency_mhz) if guess_mm is None else guess_mm / wl_mm
+    mounted = wanted + guess_wl
     segments = rod_segments(mount.style, fineness)
     for _ in range(_MOST_ROUNDS):
         mode = half_wave_mode(mounted_rod_mesh(mount, wl_mm, mounted, fineness))
@@ -264,7 +270,7 @@ def solve_allowance(
     tell("coarser mesh", 0.0)
     coarse_mm, few = solve_at(mount, rod_length_mm, frequency_mhz, meshes[0])
     tell("finer mesh", 0.2)
-    fine_mm, many = solve_at(mount, rod_length_mm, frequency_mhz, meshes[1])
+    fine_mm, many = solve_at(mount, rod_length_mm, frequency_mhz, meshes[1], coarse_mm)
     tell("solved", 1.0)
     factor = reactance_factor_from_allowance(
         fine_mm,

@@ -166,7 +166,7 @@ def test_bush_term(mhz: float, mount: BoomMount, low_mm: float, high_mm: float) 
 LIMITS = [
     (bonded(4.9, 2), 450, Reason.BOOM_TOO_SMALL),
     (bonded(55.1, 4), 450, Reason.BOOM_TOO_LARGE),
-    (bonded(45.1, 4, Section.SQUARE), 450, Reason.BOOM_TOO_LARGE),
+    (bonded(55.1, 4, Section.SQUARE), 450, Reason.BOOM_TOO_LARGE),
     (bonded(20, 1.49), 450, Reason.ROD_TOO_THIN),
     (bonded(20, 8.6), 450, Reason.ROD_TOO_THICK),
     (bonded(9.9, 8), 450, Reason.BOOM_TO_ROD),
@@ -201,7 +201,7 @@ def test_outside_the_range_there_is_no_number(mount: BoomMount, length_mm: float
     [
         (bonded(5, 2), 450),
         (bonded(55, 4), 450),
-        (bonded(45, 4, Section.SQUARE), 450),
+        (bonded(55, 4, Section.SQUARE), 450),
         (bonded(20, 1.5), 450),
         (bonded(20, 8.5), 450),
         (bonded(10, 8), 450),
