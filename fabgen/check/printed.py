@@ -6,25 +6,22 @@ from collections.abc import Callable, Iterator
 from dataclasses import dataclass
 from typing import Any
 
-from fabgen.design import part_sizes
 from fabgen.design.arranged import Arranged, Parameters, Placed
-from fabgen.design.bush_sizes import BushSize
+from fabgen.design.bush_sizes import BushSize, bush_size, sleeve_size
 from fabgen.design.feed_layout import RIM_MM
-from fabgen.design.feed_sizes import FeedBlockSize
-from fabgen.design.folded_saddle_sizes import FoldedSaddleSize
-from fabgen.design.keeper_sizes import PushRingSize, SnapKeeperSize
-from fabgen.design.saddle_sizes import EAR_WALL_MM, SaddleSize
+from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
+from fabgen.design.keeper_sizes import PushRingSize, SnapKeeperSize, push_ring_size, snap_keeper_size
+from fabgen.design.saddle_sizes import EAR_WALL_MM, SaddleSize, saddle_size
 
-Size = BushSize | FeedBlockSize | FoldedSaddleSize | PushRingSize | SaddleSize | SnapKeeperSize
+Size = BushSize | FeedBlockSize | PushRingSize | SaddleSize | SnapKeeperSize
 
 _SIZES: dict[str, Callable[..., Size]] = {
-    "bush": part_sizes.bush_size,
-    "feed_block": part_sizes.feed_block_size,
-    "folded_saddle": part_sizes.folded_saddle_size,
-    "push_ring": part_sizes.push_ring_size,
-    "saddle": part_sizes.saddle_size,
-    "sleeve": part_sizes.sleeve_size,
-    "snap_keeper": part_sizes.snap_keeper_size,
+    "bush": bush_size,
+    "feed_block": feed_block_size,
+    "push_ring": push_ring_size,
+    "saddle": saddle_size,
+    "sleeve": sleeve_size,
+    "snap_keeper": snap_keeper_size,
 }
 LYING_ON_SIDE = ("saddle", "folded_saddle")
 """Printed on their −y side; all others stand with their local z axis upright."""
@@ -45,13 +42,16 @@ class Overhang:
     bridge_mm: float = 0.0
 
 
-def distinct_prints(arranged: Arranged) -> Iterator[tuple[Placed, Size]]:
-    """One placed part of each kind that is printed, with its sizes; a lid goes with its block."""
+def distinct_prints(arranged: Arranged) -> Iterator[tuple[Placed, Size | None]]:
+    """One placed part of each kind that is printed, with its sizes; a lid goes with its block.
+
+    A folded dipole's saddle has None: its walls and overhangs do not depend on the design.
+    """
     seen = set()
     for part in arranged.placed:
-        if part.source == "printed" and part.part in _SIZES and part.key not in seen:
+        if part.source == "printed" and part.part != "feed_lid" and part.key not in seen:
             seen.add(part.key)
-            yield part, _size(part.part, part.parameters)
+            yield part, _size(part.part, part.parameters) if part.part in _SIZES else None
 
 
 def owners(arranged: Arranged, part: Placed) -> list[str]:
@@ -65,7 +65,7 @@ def _size(part: str, parameters: Parameters) -> Size:
     return _SIZES[part](**numbers)
 
 
-def thinnest_wall_mm(size: Size) -> tuple[str, float]:
+def thinnest_wall_mm(size: Size | None) -> tuple[str, float]:
     """The thinnest standing wall of a part as drawn, with its name."""
     match size:
         case BushSize():
@@ -80,19 +80,19 @@ def thinnest_wall_mm(size: Size) -> tuple[str, float]:
             walls = [("wall round the bore", size.wall_mm), ("ear wall", EAR_WALL_MM), ("floor", under_mm)]
         case FeedBlockSize():
             walls = [("rim", RIM_MM)]
-        case FoldedSaddleSize():
-            walls = [("ear wall", EAR_WALL_MM), ("wall between limbs", size.spacing_mm - size.tallest_mm)]
+        case None:
+            walls = [("ear wall", EAR_WALL_MM)]
     return min(walls, key=lambda wall: wall[1])
 
 
-def rod_bore_mm(size: Size) -> float | None:
+def rod_bore_mm(size: Size | None) -> float | None:
     """The closed bore that a rod slides through, as it shall come out; None where there is none."""
     return size.bore_mm if isinstance(size, BushSize | SaddleSize) else None
 
 
-def overhangs(size: Size) -> Iterator[Overhang]:
+def overhangs(size: Size | None) -> Iterator[Overhang]:
     """Surfaces over air in print orientation; chamfers and teardrops are at 45° by their construction."""
-    if isinstance(size, SaddleSize | FoldedSaddleSize) and size.boom_diameter_mm:
+    if isinstance(size, SaddleSize) and size.boom_diameter_mm:
         slope_deg = math.degrees(math.asin(min(1.0, size.foot_width_mm / size.boom_diameter_mm)))
         yield Overhang("concave foot", slope_deg)
     if isinstance(size, FeedBlockSize) and size.boom_diameter_mm:

@@ -28,23 +28,31 @@ class Phase(IntEnum):
     BUSHES = 5
     RODS = 6
     JOINTS = 7
-    KEEPERS = 8
-    TERMINALS = 9
-    LIDS = 10
-    MAST = 11
+    MIDDLE_SCREWS = 8
+    KEEPERS = 9
+    HALF_RODS = 10
+    BENT_RODS = 11
+    TERMINALS = 12
+    CABLE = 13
+    LIDS = 14
+    MAST = 15
 
 
 WORDS = {
-    Phase.SLEEVES: "Push the sleeves into the boom from its end, to the clamp's place, and pin them with the bolts.",
+    Phase.SLEEVES: "Push the sleeves into the boom from its end, to the clamp's place.",
     Phase.CLAMP: "Bolt the clamp's plate to the boom.",
     Phase.NUTS: "Press the nuts into the traps of the feed's block; they cannot be reached later.",
-    Phase.BLOCKS: "Screw the blocks to the boom's top, their arrows forward.",
+    Phase.BLOCKS: "Screw the blocks to the boom's top; a feed's cable goes down in front on the left.",
     Phase.BUSHES: "Push the bushes into the walls from outside, flanges out.",
     Phase.RODS: "Push each rod through from its side and centre it.",
     Phase.JOINTS: "Make the joints between rods and boom: bright metal, on both sides.",
+    Phase.MIDDLE_SCREWS: "Turn the screw through the boom's top into each rod's middle.",
     Phase.KEEPERS: "Push a keeper on from each tip until it meets its seat.",
-    Phase.TERMINALS: "Fit the terminal screws with their tags, finger tight, then half a turn.",
-    Phase.LIDS: "Bring the cable in with a drip loop, measure the match, trim, then close the lid.",
+    Phase.HALF_RODS: "Push the half rods into the feed's block from both sides until they meet the rib.",
+    Phase.BENT_RODS: "Push the bent rod into the slots of its saddle from the front.",
+    Phase.TERMINALS: "Fit the terminal screws with the cable's tags, finger tight, then half a turn.",
+    Phase.CABLE: "Fasten the cable with a drip loop; measure the match, and trim a straight fed rod at its tips.",
+    Phase.LIDS: "Close the feed's lid.",
     Phase.MAST: "Hang the array on the mast with its U-bolts.",
 }
 
@@ -56,7 +64,7 @@ _PHASES = {
     "bush": Phase.BUSHES,
     "sleeve": Phase.BUSHES,
     "rod": Phase.RODS,
-    "folded_rod": Phase.RODS,
+    "folded_rod": Phase.BENT_RODS,
     "push_ring": Phase.KEEPERS,
     "snap_keeper": Phase.KEEPERS,
     "feed_lid": Phase.LIDS,
@@ -68,14 +76,19 @@ _SCREWS = {
     "lid screw": Phase.LIDS,
     "terminal": Phase.TERMINALS,
     "retainer": Phase.TERMINALS,
+    "middle screw": Phase.MIDDLE_SCREWS,
 }
 _AFTER = {
     Phase.BLOCKS: (Phase.NUTS,),
     Phase.RODS: (Phase.BUSHES, Phase.BLOCKS),
     Phase.JOINTS: (Phase.RODS,),
+    Phase.MIDDLE_SCREWS: (Phase.RODS,),
     Phase.KEEPERS: (Phase.RODS,),
-    Phase.TERMINALS: (Phase.RODS,),
-    Phase.LIDS: (Phase.TERMINALS, Phase.RODS),
+    Phase.HALF_RODS: (Phase.BLOCKS,),
+    Phase.BENT_RODS: (Phase.BLOCKS,),
+    Phase.TERMINALS: (Phase.HALF_RODS, Phase.BENT_RODS),
+    Phase.CABLE: (Phase.TERMINALS,),
+    Phase.LIDS: (Phase.CABLE,),
 }
 """What a task waits for on its own element."""
 
@@ -132,14 +145,14 @@ def assembly_order(arranged: Arranged) -> AssemblyOrder:
     tasks = _tasks(arranged)
     waits = _waits(tasks)
     for rod, ways in _blocked_rods(arranged):
-        _let_through((Phase.RODS, rod.owner), ways, waits)
+        _let_through((phase_of(rod), rod.owner), ways, waits)
     ordered = _sorted(tasks, waits)
     stuck = [*_loops(arranged), *map(_waiting, tasks.keys() - set(ordered))]
     return AssemblyOrder(_steps(tasks, ordered), tuple(sorted(stuck, key=lambda s: (s.kind, s.element, s.text))))
 
 
 def _waiting(task: Task) -> Stuck:
-    return Stuck(task[1], "order", f"{task[0].name.lower()} wait for something that waits for them")
+    return Stuck(task[1], "order", f"{task[0].name.lower().replace('_', ' ')} wait for something that waits for them")
 
 
 def phase_of(part: Placed) -> Phase:
@@ -149,11 +162,13 @@ def phase_of(part: Placed) -> Phase:
     for words, phase in _SCREWS.items():
         if part.part in ("screw", "washer") and words in part.name:
             return phase
+    if part.part == "rod" and part.name != part.owner:
+        return Phase.HALF_RODS
     return _PHASES.get(part.part, Phase.JOINTS)
 
 
 def _tasks(arranged: Arranged) -> dict[Task, list[str]]:
-    """Every task with the parts that go on in it; a welded or pressed joint has none."""
+    """Every task with the parts that go on in it; a welded or pressed joint and a cable have none."""
     tasks: dict[Task, list[str]] = defaultdict(list)
     for part in arranged.placed:
         if part.part != "boom":
@@ -161,6 +176,8 @@ def _tasks(arranged: Arranged) -> dict[Task, list[str]]:
     for element in arranged.design.elements:
         if element.mount and element.mount.bond and (Phase.RODS, element.id) in tasks:
             tasks.setdefault((Phase.JOINTS, element.id), [])
+        if (Phase.TERMINALS, element.id) in tasks:
+            tasks[Phase.CABLE, element.id] = []
     return dict(tasks)
 
 

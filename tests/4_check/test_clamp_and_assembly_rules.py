@@ -62,6 +62,8 @@ def test_what_is_reached_last_goes_on_last(made):
 
 def test_phases(made):
     phases = {part.name: phase_of(part) for part in made(FOLDED).placed}
+    assert phases["DE"] is Phase.BENT_RODS
+    assert phase_of(made().part("DE-left")) is Phase.HALF_RODS
     assert phases["DE retainer washer"] is Phase.TERMINALS
     assert phases["clamp bolt 1"] is Phase.CLAMP
     assert phases["mast U-bolt 1 1 nut"] is Phase.MAST
@@ -71,6 +73,18 @@ def test_a_joint_without_parts_is_a_step(made):
     welded = {"mounts.line": {"style": "bonded-through", "bond": "weld", "allowance": {"origin": "none"}}}
     joints = [step for step in assembly_order(made(welded)).steps if step.text.startswith("Make the joints")]
     assert [(step.elements, step.parts) for step in joints] == [(("R", "D1", "D2"), ())]
+
+
+def test_a_fed_rod_is_measured_before_its_lid_is_closed(made):
+    texts = [step.text for step in assembly_order(made()).steps if step.elements == ("DE",)]
+    assert [text.split()[0] for text in texts[-3:]] == ["Fit", "Fasten", "Close"]
+    assert [step.text.split()[0] for step in assembly_order(made(FOLDED)).steps][-2:] == ["Fasten", "Hang"]
+
+
+def test_a_middle_screw_comes_after_its_rod(made):
+    held = {"mounts.line.hold": "middle-screw"}
+    step_of = {name: step.number for step in assembly_order(made(held)).steps for name in step.parts}
+    assert step_of["D1 bush left"] < step_of["D1"] < step_of["D1 middle screw"]
 
 
 def test_a_loop_through_the_boom(made, rule):

@@ -9,6 +9,8 @@ def test_a_part_that_cannot_be_made(found):
     assert found("parts_that_cannot_be_made") == []
     ((code, severity, where, *_),) = found("parts_that_cannot_be_made", {"feed.height": 5})
     assert (code, severity, where) == ("F01", "fail", "DE")
+    too_wide = {"boom.section": "round", "boom.corner_radius": None, "mounts.line.bush.flange": 20.5}
+    assert found("parts_that_cannot_be_made", too_wide) == [("F01", "fail", "R, D1, D2", None, None)]
 
 
 @pytest.mark.parametrize(

@@ -4,10 +4,10 @@ from collections.abc import Iterator
 
 from fabgen.check.finding import finding
 from fabgen.check.holes import drillings, place, wall_width_mm
-from fabgen.check.tolerances import marked_tolerance_mm
 from fabgen.design.arranged import Arranged, Hole
 from fabgen.design.design import Boom
 from fabgen.design.findings import Finding
+from fabgen.design.shop_tolerance import shop_tolerance_mm
 from fabgen.physics.sections import SectionProperties, boom_section, drilled_rectangular_section, drilled_round_section
 from fabgen.stock import tables
 
@@ -19,7 +19,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     for rows in drillings(arranged):
         hole = rows[0]
         half_mm = wall_width_mm(arranged, hole) / 2
-        slack_mm = marked_tolerance_mm(design, half_mm)
+        slack_mm = shop_tolerance_mm(design.shop, half_mm)
         flat_mm = flat_beside_mm(boom, half_mm, hole)
         edge_mm = half_mm - abs(hole.across_mm)
         if flat_mm < 0:

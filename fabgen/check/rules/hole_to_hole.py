@@ -6,9 +6,9 @@ from collections.abc import Iterator
 
 from fabgen.check.finding import finding, too_small
 from fabgen.check.holes import place
-from fabgen.check.tolerances import marked_tolerance_mm
 from fabgen.design.arranged import Arranged, Hole
 from fabgen.design.findings import Finding
+from fabgen.design.shop_tolerance import shop_tolerance_mm
 from fabgen.stock import tables
 
 SOURCE = "EN 1993-1-8 Table 3.3, a steel code borrowed as common practice"
@@ -29,7 +29,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
 
 def _pair(arranged: Arranged, first: Hole, second: Hole) -> Iterator[Finding]:
     apart_mm = _apart_mm(arranged, first, second)
-    worst_mm = apart_mm - marked_tolerance_mm(arranged.design, apart_mm)
+    worst_mm = apart_mm - shop_tolerance_mm(arranged.design.shop, apart_mm)
     d_mm = (first.diameter_mm + second.diameter_mm) / 2
     least = tables.edge_distance_factor("pitch along")
     if missed := too_small(worst_mm, fail_mm=least * d_mm, warn_mm=WANTED * d_mm):

@@ -6,7 +6,7 @@ from fabgen.check.finding import finding
 from fabgen.design.arranged import Arranged
 from fabgen.design.design import Keeper
 from fabgen.design.findings import Finding, Severity
-from fabgen.design.part_sizes import snap_keeper_size
+from fabgen.design.keeper_sizes import snap_keeper_size
 from fabgen.physics.split_ring import largest_push_ring_outside_mm, push_ring_strain, snap_clip_strain
 from fabgen.stock import tables
 
