@@ -17,6 +17,7 @@ def schema() -> dict[str, Any]:
     definitions["MountKeys"]["allOf"] = [_style_rule(style, keys) for style, keys in STYLE_KEYS.items()]
     definitions["AllowanceKeys"] = {"anyOf": [{"enum": list(ORIGINS)}, definitions["AllowanceKeys"]]}
     properties = whole["properties"]
+    properties["mounts"]["additionalProperties"] = False
     properties["elements"] = {"anyOf": [properties["elements"], _table()]}
     return {
         "$schema": DIALECT,

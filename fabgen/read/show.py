@@ -3,6 +3,7 @@
 import json
 import re
 from collections.abc import Iterator
+from decimal import Decimal
 
 from fabgen.design.design import AllowanceChoice, Bush, Element, Keeper, Material, Mount, Saddle
 from fabgen.read.places import node_at
@@ -27,7 +28,7 @@ def show(reading: Reading) -> str:
 
 def mm(length_mm: float) -> str:
     """A length that reads back to the same number."""
-    return f"{int(length_mm)} mm" if length_mm == int(length_mm) else f"{length_mm!r} mm"
+    return f"{int(length_mm)} mm" if length_mm == int(length_mm) else f"{Decimal(repr(length_mm)):f} mm"
 
 
 def word(text: str) -> str:
