@@ -144,15 +144,25 @@ def assembly_order(arranged: Arranged) -> AssemblyOrder:
     """
     tasks = _tasks(arranged)
     waits = _waits(tasks)
-    for rod, ways in _blocked_rods(arranged):
-        _let_through((phase_of(rod), rod.owner), ways, waits)
+    blocked = _blocked_rods(arranged)
+    for rod, ways in blocked:
+        _let_through(_task_of(rod), ways, waits)
     ordered = _sorted(tasks, waits)
-    stuck = [*_loops(arranged), *map(_waiting, tasks.keys() - set(ordered))]
-    return AssemblyOrder(_steps(tasks, ordered), tuple(sorted(stuck, key=lambda s: (s.kind, s.element, s.text))))
+    stuck = [*_loops(arranged)]
+    stuck += [_locked_out(rod, ways) for rod, ways in blocked if _task_of(rod) in _all_before(_task_of(rod), waits)]
+    return AssemblyOrder(_steps(tasks, ordered), tuple(stuck))
 
 
-def _waiting(task: Task) -> Stuck:
-    return Stuck(task[1], "order", f"{task[0].name.lower().replace('_', ' ')} wait for something that waits for them")
+def _locked_out(rod: Placed, ways: list[set[Task]]) -> Stuck:
+    owners = ", ".join(sorted({owner for way in ways for _, owner in way}))
+    text = (
+        f"the rod {rod.name} cannot go in from any side: parts of {owners} are in its way and must be there before it"
+    )
+    return Stuck(rod.owner, "order", text)
+
+
+def _task_of(part: Placed) -> Task:
+    return phase_of(part), part.owner
 
 
 def phase_of(part: Placed) -> Phase:
@@ -172,7 +182,7 @@ def _tasks(arranged: Arranged) -> dict[Task, list[str]]:
     tasks: dict[Task, list[str]] = defaultdict(list)
     for part in arranged.placed:
         if part.part != "boom":
-            tasks[phase_of(part), part.owner].append(part.name)
+            tasks[_task_of(part)].append(part.name)
     for element in arranged.design.elements:
         if element.mount and element.mount.bond and (Phase.RODS, element.id) in tasks:
             tasks.setdefault((Phase.JOINTS, element.id), [])
@@ -192,7 +202,10 @@ def _waits(tasks: Mapping[Task, list[str]]) -> dict[Task, set[Task]]:
 
 
 def _blocked_rods(arranged: Arranged) -> list[tuple[Placed, list[set[Task]]]]:
-    """Rods that have something of another element in their way on every side they could come from."""
+    """Rods that have something of another element in their way on every side they could come from.
+
+    What overlaps a rod at its place is a collision and no matter of order.
+    """
     others = sorted(
         ((shape, part) for part in arranged.placed if part.part not in ("boom", "rod") for shape in part.shapes),
         key=lambda pair: span_mm(pair[0], 0),
@@ -211,13 +224,19 @@ def _blocked_rods(arranged: Arranged) -> list[tuple[Placed, list[set[Task]]]]:
             if part.owner != rod.owner and _overlap(bar, shape, 0) and _overlap(bar, shape, 2)
         ]
         ways = [
-            {(phase_of(part), part.owner) for shape, part in crossing if side * span_mm(shape, 1)[side > 0] > 0}
+            {_task_of(part) for shape, part in crossing if _beyond(bar, shape, side)}
             for side in (1, -1)
             if side * sum(span_mm(bar, 1)) >= -_TOUCH_MM
         ]
         if all(ways):
             blocked.append((rod, ways))
     return blocked
+
+
+def _beyond(bar: Shape, shape: Shape, side: int) -> bool:
+    """Whether a shape stands beyond a rod's tip: the left one for side 1, the right one for −1."""
+    (low, high), (other_low, other_high) = span_mm(bar, 1), span_mm(shape, 1)
+    return other_low >= high - _TOUCH_MM if side > 0 else other_high <= low + _TOUCH_MM
 
 
 def _overlap(first: Shape, second: Shape, axis: int) -> bool:
