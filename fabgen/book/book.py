@@ -7,6 +7,7 @@ The template of the same name sets `title`. `SHOWS_LENGTHS` marks a section with
 `NEW_PAGE` one that is taken to the bench by itself.
 """
 
+import functools
 import importlib
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
@@ -92,14 +93,13 @@ def book_html(book: Book) -> bytes:
     Returns:
         One HTML document in UTF-8: styles and drawings inside it, no script, no address outside itself.
     """
-    environment = _environment()
-    page = environment.get_template("page.html")
-    return page.render(book=book, sections=sections(book, environment)).encode("utf-8") + b"\n"
+    page = _environment().get_template("page.html")
+    return page.render(book=book, sections=sections(book)).encode("utf-8") + b"\n"
 
 
-def sections(book: Book, environment: jinja2.Environment | None = None) -> tuple[Section, ...]:
+def sections(book: Book) -> tuple[Section, ...]:
     """Every section of `sections/` that has something to say, in the order of their places."""
-    environment = environment or _environment()
+    environment = _environment()
     modules = [(entry.name, importlib.import_module(entry.module)) for entry in registry.entries(SECTIONS)]
     written = []
     for name, module in sorted(modules, key=lambda named: (named[1].PLACE, named[0])):
@@ -112,6 +112,7 @@ def sections(book: Book, environment: jinja2.Environment | None = None) -> tuple
     return tuple(written)
 
 
+@functools.cache
 def _environment() -> jinja2.Environment:
     folders: Sequence[Path] = (_HERE / "templates", _HERE / "sections")
     environment = jinja2.Environment(
