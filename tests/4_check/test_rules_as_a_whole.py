@@ -7,6 +7,8 @@ from dataclasses import replace
 from pathlib import Path
 
 import pytest
+from hypothesis import HealthCheck, given, settings
+from hypothesis import strategies as st
 
 from fabgen import registry
 from fabgen.arrange.arrange import arrange
@@ -131,6 +133,49 @@ def eighty(made):
         *({"id": f"D{i}", "role": "director", "at": 120 + 100 * i, "length": 311 - i / 10} for i in range(1, 79)),
     ]
     return made({"elements": rows, "shop.stock.boom": 12_000, "boom.wall": 0.8, "printer.hole_growth": 0})
+
+
+STYLES = [
+    {"style": "insulated-through", "hole": 8},
+    {"style": "insulated-through", "hold": "middle-screw"},
+    {"style": "insulated-through", "hole": 4},
+    {"style": "insulated-through", "bush": {"kind": "sleeve"}, "keeper": {"kind": "snap"}},
+    {"style": "bonded-through", "bond": "press"},
+    {"style": "on-top"},
+]
+BOOMS = [
+    {"boom.section": "square", "boom.outside": 20},
+    {"boom.section": "square", "boom.outside": 8, "boom.wall": None},
+    {"boom.section": "rectangular", "boom.outside": [30, 6]},
+    {"boom.section": "round", "boom.outside": 25, "boom.corner_radius": None},
+]
+
+CLAMPS = [{}, {"clamp": None}, {"clamp.at": 5}, {"clamp.at": 150}, {"polarisation": "vertical"}]
+
+
+@settings(max_examples=40, suppress_health_check=[HealthCheck.function_scoped_fixture])
+@given(
+    mount=st.sampled_from(STYLES),
+    boom=st.sampled_from(BOOMS),
+    rear_mm=st.sampled_from([0, 3, 12, 80]),
+    next_mm=st.sampled_from([191, 200, 307]),
+    clamp=st.sampled_from(CLAMPS),
+)
+def test_whatever_can_be_read_can_be_judged(made, mount, boom, rear_mm, next_mm, clamp):
+    changes = {"mounts.line": mount, "boom.overhang.rear": rear_mm, "elements.D2.at": next_mm}
+    for found in judge(made(changes | boom | clamp)):
+        assert found.code in registry.codes()
+        assert found.where
+
+
+@settings(max_examples=15, suppress_health_check=[HealthCheck.function_scoped_fixture])
+@given(front_mm=st.floats(0, 20), more_mm=st.floats(0, 20))
+def test_a_longer_overhang_never_makes_the_end_worse(found, front_mm, more_mm):
+    order = {"fail": 0, "warn": 1}
+    short = found("hole_to_end", {"boom.overhang.front": front_mm})
+    long = found("hole_to_end", {"boom.overhang.front": front_mm + more_mm})
+    worst = [min((order[severity] for _, severity, *_ in each), default=2) for each in (short, long)]
+    assert worst[0] <= worst[1]
 
 
 def test_order_of_rules_does_not_depend_on_the_order_of_parts(made):
