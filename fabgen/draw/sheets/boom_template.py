@@ -5,7 +5,7 @@ from collections import defaultdict
 from collections.abc import Iterable
 
 from fabgen.design.arranged import Arranged, CutPlan, Hole, Piece, Wall
-from fabgen.design.drawing import Box, Sheet
+from fabgen.design.drawing import Box, Item, Sheet
 from fabgen.design.lettering import shortened, text_width_mm
 from fabgen.design.pen import Pen, spread
 from fabgen.draw.clipping import clipped
@@ -128,36 +128,52 @@ def _wall_names(pen: Pen, drawn: Drawn, laid: Development, paper: Box, base: flo
         half = laid.radius_mm and face.wall == "-z"
         middle = face.middle_mm if half else centres[face.wall]
         height = usual_height_mm((face.high_mm - face.low_mm) / 2)
-        lift = -height / 2 if half else 0.75
-        _along(pen, drawn, WALLS[face.wall], height, base + middle + lift, (left, right))
+        over, under = base + middle + 0.75, base + middle - 0.75 - 1.06 * height
+        levels = (base + middle - height / 2,) if half else (over, under)
+        _along(pen, drawn, WALLS[face.wall], height, levels, (left, right))
     if laid.flap_mm:
         seam = "Flap for tape: slide it under the opposite edge, which then lies on the thick line."
-        _along(pen, drawn, seam, 2.0, high - laid.flap_mm / 2 - 1.0, (left, right), arrow=False)
+        _along(pen, drawn, seam, 2.0, (high - laid.flap_mm / 2 - 1.0,), (left, right), arrow=False)
 
 
 def _along(
-    pen: Pen, drawn: Drawn, words: str, height_mm: float, y_mm: float, ends: tuple[float, float], *, arrow: bool = True
+    pen: Pen,
+    drawn: Drawn,
+    words: str,
+    height_mm: float,
+    levels_mm: tuple[float, ...],
+    ends_mm: tuple[float, float],
+    *,
+    arrow: bool = True,
 ) -> None:
-    """Letter words at every step along the paper where a free place is near."""
-    width = text_width_mm(words, height_mm)
-    room = width + (_ARROW_MM + 2.0 if arrow else 0.0)
-    left, right = ends[0] + 3.0, ends[1] - 3.0 - room
-    start = left
-    while start <= max(left, right):
-        step = _NAME_PITCH_MM if arrow else 2 * _NAME_PITCH_MM
-        places = (min(max(left, start + d), max(left, right)) for k in range(28) for d in ((2.0 * k, -2.0 * k)))
-        found = free_place(drawn, room + 5.0, 1.06 * height_mm, ((x - 2.5, y_mm) for x in places))
-        if found:
-            items = Pen()
-            x = found[0] + 2.5
-            items.text(x, y_mm, words, height_mm)
-            if arrow:
-                tip, level = x + room, y_mm + height_mm / 2
-                items.line("text", x + width + 2.0, level, tip - 2.5, level)
-                items.arrow(tip, level, 0, layer="text")
-            pen.add(items.items)
-            drawn.add(items.items)
-        start += step
+    """Letter words at every step along the paper where a free place is near, without their arrow where it must be."""
+    width, pitch = text_width_mm(words, height_mm), _NAME_PITCH_MM if arrow else 2 * _NAME_PITCH_MM
+    trials = [(y, tail, 2.5) for tail in ([_ARROW_MM + 2.0] if arrow else [0.0]) for y in levels_mm]
+    trials += [(y, 0.0, 1.0) for y in levels_mm]
+    start = ends_mm[0] + 3.0
+    while start < ends_mm[1] - width:
+        for y, tail, apart in trials:
+            last = ends_mm[1] - 3.0 - width - tail
+            xs = [x for k in range(28) for x in (start + 2.0 * k, start - 2.0 * k) if ends_mm[0] + 3.0 <= x <= last]
+            found = free_place(drawn, width + tail + 2 * apart, 1.06 * height_mm, [(x - apart, y) for x in xs])
+            if found:
+                items = _name(words, height_mm, found[0] + apart, y, tail)
+                pen.add(items)
+                drawn.add(items)
+                break
+        start += pitch
+
+
+def _name(words: str, height_mm: float, x_mm: float, y_mm: float, tail_mm: float) -> list[Item]:
+    """Words, and an arrow forward behind them when there is a tail."""
+    pen = Pen()
+    pen.text(x_mm, y_mm, words, height_mm)
+    if tail_mm:
+        start, level = x_mm + text_width_mm(words, height_mm) + 2.0, y_mm + height_mm / 2
+        tip = start + tail_mm - 2.0
+        pen.line("text", start, level, tip - 2.5, level)
+        pen.arrow(tip, level, 0, layer="text")
+    return pen.items
 
 
 def _crowded(pen: Pen, holes: Iterable[Hole], shift: float, from_y_mm: float) -> float:
