@@ -1,8 +1,8 @@
 """A rod in its mount as plain numbers for the physics."""
 
 from fabgen.design.design import Design, Element, Mount
-from fabgen.physics.boom_closed_form import Surroundings
 from fabgen.physics.boom_mount import BoomMount, Section, Style
+from fabgen.physics.boom_uncertainty import Surroundings
 
 _STYLES = {
     "bonded-through": Style.BONDED_THROUGH,

@@ -12,6 +12,12 @@ from dataclasses import dataclass
 
 from fabgen.physics.boom_mount import ETA_OHM, BoomMount, Section, Style, wavelength_mm
 from fabgen.physics.boom_range import Advice, RangeMiss, Reason, advice_on, boom_end_misses, range_misses
+from fabgen.physics.boom_uncertainty import (
+    Surroundings,
+    correlated_u_relative,
+    end_u_relative,
+    method_u_relative,
+)
 
 _SQUARE_SIDES_WL = (0.01, 0.02, 0.03, 0.045)
 _SQUARE_FACTORS = (1.135, 1.107, 1.106, 1.092)
@@ -22,30 +28,6 @@ _ON_TOP_CONSTANTS = {
 }
 _EPSILON_0_F_M = 8.8541878128e-12
 _MU_0_OVER_2_PI_H_M = 2e-7
-
-
-@dataclass(frozen=True, slots=True)
-class Surroundings:
-    """What stands near the rod on the boom; None where there is nothing to reckon with.
-
-    Attributes:
-        end_distance_mm: rod axis to the nearest sawn boom end.
-        neighbour_distance_mm: rod axis to the nearest other rod's axis.
-        widening_distance_mm: rod axis to the nearest splice sleeve or clamp.
-        interior: True for a rod with rods on both sides, whose allowance its neighbours raise together.
-    """
-
-    end_distance_mm: float | None = None
-    neighbour_distance_mm: float | None = None
-    widening_distance_mm: float | None = None
-    interior: bool = True
-
-    def __post_init__(self) -> None:
-        for distance_mm in (self.end_distance_mm, self.neighbour_distance_mm):
-            if distance_mm is not None and distance_mm <= 0:
-                raise ValueError("distances to the boom's end and to the next rod must be positive")
-        if self.widening_distance_mm is not None and self.widening_distance_mm < 0:
-            raise ValueError("the distance to a splice or clamp is not negative")
 
 
 @dataclass(frozen=True, slots=True)
@@ -233,38 +215,6 @@ def bush_term_mm(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) -
     return -air_mm * bush_reactance_ratio(mount, frequency_mhz)
 
 
-def method_u_relative(mount: BoomMount, rod_length_mm: float, frequency_mhz: float, near: Surroundings) -> float:
-    """Standard uncertainty of the closed form for one rod, relative to its allowance.
-
-    Args:
-        mount: the mount.
-        rod_length_mm: modelled (free) rod length.
-        frequency_mhz: design frequency.
-        near: what stands near the rod.
-
-    Returns:
-        6 % bonded, 8 % insulated in round stock, 10 % on top, insulated in square tube or with a rod nearer than
-        0.15 wavelengths; 15 % for an unbonded rod 2 to 3.3 boom widths from the end; 2 % more outside
-        .42 to .48 wavelengths; in quadrature 10 % for a splice or clamp within 2 boom widths (a judgement).
-
-    Source: own study 2026, computed, unpublished.
-    """
-    wl_mm = wavelength_mm(frequency_mhz)
-    length_wl = rod_length_mm / wl_mm
-    bonded = mount.style is Style.BONDED_THROUGH
-    round_hole = mount.style is Style.INSULATED_THROUGH and mount.section is Section.ROUND
-    u = 0.06 if bonded else 0.08 if round_hole else 0.10
-    if near.neighbour_distance_mm is not None and near.neighbour_distance_mm < 0.15 * wl_mm:
-        u = max(u, 0.10)
-    if not bonded and near.end_distance_mm is not None and near.end_distance_mm < 3.3 * mount.outside_mm:
-        u = max(u, 0.15)
-    if not 0.42 <= length_wl <= 0.48:
-        u += 0.02
-    if near.widening_distance_mm is not None and near.widening_distance_mm < 2 * mount.outside_mm:
-        u = math.hypot(u, 0.10)
-    return u
-
-
 def closed_form_allowance(
     mount: BoomMount, rod_length_mm: float, frequency_mhz: float, near: Surroundings | None = None
 ) -> BoomAllowance:
@@ -292,12 +242,8 @@ def closed_form_allowance(
             misses += (RangeMiss(Reason.BUSH_CAPACITANCE, ratio, 0.1, ""),)
     advice = advice_on(mount, misses, near.end_distance_mm, near.widening_distance_mm)
     u_relative = method_u_relative(mount, rod_length_mm, frequency_mhz, near)
-    u_correlated = 0.0
-    if near.interior:
-        u_correlated = 0.02 if mount.outside_mm / wl_mm < 0.02 else 0.03
-    u_end = 0.0
-    if mount.style is Style.BONDED_THROUGH and near.end_distance_mm is not None:
-        u_end = 0.12 * mount.outside_mm / near.end_distance_mm
+    u_correlated = correlated_u_relative(mount, frequency_mhz, near)
+    u_end = end_u_relative(mount, near)
     if misses:
         return BoomAllowance(None, None, None, 0.0, u_relative, u_correlated, u_end, 0.0, None, misses, advice)
     air_mm = relative_allowance(mount, rod_length_mm, frequency_mhz) * mount.outside_mm

@@ -38,8 +38,8 @@ class Fineness:
         growth: ratio of neighbouring steps.
         rod_step_wl: largest step along the rod.
         boom_step_wl: largest step along the boom.
-        tip_step: step at the rod's tip, in rod radii.
-        near_step: steps under a rod above the boom, against the default.
+        tip_ratio: step at the rod's tip, in rod radii.
+        near_ratio: steps under a rod above the boom, against the default.
     """
 
     up: int = 4
@@ -49,13 +49,13 @@ class Fineness:
     growth: float = 1.5
     rod_step_wl: float = 0.03
     boom_step_wl: float = 0.04
-    tip_step: float = 0.5
-    near_step: float = 1.0
+    tip_ratio: float = 0.5
+    near_ratio: float = 1.0
 
 
 DEFAULT = Fineness()
 FINE = Fineness(
-    up=5, along=4, over=5, on_top_segments=5, growth=1.4, rod_step_wl=0.025, boom_step_wl=0.03, near_step=0.7
+    up=5, along=4, over=5, on_top_segments=5, growth=1.4, rod_step_wl=0.025, boom_step_wl=0.03, near_ratio=0.7
 )
 
 
@@ -85,7 +85,7 @@ def free_rod_mesh(diameter_wl: float, length_wl: float, segments: int, fineness:
         The mesh.
     """
     section = outline(diameter_wl, segments)
-    tip = fineness.tip_step * diameter_wl / 2
+    tip = fineness.tip_ratio * diameter_wl / 2
     steps = graded(length_wl / 2, fineness.rod_step_wl, tip, fineness.growth, fineness.rod_step_wl)
     return weld(rod_surface(section, np.zeros(len(section)), length_wl / 2, steps), mirror_z=True)
 
@@ -128,7 +128,7 @@ def _bonded(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness
     skin = _skin(mount, wl_mm, fineness)
     cells = _cells(mount, fineness, fineness.boom_step_wl)
     free = (length_wl - mount.outside_mm / wl_mm) / 2
-    tip = fineness.tip_step * diameter / 2
+    tip = fineness.tip_ratio * diameter / 2
     steps = graded(free, diameter / 2, tip, fineness.growth, fineness.rod_step_wl)
     rod = rod_surface(section, hole_on(skin, section)[:, 1], length_wl / 2, steps)
     return weld(rod + skin_with_hole(skin, section, BOOM_HALF_LENGTH_WL, cells), mirror_z=True)
@@ -143,7 +143,7 @@ def _insulated(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Finen
     skin = _skin(mount, wl_mm, fineness)
     outer = hole_on(skin, hole)
     pieces = skin_with_hole(skin, hole, BOOM_HALF_LENGTH_WL, _cells(mount, fineness, fineness.boom_step_wl))
-    tip = fineness.tip_step * diameter / 2
+    tip = fineness.tip_ratio * diameter / 2
     outside = graded(length_wl / 2 - half, gap, tip, growth, fineness.rod_step_wl)
     if mount.solid:
         buried = graded(half, gap, gap, growth, half / 3)
@@ -163,14 +163,14 @@ def _insulated(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Finen
 
 def _on_top(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness) -> Mesh:
     diameter, gap = mount.rod_diameter_mm / wl_mm, mount.gap_mm / wl_mm
-    growth, near = fineness.growth, fineness.near_step
+    growth, near = fineness.growth, fineness.near_ratio
     skin = _skin(mount, wl_mm, fineness, more_cells=2)
-    top = skin.radius if isinstance(skin, RoundSkin) else skin.height / 2
-    section = outline(diameter, fineness.on_top_segments, height=top + mount.axis_height_mm / wl_mm)
-    first = near * min(gap + diameter / 4, skin.quarter / 4)
+    top = skin.radius_wl if isinstance(skin, RoundSkin) else skin.height_wl / 2
+    section = outline(diameter, fineness.on_top_segments, height_wl=top + mount.axis_height_mm / wl_mm)
+    first = near * min(gap + diameter / 4, skin.quarter_wl / 4)
     along = graded(BOOM_HALF_LENGTH_WL, first, BOOM_HALF_LENGTH_WL, growth, fineness.boom_step_wl)
     around = _around(skin, near * (gap + diameter / 2), fineness)
-    tip = fineness.tip_step * diameter / 2
+    tip = fineness.tip_ratio * diameter / 2
     steps = graded(length_wl / 2, near * (gap + diameter / 2), tip, growth, fineness.rod_step_wl)
     rod = rod_surface(section, np.zeros(len(section)), length_wl / 2, steps)
     return weld(rod + whole_skin(skin, BOOM_HALF_LENGTH_WL * along, around), mirror_z=False)
@@ -180,13 +180,17 @@ def _around(skin: Skin, first: float, fineness: Fineness) -> Floats:
     """Unrolled nodes from the top line to the bottom line, fine below the rod and at corners."""
     growth, cells = fineness.growth, fineness.up
     if isinstance(skin, RoundSkin):
-        turn = 2 * skin.quarter
-        return np.asarray(skin.quarter - turn * graded(turn, first, turn, growth, skin.quarter / skin.quarter_cells))
-    half, side = skin.width / 2, skin.height
+        turn = 2 * skin.quarter_wl
+        return np.asarray(
+            skin.quarter_wl - turn * graded(turn, first, turn, growth, skin.quarter_wl / skin.quarter_cells)
+        )
+    half, side = skin.width_wl / 2, skin.height_wl
     top = graded(half, first, half / (1.5 * cells), growth, half / (cells - 1))
     flank = graded(side, side / (3 * cells), side / (2 * cells), growth, side / (cells - 1))
     below = graded(half, half / cells, half, growth, half / (cells / 2))
-    return np.concatenate([skin.quarter - half * top, skin.fold - side * flank[1:], -skin.fold - half * below[1:]])
+    return np.concatenate(
+        [skin.quarter_wl - half * top, skin.fold_wl - side * flank[1:], -skin.fold_wl - half * below[1:]]
+    )
 
 
 def _joined(*parts: tuple[float, Floats]) -> Floats:

@@ -80,9 +80,9 @@ def range_misses(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) -
         frequency_mhz: design frequency.
 
     Returns:
-        Every limit missed; empty inside the range: boom .005 to .055 wavelengths, rod diameter .0015 to .0085, boom at least 1.25 rod diameters, rod length .39 to .495, hole
-        at most 0.85 of the bore, on top a gap of at least .02 diameters and a height of at most 2.5 boom widths
-        and .11 wavelengths.
+        Every limit missed; empty inside the range: boom .005 to .055 wavelengths, rod diameter .0015 to .0085,
+        boom at least 1.25 rod diameters, rod length .39 to .495, hole at most 0.85 of the bore, on top a gap of
+        at least .02 diameters and a height of at most 2.5 boom widths and .11 wavelengths.
     """
     wl_mm = wavelength_mm(frequency_mhz)
     sizes = (

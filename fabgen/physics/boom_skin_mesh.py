@@ -19,37 +19,37 @@ class RoundSkin:
     """A round boom, its nodes on the circle round the polygon of equal conformal radius.
 
     Attributes:
-        diameter: boom diameter.
+        diameter_wl: boom diameter.
         quarter_cells: cells per quarter circumference.
     """
 
-    diameter: float
+    diameter_wl: float
     quarter_cells: int
 
     @property
-    def radius(self) -> float:
+    def radius_wl(self) -> float:
         """Radius on which the nodes lie."""
-        return circumradius(self.diameter / 2, 4 * self.quarter_cells)
+        return circumradius(self.diameter_wl / 2, 4 * self.quarter_cells)
 
     @property
-    def quarter(self) -> float:
+    def quarter_wl(self) -> float:
         """Unrolled length from side line to top line."""
-        return self.radius * math.pi / 2
+        return self.radius_wl * math.pi / 2
 
     @property
-    def fold(self) -> float:
+    def fold_wl(self) -> float:
         """Unrolled length from the side line to where the patch must end."""
-        return self.quarter
+        return self.quarter_wl
 
     def unroll(self, z: Floats) -> Floats:
         """Unrolled coordinate of points on the +y side."""
-        return np.asarray(self.radius * np.arcsin(z / self.radius))
+        return np.asarray(self.radius_wl * np.arcsin(z / self.radius_wl))
 
     def place(self, x: Floats, u: Floats) -> Floats:
         """Nodes in space, (..., 3)."""
-        angle = u / self.radius
-        y, z = self.radius * np.cos(angle), self.radius * np.sin(angle)
-        y = np.where(np.abs(np.abs(u) - self.quarter) < 1e-9, 0.0, y)
+        angle = u / self.radius_wl
+        y, z = self.radius_wl * np.cos(angle), self.radius_wl * np.sin(angle)
+        y = np.where(np.abs(np.abs(u) - self.quarter_wl) < 1e-9, 0.0, y)
         return np.stack([x, y, z], axis=-1)
 
 
@@ -58,22 +58,22 @@ class FlatSkin:
     """A square or rectangular boom with sharp corners.
 
     Attributes:
-        width: outside along the rod.
-        height: outside across the rod.
+        width_wl: outside along the rod.
+        height_wl: outside across the rod.
     """
 
-    width: float
-    height: float
+    width_wl: float
+    height_wl: float
 
     @property
-    def quarter(self) -> float:
+    def quarter_wl(self) -> float:
         """Unrolled length from side line to top line."""
-        return (self.width + self.height) / 2
+        return (self.width_wl + self.height_wl) / 2
 
     @property
-    def fold(self) -> float:
+    def fold_wl(self) -> float:
         """Unrolled length from the side line to where the patch must end: the corner."""
-        return self.height / 2
+        return self.height_wl / 2
 
     def unroll(self, z: Floats) -> Floats:
         """Unrolled coordinate of points on the +y side."""
@@ -81,10 +81,10 @@ class FlatSkin:
 
     def place(self, x: Floats, u: Floats) -> Floats:
         """Nodes in space, (..., 3)."""
-        beyond = np.maximum(np.abs(u) - self.fold, 0.0)
-        y = np.maximum(self.width / 2 - beyond, 0.0)
-        y = np.where(np.abs(np.abs(u) - self.quarter) < 1e-9, 0.0, y)
-        z = np.sign(u) * np.minimum(np.abs(u), self.fold)
+        beyond = np.maximum(np.abs(u) - self.fold_wl, 0.0)
+        y = np.maximum(self.width_wl / 2 - beyond, 0.0)
+        y = np.where(np.abs(np.abs(u) - self.quarter_wl) < 1e-9, 0.0, y)
+        z = np.sign(u) * np.minimum(np.abs(u), self.fold_wl)
         return np.stack([x, y, z], axis=-1)
 
 
@@ -100,14 +100,14 @@ class SkinCells:
         along: cells of the patch from the rod's plane along the boom; up + along is the hole's quarter polygon.
         over: cells from the fold to the top line, none on a round boom.
         growth: ratio of neighbouring steps.
-        largest: largest step along the boom.
+        largest_wl: largest step along the boom.
     """
 
     up: int
     along: int
     over: int
     growth: float
-    largest: float
+    largest_wl: float
 
 
 def hole_on(skin: Skin, section: Floats) -> Floats:
@@ -123,13 +123,13 @@ def hole_on(skin: Skin, section: Floats) -> Floats:
     return skin.place(section[:, 0], skin.unroll(section[:, 1]))
 
 
-def skin_with_hole(skin: Skin, section: Floats, length: float, cells: SkinCells) -> list[Floats]:
+def skin_with_hole(skin: Skin, section: Floats, length_wl: float, cells: SkinCells) -> list[Floats]:
     """One eighth of a boom's surface with a hole.
 
     Args:
         skin: the surface.
         section: (up + along + 1, 2) x and z of the hole's quarter polygon, from +x to +z.
-        length: boom length from the rod's plane to the open end.
+        length_wl: boom length from the rod's plane to the open end.
         cells: fineness.
 
     Returns:
@@ -137,21 +137,21 @@ def skin_with_hole(skin: Skin, section: Floats, length: float, cells: SkinCells)
     """
     inner = np.stack([section[:, 0], skin.unroll(section[:, 1])], axis=1)
     hole = float(inner[0, 0])
-    reach = max(skin.fold * cells.along / cells.up, 1.5 * hole)
-    reach = min(reach, length / 2)
-    side = _towards_fold(skin, cells.up) * skin.fold
+    reach = max(skin.fold_wl * cells.along / cells.up, 1.5 * hole)
+    reach = min(reach, length_wl / 2)
+    side = _towards_fold(skin, cells.up) * skin.fold_wl
     top = np.linspace(reach, 0.0, cells.along + 1)
     outer = np.concatenate(
-        [np.stack([np.full(side.shape, reach), side], 1), np.stack([top, np.full(top.shape, skin.fold)], 1)[1:]]
+        [np.stack([np.full(side.shape, reach), side], 1), np.stack([top, np.full(top.shape, skin.fold_wl)], 1)[1:]]
     )
     segment = hole * math.pi / 2 / (cells.up + cells.along)
     rings = graded(reach - hole, segment, reach / cells.along, cells.growth, reach)
     patch = inner[:, None] + (outer - inner)[:, None] * rings[None, :, None]
     step = max(reach / cells.along, side[1])
-    beyond = reach + (length - reach) * graded(length - reach, step, step, cells.growth, cells.largest)
+    beyond = reach + (length_wl - reach) * graded(length_wl - reach, step, step, cells.growth, cells.largest_wl)
     pieces = [grid(skin.place(patch[..., 0], patch[..., 1])), _strip(skin, beyond, side)]
     if cells.over:
-        over = skin.fold + (skin.quarter - skin.fold) * (1 - _towards_fold(skin, cells.over)[::-1])
+        over = skin.fold_wl + (skin.quarter_wl - skin.fold_wl) * (1 - _towards_fold(skin, cells.over)[::-1])
         pieces.append(_strip(skin, np.concatenate([top[::-1], beyond[1:]]), over))
     return pieces
 

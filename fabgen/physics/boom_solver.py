@@ -15,11 +15,12 @@ from functools import lru_cache
 import numpy as np
 from scipy.linalg import lu_factor, lu_solve
 
-from fabgen.physics.boom_closed_form import bonded_reactance_factor, relative_allowance, rod_slope_ohm_per_wl
+from fabgen.physics.boom_carried import nearest_closed_form_mm
+from fabgen.physics.boom_closed_form import rod_slope_ohm_per_wl
 from fabgen.physics.boom_coupon import reactance_factor_from_allowance
 from fabgen.physics.boom_fill import centre_current, impedance_matrix, uniform_field
 from fabgen.physics.boom_mesh import Mesh
-from fabgen.physics.boom_mount import ETA_OHM, BoomMount, Section, Style, wavelength_mm
+from fabgen.physics.boom_mount import BoomMount, Style, wavelength_mm
 from fabgen.physics.boom_mount_mesh import (
     DEFAULT,
     FINE,
@@ -41,12 +42,12 @@ class Mode:
     """The half-wave mode of a rod.
 
     Attributes:
-        eigenvalue: reactive over radiated power, X/R.
+        reactance_ratio: the eigenvalue, reactive over radiated power, X/R.
         resistance_ohm: radiation resistance at the rod's middle; only meaningful for a rod that passes it.
         unknowns: number of edge functions.
     """
 
-    eigenvalue: float
+    reactance_ratio: float
     resistance_ohm: float
     unknowns: int
 
@@ -58,7 +59,7 @@ class SolvedAllowance:
     Attributes:
         allowance_mm: from the finer mesh.
         coarse_allowance_mm: from the coarser mesh.
-        mesh_difference: finer over coarser, less one.
+        mesh_difference_relative: finer over coarser, less one.
         reactance_factor: g = A S / (η B), the removed reactance over η B; B is `outside_mm`.
         rod_length_mm: modelled (free) rod length it holds for; g carries it to others.
         unknowns: of the coarser and the finer boom mesh.
@@ -66,7 +67,7 @@ class SolvedAllowance:
 
     allowance_mm: float
     coarse_allowance_mm: float
-    mesh_difference: float
+    mesh_difference_relative: float
     reactance_factor: float
     rod_length_mm: float
     unknowns: tuple[int, int]
@@ -115,12 +116,12 @@ def free_rod_mode(diameter_wl: float, length_wl: float, segments: int, fineness:
 
 
 def free_rod_length_wl(
-    eigenvalue: float, diameter_wl: float, near_wl: float, segments: int, fineness: Fineness = DEFAULT
+    reactance_ratio: float, diameter_wl: float, near_wl: float, segments: int, fineness: Fineness = DEFAULT
 ) -> float:
     """Length of the free rod whose half-wave mode has a given eigenvalue, by three solved rods.
 
     Args:
-        eigenvalue: X/R; 0 is resonance.
+        reactance_ratio: the eigenvalue X/R; 0 is resonance.
         diameter_wl: rod diameter in wavelengths.
         near_wl: expected length in wavelengths.
         segments: sides per quarter of its polygon.
@@ -130,8 +131,8 @@ def free_rod_length_wl(
         Length in wavelengths.
     """
     lengths = (near_wl - _FREE_STEP_WL, near_wl, near_wl + _FREE_STEP_WL)
-    values = [free_rod_mode(diameter_wl, length, segments, fineness).eigenvalue for length in lengths]
-    return float(np.polyval(np.polyfit(values, lengths, 2), eigenvalue))
+    values = [free_rod_mode(diameter_wl, length, segments, fineness).reactance_ratio for length in lengths]
+    return float(np.polyval(np.polyfit(values, lengths, 2), reactance_ratio))
 
 
 def solved_slope_ohm_per_wl(diameter_wl: float, length_wl: float, fineness: Fineness = DEFAULT) -> float:
@@ -150,7 +151,7 @@ def solved_slope_ohm_per_wl(diameter_wl: float, length_wl: float, fineness: Fine
         free_rod_mode(diameter_wl, length_wl + step, segments, fineness)
         for step in (-_SLOPE_STEP_WL, 0.0, _SLOPE_STEP_WL)
     )
-    return middle.resistance_ohm * (high.eigenvalue - low.eigenvalue) / (2 * _SLOPE_STEP_WL)
+    return middle.resistance_ohm * (high.reactance_ratio - low.reactance_ratio) / (2 * _SLOPE_STEP_WL)
 
 
 def solver_misses(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) -> tuple[RangeMiss, ...]:
@@ -190,19 +191,6 @@ def solver_misses(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) 
     return tuple(found for missed, found in checks if missed)
 
 
-def _first_guess_wl(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) -> float:
-    """Allowance to start from, in wavelengths: the nearest closed form, whatever its range."""
-    wl_mm = wavelength_mm(frequency_mhz)
-    solid_flat = mount.solid and mount.section is not Section.ROUND
-    if mount.section is Section.RECTANGULAR or solid_flat:
-        mean_wl = (mount.outside_mm + (mount.height_mm or mount.outside_mm)) / 2 / wl_mm
-        rod_wl = mount.rod_diameter_mm / wl_mm
-        bonded = ETA_OHM * 1.1 * mean_wl * bonded_reactance_factor(1.1 * mean_wl, rod_wl)
-        share = 1.0 if mount.style is Style.BONDED_THROUGH else 0.5
-        return share * bonded / rod_slope_ohm_per_wl(rod_wl, rod_length_mm / wl_mm)
-    return relative_allowance(mount, rod_length_mm, frequency_mhz) * mount.outside_mm / wl_mm
-
-
 def solve_at(
     mount: BoomMount,
     rod_length_mm: float,
@@ -230,12 +218,13 @@ def solve_at(
         raise ValueError("; ".join(miss.reason.value for miss in misses))
     wl_mm = wavelength_mm(frequency_mhz)
     wanted, diameter = rod_length_mm / wl_mm, mount.rod_diameter_mm / wl_mm
-    guess_wl = _first_guess_wl(mount, rod_length_mm, frequency_mhz) if guess_mm is None else guess_mm / wl_mm
-    mounted = wanted + guess_wl
+    if guess_mm is None:
+        guess_mm = nearest_closed_form_mm(mount, rod_length_mm, frequency_mhz)
+    mounted = wanted + guess_mm / wl_mm
     segments = rod_segments(mount.style, fineness)
     for _ in range(_MOST_ROUNDS):
         mode = half_wave_mode(mounted_rod_mesh(mount, wl_mm, mounted, fineness))
-        free = free_rod_length_wl(mode.eigenvalue, diameter, wanted, segments, fineness)
+        free = free_rod_length_wl(mode.reactance_ratio, diameter, wanted, segments, fineness)
         if abs(free - wanted) <= _LENGTH_TOLERANCE_WL:
             break
         mounted += wanted - free

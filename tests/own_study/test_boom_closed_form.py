@@ -9,14 +9,10 @@ from pathlib import Path
 
 import pytest
 
-from fabgen.physics.boom_closed_form import (
-    Surroundings,
-    closed_form_allowance,
-    relative_allowance,
-    rod_slope_ohm_per_wl,
-)
+from fabgen.physics.boom_closed_form import closed_form_allowance, relative_allowance, rod_slope_ohm_per_wl
 from fabgen.physics.boom_mount import BoomMount, Section, Style, wavelength_mm
 from fabgen.physics.boom_range import Advice, Reason
+from fabgen.physics.boom_uncertainty import Surroundings
 
 DATA = Path(__file__).parent / "data"
 MHZ = 299.792458  # one wavelength is 1000 mm
