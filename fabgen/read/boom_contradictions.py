@@ -5,6 +5,9 @@ from fabgen.read.places import key_place, value_place
 from fabgen.read.source import Problems
 from fabgen.read.yaml_tree import Map
 
+LONGEST_SPAN_MM = 25_000
+SHORTEST_FRONT_MM = 1
+
 
 def check_boom(keys: FileKeys, rows: list[tuple[ElementKeys, Map]], tree: Map, problems: Problems) -> None:
     """Report a section, wall, radius or length that cannot be."""
@@ -60,12 +63,16 @@ def _check_length(
         place = key_place(tree, "boom", *given[-1])
         problems.add("D19", f"{names} both say where the boom ends", place, "keep one of them")
         return
-    length_mm = boom.length_mm if boom.length_mm is not None else boom.overhang.length_mm
-    if length_mm is None or keys.elements is None or len(rows) != len(keys.elements) or not rows:
+    if keys.elements is None or len(rows) != len(keys.elements) or not rows:
         return
-    at_mm = [row.at_mm for row, _ in rows]
-    needed_mm = boom.overhang.rear_mm + max(at_mm) - min(at_mm)
-    if length_mm < needed_mm:
-        message = f"length: {length_mm:g} mm is shorter than rear overhang and rods, {needed_mm:g} mm"
+    (rear, _), (front, front_node) = (pick(rows, key=lambda pair: pair[0].at_mm) for pick in (min, max))
+    span_mm = front.at_mm - rear.at_mm
+    if span_mm > LONGEST_SPAN_MM:
+        message = f"at: {front.id} stands {span_mm:g} mm before {rear.id}"
+        problems.add("D12", message, value_place(front_node, "at"), f"at most {LONGEST_SPAN_MM:g} mm from end to end")
+    length_mm = boom.length_mm if boom.length_mm is not None else boom.overhang.length_mm
+    needed_mm = boom.overhang.rear_mm + span_mm + SHORTEST_FRONT_MM
+    if length_mm is not None and length_mm < needed_mm:
+        message = f"length: {length_mm:g} mm is too short for the rear overhang and the rods"
         place = value_place(tree, "boom", *given[0])
         problems.add("D19", message, place, f"at least {needed_mm:g} mm, or state `front` in place of `length`")

@@ -3,7 +3,7 @@
 from itertools import pairwise
 
 from fabgen.read.fits import HOLE_OVER_ROD_MM, default_hole_mm
-from fabgen.read.grammar import ElementKeys, FileKeys
+from fabgen.read.grammar import ElementKeys, FileKeys, MountKeys
 from fabgen.read.nearest import suggestion
 from fabgen.read.places import key_place, value_place
 from fabgen.read.resolve import resolve_rod
@@ -12,11 +12,15 @@ from fabgen.read.yaml_tree import Map
 
 Row = tuple[ElementKeys, Map]
 
+MOST_ROWS = 1000
 SAME_STATION_MM = 1e-6
 
 
 def check_elements(keys: FileKeys, rows: list[Row], tree: Map, problems: Problems) -> None:
     """Report rows that cannot stand together."""
+    if len(rows) > MOST_ROWS:
+        message = f"`elements` has {len(rows)} rows"
+        problems.add("D12", message, rows[MOST_ROWS][1].place, f"at most {MOST_ROWS}: check that it is one array")
     if keys.elements is not None and not keys.elements:
         problems.add("D07", "`elements` has no rows", key_place(tree, "elements"), "add one row per rod")
     _check_ids(rows, problems)
@@ -81,14 +85,32 @@ def _check_mount(row: ElementKeys, node: Map, keys: FileKeys, tree: Map, problem
         return
     mount = (keys.mounts or {})[name]
     rod = resolve_rod(row, keys.rods, keys.feed)
-    if mount is None or rod is None or mount.hole_mm is not None or (keys.shop is None and "shop" in tree):
+    if mount is not None and rod is not None:
+        _check_room(name, mount, rod.diameter_mm, keys, tree, problems)
+
+
+def _check_room(name: str, mount: MountKeys, rod_mm: float, keys: FileKeys, tree: Map, problems: Problems) -> None:
+    """A hole that the rod passes, a saddle that lifts it off the boom."""
+    if mount.saddle is not None and mount.saddle.height_mm is not None and mount.saddle.height_mm < rod_mm / 2:
+        message = f"height: at {mount.saddle.height_mm:g} mm a {rod_mm:g} mm rod sinks into the boom"
+        place = value_place(tree, "mounts", name, "saddle", "height")
+        problems.add("D19", message, place, f"more than {rod_mm / 2:g} mm, for example 12 mm")
+    if mount.style == "on-top":
+        return
+    room_mm = HOLE_OVER_ROD_MM[mount.style]
+    if mount.hole_mm is not None:
+        bushed = mount.style == "insulated-through"
+        if mount.hole_mm < rod_mm or (bushed and mount.hole_mm == rod_mm):
+            message = (
+                f"hole: a {rod_mm:g} mm rod{' and its bush do' if bushed else ' does'} not pass {mount.hole_mm:g} mm"
+            )
+            fix = f"for example {rod_mm + room_mm:g} mm, or leave it out for the smallest drill that fits"
+            problems.add("D19", message, value_place(tree, "mounts", name, "hole"), fix)
+        return
+    if keys.shop is None and "shop" in tree:
         return
     drills = keys.shop.drills if keys.shop is not None and keys.shop.drills is not None else "metric"
-    if default_hole_mm(mount.style, rod.diameter_mm, drills) is None:
-        message = f"`hole` is missing: no {drills} drill is large enough for a {rod.diameter_mm:g} mm rod"
-        problems.add(
-            "D07",
-            message,
-            key_place(tree, "mounts", name),
-            f"add hole: {rod.diameter_mm + HOLE_OVER_ROD_MM[mount.style]:g} mm, or the size that you can make",
-        )
+    if default_hole_mm(mount.style, rod_mm, drills) is None:
+        message = f"`hole` is missing: no {drills} drill is large enough for a {rod_mm:g} mm rod"
+        fix = f"add hole: {rod_mm + room_mm:g} mm, or the size that you can make"
+        problems.add("D07", message, key_place(tree, "mounts", name), fix)

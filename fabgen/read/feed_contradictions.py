@@ -3,6 +3,7 @@
 from fabgen.read.grammar import ElementKeys, FeedKeys, FileKeys
 from fabgen.read.mount_contradictions import check_allowance
 from fabgen.read.places import key_place, value_place
+from fabgen.read.resolve import resolve_rod
 from fabgen.read.source import Problems
 from fabgen.read.yaml_tree import Map
 
@@ -30,6 +31,14 @@ def check_feed(keys: FileKeys, rows: list[Row], tree: Map, problems: Problems) -
         if gap_mm >= row.length_mm / 2:
             message = f"gap: {gap_mm:g} mm is half of the rod {row.id} or more"
             problems.add("D19", message, value_place(tree, "feed", "gap"), "for example 10 mm")
+        rod = resolve_rod(row, keys.rods, feed)
+        rod_mm = rod.diameter_mm if rod is not None else 0.0
+        if feed.height_mm is not None and feed.height_mm < rod_mm / 2:
+            message = f"height: at {feed.height_mm:g} mm the {rod_mm:g} mm rod {row.id} sinks into the boom"
+            problems.add("D19", message, value_place(tree, "feed", "height"), "for example 18 mm")
+        if feed.spacing_mm is not None and feed.spacing_mm <= rod_mm:
+            message = f"spacing: two limbs of {rod_mm:g} mm do not fit into {feed.spacing_mm:g} mm centre to centre"
+            problems.add("D19", message, value_place(tree, "feed", "spacing"), "for example 30 mm")
         if feed.spacing_mm is not None and feed.spacing_mm >= row.length_mm / 2:
             message = f"spacing: {feed.spacing_mm:g} mm is half of the rod {row.id} or more"
             problems.add("D19", message, value_place(tree, "feed", "spacing"), "for example 30 mm")

@@ -47,8 +47,8 @@ class SheetKeys(Keys):
 class OverhangKeys(Keys):
     """How far the boom reaches past its outermost rods; `length` may stand in place of `front`."""
 
-    rear_mm: Annotated[float, Length(0, 5000, "40 mm", (3, 1500))] = Field(alias="rear")
-    front_mm: Annotated[float | None, Length(0, 5000, "30 mm", (3, 1500))] = Field(default=None, alias="front")
+    rear_mm: Annotated[float, Length(1, 5000, "70 mm", (3, 1500))] = Field(alias="rear")
+    front_mm: Annotated[float | None, Length(1, 5000, "70 mm", (3, 1500))] = Field(default=None, alias="front")
     length_mm: Annotated[float | None, Length(20, 30_000, "1.2 m")] = Field(default=None, alias="length")
 
 

@@ -289,6 +289,23 @@ CONTRADICTIONS = [
         "length: 340, mount: lin",
         "8:12 D10; 16:57 D16",
     ),
+    ("no bush fits the hole", "hole: 8 mm", "hole: 4 mm", "13:42 D19"),
+    (
+        "rod thicker than its hole",
+        "style: insulated-through, hole: 8 mm",
+        "style: bonded-through, bond: weld, hole: 3 mm",
+        "13:51 D19",
+    ),
+    (
+        "saddle that sinks",
+        "style: insulated-through, hole: 8 mm",
+        "style: on-top, saddle: {height: 1.5 mm}",
+        "13:42 D19",
+    ),
+    ("feed that sinks", "gap: 10 mm", "height: 1.5 mm", "19:39 D19"),
+    ("limbs that overlap", "kind: straight-dipole", "kind: folded-dipole, spacing: 4 mm", "19:38 D19"),
+    ("longer than any boom", "at: 190", "at: 30 m", "18:34 D12"),
+    ("no overhang", "rear: 70 mm", "rear: 0 mm", "11:20 D12"),
 ]
 
 CASES = [*TEXT, *KEYS, *VALUES, *CONTRADICTIONS]
@@ -323,6 +340,13 @@ def test_a_mistake_is_told_where_it_is(tmp_path: Path, case: tuple[str, ...]) ->
         assert problem.message
         assert problem.fix
         assert str(problem).startswith(f"d.yaml:{problem.place.line}:{problem.place.column}: {problem.code} ")
+
+
+def test_a_table_of_a_thousand_rods_is_enough(tmp_path: Path) -> None:
+    rows = [f"  - {{id: D{n}, role: director, at: {n}, length: 309}}\n" for n in range(1, 1002)]
+    driven = next(row for row in ELEMENTS.splitlines(keepends=True) if "driven" in row)
+    error = problems_of(tmp_path, BASE.replace(ELEMENTS, "".join(rows) + driven.replace("138", "2000")))
+    assert [(problem.code, problem.place.line) for problem in error.problems] == [("D12", 1016)]
 
 
 def test_there_are_enough_cases() -> None:
