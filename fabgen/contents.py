@@ -3,12 +3,14 @@
 import json
 from collections.abc import Callable, Sequence
 from dataclasses import asdict, dataclass
+from functools import cached_property
 
 from fabgen import __version__
 from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.drawing import Sheet
 from fabgen.design.findings import Finding, clear
 from fabgen.design.package import PackageFile
+from fabgen.design.solids import AssemblyItem, Print
 
 GROUPS = ("tables", "templates", "bench", "model", "prints", "fixtures", "book")
 """What `--only` can name."""
@@ -16,14 +18,28 @@ GROUPS = ("tables", "templates", "bench", "model", "prints", "fixtures", "book")
 Files = tuple[PackageFile, ...]
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True)
 class Order:
-    """What a package is to be written from."""
+    """What a package is to be written from; solids are made when they are first asked for."""
 
     arranged: Arranged
     findings: tuple[Finding, ...]
     cut_plan: CutPlan
     stamped: bool
+
+    @cached_property
+    def assembly(self) -> tuple[AssemblyItem, ...]:
+        """Every placed part with its solid."""
+        from fabgen.model.assembly import assembly
+
+        return assembly(self.arranged)
+
+    @cached_property
+    def prints(self) -> tuple[Print, ...]:
+        """Every distinct printed part of the array in print pose."""
+        from fabgen.model.prints import prints
+
+        return prints(self.arranged)
 
 
 def package_files(
@@ -111,31 +127,67 @@ def _drawn(stem: str, sheet: Sheet, purpose: str) -> list[PackageFile]:
 
 
 def _model(order: Order) -> Files:
-    from fabgen.export import step
-    from fabgen.model.assembly import assembly
+    from fabgen.export import glb, step
 
-    items, name = assembly(order.arranged), order.arranged.design.name
+    name = order.arranged.design.name
     return (
-        PackageFile("model/assembly.step", step.assembly_bytes(items, name=name), "the array, named and instanced"),
+        PackageFile("model/assembly.step", step.assembly_bytes(order.assembly, name=name), "the array, to measure"),
+        PackageFile("model/assembly.glb", glb.assembly_bytes(order.assembly, name=name), "the array, to look at"),
+    )
+
+
+def _prints(order: Order) -> Files:
+    return tuple(
+        file for each in order.prints for file in _printed(each, f"{each.product.name}, print {each.quantity}")
+    )
+
+
+def _fixtures(order: Order) -> Files:
+    from fabgen.arrange.fixtures import fixtures
+    from fabgen.model.prints import fixture_prints
+
+    aids = fixtures(order.arranged)
+    return tuple(
+        file
+        for aid, each in zip(aids, fixture_prints(aids), strict=True)
+        for file in _printed(each, f"{aid.label}, print {aid.quantity}: {aid.purpose}")
+    )
+
+
+def _printed(item: Print, purpose: str) -> Files:
+    """One print in the three formats."""
+    from fabgen.export import step, stl, threemf
+
+    writers = (("stl", stl), ("3mf", threemf), ("step", step))
+    return tuple(
+        PackageFile(f"prints/{item.stem}.{ending}", writer.part_bytes(item.product), purpose)
+        for ending, writer in writers
     )
 
 
 def _book(order: Order) -> Files:
+    from fabgen.arrange.fixtures import fixtures
     from fabgen.book.book import Book, book_html
     from fabgen.book.figures import figure
+    from fabgen.draw.sheet_list import sheets_of
     from fabgen.export.svg import svg
-    from fabgen.model.assembly import assembly
     from fabgen.model.pictures import assembly_picture, part_picture
-    from fabgen.model.prints import prints
+    from fabgen.model.prints import fixture_prints
 
-    views = [assembly_picture(assembly(order.arranged), name=order.arranged.design.name)]
-    pictures = [part_picture(each.product) for each in prints(order.arranged)]
+    views = [
+        assembly_picture(order.assembly, name=order.arranged.design.name),
+        *sheets_of("drawings", order.arranged, order.cut_plan, stamp=order.stamped),
+    ]
+    pictures = [part_picture(each.product) for each in order.prints]
+    aids = fixtures(order.arranged)
+    aid_pictures = [part_picture(each.product) for each in fixture_prints(aids)]
     book = Book(
         order.arranged,
         order.findings,
         order.cut_plan,
         views=tuple(figure(sheet, svg(sheet)) for sheet in views),
         pictures=tuple(figure(sheet, svg(sheet)) for sheet in pictures),
+        aids=tuple((aid, figure(sheet, svg(sheet))) for aid, sheet in zip(aids, aid_pictures, strict=True)),
         stamped=order.stamped,
     )
     return (PackageFile("book.html", book_html(book), "the build book: opens offline in any browser"),)
@@ -146,5 +198,7 @@ _WRITERS: dict[str, Callable[[Order], Files]] = {
     "templates": _templates,
     "bench": _bench,
     "model": _model,
+    "prints": _prints,
+    "fixtures": _fixtures,
     "book": _book,
 }

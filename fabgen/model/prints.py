@@ -1,10 +1,12 @@
-"""The printed parts as they lie on the bed: one per distinct part, with the bores that this printer needs."""
+"""What is printed, as it lies on the bed: one per distinct part, with the bores that this printer needs."""
 
 import re
 from collections import Counter
+from collections.abc import Sequence
 
 from fabgen import registry
 from fabgen.design.arranged import Arranged, Parameters
+from fabgen.design.fixtures import Fixture
 from fabgen.design.solids import Print, Product
 from fabgen.model.assembly import PRINTED, unique
 from fabgen.model.kernel import cq, solid_of
@@ -26,6 +28,19 @@ def prints(arranged: Arranged) -> tuple[Print, ...]:
     return tuple(found)
 
 
+def fixture_prints(fixtures: Sequence[Fixture]) -> tuple[Print, ...]:
+    """Every shop aid, in the order given; its files' names begin with `fixture-`."""
+    stems: set[str] = set()
+    return tuple(
+        Print(
+            unique(_stem(f"fixture {fixture.label}"), stems),
+            print_of(fixture.part, fixture.parameters, fixture.label),
+            fixture.quantity,
+        )
+        for fixture in fixtures
+    )
+
+
 def print_of(part: str, parameters: Parameters, name: str) -> Product:
     """One printed part in print pose.
 
@@ -40,5 +55,6 @@ def print_of(part: str, parameters: Parameters, name: str) -> Product:
 
 
 def _stem(name: str) -> str:
-    """A file name's stem: lower case, with hyphens for whatever a shell or a disk could mind."""
-    return re.sub(r"[^a-z0-9.]+", "-", name.lower()).strip("-.") or "part"
+    """A file name's stem: lower case, digits and hyphens, 6p35 for 6.35, so that the only dot is the ending's."""
+    whole = re.sub(r"(?<=\d)\.(?=\d)", "p", name.lower())
+    return re.sub(r"[^a-z0-9]+", "-", whole).strip("-") or "part"
