@@ -22,6 +22,7 @@ from fabgen.book import wording
 from fabgen.book.figures import Figure
 from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.findings import Finding, clear
+from fabgen.design.fixtures import Fixture
 
 Content = Mapping[str, Any]
 SECTIONS = "book/sections"
@@ -39,6 +40,7 @@ class Book:
         cut_plan: which piece is sawn from which bar.
         views: the array as a whole, as drawn.
         pictures: the printed parts, keyed by the size name of the parts list.
+        aids: the printed shop aids that the design needs, each with its picture.
         stamped: the design is not clear and every page says so.
     """
 
@@ -47,6 +49,7 @@ class Book:
     cut_plan: CutPlan
     views: tuple[Figure, ...] = ()
     pictures: tuple[Figure, ...] = ()
+    aids: tuple[tuple[Fixture, Figure], ...] = ()
     stamped: bool = False
 
     @property
