@@ -55,7 +55,7 @@ def test_aliases_do_not_explode(tmp_path: Path) -> None:
 
 
 @pytest.mark.parametrize(
-    "data", [b"a: 1\n" * 180_000, b"- \n" * 300_000, b"a: {" + b"b: 1, " * 150_000 + b"}", b"x" * 999_999]
+    "data", [b"a: 1\n" * 180_000, b"- \n" * 100_000, b"a: {" + b"b: 1, " * 150_000 + b"}", b"x" * 999_999]
 )
 def test_a_large_wrong_file_is_refused_at_once(tmp_path: Path, data: bytes) -> None:
     begun = time.perf_counter()

@@ -25,13 +25,13 @@ elements:
 ROWS = """\
   - {id: R, role: reflector, at: 0, length: 340}
   - {id: DE, role: driven, at: 138, length: 322, mount: feed}
-  - {id: D1, role: director, at: 190, length: 309, diameter: 5/8 in, finish: painted}
+  - {id: D1, role: director, at: 190, length: 309, diameter: 3/16 in, finish: painted}
 """
 TABLE = """\
 id,role,at,length,mount,diameter,finish
 R,reflector,0,340,,,
 DE,driven,138,322,feed,,
-D1,director,190,309,,5/8 in,painted
+D1,director,190,309,,3/16 in,painted
 """
 
 # Each case: name, a piece of the sound table, what stands in its place, and where which problem is told.
@@ -58,7 +58,7 @@ CASES = [
     ("tabs", ",", "\t", "t.csv 1:3 D22"),
     (
         "only a header",
-        "R,reflector,0,340,,,\nDE,driven,138,322,feed,,\nD1,director,190,309,,5/8 in,painted\n",
+        "R,reflector,0,340,,,\nDE,driven,138,322,feed,,\nD1,director,190,309,,3/16 in,painted\n",
         "",
         "d.yaml 11:1 D07",
     ),
@@ -93,7 +93,7 @@ def test_a_table_says_what_rows_say(tmp_path: Path) -> None:
         TABLE.replace(",", " , "),
         TABLE.replace("\n", "\n\n"),
         TABLE.replace("\n", "\n,,,,,,\n"),
-        TABLE.replace("driven", '"driven"').replace("5/8 in", '"5/8"""'),
+        TABLE.replace("driven", '"driven"').replace("3/16 in", '"3/16"""'),
         TABLE.rstrip("\n"),
     ],
     ids=["byte order mark", "carriage returns", "spaces", "blank lines", "empty rows", "quotes", "no last line end"],
