@@ -17,12 +17,9 @@ def computed(design: Design, element: Element, mount: Mount, values: tuple[Publi
         mount: its mount on a metal boom.
         values: the published values to show beside it.
     """
-    try:
-        case, near = boom_mount(design, element, mount), surroundings(design, element)
-    except ValueError as error:  # a hole no larger than its rod, a rod at the boom's very end
-        remark = Remark("L04", str(error))
-        return Allowance(0.0, "none", published=values, missing=True, remarks=(remark,))
-    result = closed_form_allowance(case, element.length_mm, design.frequency_mhz, near)
+    result = closed_form_allowance(
+        boom_mount(design, element, mount), element.length_mm, design.frequency_mhz, surroundings(design, element)
+    )
     advice = tuple(Remark("L05", advice.value) for advice in result.advice)
     if result.allowance_mm is None or result.u_mm is None:
         return Allowance(0.0, "none", published=values, missing=True, remarks=_misses(result) + advice)

@@ -226,19 +226,17 @@ def bonded(bond, hole_mm):
 @pytest.mark.parametrize(
     ("bond", "hole_mm", "expected"),
     [
-        ("weld", 3.9, [("F16", "fail", "R, D1, D2", -0.1, 0)]),
-        ("press", 3.9, []),
-        ("press", 3.8, [("F16", "fail", "R, D1, D2", -0.2, -0.1)]),
-        ("press", 4.1, []),
+        ("weld", 4.05, []),
+        ("press", 4.18, []),
+        ("weld", 4.2, [("F16", "warn", "R, D1, D2", 0.32, 0.3)]),
         # 0.2 of play and IT12 = 0.12 of drilling
         ("press", 4.2, [("F16", "warn", "R, D1, D2", 0.32, 0.3)]),
         ("wall-screws", 4.3, []),
     ],
 )
-def test_a_bare_rod_in_its_hole(found, bond, hole_mm, expected):
+def test_a_bonded_rod_in_its_hole(found, bond, hole_mm, expected):
     assert found("rod_in_hole", bonded(bond, hole_mm)) == expected
 
 
-def test_a_rod_through_wood(found):
-    assert found("rod_in_hole", WOOD) == []
-    assert found("rod_in_hole", WOOD | {"mounts.line.hole": 3.9}) == [("F16", "fail", "R, D1, D2", -0.1, 0)]
+def test_a_rod_through_wood_may_be_loose(found):
+    assert found("rod_in_hole", WOOD | {"mounts.line.hole": 4.5}) == []

@@ -17,16 +17,6 @@ def test_a_missing_allowance_fails_and_advice_is_a_note(found):
     assert found("missing_allowance") == []
 
 
-def test_a_rod_at_the_very_end_has_no_computed_allowance(found):
-    assert found("missing_allowance", {"boom.overhang.rear": 0}) == [("L04", "fail", "R", None, None)]
-    assert found("hole_to_end", {"boom.overhang.rear": 0}) == [("H08", "fail", "R", 0, 4)]
-
-
-def test_a_hole_no_larger_than_its_rod_has_no_computed_allowance(found):
-    tight = found("missing_allowance", {"mounts.line.hole": 4})
-    assert tight == [("L04", "fail", "R, D1, D2", None, None)]
-
-
 def test_a_published_curve_beyond_its_range_warns(found):
     """DL6WU's curve ends at a boom of 0.055 wavelengths; 40 mm are 0.0579 at 434 MHz."""
     changes = {"boom.section": "round", "boom.outside": 40, "boom.corner_radius": None}
