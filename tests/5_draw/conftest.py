@@ -50,6 +50,7 @@ CHANGES = {
     "blank": (("sheet: {owner: Weir and sluice workshop, creator: K. M., date: 2026-11-20}\n", ""),),
 }
 ALL = (*CHANGES, "dense")
+QUICK = ("square", "rectangular", "round", "solid", "small")
 
 
 def dense(text: str) -> str:
@@ -180,7 +181,7 @@ def normals() -> dict[str, tuple[float, float]]:
     return NORMALS
 
 
-@pytest.fixture(params=ALL)
+@pytest.fixture(params=[name if name in QUICK else pytest.param(name, marks=pytest.mark.slow) for name in ALL])
 def shape(request: pytest.FixtureRequest, arranged_as) -> tuple[Arranged, CutPlan]:
-    """Every shape of boom, one after the other."""
+    """Every shape of boom, one after the other; the first of each kind in the quick suite."""
     return arranged_as(request.param)

@@ -15,7 +15,7 @@ from fabgen.units import format_mm
 
 PLACE = "templates"
 
-_LEFT_MM, _FOOT_MM, _RIGHT_MM, _HEAD_MM = 58.0, 48.0, 14.0, 40.0
+_LEFT_MM, _FOOT_MM, _RIGHT_MM, _HEAD_MM = 58.0, 48.0, 14.0, 44.0
 _LINE_MM = 165.0
 _CROSS_MM, _DOT_MM = 3.0, 0.8
 _NEAR_MM = 0.01
@@ -124,6 +124,7 @@ def _heading(pen: Pen, arranged: Arranged, plate: Placed, counts: Counter[tuple[
         "Printed face towards the mast; the boom lies behind the plate, between the dashed lines.",
         f"{plate.material}, {thickness_mm:g} mm thick. Scale 1:1. {ABOUT_BARS}",
     ]
+    lines.append(design.title)
     y = from_y_mm
     for line in lines:
         pen.text(16.0, y, shortened(line, 2.0, _LINE_MM), 2.0)
