@@ -6,7 +6,9 @@ from fabgen.read.boom_contradictions import check_boom
 from fabgen.read.element_contradictions import check_elements
 from fabgen.read.feed_contradictions import check_clamp, check_feed
 from fabgen.read.grammar import ElementKeys, FileKeys
+from fabgen.read.limits import check_limits
 from fabgen.read.mount_contradictions import check_mounts
+from fabgen.read.other_rod import check_other_rods
 from fabgen.read.source import Problems
 from fabgen.read.yaml_tree import Map, Seq
 
@@ -25,6 +27,8 @@ def find_contradictions(keys: FileKeys, tree: Map, problems: Problems) -> None:
     check_elements(keys, rows, tree, problems)
     check_feed(keys, rows, tree, problems)
     check_clamp(keys, rows, tree, problems)
+    check_other_rods(keys, rows, tree, problems)
+    check_limits(keys.limits, keys.frequency_mhz, tree, problems)
 
 
 def _rows(keys: FileKeys, tree: Map) -> Iterator[tuple[ElementKeys, Map]]:

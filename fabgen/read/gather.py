@@ -88,7 +88,9 @@ def _report(
     if kind == "extra_forbidden":
         known = aliases(_model_at(model, loc[:-1]) or FileKeys)
         place = key.place if key is not None else node.place
-        problems.add("D06", f"`{name}` is not a key here", place, suggestion(name, known))
+        home = _homes(name)
+        fix = f"it belongs in {' or '.join(home)}" if 0 < len(home) <= 2 else suggestion(name, known)
+        problems.add("D06", f"`{name}` is not a key here", place, fix)
     elif kind == "fabgen":
         context = reason["ctx"]
         problems.add(context["code"], f"{name}: {context['message']}", _value_place(node, key), context["fix"])
@@ -131,6 +133,12 @@ def _report_shape(
 def aliases(model: type[Keys]) -> list[str]:
     """The keys of a section, in the order of the grammar."""
     return [info.alias or name for name, info in model.model_fields.items()]
+
+
+def _homes(alias: str) -> list[str]:
+    """The sections of the file that have a key of that name."""
+    sections = {info.alias or name: _keys_in(info.annotation) for name, info in FileKeys.model_fields.items()}
+    return [name for name, model in sections.items() if model is not None and _field(model, alias) is not None]
 
 
 def required(model: type[Keys]) -> list[str]:

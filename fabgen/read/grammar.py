@@ -9,6 +9,7 @@ from pydantic import Field, model_validator
 
 from fabgen.design.design import Finish, Material, Polarisation, Role, Style
 from fabgen.read.compound import Keys, Lengths, MaterialValue, Section
+from fabgen.read.limits import LimitsKeys
 from fabgen.read.quantities import Frequency, Length, Number, WordOrLength
 from fabgen.read.words import Date, Name, Text, Word
 from fabgen.read.yaml_tree import Scalar
@@ -140,6 +141,7 @@ class RodKeys(Keys):
     """What elements are cut from, unless they say otherwise."""
 
     diameter_mm: Annotated[float, _ROD] = Field(alias="diameter")
+    modelled_diameter_mm: Annotated[float | None, _ROD] = Field(default=None, alias="modelled_diameter")
     material: Annotated[Material, MaterialValue()]
     finish: Annotated[Finish | None, Word("bare", "anodised", "painted")] = None
 
@@ -153,6 +155,7 @@ class ElementKeys(Keys):
     length_mm: Annotated[float, Length(5, 12_000, "322 mm", (20, 5500))] = Field(alias="length")
     mount: Annotated[str | None, _MOUNT] = None
     diameter_mm: Annotated[float | None, _ROD] = Field(default=None, alias="diameter")
+    modelled_diameter_mm: Annotated[float | None, _ROD] = Field(default=None, alias="modelled_diameter")
     material: Annotated[Material | None, MaterialValue()] = None
     finish: Annotated[Finish | None, Word("bare", "anodised", "painted")] = None
 
@@ -243,5 +246,6 @@ class FileKeys(Keys):
     feed: Annotated[FeedKeys | None, Section()] = None
     clamp: Annotated[ClampKeys | None, Section()] = None
     clearance: Annotated[ClearanceKeys | None, Section()] = None
+    limits: Annotated[LimitsKeys | None, Section()] = None
     shop: Annotated[ShopKeys | None, Section()] = None
     printer: Annotated[PrinterKeys | None, Section()] = None

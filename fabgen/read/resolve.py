@@ -29,6 +29,7 @@ from fabgen.read.grammar import (
     ShopKeys,
     StockKeys,
 )
+from fabgen.read.limits import resolve_limits
 from fabgen.read.reasons import Reasons
 from fabgen.stock.tables import ToleranceClass
 
@@ -74,6 +75,7 @@ def resolve(keys: FileKeys, stem: str, sha256: str, reasons: Reasons) -> Design:
         tip_clearance_mm=pick("clearance.tip", keys.clearance.tip_mm if keys.clearance else None, 25.0),
         shop=shop,
         printer=_printer(keys.printer or PrinterKeys.model_construct(), reasons),
+        limits=resolve_limits(keys.limits),
     )
 
 
@@ -111,7 +113,8 @@ def resolve_rod(row: ElementKeys, rods: RodKeys | None, feed: FeedKeys | None) -
     material = row.material or (rods.material if rods else None)
     if diameter_mm is None or material is None:
         return None
-    return Rod(diameter_mm, material, row.finish or (rods.finish if rods else None) or "bare")
+    modelled_mm = row.modelled_diameter_mm or (rods.modelled_diameter_mm if rods else None)
+    return Rod(diameter_mm, material, row.finish or (rods.finish if rods else None) or "bare", modelled_mm)
 
 
 def _elements(keys: FileKeys, rows: list[ElementKeys], boom: Boom, shop: Shop, reasons: Reasons) -> tuple[Element, ...]:
@@ -124,7 +127,7 @@ def _elements(keys: FileKeys, rows: list[ElementKeys], boom: Boom, shop: Shop, r
     for row in rows:
         rod = resolve_rod(row, keys.rods, keys.feed)
         assert rod is not None
-        rod = rods.setdefault((rod.diameter_mm, rod.material, rod.finish), rod)
+        rod = rods.setdefault((rod.diameter_mm, rod.material, rod.finish, rod.modelled_diameter_mm), rod)
         mount = None
         if row.role != "driven":
             name = row.mount or sole

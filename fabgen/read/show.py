@@ -6,6 +6,7 @@ from collections.abc import Iterator
 from decimal import Decimal
 
 from fabgen.design.design import AllowanceChoice, Bush, Element, Keeper, Material, Mount, Saddle
+from fabgen.read.limits import shown_limits
 from fabgen.read.places import node_at
 from fabgen.read.reader import Reading
 from fabgen.read.yaml_tree import Map, Scalar, Seq
@@ -66,6 +67,8 @@ class _Shown:
         yield from self._clamp()
         yield "clearance:"
         yield self._line("clearance.tip", mm(design.tip_clearance_mm))
+        limits = [self._line(f"limits.{key}", value) for key, value in shown_limits(design.limits)]
+        yield from ["limits:", *limits] if limits else []
         yield from self._shop()
         yield from self._printer()
 
@@ -226,6 +229,8 @@ class _Shown:
         yield f"length: {mm(element.length_mm)}"
         yield f"mount: {word(element.mount.name) if element.mount is not None else 'feed'}"
         yield f"diameter: {mm(element.rod.diameter_mm)}"
+        if element.rod.modelled_diameter_mm is not None:
+            yield f"modelled_diameter: {mm(element.rod.modelled_diameter_mm)}"
         material = element.rod.material
         yield f"material: {_material_mapping(material) if _is_stated(material) else word(material.name)}"
         yield f"finish: {element.rod.finish}"
