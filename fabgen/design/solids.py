@@ -4,20 +4,29 @@ The solids are the kernel's own objects, carried through untouched; nothing here
 """
 
 from dataclasses import dataclass
-from typing import Any
+from typing import TYPE_CHECKING, Any
 
-from fabgen.design.arranged import Frame, Vector
+from fabgen.design.arranged import Frame
+
+if TYPE_CHECKING:
+    import numpy as np
+    from numpy.typing import NDArray
 
 Colour = tuple[float, float, float]
 """Red, green, blue from 0 to 1, sRGB."""
 
 
-@dataclass(frozen=True, slots=True)
+@dataclass(frozen=True, slots=True, eq=False)
 class Mesh:
-    """A closed surface of triangles in mm, each counter-clockwise seen from outside."""
+    """A closed surface of triangles in mm.
 
-    vertices_mm: tuple[Vector, ...]
-    triangles: tuple[tuple[int, int, int], ...]
+    Attributes:
+        vertices_mm: one row (x, y, z) per vertex, each vertex once.
+        triangles: one row of three vertices per triangle, counter-clockwise seen from outside.
+    """
+
+    vertices_mm: "NDArray[np.float64]"
+    triangles: "NDArray[np.int64]"
 
 
 @dataclass(frozen=True, slots=True, eq=False)

@@ -47,7 +47,6 @@ def assembly_bytes(items: Sequence[AssemblyItem], *, name: str) -> bytes:
 
 def _mesh(mesh: Mesh, colour: Colour) -> "trimesh.Trimesh":
     """The mesh in metres with flat shading, in its colour."""
-    import numpy as np
     import trimesh
 
     visual: Any = trimesh.visual
@@ -57,8 +56,8 @@ def _mesh(mesh: Mesh, colour: Colour) -> "trimesh.Trimesh":
         roughnessFactor=_ROUGHNESS,
     )
     return trimesh.Trimesh(
-        vertices=np.asarray(mesh.vertices_mm) * _M_PER_MM,
-        faces=np.asarray(mesh.triangles),
+        vertices=mesh.vertices_mm * _M_PER_MM,
+        faces=mesh.triangles,
         visual=visual.TextureVisuals(material=material),
         process=False,
     )

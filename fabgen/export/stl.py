@@ -13,7 +13,7 @@ def part_bytes(product: "Product") -> bytes:
     """The part's mesh as a binary STL file; name and unit stand in the header's comment."""
     import numpy as np
 
-    corners = np.asarray(product.mesh.vertices_mm, dtype="<f4")[np.asarray(product.mesh.triangles)]
+    corners = product.mesh.vertices_mm.astype("<f4")[product.mesh.triangles]
     across = np.cross(corners[:, 1] - corners[:, 0], corners[:, 2] - corners[:, 0])
     length = np.linalg.norm(across, axis=1, keepdims=True)
     records = np.zeros(len(corners), dtype=[("normal", "<f4", 3), ("corners", "<f4", (3, 3)), ("spare", "<u2")])

@@ -45,8 +45,10 @@ def part_bytes(product: "Product") -> bytes:
 
 def _model(product: "Product") -> str:
     name = quoteattr(product.name)
-    vertices = "".join(f'<vertex x="{x:.6f}" y="{y:.6f}" z="{z:.6f}"/>\n' for x, y, z in product.mesh.vertices_mm)
-    triangles = "".join(f'<triangle v1="{a}" v2="{b}" v3="{c}"/>\n' for a, b, c in product.mesh.triangles)
+    vertices = "".join(
+        f'<vertex x="{x:.6f}" y="{y:.6f}" z="{z:.6f}"/>\n' for x, y, z in product.mesh.vertices_mm.tolist()
+    )
+    triangles = "".join(f'<triangle v1="{a}" v2="{b}" v3="{c}"/>\n' for a, b, c in product.mesh.triangles.tolist())
     return (
         f'{_DECLARATION}<model unit="millimeter" xml:lang="en-US" '
         'xmlns="http://schemas.microsoft.com/3dmanufacturing/core/2015/02">\n'

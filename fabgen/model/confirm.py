@@ -1,21 +1,20 @@
 """The kernel's word on every near pair: solids against the numbers they were arranged by.
 
-Formulae come first and decide; here each distinct relative placement is built and measured once. A disagreement is a
-mistake of the program, never of the design.
+Formulae come first and decide. Parts that meet, or whose shapes do, are measured solid against solid, once per distinct
+relative placement. For parts meant to stay apart the formula is a lower bound because simple shapes hold the solids;
+that they do is confirmed once per distinct part. A disagreement is a mistake of the program, never of the design.
 """
 
 import functools
-import itertools
 from collections.abc import Iterable
 from typing import Protocol
 
 from OCP.BRepExtrema import BRepExtrema_DistShapeShape
 
-from fabgen.design.arranged import Box, Cylinder, Frame, Interface, Placed
-from fabgen.design.distances import distance_mm
+from fabgen.design.arranged import Cylinder, Frame, Interface, Placed
 from fabgen.errors import ProgramError
+from fabgen.model.envelope import outside_envelope
 from fabgen.model.fits import Fit, fits
-from fabgen.model.kernel import bounds_mm, cq
 from fabgen.model.neighbourhood import Body, neighbourhood, relative
 from fabgen.model.solids import location
 
@@ -78,8 +77,8 @@ def _contradiction(pair: Near) -> str:
     second, others = neighbourhood(pair.second, pair.first, pair.distance_mm)
     frame = relative(own, others)
     exact = _formula_is_exact(pair.first, pair.second)
-    if pair.interface is None and not exact and _boxes_apart_mm(first, second, frame) >= pair.distance_mm > 0:
-        return ""
+    if pair.interface is None and pair.distance_mm > 0 and not exact:
+        return outside_envelope(pair.first) or outside_envelope(pair.second)
     apart_mm = _distance_mm(first, second, frame)
     overlap_mm3 = _overlap_mm3(first, second, frame) if apart_mm <= DISTANCE_TOLERANCE_MM else 0.0
     if pair.interface:
@@ -120,21 +119,6 @@ def _formula_is_exact(first: Placed, second: Placed) -> bool:
             for b in second.shapes
         )
     )
-
-
-@functools.cache
-def _bounds_mm(body: Body) -> Box:
-    low, high = bounds_mm(cq.Workplane(body.solid))
-    return Box(low, high)
-
-
-def _boxes_apart_mm(first: Body, second: Body, frame: Frame) -> float:
-    """Distance between the kernel's own boxes round two solids: never more than the distance of the solids."""
-    box = _bounds_mm(second)
-    ends = [(box.low[i], box.high[i]) for i in range(3)]
-    corners = [frame.point((x, y, z)) for x, y, z in itertools.product(*ends)]
-    low, high = (tuple(bound(corner[i] for corner in corners) for i in range(3)) for bound in (min, max))
-    return distance_mm(_bounds_mm(first), Box((low[0], low[1], low[2]), (high[0], high[1], high[2])))
 
 
 @functools.cache

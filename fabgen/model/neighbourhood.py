@@ -10,7 +10,7 @@ from typing import Any, NamedTuple
 from fabgen.design.arranged import Frame, Parameters, Placed, Vector
 from fabgen.design.distances import bounding_box
 from fabgen.model.kernel import cq
-from fabgen.model.solids import GROWTH, solid_of
+from fabgen.model.solids import solid_of, without_growth
 
 _DECIMALS = 7
 _BEYOND_MM = 1.0
@@ -36,7 +36,7 @@ def neighbourhood(placed: Placed, other: Placed, distance_mm: float) -> tuple[Bo
         other: the part beside it.
         distance_mm: of the two, at most.
     """
-    parameters = {name: value for name, value in placed.parameters if name != GROWTH}
+    parameters = dict(without_growth(placed.parameters))
     frame, margin_mm = placed.frame, distance_mm + _BEYOND_MM
     if placed.part == "boom":
         frame = _boom_piece(parameters, frame, _span(other, frame.origin, frame.x, margin_mm))

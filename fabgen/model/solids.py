@@ -4,11 +4,10 @@ import functools
 
 from fabgen import registry
 from fabgen.design.arranged import Frame, Parameters, Placed
-from fabgen.errors import ProgramError
 from fabgen.model import kernel
 from fabgen.model.kernel import cq
 
-GROWTH = "hole_growth_mm"
+_GROWTH = "hole_growth_mm"
 
 
 @functools.cache
@@ -20,13 +19,10 @@ def solid_of(part: str, parameters: Parameters = ()) -> cq.Solid:
         parameters: its keyword arguments, as in `Placed.parameters`.
 
     Raises:
-        ProgramError: there is no such part, or it did not come out as one solid with a volume; a cut that leaves two
-            pieces is valid geometry to the kernel, so pieces are counted.
+        ProgramError: there is no such part, or it did not come out as one solid; a cut that leaves two pieces is valid
+            geometry to the kernel, so pieces are counted.
     """
-    solid = kernel.solid_of(registry.entry("model/parts", part).function()(**dict(parameters)))
-    if solid.Volume() <= 0:
-        raise ProgramError(f"part {part} came out without a volume")
-    return solid
+    return kernel.solid_of(registry.entry("model/parts", part).function()(**dict(parameters)))
 
 
 def finished(placed: Placed) -> cq.Solid:
@@ -34,7 +30,12 @@ def finished(placed: Placed) -> cq.Solid:
 
     A printed bore is drawn larger by what it comes out smaller; here it has the size that it comes out with.
     """
-    return solid_of(placed.part, tuple((name, value) for name, value in placed.parameters if name != GROWTH))
+    return solid_of(placed.part, without_growth(placed.parameters))
+
+
+def without_growth(parameters: Parameters) -> Parameters:
+    """A part's parameters for the bores as they come out of the printer."""
+    return tuple((name, value) for name, value in parameters if name != _GROWTH)
 
 
 def location(frame: Frame) -> cq.Location:

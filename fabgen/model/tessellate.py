@@ -19,8 +19,10 @@ from fabgen.design.solids import Mesh
 from fabgen.errors import ProgramError
 from fabgen.model.kernel import cq
 
-VIEW_RAD, PRINT_RAD = (0.5, 0.24, 0.12, 0.06), (0.1, 0.05, 0.025)
-"""Steps of refinement; the kernel halves the angle: 26 or 53 sides to a circle for viewing, 126 for printing."""
+VIEW_RAD, PRINT_RAD = (0.24, 0.12, 0.06), (0.1, 0.05, 0.025)
+"""Steps of refinement; the kernel halves the angle: 53 sides to a circle for viewing, 126 for printing."""
+_MANY_FACES, _COARSE_RAD = 100, 0.5
+"""A solid of many small faces, such as a drilled boom, may look coarser: 26 sides to a circle."""
 VOLUME_TOLERANCE = 0.0025
 """Largest relative difference of volume; a cylinder of 53 sides is 0.23 % short."""
 _CHORD_MM = 0.05
@@ -35,10 +37,13 @@ def mesh_of(solid: cq.Solid, angles_rad: Sequence[float] = PRINT_RAD) -> Mesh:
         angles_rad: angle between neighbouring sides of a curve; the next one is taken until the volume agrees.
 
     Raises:
-        ProgramError: the surface is not closed, or the volume does not come near.
+        ProgramError: the solid has no volume, the surface is not closed, or its volume does not come near.
     """
     exact_mm3 = solid.Volume()
-    for angle_rad in angles_rad:
+    if exact_mm3 <= 0:
+        raise ProgramError(f"a solid of {exact_mm3:.3f} mm³")
+    many = angles_rad is VIEW_RAD and len(solid.Faces()) > _MANY_FACES
+    for angle_rad in (_COARSE_RAD, *angles_rad) if many else angles_rad:
         mesh = _triangles(solid, angle_rad)
         if abs(volume_mm3(mesh) / exact_mm3 - 1) <= VOLUME_TOLERANCE:
             _require_closed(mesh)
@@ -48,50 +53,52 @@ def mesh_of(solid: cq.Solid, angles_rad: Sequence[float] = PRINT_RAD) -> Mesh:
 
 def volume_mm3(mesh: Mesh) -> float:
     """Volume inside a closed mesh (divergence theorem)."""
-    corners = np.asarray(mesh.vertices_mm)[np.asarray(mesh.triangles)]
+    corners = mesh.vertices_mm[mesh.triangles]
     return float(np.einsum("ij,ij->", corners[:, 0], np.cross(corners[:, 1], corners[:, 2])) / 6)
 
 
 def _triangles(solid: cq.Solid, angle_rad: float) -> Mesh:
-
     asked = IMeshTools_Parameters()
     asked.Deflection, asked.Angle, asked.InParallel = _CHORD_MM, angle_rad, False
     # The other algorithm takes a time quadratic in the number of holes of a face.
     asked.MeshAlgo = IMeshTools_MeshAlgoType.IMeshTools_MeshAlgoType_Delabella
     BRepTools.Clean_s(solid.wrapped)
     BRepMesh_IncrementalMesh(solid.wrapped, asked)
-    index: dict[Vector, int] = {}
-    triangles = []
+    points: list[Vector] = []
+    corners: list[tuple[int, int, int]] = []
     for face in solid.Faces():
         place = TopLoc_Location()
         drawn = BRep_Tool.Triangulation_s(face.wrapped, place)
         if drawn is None:
             raise ProgramError("a face that cannot be divided into triangles")
-        move = None if place.IsIdentity() else place.Transformation()
-        numbers = [0]
-        for i in range(1, drawn.NbNodes() + 1):
-            point = drawn.Node(i) if move is None else drawn.Node(i).Transformed(move)
-            # Faces meet in points that both took from their common edge; adding zero removes the sign of -0.0.
-            key = (
-                round(point.X(), _MERGE_DECIMALS) + 0.0,
-                round(point.Y(), _MERGE_DECIMALS) + 0.0,
-                round(point.Z(), _MERGE_DECIMALS) + 0.0,
-            )
-            numbers.append(index.setdefault(key, len(index)))
-        inside_out = face.wrapped.Orientation() == TopAbs_Orientation.TopAbs_REVERSED
-        for i in range(1, drawn.NbTriangles() + 1):
-            a, b, c = (numbers[n] for n in drawn.Triangle(i).Get())
-            if a != b and c not in (a, b):
-                triangles.append((a, c, b) if inside_out else (a, b, c))
+        before = len(points) - 1  # the kernel counts from 1
+        nodes = [drawn.Node(i) for i in range(1, drawn.NbNodes() + 1)]
+        if not place.IsIdentity():
+            nodes = [node.Transformed(place.Transformation()) for node in nodes]
+        points += [node.Coord() for node in nodes]
+        sides = [drawn.Triangle(i).Get() for i in range(1, drawn.NbTriangles() + 1)]
+        if face.wrapped.Orientation() == TopAbs_Orientation.TopAbs_REVERSED:
+            sides = [(a, c, b) for a, b, c in sides]
+        corners += [(a + before, b + before, c + before) for a, b, c in sides]
     BRepTools.Clean_s(solid.wrapped)
-    return Mesh(tuple(index), tuple(triangles))
+    return _merged(points, corners)
+
+
+def _merged(points: Sequence[Vector], corners: Sequence[tuple[int, int, int]]) -> Mesh:
+    """The mesh with every vertex once: faces meet in points that both took from their common edge."""
+    rounded = np.round(np.array(points, dtype=np.float64), _MERGE_DECIMALS) + 0.0  # takes the sign from -0.0
+    vertices, places = np.unique(rounded, axis=0, return_inverse=True)
+    triangles = places.reshape(-1)[np.array(corners, dtype=np.int64)]
+    a, b, c = triangles.T
+    return Mesh(vertices, triangles[(a != b) & (b != c) & (c != a)])
 
 
 def _require_closed(mesh: Mesh) -> None:
     """Every side of every triangle is used once in each direction."""
-    sides = [side for a, b, c in mesh.triangles for side in ((a, b), (b, c), (c, a))]
-    used = set(sides)
-    if len(used) < len(sides):
+    count = len(mesh.vertices_mm)
+    starts, ends = mesh.triangles.reshape(-1), np.roll(mesh.triangles, -1, axis=1).reshape(-1)
+    forward, backward = np.sort(starts * count + ends), np.sort(ends * count + starts)
+    if np.any(forward[1:] == forward[:-1]):
         raise ProgramError("a mesh with a side used twice in one direction")
-    if any((b, a) not in used for a, b in sides):
+    if not np.array_equal(forward, backward):
         raise ProgramError("a mesh that is not closed")

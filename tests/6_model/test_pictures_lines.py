@@ -3,6 +3,7 @@
 import itertools
 import math
 
+import numpy as np
 import pytest
 
 from fabgen.design.arranged import Frame
@@ -15,10 +16,11 @@ from fabgen.model.parts.bush import bush
 from fabgen.model.parts.rod import rod
 
 FRONT = (0.0, -1.0, 0.0)  # x to the right, z up
+NO_MESH = Mesh(np.empty((0, 3)), np.empty((0, 3), int))
 
 
 def product(name, part):
-    return Product(name, part.val(), Mesh((), ()), (0.5, 0.5, 0.5))
+    return Product(name, part.val(), NO_MESH, (0.5, 0.5, 0.5))
 
 
 def length(lines):

@@ -6,6 +6,7 @@ import subprocess
 import sys
 
 import cadquery as cq
+import numpy as np
 import pytest
 from OCP.Quantity import Quantity_Color, Quantity_TOC_sRGB
 from OCP.STEPCAFControl import STEPCAFControl_Reader
@@ -24,10 +25,11 @@ from fabgen.model.parts.rod import rod
 
 HOLES = ((40, 90, 1.5, 8), (40, 270, 1.5, 8), (100, 90, 0, 8), (100, 270, 0, 8), (120, 0, -3, 3.3), (130, 180, 2, 4.2))
 LEFT, RIGHT = (0.0, 1.0, 0.0), (0.0, -1.0, 0.0)
+NO_MESH = Mesh(np.empty((0, 3)), np.empty((0, 3), int))
 
 
 def product(name, part, colour):
-    return Product(name, part.val(), Mesh((), ()), colour)
+    return Product(name, part.val(), NO_MESH, colour)
 
 
 def sample(rods=2):
