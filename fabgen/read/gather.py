@@ -34,7 +34,7 @@ def gather(broken: Broken, root: Map, problems: Problems) -> None:
     """
     info = FileKeys.model_fields[broken.field]
     key = info.alias or broken.field
-    name = _row_name(broken.node) or key
+    name = _called(broken.node, root) or key
     model = _keys_in(info.annotation)
     for reason in _reasons(broken.error, model):
         _report(broken.node, root.key(key), name, model, reason, problems)
@@ -57,10 +57,14 @@ def _reasons(error: ValidationError, model: type[Keys] | None) -> list[Any]:
     return [reason for reason in reasons if reason["type"] != "missing" or reason["loc"] not in meant]
 
 
-def _row_name(node: Node) -> str:
-    """What messages call a row of `elements`."""
+def _called(node: Node, root: Map) -> str:
+    """What messages call a row of `elements` or one of `mounts`."""
     id_ = node.get("id") if isinstance(node, Map) else None
-    return f"row {id_}" if isinstance(id_, Scalar) else ""
+    if isinstance(id_, Scalar):
+        return f"row {id_}"
+    mounts = root.get("mounts")
+    names = [name for name, mount in mounts.items() if mount is node] if isinstance(mounts, Map) else []
+    return f"mount {names[0]}" if names else ""
 
 
 def _report(
@@ -77,7 +81,7 @@ def _report(
         return
     for depth, part in enumerate(loc):
         if isinstance(node, Map) and isinstance(part, str) and part in node:
-            key, node, name = node.key(part), node[node.key(part)], part  # type: ignore[index]  # the key is there
+            key, node, name = node.key(part), node[part], part
         elif isinstance(node, Seq) and isinstance(part, int):
             node = node[part]
         elif kind == "missing" and depth == len(loc) - 1:
