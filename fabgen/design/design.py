@@ -8,6 +8,8 @@ from dataclasses import dataclass
 from functools import cached_property
 from typing import Literal
 
+from fabgen.design.limits import NO_LIMITS, Limits
+
 Section = Literal["round", "square", "rectangular"]
 Style = Literal["bonded-through", "insulated-through", "on-top", "through-nonmetal"]
 Role = Literal["reflector", "driven", "director"]
@@ -107,11 +109,21 @@ class Boom:
 
 @dataclass(frozen=True, slots=True)
 class Rod:
-    """What an element is cut from."""
+    """What an element is cut from.
+
+    Attributes:
+        modelled_diameter_mm: of the rod that the model used; None where it used this one.
+    """
 
     diameter_mm: float
     material: Material
     finish: Finish
+    modelled_diameter_mm: float | None = None
+
+    @property
+    def replaces_mm(self) -> float:
+        """Diameter that the model knows this rod by."""
+        return self.diameter_mm if self.modelled_diameter_mm is None else self.modelled_diameter_mm
 
 
 @dataclass(frozen=True, slots=True)
@@ -286,6 +298,7 @@ class Design:
         sha256: of the design file and its tables.
         lengths_are: `as-cut` lengths get no allowance.
         tip_clearance_mm: no metal nearer than this to a rod tip.
+        limits: what builds may lose; nothing where the file states none.
     """
 
     stem: str
@@ -304,6 +317,7 @@ class Design:
     tip_clearance_mm: float
     shop: Shop
     printer: Printer
+    limits: Limits = NO_LIMITS
 
     @cached_property
     def wavelength_mm(self) -> float:
