@@ -39,8 +39,9 @@ def prism(outline: Sequence[Point], start_mm: Triple, along: Triple, up: Triple,
         up: unit vector of v.
         length_mm: how far.
     """
-    face = cq.Workplane(_plane(start_mm, along, up)).polyline(list(outline)).close().extrude(length_mm)
-    return _solid(face)
+    start, high, right = cq.Vector(*start_mm), cq.Vector(*up), cq.Vector(*up).cross(cq.Vector(*along))
+    wire = cq.Wire.makePolygon([start + right * u + high * v for u, v in outline], close=True)
+    return cq.Solid.extrudeLinear(wire, [], cq.Vector(*along) * length_mm)
 
 
 def teardrop(diameter_mm: float, start_mm: Triple, along: Triple, apex: Triple, length_mm: float) -> cq.Solid:
@@ -55,9 +56,15 @@ def teardrop(diameter_mm: float, start_mm: Triple, along: Triple, apex: Triple, 
     """
     r = diameter_mm / 2
     side = r * math.sqrt(0.5)
-    outline = cq.Workplane(_plane(start_mm, along, apex)).moveTo(-side, side)
-    outline = outline.threePointArc((0, -r), (side, side)).lineTo(0, r * math.sqrt(2)).close()
-    return _solid(outline.extrude(length_mm))
+    start, up, right = cq.Vector(*start_mm), cq.Vector(*apex), cq.Vector(*apex).cross(cq.Vector(*along))
+    left_end, right_end = start + (up - right) * side, start + (up + right) * side
+    tip = start + up * (r * math.sqrt(2))
+    edges = [
+        cq.Edge.makeThreePointArc(left_end, start - up * r, right_end),
+        cq.Edge.makeLine(right_end, tip),
+        cq.Edge.makeLine(tip, left_end),
+    ]
+    return cq.Solid.extrudeLinear(cq.Wire.assembleEdges(edges), [], cq.Vector(*along) * length_mm)
 
 
 def hexagon(flats_mm: float, start_mm: Triple, along: Triple, corner: Triple, length_mm: float) -> cq.Solid:
@@ -70,8 +77,8 @@ def hexagon(flats_mm: float, start_mm: Triple, along: Triple, corner: Triple, le
 
 def revolved(profile: Sequence[Point]) -> cq.Solid:
     """A closed profile of (radius, z) corners turned round the z axis."""
-    turned = cq.Workplane("XZ").polyline(list(profile)).close().revolve(360, (0, 0), (0, 1))
-    return _solid(turned)
+    wire = cq.Wire.makePolygon([cq.Vector(radius, 0.0, z) for radius, z in profile], close=True)
+    return cq.Solid.revolve(wire, [], 360.0, cq.Vector(), cq.Vector(*Z))
 
 
 def boom_round(diameter_mm: float, length_mm: float) -> cq.Solid:
@@ -96,11 +103,6 @@ def fillet_prism(corner_mm: Point, towards: Point, radius_mm: float, y_mm: Range
 
 def _ordered(first: float, second: float) -> Range:
     return min(first, second), max(first, second)
-
-
-def _plane(start_mm: Triple, along: Triple, up: Triple) -> cq.Plane:
-    normal, v = cq.Vector(*along), cq.Vector(*up)
-    return cq.Plane(cq.Vector(*start_mm), v.cross(normal), normal)
 
 
 def _solid(part: cq.Workplane) -> cq.Solid:
