@@ -109,3 +109,16 @@ def test_a_stated_metal_is_judged_by_its_index(found):
     steel = {"name": "plated steel", "kind": "metal", "density": 7850, "anodic_index": -1.25}
     changes = {"mounts.line": {**BONDED, "bond": "weld"}, "rods.material": steel, "clamp": None}
     assert ("L17", "warn", "EN AW-6060 T66 on plated steel", 0.35, 0.15) in found("metals_in_contact", changes)
+
+
+def test_a_clamp_near_a_rod(found, made, advice):
+    """The plate's edge within 2 × 20 mm of D1 at station 270; the note carries a tenth of the largest allowance."""
+    half_mm = made().clamp_width_mm / 2
+    far = {"boom.overhang.front": 300, "clamp.at": 387 + 40 + half_mm}
+    assert found("clamp_near_rod", far) == []
+    near = far | {"clamp.at": 387 + 39 + half_mm}
+    assert found("clamp_near_rod", near) == [("L18", "note", "D2", 39, 40)]
+    allowance_mm = made(near).ledger.line("D2").allowance.value_mm
+    assert f"gains {0.1 * allowance_mm:.2f} mm" in advice("clamp_near_rod", near)
+    assert found("clamp_near_rod", near | {"clamp": None}) == []
+    assert found("clamp_near_rod", near | {"lengths_are": "as-cut"}) == []
