@@ -16,7 +16,11 @@ number: LAW-1
 frequency: 434 MHz
 units: mm
 boom:
-  {{section: {section}, outside: 20 mm, wall: 1.5, material: EN AW-6060 T66, overhang: {{rear: {rear}, front: {front}}}}}
+  section: {section}
+  outside: 20 mm
+  wall: 1.5 mm
+  material: EN AW-6060 T66
+  overhang: {{rear: {rear}, front: {front}}}
 mounts: {{line: {{style: insulated-through, hole: 8 mm, allowance: {{origin: published, model: dl6wu}}}}}}
 rods: {{diameter: 4 mm, material: EN AW-6060 T66}}
 feed: {{kind: straight-dipole, gap: 10 mm, height: 18 mm, cable: 5 mm}}
