@@ -32,7 +32,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
         with_it_mm = max(math.hypot(line.u_mm, U_SHARE * line.allowance.value_mm) for _, line in near)
         where = names([element.id for element in design.elements], [line.element for _, line in near])
         advice = (
-            f"the plate acts as a wider boom there: u gains {worst_mm:.2f} mm in quadrature, {with_it_mm:.2f} mm in all "
+            f"it acts as a wider boom there: u gains {worst_mm:.2f} mm in quadrature, {with_it_mm:.2f} mm in all "
             "(own study 2026, a judgement, unpublished); move the clamp to a longer gap, or leave it"
         )
         yield finding("L18", "note", where, advice, measured=nearest_mm, required=limit_mm, unit="mm")
