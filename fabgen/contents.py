@@ -15,6 +15,10 @@ from fabgen.design.solids import AssemblyItem, Print
 GROUPS = ("tables", "templates", "bench", "model", "prints", "fixtures", "book")
 """What `--only` can name."""
 
+CROWDED = 120
+SPECKS = ("bush", "crush_sleeve", "nut", "push_ring", "screw", "sleeve", "snap_keeper", "washer")
+"""Parts left out of the picture of an array of more than so many: specks there, and most of its hidden lines."""
+
 Files = tuple[PackageFile, ...]
 
 
@@ -174,8 +178,13 @@ def _book(order: Order) -> Files:
     from fabgen.model.pictures import assembly_picture, part_picture
     from fabgen.model.prints import fixture_prints
 
+    name, shown = order.arranged.design.name, order.assembly
+    if len(shown) > CROWDED:
+        name += " without bushes, keepers and fasteners"
+        large = {placed.name for placed in order.arranged.placed if placed.part not in SPECKS}
+        shown = tuple(item for item in shown if item.name in large)
     views = [
-        assembly_picture(order.assembly, name=order.arranged.design.name),
+        assembly_picture(shown, name=name),
         *sheets_of("drawings", order.arranged, order.cut_plan, stamp=order.stamped),
     ]
     pictures = [part_picture(each.product) for each in order.prints]
