@@ -151,12 +151,13 @@ class SaddleSize:
         return profile * self.width_mm + foot * self.length_mm - 2 * screw
 
     @property
-    def shapes(self) -> tuple[Box, Box]:
-        """Base and column in the local frame: an envelope, the bore not taken out."""
+    def shapes(self) -> tuple[Box, Box, Box]:
+        """Base, fillets and column in the local frame: an envelope, the bore not taken out."""
         x, y, low = self.length_mm / 2, self.width_mm / 2, 0.0 - self.foot_drop_mm
-        column = self.column_half_mm
+        column, rounded = self.column_half_mm, self.column_half_mm + self.fillet_mm
         return (
             Box((-x, -y, low), (x, y, self.ear_mm)),
+            Box((-rounded, -y, self.ear_mm), (rounded, y, self.ear_mm + self.fillet_mm)),
             Box((-column, -y, self.ear_mm), (column, y, self.top_mm)),
         )
 
