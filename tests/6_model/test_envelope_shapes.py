@@ -5,6 +5,8 @@ import re
 
 import pytest
 
+from fabgen import registry
+from fabgen.design import part_sizes
 from fabgen.design.arranged import Box, Cylinder, Frame, Placed
 from fabgen.model.envelope import outside_envelope
 
@@ -61,3 +63,18 @@ def test_shapes_that_leave_something_out_are_named(part, message):
 def test_an_envelope_larger_than_its_part_is_right_unless_it_should_be_the_part():
     assert outside_envelope(boom(width=24.0)) == ""
     assert outside_envelope(dataclasses.replace(boom(width=24.0), exact=True)) != ""
+
+
+SIZED = [entry.name for entry in registry.entries("model/parts") if hasattr(part_sizes, f"{entry.name}_size")]
+ROUND = ["bush", "feed_block", "folded_saddle", "saddle"]
+
+
+@pytest.mark.parametrize("part", SIZED)
+def test_every_part_lies_in_the_shapes_that_it_is_arranged_by(part):
+    assert outside_envelope(placed(part, getattr(part_sizes, f"{part}_size")().shapes)) == ""
+
+
+@pytest.mark.parametrize("part", ROUND)
+def test_parts_for_a_round_boom_lie_in_their_shapes(part):
+    size = getattr(part_sizes, f"{part}_size")(boom_diameter_mm=25.0)
+    assert outside_envelope(placed(part, size.shapes, boom_diameter_mm=25.0)) == ""
