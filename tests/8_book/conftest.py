@@ -15,6 +15,7 @@ import pytest
 
 from fabgen.arrange.arrange import arrange
 from fabgen.arrange.bars import plan
+from fabgen.arrange.fixtures import fixtures
 from fabgen.book.book import Book
 from fabgen.book.figures import Figure
 from fabgen.check.judge import judge
@@ -54,6 +55,7 @@ def book_of(root: Path) -> Callable[..., Book]:
             plan(arranged.cuts, design.shop),
             views=(Figure("array", "the array", SVG, 60.0, 30.0),),
             pictures=tuple(Figure(f"part {k}", f"part {k}", SVG, 60.0, 30.0) for k in range(5)),
+            aids=tuple((aid, Figure(aid.label, aid.label, SVG, 60.0, 30.0)) for aid in fixtures(arranged)),
             stamped=stamped,
         )
 

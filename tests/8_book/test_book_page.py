@@ -113,7 +113,10 @@ def test_every_number_of_the_tables_is_there(book_of: Callable[..., Book], stem:
         assert placed.size in text
     for bar in book.cut_plan.bars:
         assert bar.name in text
-    for figure in (*book.views, *book.pictures):
+    for aid, _ in book.aids:
+        assert f"{aid.quantity} {aid.label} {aid.purpose}" in text
+        assert all(need in text for need in aid.needs)
+    for figure in (*book.views, *book.pictures, *(figure for _, figure in book.aids)):
         assert figure.caption in text
 
 
@@ -198,6 +201,25 @@ def test_an_allowance_asked_away_is_called_unknown(book_of: Callable[..., Book])
     text = text_of(book_of("valley-television-637", elements=elements))
     assert "how far that is off is not known" in text
     assert "How sure the allowance is" not in text
+
+
+def test_a_bonded_mount_says_what_a_bad_joint_costs(book_of: Callable[..., Book]) -> None:
+    """Half of the printed 13.143 mm; 637 MHz × 6.571 mm over the mean parasitic length of the table, by hand."""
+    book = book_of("valley-television-637")
+    lengths_mm = [line.modelled_mm for line in book.arranged.ledger.lines if line.role != "driven"]
+    khz = 637_000 * 6.5713 / (sum(lengths_mm) / len(lengths_mm))
+    assert f"6.6 mm or {khz:.0f} kHz of a half-wave rod here" in text_of(book)
+    assert "What bonds" not in text_of(book_of("river-gauge-434"))
+
+
+def test_a_screw_in_the_middle_is_said_to_bond_nothing(book_of: Callable[..., Book]) -> None:
+    book = book_of("river-gauge-434")
+    elements = tuple(
+        replace(e, mount=replace(e.mount, hold="middle-screw", keeper=None)) if e.mount else e
+        for e in book.arranged.design.elements
+    )
+    assert "What does not bond" in text_of(book_of("river-gauge-434", elements=elements))
+    assert "What does not bond" not in text_of(book)
 
 
 @pytest.mark.parametrize("field", ["title", "number", "revision"])

@@ -67,6 +67,7 @@ def test_sections_with_nothing_to_say_are_left_out(book_of: Callable[..., Book])
     book = book_of("sonde-finder-401")
     assert "mounts" not in names(book)
     assert "views" not in names(replace(book, views=()))
+    assert "aids" not in names(replace(book, aids=()))
     unprinted = without(book, placed=tuple(p for p in book.arranged.placed if p.source != "printed"))
     assert "printing" not in names(unprinted)
 

@@ -9,7 +9,7 @@ PLACE = 100
 
 
 def content(book: Book) -> Content:
-    """Steps with their parts counted, what cannot go on, the fits, and which ways of holding occur."""
+    """Steps with their parts counted, what cannot go on, the fits, and whether rods must not touch the boom."""
     arranged = book.arranged
     order = assembly_order(arranged)
     sizes = {placed.name: placed.size for placed in arranged.placed}
@@ -23,8 +23,6 @@ def content(book: Book) -> Content:
         "steps": [(step, _counted(step, sizes)) for step in order.steps],
         "stuck": order.stuck,
         "fits": [(kind, fit_mm, count) for (kind, fit_mm), count in sorted(fits.items())],
-        "bonds": sorted({mount.bond for mount in mounts if mount.bond is not None}),
-        "middle_screw": any(mount.hold == "middle-screw" for mount in mounts),
         "insulated": any(mount.style in ("insulated-through", "on-top") for mount in mounts),
     }
 

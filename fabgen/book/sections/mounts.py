@@ -4,8 +4,9 @@ from dataclasses import dataclass
 
 from fabgen.book.book import Book, Content
 from fabgen.book.scale import Axis, axis
-from fabgen.design.design import Mount
+from fabgen.design.design import Design, Mount
 from fabgen.design.ledger import LedgerLine
+from fabgen.physics.half_wave import shift_khz
 
 PLACE = 55
 SHOWS_LENGTHS = True
@@ -43,12 +44,15 @@ class MountSpread:
         lines: the ledger's lines of its rods.
         printed: the published statements.
         axis: allowance in mm to place on paper.
+        drift_mm_khz: what a bonded joint loses when it turns into an insulated one, in mm of rod and kHz of a half-wave
+            rod of the mean length; None where the curve says nothing.
     """
 
     mount: Mount
     lines: tuple[LedgerLine, ...]
     printed: tuple[Printed, ...]
     axis: Axis
+    drift_mm_khz: tuple[float, float] | None
 
     @property
     def low_mm(self) -> float:
@@ -85,7 +89,7 @@ def spreads(book: Book) -> tuple[MountSpread, ...]:
         line = ledger.line(element.id)
         if element.mount is not None and line.allowance.published:
             rods.setdefault(element.mount.name, (element.mount, []))[1].append(line)
-    return tuple(_spread(mount, lines) for mount, lines in rods.values())
+    return tuple(_spread(mount, lines, design) for mount, lines in rods.values())
 
 
 def content(book: Book) -> Content | None:
@@ -94,7 +98,7 @@ def content(book: Book) -> Content | None:
     return {"spreads": found, "width_mm": WIDTH_MM, "row_mm": ROW_MM, "head_mm": HEAD_MM} if found else None
 
 
-def _spread(mount: Mount, lines: list[LedgerLine]) -> MountSpread:
+def _spread(mount: Mount, lines: list[LedgerLine], design: Design) -> MountSpread:
     printed: dict[str, Printed] = {}
     for line in lines:
         for value in line.allowance.published:
@@ -112,4 +116,15 @@ def _spread(mount: Mount, lines: list[LedgerLine]) -> MountSpread:
     for line in lines:
         ends_mm += [line.allowance.value_mm + k * line.allowance.u_mm for k in (-2, 2)]
     scale = axis(min(0.0, *ends_mm), max(ends_mm), LEFT_MM, WIDTH_MM - 6.0)
-    return MountSpread(mount, tuple(lines), tuple(printed.values()), scale)
+    return MountSpread(mount, tuple(lines), tuple(printed.values()), scale, _drift(mount, lines, printed, design))
+
+
+def _drift(
+    mount: Mount, lines: list[LedgerLine], printed: dict[str, Printed], design: Design
+) -> tuple[float, float] | None:
+    curve = printed.get("dl6wu")
+    if mount.style != "bonded-through" or curve is None or not curve.valid:
+        return None
+    lost_mm = curve.high_mm / 2
+    mean_mm = sum(line.modelled_mm for line in lines) / len(lines)
+    return lost_mm, shift_khz(frequency_mhz=design.frequency_mhz, length_mm=mean_mm, change_mm=-lost_mm)

@@ -59,6 +59,8 @@ def _tables(book: Book) -> Iterator[str]:
         yield "iso7089_washers"
     yield "edge_distance"
     yield "process"
+    if book.aids:
+        yield "din179_bushings"
     if any(each.source == "printed" for each in placed):
         yield "print_practice"
     yield "paper"
