@@ -4,6 +4,7 @@ Coordinates are the sheet's, in mm. A place is tried against everything that was
 it is goes first.
 """
 
+import itertools
 import math
 from collections import defaultdict
 from collections.abc import Iterable, Iterator, Sequence
@@ -109,17 +110,22 @@ def usual_height_mm(room_mm: float) -> float:
 def _beside(drawn: Drawn, spot: Spot, above: Sequence[str], below: Sequence[str]) -> list[Item]:
     """The first free block right or left of the hole."""
     usual = usual_height_mm((spot.high_mm - spot.low_mm) / 2)
-    one, two = ([" ".join(above)], [" ".join(below)]), (list(above), list(below))
-    stacked = [" ".join(above), " ".join(below)]
-    trials = [(usual, *one), (SMALLEST_MM, *one), (usual, *two), (SMALLEST_MM, *two)]
-    trials += [(h, up, down) for h in (usual, SMALLEST_MM) for up, down in ((stacked, []), ([], stacked))]
-    trials += [(SMALLEST_MM, [*above, *below], []), (SMALLEST_MM, [], [*above, *below])]
-    for height_mm, up, down in trials:
+    blocks = sorted(itertools.product(_splits(above), _splits(below)), key=lambda pair: len(pair[0]) + len(pair[1]))
+    stacks = [[*up, *down] for up, down in blocks]
+    nothing: list[str] = []
+    blocks += [pair for stack in stacks for pair in ((stack, nothing), (nothing, stack))]
+    for (up, down), height_mm in itertools.product(blocks, dict.fromkeys((usual, SMALLEST_MM))):
         for side in (1, -1):
             block = _block(spot, up, down, height_mm, spot.x_mm + side * (spot.radius_mm + _BESIDE_MM), side)
             if _fits(drawn, spot, block):
                 return list(block)
     return []
+
+
+def _splits(words: Sequence[str]) -> list[list[str]]:
+    """Words on one line, with the last on a line of its own, and each on its own; shortest block first."""
+    one, last, each = [" ".join(words)], [" ".join(words[:-1]), words[-1]], list(words)
+    return [one, last, each] if len(words) > 2 else [one, each] if len(words) > 1 else [one]
 
 
 def _led(drawn: Drawn, spot: Spot, lines: list[str]) -> list[Item]:

@@ -23,9 +23,9 @@ def wall_of(hole: Hole) -> str:
     return WALLS[side] if side and abs(hole.angle_deg - round(hole.angle_deg)) < 1e-9 else f"{hole.angle_deg:g}°"
 
 
-def drill_words(hole: Hole) -> str:
+def drill_words(hole: Hole) -> list[str]:
     """The drill, and what the hole is for unless a rod goes through it."""
-    return f"drill {hole.drill}" if hole.purpose in _PLAIN else f"drill {hole.drill}  {hole.purpose}"
+    return [f"drill {hole.drill}"] if hole.purpose in _PLAIN else [f"drill {hole.drill}", hole.purpose]
 
 
 def boom_size(boom: Boom) -> str:
