@@ -1,7 +1,7 @@
 """Every sheet of a package: each file in `sheets/` says where its sheets go and draws them."""
 
 import importlib
-from typing import Literal
+from typing import Literal, get_args
 
 from fabgen import registry
 from fabgen.design.arranged import Arranged, CutPlan
@@ -9,6 +9,7 @@ from fabgen.design.drawing import Sheet
 from fabgen.draw.stamp import stamped
 
 Place = Literal["templates", "bench", "drawings"]
+PLACES: tuple[Place, ...] = get_args(Place)
 
 
 def sheets_of(place: Place, arranged: Arranged, plan: CutPlan, *, stamp: bool = False) -> list[Sheet]:

@@ -40,7 +40,7 @@ def _template(arranged: Arranged, piece: Piece) -> Sheet:
     pen, shift = Pen(), left - piece.start_mm
     _surface(pen, laid, paper, base)
     for hole in holes:
-        _hole(pen, laid, hole, shift, base)
+        _hole(pen, laid, hole, shift, base, paper)
     _stations(pen, piece, paper)
     drawn = Drawn(pen.items)
     crowded = [hole for hole in holes if not _lettered(pen, drawn, _spot(laid, hole, shift, base, paper), hole)]
@@ -72,8 +72,8 @@ def _surface(pen: Pen, laid: Development, paper: Box, base: float) -> None:
             pen.line("centre", left, base + middle, right, base + middle)
 
 
-def _hole(pen: Pen, laid: Development, hole: Hole, shift: float, base: float) -> None:
-    """Circle or developed outline, cross and pilot dot; on a seam drawn at both edges, cut where the paper ends."""
+def _hole(pen: Pen, laid: Development, hole: Hole, shift: float, base: float, paper: Box) -> None:
+    """Circle or developed outline, cross and pilot dot, cut where the paper ends; at a seam drawn at both edges."""
     x_mm, reach_mm = shift + hole.station_mm, hole.diameter_mm / 2 + _CROSS_MM
     for centre in laid.centres_mm(hole):
         mark, y_mm = Pen(), base + centre
@@ -85,8 +85,7 @@ def _hole(pen: Pen, laid: Development, hole: Hole, shift: float, base: float) ->
             mark.circle("drill", x_mm, y_mm, hole.diameter_mm / 2)
         mark.cross(x_mm, y_mm, reach_mm)
         mark.dot(x_mm, y_mm, _DOT_MM)
-        window = (x_mm - 999.0, base + laid.low_mm, x_mm + 999.0, base + laid.high_mm + laid.flap_mm)
-        pen.add(part for item in mark.items for part in (clipped(item, window) if laid.radius_mm else [item]))
+        pen.add(part for item in mark.items for part in clipped(item, paper))
 
 
 def _stations(pen: Pen, piece: Piece, paper: Box) -> None:
