@@ -131,8 +131,11 @@ def _drawn(stem: str, sheet: Sheet, purpose: str) -> list[PackageFile]:
 
 
 def _model(order: Order) -> Files:
+    from fabgen.check.pairs import near_pairs
     from fabgen.export import glb, step
+    from fabgen.model.confirm import confirm
 
+    confirm(near_pairs(order.arranged))
     name = order.arranged.design.name
     return (
         PackageFile("model/assembly.step", step.assembly_bytes(order.assembly, name=name), "the array, to measure"),

@@ -1,7 +1,7 @@
 """The program on one screen: read → correct → arrange → check → draw → model → export → book."""
 
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from pathlib import Path
 
 from fabgen.arrange.arrange import arrange
@@ -49,6 +49,18 @@ def check(path: Path) -> Judged:
     ledger = correct(reading.design)
     arranged = arrange(reading.design, ledger)
     return Judged(reading, arranged, in_order([*reading.notes, *judge(arranged)]))
+
+
+def drawn(judged: Judged) -> Judged:
+    """The same with its sheets judged too: nothing lettered outside its frame, on a hole or on other lettering."""
+    from fabgen.arrange.bars import plan
+    from fabgen.check.sheets import sheet_findings
+    from fabgen.draw.sheet_list import PLACES, sheets_of
+
+    arranged = judged.arranged
+    cut_plan = plan(arranged.cuts, arranged.design.shop)
+    sheets = [sheet for place in PLACES for sheet in sheets_of(place, arranged, cut_plan)]
+    return replace(judged, findings=in_order([*judged.findings, *sheet_findings(sheets)]))
 
 
 def build(judged: Judged, *, output: Path, stamped: bool = False, only: Sequence[str] = (), say: Say = print) -> Path:

@@ -11,6 +11,7 @@ from fabgen.errors import FabgenError, InputError
 from fabgen.pipeline import Judged
 from fabgen.pipeline import build as build_package
 from fabgen.pipeline import check as judge_file
+from fabgen.pipeline import drawn as draw_sheets
 
 
 @click.command()
@@ -23,25 +24,25 @@ def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stampe
     """Judge designs and write a fabrication package for each one that is clear."""
     judged, records, code = _judge_all(designs, quiet=as_json)
     for path, one in judged:
-        record = report.judged_record(path, one)
-        records.append(record)
-        if not as_json:
-            report.print_judged(one)
-        if not one.clear and not stamped:
-            code = max(code, 1)
-            _tell_kept(output / one.name)
-            continue
         try:
-            folder = build_package(one, output=output, stamped=not one.clear, only=sorted(set(only)), say=_say)
+            seen = draw_sheets(one)
+            record = report.judged_record(path, seen)
+            records.append(record)
+            if not as_json:
+                report.print_judged(seen)
+            code = max(code, 0 if seen.clear else 1)
+            if not seen.clear and not stamped:
+                _tell_kept(output / seen.name)
+                continue
+            folder = build_package(seen, output=output, stamped=not seen.clear, only=sorted(set(only)), say=_say)
+            record["package"] = str(folder)
+            if not as_json:
+                click.echo(str(folder))
         except FabgenError as error:
             code = max(code, error.exit_code)
-            record["error"] = error.message
-            report.tell(error)
-            continue
-        code = max(code, 0 if one.clear else 1)
-        record["package"] = str(folder)
-        if not as_json:
-            click.echo(str(folder))
+            records.append(report.error_record(path, error))
+            if not as_json:
+                report.tell(error)
     if as_json:
         report.print_json({"designs": records})
     return code
