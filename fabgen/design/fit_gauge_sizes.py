@@ -123,7 +123,7 @@ class FitGaugeSize:
         return PLATE_MM + STEP_HEIGHT_MM * len(self.plug_mm)
 
     @property
-    def plug_profile(self) -> tuple[tuple[float, float], ...]:
+    def plug_profile_mm(self) -> tuple[tuple[float, float], ...]:
         """Outline (radius, z) of the plug from the plate to its tip.
 
         Below each step a V runs round the plug, its upper side at 45°.
@@ -156,7 +156,7 @@ class FitGaugeSize:
         plate = self.length_mm * self.width_mm - 2 * CORNER_MM**2
         bores = sum(disc_mm2(bore) * PLATE_MM + 2 * bore_chamfer_mm3(bore, self.edge_mm) for bore in self.bores_mm)
         letters = sum(glyphs.area_cells(text) for text, _ in self.texts) * CELL_MM**2 * RAISED_MM
-        profile = self.plug_profile
+        profile = self.plug_profile_mm
         plug = sum(PI / 3 * (high - low) * (a**2 + a * b + b**2) for (a, low), (b, high) in itertools.pairwise(profile))
         return plate * PLATE_MM - bores + letters + plug
 

@@ -50,7 +50,7 @@ def fit_gauge(
     for text, middle in size.texts:
         raised += lettering(text, (middle, size.label_y_mm, PLATE_MM), X, Y, CELL_MM, RAISED_MM)
     if size.plug_mm:
-        profile = size.plug_profile
+        profile = size.plug_profile_mm
         turned = revolved([(0.0, PLATE_MM), *profile, (0.0, profile[-1][1])])
         raised.append(turned.translate(cq.Vector(size.plug_x_mm, size.row_y_mm, 0.0)))
     return part_of(fused(plate.cut(*bores), *raised))
