@@ -23,6 +23,7 @@ from fabgen.book.figures import Figure
 from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.findings import Finding, clear
 from fabgen.design.fixtures import Fixture
+from fabgen.physics.boom_mount import BoomMount
 
 Content = Mapping[str, Any]
 SECTIONS = "book/sections"
@@ -41,6 +42,7 @@ class Book:
         views: the array as a whole, as drawn.
         pictures: the printed parts, keyed by the size name of the parts list.
         aids: the printed shop aids that the design needs, each with its picture.
+        mounts: the mount of each rod on a metal boom as plain numbers, with its element.
         stamped: the design is not clear and every page says so.
     """
 
@@ -50,6 +52,7 @@ class Book:
     views: tuple[Figure, ...] = ()
     pictures: tuple[Figure, ...] = ()
     aids: tuple[tuple[Fixture, Figure], ...] = ()
+    mounts: tuple[tuple[str, BoomMount], ...] = ()
     stamped: bool = False
 
     @property

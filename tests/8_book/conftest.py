@@ -20,6 +20,7 @@ from fabgen.book.book import Book
 from fabgen.book.figures import Figure
 from fabgen.check.judge import judge
 from fabgen.correct.ledger import correct
+from fabgen.correct.metal_mounts import metal_mounts
 from fabgen.design.design import Design
 from fabgen.design.findings import in_order
 from fabgen.read.reader import read_design
@@ -56,6 +57,7 @@ def book_of(root: Path) -> Callable[..., Book]:
             views=(Figure("array", "the array", SVG, 60.0, 30.0),),
             pictures=tuple(Figure(f"part {k}", f"part {k}", SVG, 60.0, 30.0) for k in range(5)),
             aids=tuple((aid, Figure(aid.label, aid.label, SVG, 60.0, 30.0)) for aid in fixtures(arranged)),
+            mounts=metal_mounts(design),
             stamped=stamped,
         )
 

@@ -11,7 +11,7 @@ from fabgen.book import exposure
 from fabgen.book.book import SECTIONS, Book, sections
 from fabgen.book.figures import Figure
 from fabgen.book.scale import axis
-from fabgen.book.sections import cautions, cutting, drilling, mounts, printing
+from fabgen.book.sections import boom_sizes, cautions, cutting, drilling, mounts, printing
 from fabgen.book.wording import FILTERS
 from fabgen.design.arranged import Arranged, Bar, Cut
 
@@ -158,6 +158,47 @@ def test_published_values_span_what_the_ledger_holds(book_of: Callable[..., Book
     assert len(spread.lines) == len(book.arranged.design.elements) - 1
     for value in spread.printed:
         assert spread.axis.start_mm <= spread.axis.at(value.low_mm) <= spread.axis.end_mm
+
+
+@pytest.mark.parametrize("stem", ["river-gauge-434", "valley-television-637"])
+def test_the_picture_of_boom_sizes_puts_this_design_where_it_is(book_of: Callable[..., Book], stem: str) -> None:
+    book = book_of(stem)
+    (picture,) = boom_sizes.content(book)["pictures"]
+    design = book.arranged.design
+    across = picture.x.at(design.boom.width_mm / design.wavelength_mm)
+    for line, (x, y) in zip(picture.lines, picture.own, strict=True):
+        assert x == across
+        assert y == picture.y.at(line.allowance.value_mm)
+    ((curve, band),) = zip(picture.curves, picture.bands, strict=True)
+    assert len(band) == 2 * len(curve)
+    upper, lower = band[: len(curve)], band[len(curve) :][::-1]
+    for (_, high), (_, middle), (_, low) in zip(upper, curve, lower, strict=True):
+        assert high < middle < low  # paper's y runs down
+        assert middle - high == pytest.approx(low - middle, abs=2e-3)
+    places = [y for _, y in curve]
+    assert places == sorted(places, reverse=True)
+
+
+def test_printed_curves_pass_through_the_ledger_s_printed_values(book_of: Callable[..., Book]) -> None:
+    book = book_of("valley-television-637")
+    (picture,) = boom_sizes.content(book)["pictures"]
+    across, _ = picture.own[0]
+    for value in picture.lines[0].allowance.published:
+        ((_, _, curve),) = (each for each in picture.printed if each[0] == value.model)
+        x0, y0 = max(point for point in curve if point[0] <= across)
+        x1, y1 = min(point for point in curve if point[0] >= across)
+        between = y0 + (across - x0) / (x1 - x0) * (y1 - y0)
+        assert between == pytest.approx(picture.y.at(value.value_mm), abs=0.02)
+
+
+def test_a_mount_without_closed_form_says_so(book_of: Callable[..., Book]) -> None:
+    book = book_of("meter-reading-169")
+    (picture,) = boom_sizes.content(book)["pictures"]
+    assert picture.curves == ()
+    (body,) = (str(section.body) for section in sections(book) if section.name == "boom_sizes")
+    assert "no closed form covers it" in body
+    assert "theory, unmeasured" not in body
+    assert "boom_sizes" not in names(book_of("sonde-finder-401"))
 
 
 @pytest.mark.parametrize(("low", "high"), [(0.0, 5.37), (-1.2, 8.8), (3.0, 3.0), (0.0, 0.0), (0.0, 1e-4), (2.0, 900.0)])
