@@ -176,6 +176,7 @@ def _book(order: Order) -> Files:
     from fabgen.arrange.fixtures import fixtures
     from fabgen.book.book import Book, book_html
     from fabgen.book.figures import figure
+    from fabgen.correct.metal_mounts import metal_mounts
     from fabgen.draw.sheet_list import sheets_of
     from fabgen.export.svg import svg
     from fabgen.model.pictures import assembly_picture, part_picture
@@ -200,6 +201,7 @@ def _book(order: Order) -> Files:
         views=tuple(figure(sheet, svg(sheet)) for sheet in views),
         pictures=tuple(figure(sheet, svg(sheet)) for sheet in pictures),
         aids=tuple((aid, figure(sheet, svg(sheet))) for aid, sheet in zip(aids, aid_pictures, strict=True)),
+        mounts=metal_mounts(order.arranged.design),
         stamped=order.stamped,
     )
     return (PackageFile("book.html", book_html(book), "the build book: opens offline in any browser"),)
