@@ -14,7 +14,7 @@ from fabgen.design.arranged import Hole, Wall
 from fabgen.design.design import Boom
 from fabgen.design.drawing import Point
 
-APART_MM = 5.0
+APART_MM = 4.0
 """Between the strips of a solid bar, for the scissors."""
 FLAP_MM = 8.0
 """Beyond the seam, for the tape."""

@@ -17,6 +17,7 @@ from fabgen.draw.stamp import stamped
 from fabgen.draw.tile_plan import STATION_STEP_MM, TARGET_MM, Plan, near, plan_pages, stays_whole
 
 _LABEL_STEP = 5
+_OFF_TEXT_MM = 0.4
 _LABEL_ROOM_MM = 14.0
 
 
@@ -111,20 +112,38 @@ def _push(box: Box, window: Box) -> tuple[float, float, float]:
 
 
 def _join_marks(plan: Plan, items: list[Item]) -> list[Item]:
-    """Join lines with two target marks per page side, on the sheet, so that both neighbours print the same ones."""
+    """Join lines with two target marks per page side, on the sheet, so that both neighbours print the same ones.
+
+    A join line stops short of lettering that it would run through.
+    """
     pen = Pen()
+    texts = [text_box(item) for item in items if isinstance(item, Text)]
     solid = [bounds(item) for item in items if stays_whole(item)]
     for x in plan.joins_x_mm:
-        pen.line("frame", x, plan.rows_mm[0][0], x, plan.rows_mm[-1][1])
+        across = [(box[1], box[3]) for box in texts if box[0] < x < box[2]]
+        for low, high in _between(plan.rows_mm[0][0], plan.rows_mm[-1][1], across):
+            pen.line("frame", x, low, x, high)
         for low, high in plan.rows_mm:
             for y in _free_places(low, high, [(b[1], b[3]) for b in solid if near(b[0], b[2], x)]):
                 _target(pen, x, y)
     for y in plan.joins_y_mm:
-        pen.line("frame", plan.columns_mm[0][0], y, plan.columns_mm[-1][1], y)
+        across = [(box[0], box[2]) for box in texts if box[1] < y < box[3]]
+        for low, high in _between(plan.columns_mm[0][0], plan.columns_mm[-1][1], across):
+            pen.line("frame", low, y, high, y)
         for low, high in plan.columns_mm:
             for x in _free_places(low, high, [(b[0], b[2]) for b in solid if near(b[1], b[3], y)]):
                 _target(pen, x, y)
     return pen.items
+
+
+def _between(low: float, high: float, taken: list[tuple[float, float]]) -> list[tuple[float, float]]:
+    """The parts of a span that keep a little off what is taken."""
+    parts, start = [], low
+    for first, last in sorted(taken):
+        if first - _OFF_TEXT_MM > start:
+            parts.append((start, first - _OFF_TEXT_MM))
+        start = max(start, last + _OFF_TEXT_MM)
+    return [*parts, (start, high)] if start < high else parts
 
 
 def _free_places(low: float, high: float, taken: list[tuple[float, float]]) -> list[float]:

@@ -1,6 +1,7 @@
 """Arranged designs of every shape of boom, made from one demo design by replacing text, and paper folded back."""
 
 import math
+import re
 from collections.abc import Callable
 from dataclasses import dataclass
 from pathlib import Path
@@ -65,6 +66,7 @@ def dense(text: str) -> str:
         rows.append(f"  - {{id: DIRECTOR-LONG-{k:02d}, role: director, at: {at_mm:.2f}, length: {100 - 0.1 * k:.1f}}}")
         at_mm += 22.3 if k < 40 else 62.71
     text = text[: text.index("elements:")] + "\n".join(rows) + "\n" + text[text.index("lengths_are") :]
+    text = re.sub(r"(?m)^limits:.*\n", "", text)  # of another band
     changes = (
         ("434 MHz", "1296 MHz"),
         ("outside: 20 mm", "outside: 15 mm"),

@@ -1,5 +1,6 @@
 """Every sheet of every shape of boom: nothing covered, nothing lost, bars, walls, stamp, the same twice."""
 
+import io
 import math
 
 import pytest
@@ -312,3 +313,25 @@ def test_element_table_gives_station_and_cut_length(shape):
     said = " | ".join(" ".join(text for _, text in sorted(row)) for row in rows.values())
     for line in arranged.ledger.lines:
         assert f"{line.element} {line.role} {line.station_mm:.3f} {line.cut_mm:.3f} {line.rod_mm:.3f}" in said
+
+
+def test_drawings_are_clean_for_cad(arranged_as):
+    import ezdxf
+
+    from fabgen.export.dxf import dxf
+
+    arranged, plan = arranged_as("round")
+    for sheet in [*sheets_of("templates", arranged, plan), *sheets_of("drawings", arranged, plan)]:
+        document = ezdxf.read(io.StringIO(dxf(sheet).decode("utf-8")))
+        audit = document.audit()
+        assert (audit.errors, audit.fixes) == ([], [])
+        assert document.header["$INSUNITS"] == 4
+
+
+def test_join_lines_of_pages_run_through_no_lettering(arranged_as):
+    arranged, plan = arranged_as("square")
+    design = arranged.design
+    [sheet, *_] = sheets_of("templates", arranged, plan)
+    tiling = tile(sheet, paper_size_mm(design.shop.paper), number=design.number, revision=design.revision)
+    for page in tiling.pages:
+        assert [str(found) for found in overlaps(page, lines=True)] == []

@@ -16,13 +16,14 @@ from fabgen.units import format_mm
 
 PLACE = "templates"
 
-_LEFT_MM, _RIGHT_MM, _FOOT_MM = 20.0, 10.0, 18.0
-_BAR_X_MM, _BAR_Y_MM = 8.0, 7.0
+_LEFT_MM, _RIGHT_MM, _FOOT_MM = 20.0, 10.0, 16.5
+_BAR_X_MM, _BAR_Y_MM = 8.0, 6.0
 _CROSS_MM, _DOT_MM = 3.0, 0.8
 _STATION_STEP_MM, _TICK_MM = 50.0, 1.5
 _LINE_MM = 165.0
 """Longest line of lettering: it stays whole on a page of the shop's paper, upright or across."""
 _NAME_PITCH_MM = 110.0
+_TITLE_MM = 35.0
 _ARROW_MM = 9.0
 
 
@@ -45,13 +46,14 @@ def _template(arranged: Arranged, piece: Piece) -> Sheet:
     drawn = Drawn(pen.items)
     crowded = [hole for hole in holes if not _lettered(pen, drawn, _spot(laid, hole, shift, base, paper), hole)]
     _wall_names(pen, drawn, laid, paper, base)
-    head_mm = _crowded(pen, crowded, shift, paper[3] + 8.0)
+    head_mm = _crowded(pen, crowded, shift, paper[3] + 7.0)
     _ends(pen, paper, left, right)
     top_mm = _heading(pen, arranged, piece, laid, head_mm)
     pen.bar_100(_BAR_X_MM, _FOOT_MM, up=True, label="100 mm across")
     pen.bar_100(left, _BAR_Y_MM, label="100 mm along")
+    pen.text(left + 104.0, _BAR_Y_MM - 0.9, ABOUT_BARS, SMALLEST_MM, layer="scale")
     width_mm = max(right + _RIGHT_MM, left + _LINE_MM + 5.0)
-    height_mm = max(top_mm + 4.0, _FOOT_MM + 106.0)
+    height_mm = max(top_mm + 2.0, _FOOT_MM + 106.0)
     return pen.sheet(piece.name, f"{arranged.design.title}: {piece.name}", width_mm, height_mm, piece.start_mm - left)
 
 
@@ -206,24 +208,26 @@ def _heading(pen: Pen, arranged: Arranged, piece: Piece, laid: Development, from
     """What this is and how to use it; returns where it ends."""
     design, x = arranged.design, _LEFT_MM
     if laid.radius_mm:
-        how = "Cut out, wrap round the boom, its TOP line on the scribed TOP line; the seam runs along the bottom."
+        how = "Cut out, wrap round the boom, TOP on the scribed TOP line; the seam runs along the bottom."
     elif laid.folds_mm:
         how = "Cut out, fold on the dashed lines, wrap round the boom; the seam lies at the bottom right corner."
     else:
         how = "Cut the strips apart; each lies on the face it names, its edges along the boom's edges."
     paper = f", paper {design.shop.paper_thickness_mm:g} mm thick" if laid.flap_mm else ""
     lines = [
-        f"Reckoned for {boom_size(design.boom)}{paper}; {allowance_words(arranged.ledger)}.",
-        "Stations in mm from the datum face. LEFT and RIGHT are seen looking forward; arrows point forward.",
-        "Printed face outwards, DATUM END flush with the sawn rear end.",
+        f"{allowance_words(arranged.ledger).capitalize()}.",
+        f"Reckoned for {boom_size(design.boom)}{paper}.",
+        "Stations in mm from the datum face; LEFT and RIGHT looking forward; arrows point forward.",
+        "Scale 1:1. Printed face outwards, DATUM END flush with the sawn rear end.",
         how,
-        f"Scale 1:1. {ABOUT_BARS}",
-        shortened(design.title, 2.5, _LINE_MM),
     ]
     y = from_y_mm
     for line in lines:
         pen.text(x, y, shortened(line, 2.0, _LINE_MM), 2.0)
-        y += 3.6
+        y += 3.4
     name = f"{design.number} {design.revision}   {piece.name}   {format_mm(piece.end_mm - piece.start_mm)} mm"
-    pen.text(x, y + 0.6, shortened(name, 3.5, _LINE_MM), 3.5)
+    name = shortened(name, 3.5, _LINE_MM - _TITLE_MM)
+    pen.text(x, y + 0.6, name, 3.5)
+    after_mm = text_width_mm(name, 3.5) + 5.0
+    pen.text(x + after_mm, y + 0.6, shortened(design.title, 2.0, _LINE_MM - after_mm), 2.0)
     return y + 5.0
