@@ -6,20 +6,21 @@ that they do is confirmed once per distinct part. A disagreement is a mistake of
 """
 
 import functools
+import math
 from collections.abc import Iterable
 from typing import Protocol
-
-from OCP.BRepExtrema import BRepExtrema_DistShapeShape
 
 from fabgen.design.arranged import Cylinder, Frame, Interface, Placed
 from fabgen.errors import ProgramError
 from fabgen.model.envelope import outside_envelope
-from fabgen.model.fits import Fit, fits
+from fabgen.model.fits import fits
 from fabgen.model.neighbourhood import Body, neighbourhood, relative
+from fabgen.model.separation import separation_mm
 from fabgen.model.solids import location
 
 DISTANCE_TOLERANCE_MM = 1e-6
 OVERLAP_TOLERANCE_MM3 = 1e-6
+_SLACK_MM = 0.01
 _LEAST_GRIP = 0.3
 """Least part of a full ring that a grip may be: slit, mouth and lead-ins take the rest."""
 
@@ -76,29 +77,37 @@ def _contradiction(pair: Near) -> str:
     first, own = neighbourhood(pair.first, pair.second, pair.distance_mm)
     second, others = neighbourhood(pair.second, pair.first, pair.distance_mm)
     frame = relative(own, others)
-    exact = _formula_is_exact(pair.first, pair.second)
-    if pair.interface is None and pair.distance_mm > 0 and not exact:
-        return outside_envelope(pair.first) or outside_envelope(pair.second)
-    apart_mm = _distance_mm(first, second, frame)
-    overlap_mm3 = _overlap_mm3(first, second, frame) if apart_mm <= DISTANCE_TOLERANCE_MM else 0.0
     if pair.interface:
-        found = fits(first, second, frame) if pair.interface.fit_mm is not None else ()
-        return _against_interface(pair.interface, apart_mm, overlap_mm3, found)
-    if overlap_mm3 > OVERLAP_TOLERANCE_MM3:
-        return f"the solids overlap by {overlap_mm3:.6f} mm³"
-    short_mm = pair.distance_mm - apart_mm
-    if (abs(short_mm) if exact else short_mm) > DISTANCE_TOLERANCE_MM:
+        return _against_interface(pair.interface, first, second, frame)
+    if pair.distance_mm == 0:
+        overlap_mm3 = _overlap_mm3(first, second, frame)
+        return f"the solids overlap by {overlap_mm3:.6f} mm³" if overlap_mm3 > OVERLAP_TOLERANCE_MM3 else ""
+    if not _formula_is_exact(pair.first, pair.second):
+        return outside_envelope(pair.first) or outside_envelope(pair.second)
+    apart_mm = _apart_mm(first, second, frame, pair.distance_mm)
+    if abs(apart_mm - pair.distance_mm) > DISTANCE_TOLERANCE_MM:
         return f"the solids are {apart_mm:.6f} mm apart, by formula {pair.distance_mm:.6f} mm"
     return ""
 
 
-def _against_interface(interface: Interface, apart_mm: float, overlap_mm3: float, found: tuple[Fit, ...]) -> str:
+def _apart_mm(first: Body, second: Body, frame: Frame, expected_mm: float) -> float:
+    """Distance of two bodies, sought first where it is expected."""
+    apart_mm = separation_mm(first, second, frame, expected_mm + _SLACK_MM)
+    if apart_mm <= expected_mm + _SLACK_MM:
+        return apart_mm
+    return separation_mm(first, second, frame, math.inf)
+
+
+def _against_interface(interface: Interface, first: Body, second: Body, frame: Frame) -> str:
     """What the solids say against a declared interface."""
     kind = f"the interface '{interface.kind}'"
+    apart_mm = _apart_mm(first, second, frame, interface.gap_mm)
     if abs(apart_mm - interface.gap_mm) > DISTANCE_TOLERANCE_MM:
         return f"{kind} asks for a gap of {interface.gap_mm:.6f} mm, the solids have {apart_mm:.6f} mm"
+    overlap_mm3 = _overlap_mm3(first, second, frame) if apart_mm <= DISTANCE_TOLERANCE_MM else 0.0
     if interface.fit_mm is None:
         return f"{kind} overlaps by {overlap_mm3:.6f} mm³" if overlap_mm3 > OVERLAP_TOLERANCE_MM3 else ""
+    found = fits(first, second, frame)
     fit = next((fit for fit in found if abs(fit.fit_mm - interface.fit_mm) <= DISTANCE_TOLERANCE_MM), None)
     if fit is None:
         seen = ", ".join(f"{fit.fit_mm:.6f}" for fit in found) or "none"
@@ -122,15 +131,6 @@ def _formula_is_exact(first: Placed, second: Placed) -> bool:
 
 
 @functools.cache
-def _distance_mm(first: Body, second: Body, frame: Frame) -> float:
-    """Smallest distance of two bodies, the second standing at `frame` in the first one's frame."""
-    measured = BRepExtrema_DistShapeShape(first.solid.wrapped, second.solid.moved(location(frame)).wrapped)
-    if not measured.IsDone():
-        raise ProgramError(f"the kernel found no distance between {first.part} and {second.part}")
-    return float(measured.Value())
-
-
-@functools.cache
 def _overlap_mm3(first: Body, second: Body, frame: Frame) -> float:
-    """Common volume of two bodies."""
+    """Common volume of two bodies, the second standing at `frame` in the first one's frame."""
     return float(first.solid.intersect(second.solid.moved(location(frame))).Volume())

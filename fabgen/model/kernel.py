@@ -23,6 +23,9 @@ try:
 except ImportError as error:
     raise cannot_load(error) from error
 
+_GROUND = cq.Plane(origin=(0, 0, 0), xDir=(1, 0, 0), normal=(0, 0, 1))
+"""Made once: a workplane without it makes all named planes first, which takes longer than many a part."""
+
 Bounds = tuple[tuple[float, float, float], tuple[float, float, float]]
 
 __all__ = ["Bounds", "bounds_mm", "cannot_load", "cq", "fused", "on_bed", "part_of", "solid_of", "volume_mm3"]
@@ -39,7 +42,7 @@ def part_of(shape: cq.Shape) -> cq.Workplane:
         raise ProgramError(f"a part came out as {len(solids)} solids")
     if not solids[0].isValid():
         raise ProgramError("a part came out as an invalid solid")
-    return cq.Workplane(solids[0])
+    return cq.Workplane(_GROUND, obj=solids[0])
 
 
 def solid_of(part: cq.Workplane) -> cq.Solid:

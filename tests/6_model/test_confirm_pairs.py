@@ -10,6 +10,7 @@ from fabgen.design.distances import parts_distance_mm
 from fabgen.errors import ProgramError
 from fabgen.model import confirm as module
 from fabgen.model.confirm import confirm
+from fabgen.model.separation import separation_mm
 
 LEFT, RIGHT = (0.0, 1.0, 0.0), (0.0, -1.0, 0.0)
 ALONG = (1.0, 0.0, 0.0)
@@ -143,11 +144,11 @@ def test_equal_placements_are_measured_once():
             meet(bar, tube, "rod in clearance hole", 2.0, 4.0),
         ]
 
-    module._distance_mm.cache_clear()
+    separation_mm.cache_clear()
     confirm(element(0))
-    once = module._distance_mm.cache_info().misses
+    once = separation_mm.cache_info().misses
     assert confirm([pair for i in range(40) for pair in element(i)]) == 120
-    assert module._distance_mm.cache_info().misses == once == 3
+    assert separation_mm.cache_info().misses == once == 3
 
 
 def test_a_hole_on_the_edge_of_the_neighbourhood_is_kept_whole():

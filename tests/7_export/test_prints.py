@@ -25,7 +25,7 @@ PRINTED = [
 ]
 GROWTH = (("hole_growth_mm", 0.2),)
 VOLUME_REL = 0.003  # the contract's limit between mesh and solid
-EXTENT_MM = 0.02  # a circle of 126 sides is at most r (1 - cos(π/126)) = 0.0003 r short
+EXTENT_MM = 0.02  # a circle of 84 sides is at most r (1 - cos(π/84)) = 0.0007 r short
 
 
 def strict_3mf(data):

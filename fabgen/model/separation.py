@@ -1,0 +1,94 @@
+"""The smallest distance of two solids by the kernel, asked only of the faces that can matter."""
+
+import functools
+import itertools
+from collections.abc import Iterable
+from typing import Any, NamedTuple
+
+from OCP.Bnd import Bnd_Box
+from OCP.BRep import BRep_Builder
+from OCP.BRepBndLib import BRepBndLib
+from OCP.BRepClass3d import BRepClass3d_SolidClassifier
+from OCP.BRepExtrema import BRepExtrema_DistShapeShape
+from OCP.gp import gp_Pnt
+from OCP.TopAbs import TopAbs_State
+from OCP.TopoDS import TopoDS_Compound
+
+from fabgen.design.arranged import Box, Frame
+from fabgen.design.distances import bounding_box, distance_mm
+from fabgen.errors import ProgramError
+from fabgen.model.kernel import cq
+from fabgen.model.neighbourhood import Body
+from fabgen.model.solids import location
+
+_POINT_MM = 1e-6
+
+
+class _Face(NamedTuple):
+    face: Any
+    box: Box
+
+
+@functools.cache
+def separation_mm(first: Body, second: Body, frame: Frame, within_mm: float) -> float:
+    """Distance of two bodies, the second standing at `frame` in the first one's frame.
+
+    Args:
+        first: one body.
+        second: the other.
+        frame: where the second one stands in the first one's frame.
+        within_mm: faces farther than this from the other body's box are left out; a distance up to here is exact, a
+            larger one is only known to be larger.
+
+    Returns:
+        0 where they touch or overlap, infinite where they are certainly farther apart than `within_mm`.
+    """
+    moved = second.solid.moved(location(frame))
+    own, others = _faces(first), [_Face(each.face, _turned(each.box, frame)) for each in _faces(second)]
+    own_box, others_box = (bounding_box([face.box for face in faces]) for faces in (own, others))
+    near = [face.face for face in own if distance_mm(face.box, others_box) <= within_mm]
+    near_others = [face.face for face in others if distance_mm(face.box, own_box) <= within_mm]
+    if _inside(first.solid, moved) or _inside(moved, first.solid):
+        return 0.0
+    if not near or not near_others:
+        return float("inf")
+    measured = BRepExtrema_DistShapeShape(
+        _compound(near), cq.Shape.cast(_compound(near_others)).moved(location(frame)).wrapped
+    )
+    if not measured.IsDone():
+        raise ProgramError(f"the kernel found no distance between {first.part} and {second.part}")
+    return float(measured.Value())
+
+
+@functools.cache
+def _faces(body: Body) -> tuple[_Face, ...]:
+    """The faces of a body, each with a box that holds it."""
+    found = []
+    for face in body.solid.Faces():
+        box = Bnd_Box()
+        BRepBndLib.Add_s(face.wrapped, box, False)
+        low, high = box.CornerMin(), box.CornerMax()
+        found.append(_Face(face.wrapped, Box((low.X(), low.Y(), low.Z()), (high.X(), high.Y(), high.Z()))))
+    return tuple(found)
+
+
+def _turned(box: Box, frame: Frame) -> Box:
+    """A box that holds a box after it was placed."""
+    ends = [(box.low[i], box.high[i]) for i in range(3)]
+    corners = [frame.point((x, y, z)) for x, y, z in itertools.product(*ends)]
+    return bounding_box([Box(corner, corner) for corner in corners])
+
+
+def _inside(outer: cq.Shape, inner: cq.Shape) -> bool:
+    """Whether a vertex of one shape lies inside the other one's material."""
+    place = inner.Vertices()[0].Center()
+    sought = BRepClass3d_SolidClassifier(outer.wrapped, gp_Pnt(place.x, place.y, place.z), _POINT_MM)
+    return bool(sought.State() == TopAbs_State.TopAbs_IN)
+
+
+def _compound(faces: Iterable[Any]) -> Any:
+    builder, compound = BRep_Builder(), TopoDS_Compound()
+    builder.MakeCompound(compound)
+    for face in faces:
+        builder.Add(compound, face)
+    return compound
