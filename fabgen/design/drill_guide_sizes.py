@@ -188,9 +188,10 @@ class DrillGuideSize:
     def marks(self) -> tuple[tuple[str, Side, float], ...]:
         """Sunk marks: (text, outer face, x of the text's middle)."""
         rear, fore = 8.0 - self.length_mm / 2, self.length_mm / 2 - 5.0
+        drill: tuple[str, Side, float] = (f"{self.bushing_bore_mm:.3g}", "-z", rear)
         if self.face == "sides":
-            return (("TOP", "+z", rear), ("L", "+y", fore), ("R", "-y", fore))
-        return (("TOP", "+y", rear), ("R", "+z", rear))
+            return (("TOP", "+z", rear), ("L", "+y", fore), ("R", "-y", fore), drill)
+        return (("TOP", "+y", rear), ("R", "+z", rear), drill)
 
     @property
     def arrow_x_mm(self) -> float:

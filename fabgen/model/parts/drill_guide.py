@@ -154,9 +154,9 @@ def _from_face(size: DrillGuideSize, side: Side, diameter_mm: float, x_mm: float
 def _marks(size: DrillGuideSize) -> list[cq.Shape]:
     reading: dict[Side, tuple[Triple, Triple]]
     if size.face == "sides":
-        reading = {"+z": (X, Y), "+y": (_BACK, Z), "-y": (X, Z)}
+        reading = {"+z": (X, Y), "+y": (_BACK, Z), "-y": (X, Z), "-z": (X, _RIGHT)}
     else:
-        reading = {"+y": (X, _DOWN), "+z": (X, Y)}
+        reading = {"+y": (X, _DOWN), "+z": (X, Y), "-z": (X, _RIGHT)}
     tools: list[cq.Shape] = []
     for text, side, x in size.marks:
         out, depth = _OUT[side], size.outside_mm(side) - MARK_DEPTH_MM
