@@ -1,6 +1,7 @@
 """One solid per distinct part, built once by the part's file in `model/parts`."""
 
 import functools
+from collections.abc import Callable
 
 from fabgen import registry
 from fabgen.design.arranged import Frame, Parameters, Placed
@@ -22,7 +23,13 @@ def solid_of(part: str, parameters: Parameters = ()) -> cq.Solid:
         ProgramError: there is no such part, or it did not come out as one solid; a cut that leaves two pieces is valid
             geometry to the kernel, so pieces are counted.
     """
-    return kernel.solid_of(registry.entry("model/parts", part).function()(**dict(parameters)))
+    return kernel.solid_of(_maker(part)(**dict(parameters)))
+
+
+@functools.cache
+def _maker(part: str) -> Callable[..., cq.Workplane]:
+    """The function that builds a part, found once."""
+    return registry.entry("model/parts", part).function()
 
 
 def finished(placed: Placed) -> cq.Solid:

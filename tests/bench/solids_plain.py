@@ -16,6 +16,8 @@ from fabgen.arrange.arrange import arrange
 from fabgen.correct.ledger import correct
 from fabgen.read.reader import read_design
 
+MAKERS = {}
+
 
 def drilled(*, section, width_mm, height_mm, wall_mm, corner_radius_mm, length_mm, holes):
     """The boom: an extruded tube, then one cut per hole."""
@@ -32,14 +34,14 @@ def built(placed):
     """One part, from scratch."""
     if placed.part == "boom":
         return drilled(**dict(placed.parameters))
-    return registry.entry("model/parts", placed.part).function()(**dict(placed.parameters))
+    return MAKERS[placed.part](**dict(placed.parameters))
 
 
 def main(design: Path, folder: Path) -> None:
     read = read_design(design).design
     arranged = arrange(read, correct(read))
-    for placed in arranged.placed:
-        registry.entry("model/parts", placed.part).function()
+    for part in {placed.part for placed in arranged.placed}:
+        MAKERS[part] = registry.entry("model/parts", part).function()
     start = time.process_time()
     assembly = cq.Assembly(name=arranged.design.name)
     printed = {}
