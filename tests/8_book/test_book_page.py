@@ -158,7 +158,11 @@ def test_a_design_without_findings_says_so(book_of: Callable[..., Book]) -> None
 
 
 def test_the_stamp_is_on_stamped_books_alone(book_of: Callable[..., Book]) -> None:
-    assert "NOT CLEARED" in text_of(book_of("sonde-finder-401", stamped=True))
+    stamped = book_of("sonde-finder-401", stamped=True)
+    assert "NOT CLEARED" in text_of(stamped)
+    assert "At least one check fails" not in text_of(stamped)
+    fault = Finding("A03", "fail", "R", 350.0, 300.0, "mm", "buy longer bars")
+    assert "At least one check fails" in text_of(replace(stamped, findings=(fault,)))
     assert "NOT CLEARED" not in book_html(book_of("sonde-finder-401")).decode()
 
 
