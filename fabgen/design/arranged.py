@@ -27,7 +27,8 @@ class Hole:
         element: the element (or `feed`, `clamp`) it serves.
         wall: the flat wall, or `round`.
         angle_deg: direction of the outward hole axis, from +z towards +y.
-        across_mm: from the wall's centre line, growing to +z on ±y walls and to +y on ±z walls; 0 when round.
+        across_mm: from the wall's centre line, growing to +z on ±y walls and to +y on ±z walls; when round, beside the
+            radial direction of `angle_deg`.
         pilot_mm: pilot drill; equal to `diameter_mm` where no pilot is needed.
         tolerance_mm: ± on the station.
         drill: the drill's name.

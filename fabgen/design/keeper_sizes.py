@@ -48,15 +48,6 @@ class PushRingSize:
         return min(LEAD_IN_MM, self.wall_mm / 3, self.length_mm / 4)
 
     @property
-    def grip_strain(self) -> float:
-        """Strain at the ring's skin when the rod opens it: half its thickness times the change in curvature.
-
-        Source: bending of a thin curved bar of even curvature change, common practice for split rings; a thick ring's
-        inner skin strains more.
-        """
-        return _opening_strain(self.rod_diameter_mm, self.bore_mm, self.outside_mm)
-
-    @property
     def volume_mm3(self) -> float:
         """Exact volume of the solid."""
 
@@ -105,26 +96,6 @@ class SnapKeeperSize:
     def flare_start_mm(self) -> float:
         """Where along x the flare begins."""
         return math.sqrt((self.outside_mm / 2) ** 2 - (self.mouth_mm / 2) ** 2) - self.flare_mm
-
-    @property
-    def snap_strain(self) -> float:
-        """Strain at the clip's back while the rod passes the mouth.
-
-        Each half is a curved beam clamped at the back and pushed open at the mouth's edge, an angle α round from it:
-        ε = δ (t/2)(1 − cos α) / (r² (α (1/2 + cos² α) − 3/4 sin 2α)), δ half the opening, r the mean radius.
-        Source: curved beam by Castigliano's theorem, own derivation; thin-bar estimate.
-        """
-        radius = (self.bore_mm + self.outside_mm) / 4
-        thickness = (self.outside_mm - self.bore_mm) / 2
-        opening = (self.rod_diameter_mm - self.mouth_mm) / 2
-        angle = math.pi - math.asin(self.mouth_mm / self.bore_mm)
-        compliance = angle * (0.5 + math.cos(angle) ** 2) - 0.75 * math.sin(2 * angle)
-        return opening * thickness / 2 * (1 - math.cos(angle)) / (radius**2 * compliance)
-
-    @property
-    def grip_strain(self) -> float:
-        """The larger of what snapping on and what sitting on the rod strains."""
-        return max(self.snap_strain, _opening_strain(self.rod_diameter_mm, self.bore_mm, self.outside_mm))
 
     @property
     def volume_mm3(self) -> float:
@@ -198,13 +169,6 @@ def snap_keeper_size(
     if size.outside_mm <= size.drawn_bore_mm or not 0 < size.mouth_mm < min(size.bore_mm, rod_diameter_mm):
         raise ValueError(f"a mouth of {size.mouth_mm:.3f} mm in a bore of {size.bore_mm:.3f} mm holds no rod")
     return size
-
-
-def _opening_strain(rod_mm: float, bore_mm: float, outside_mm: float) -> float:
-    half_thickness = (outside_mm - bore_mm) / 4
-    radius = (outside_mm + bore_mm) / 4
-    opened = radius + (rod_mm - bore_mm) / 2
-    return half_thickness * (1 / radius - 1 / opened)
 
 
 def _ring(outside_mm: float, bore_mm: float, length_mm: float) -> Cylinder:
