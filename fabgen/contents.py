@@ -10,6 +10,7 @@ from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.drawing import Sheet
 from fabgen.design.findings import Finding, clear
 from fabgen.design.package import PackageFile
+from fabgen.design.response import Response
 from fabgen.design.solids import AssemblyItem, Print
 
 GROUPS = ("tables", "templates", "bench", "model", "prints", "fixtures", "book")
@@ -30,6 +31,7 @@ class Order:
     findings: tuple[Finding, ...]
     cut_plan: CutPlan
     stamped: bool
+    response: Response | None = None
 
     @cached_property
     def assembly(self) -> tuple[AssemblyItem, ...]:
@@ -47,7 +49,13 @@ class Order:
 
 
 def package_files(
-    arranged: Arranged, findings: tuple[Finding, ...], *, stamped: bool, only: Sequence[str], say: Callable[[str], None]
+    arranged: Arranged,
+    findings: tuple[Finding, ...],
+    *,
+    stamped: bool,
+    only: Sequence[str],
+    say: Callable[[str], None],
+    response: Response | None = None,
 ) -> Files:
     """All files of a package but its manifest.
 
@@ -57,10 +65,11 @@ def package_files(
         stamped: every sheet carries the stamp of a design that is not cleared.
         only: parts to write; empty for all.
         say: takes progress.
+        response: what the array solver found; None leaves its tables and pictures out.
     """
     from fabgen.arrange.bars import plan
 
-    order = Order(arranged, findings, plan(arranged.cuts, arranged.design.shop), stamped)
+    order = Order(arranged, findings, plan(arranged.cuts, arranged.design.shop), stamped, response)
     files = [_findings(findings)]
     for group in GROUPS:
         if group not in _WRITERS or (only and group not in only):
@@ -86,9 +95,10 @@ def _findings(findings: tuple[Finding, ...]) -> PackageFile:
 
 
 def _tables(order: Order) -> Files:
-    from fabgen.export import tables
+    from fabgen.export import response_tables, tables
 
-    return tables.files(order.arranged, order.cut_plan)
+    electrical = response_tables.files(order.response) if order.response else ()
+    return tables.files(order.arranged, order.cut_plan) + electrical
 
 
 def _templates(order: Order) -> Files:

@@ -6,9 +6,13 @@ from pathlib import Path
 
 from fabgen.arrange.arrange import arrange
 from fabgen.check.judge import judge
+from fabgen.check.limits import electrical
+from fabgen.check.response_store import records_folder
 from fabgen.correct.ledger import correct
+from fabgen.design.allotted import with_tolerances
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding, clear, in_order
+from fabgen.design.response import Response
 from fabgen.read.reader import Reading, read_design
 
 Say = Callable[[str], None]
@@ -17,11 +21,12 @@ Say = Callable[[str], None]
 
 @dataclass(frozen=True, slots=True)
 class Judged:
-    """One design, judged by numbers alone."""
+    """One design, judged by numbers alone; `response` is None where the array solver was not asked."""
 
     reading: Reading
     arranged: Arranged
     findings: tuple[Finding, ...]
+    response: Response | None = None
 
     @property
     def name(self) -> str:
@@ -39,16 +44,24 @@ class Judged:
         return "clear" if self.clear else "not clear"
 
 
-def check(path: Path) -> Judged:
-    """Read one design file and judge it; no CAD kernel, no file written.
+def check(path: Path, *, solve: bool = False, keep: bool = False) -> Judged:
+    """Read one design file and judge it; no CAD kernel, no package written.
+
+    Args:
+        path: the design file.
+        solve: ask the array solver about its limits; else a stored response that still fits answers.
+        keep: store what the solver found in the design's records.
 
     Raises:
         DesignErrors: the file is no valid design.
     """
     reading = read_design(path)
     ledger = correct(reading.design)
-    arranged = arrange(reading.design, ledger)
-    return Judged(reading, arranged, in_order([*reading.notes, *judge(arranged)]))
+    general = arrange(reading.design, ledger)
+    records = records_folder(path, reading.design.stem)
+    response, electric = electrical(general, records, solve=solve, keep=keep)
+    arranged = with_tolerances(general, response)
+    return Judged(reading, arranged, in_order([*reading.notes, *judge(arranged), *electric]), response)
 
 
 def drawn(judged: Judged) -> Judged:
@@ -83,7 +96,9 @@ def build(judged: Judged, *, output: Path, stamped: bool = False, only: Sequence
     from fabgen.export import package
 
     design = judged.arranged.design
-    files = package_files(judged.arranged, judged.findings, stamped=stamped, only=only, say=say)
+    files = package_files(
+        judged.arranged, judged.findings, response=judged.response, stamped=stamped, only=only, say=say
+    )
     name = "_".join([design.name, *(["NOT-CLEARED"] if stamped else []), *(["only", *only] if only else [])])
     contents = package.manifest(
         files,

@@ -55,6 +55,7 @@ def main(arguments: list[str] | None = None) -> None:
     Args:
         arguments: words after the program's name; the process's own by default.
     """
+    os.environ.setdefault("OPENBLAS_NUM_THREADS", "1")  # small systems: a second thread only waits
     try:
         result: Any = group.main(args=arguments, prog_name="fabgen", standalone_mode=False)
         code = result if isinstance(result, int) else 0

@@ -72,7 +72,12 @@ def print_judged(judged: Judged) -> None:
         click.secho(str(finding), fg=_COLOURS[finding.severity], color=None if _colour() else False)
     counts = {severity: sum(f.severity == severity for f in judged.findings) for severity in _COLOURS}
     tally = ", ".join(f"{count} {severity}" for severity, count in counts.items() if count) or "no findings"
-    click.echo(f"{judged.name}: {judged.verdict} ({tally}); {judged.arranged.ledger.status}")
+    click.echo(f"{judged.name}: {judged.verdict} ({tally}); {judged.arranged.ledger.status}{_limits(judged)}")
+
+
+def _limits(judged: Judged) -> str:
+    """What the verdict line says about limits that were not judged."""
+    return "; limits not judged" if any(finding.code == "E01" for finding in judged.findings) else ""
 
 
 def _colour() -> bool:

@@ -5,11 +5,13 @@ the sum of the printed figures is the printed sum.
 """
 
 import math
+from dataclasses import replace
 from fractions import Fraction
 
 from fabgen.correct.allowance import allowance
+from fabgen.correct.rod_change import rod_change
 from fabgen.design.design import Design, Element
-from fabgen.design.ledger import Allowance, Ledger, LedgerLine
+from fabgen.design.ledger import Ledger, LedgerLine
 from fabgen.design.shop_tolerance import shop_tolerance_mm
 from fabgen.physics.half_wave import shift_khz
 
@@ -30,9 +32,10 @@ def correct(design: Design) -> Ledger:
 
 
 def _line(design: Design, element: Element) -> LedgerLine:
-    found = allowance(design, element)
-    modelled, added = _um(element.length_mm), _um(found.value_mm)
-    cut = _cut_um(design, element, modelled + added)
+    change = rod_change(design, element)
+    found = allowance(design, replace(element, length_mm=element.length_mm + change.value_mm))
+    modelled, added, changed = _um(element.length_mm), _um(found.value_mm), _um(change.value_mm)
+    cut = _cut_um(design, element, modelled + added + changed)
     cut_mm = cut / 1000
     return LedgerLine(
         element=element.id,
@@ -41,13 +44,14 @@ def _line(design: Design, element: Element) -> LedgerLine:
         rod_mm=element.rod.diameter_mm,
         modelled_mm=modelled / 1000,
         allowance=found,
-        rod_change_mm=0.0,
-        rod_change_u_mm=0.0,
-        rounding_mm=(cut - modelled - added) / 1000,
+        rod_change_mm=changed / 1000,
+        rod_change_u_mm=change.u_mm,
+        rounding_mm=(cut - modelled - added - changed) / 1000,
         cut_mm=cut_mm,
         tolerance_mm=shop_tolerance_mm(design.shop, cut_mm),
-        trim_mm=_trim_mm(design, element, found),
+        trim_mm=_trim_mm(design, element, math.hypot(found.u_mm, change.u_mm)),
         shift_khz=abs(shift_khz(frequency_mhz=design.frequency_mhz, length_mm=element.length_mm, change_mm=found.u_mm)),
+        rod_change_remarks=change.remarks,
     )
 
 
@@ -69,9 +73,9 @@ def _nearest_step_um(length_um: Fraction | int, step_mm: float) -> int:
     return round(round(Fraction(length_um) / step_um) * step_um)
 
 
-def _trim_mm(design: Design, element: Element, found: Allowance) -> float:
+def _trim_mm(design: Design, element: Element, u_mm: float) -> float:
     """Twice the uncertainty (95 %) rounded up to the step; on a driven rod at least its own margin."""
-    wanted_mm = 2 * found.u_mm
+    wanted_mm = 2 * u_mm
     if element.role == "driven":
         wanted_mm = max(wanted_mm, DRIVEN_TRIM * element.length_mm)
     step_mm = design.shop.cut_step_mm

@@ -88,6 +88,7 @@ class LedgerLine:
         tolerance_mm: ± on the cut length.
         trim_mm: extra to leave for someone who will measure and shorten; not contained in `cut_mm`.
         shift_khz: what one u does to a half-wave rod of this length; positive.
+        rod_change_remarks: what has to be said about a rod of another diameter than the modelled one.
     """
 
     element: str
@@ -103,6 +104,7 @@ class LedgerLine:
     tolerance_mm: float
     trim_mm: float
     shift_khz: float
+    rod_change_remarks: tuple[Remark, ...] = ()
 
     @property
     def u_mm(self) -> float:

@@ -14,6 +14,7 @@ from dataclasses import dataclass
 import numpy as np
 
 from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, mismatch
+from fabgen.physics.array_iteration import iterate_currents
 from fabgen.physics.array_loss import impedance_matrix, rod_loss
 from fabgen.physics.array_matrix import (
     ETA_OHM,
@@ -178,20 +179,8 @@ def _respond(
     k_per_mm = 2 * math.pi * expanded.frequency_mhz / LIGHT_MM_MHZ
     k_radius = 0.5 * k_per_mm * diameter_mm
     kh = 0.5 * k_per_mm * length_mm + END_EXTENSION_RADII * k_radius
-    size = count * segments
-    rows = np.repeat(kh, segments, axis=1)[:, :, None] * expanded.to_kh_ohm
-    rows += np.repeat(k_per_mm * station_mm, segments, axis=1)[:, :, None] * expanded.to_k_station_ohm
-    matrix = expanded.matrix_ohm + rows
-    matrix += rows.transpose(0, 2, 1)
-    if k_radius.any():
-        blocks = matrix.reshape(builds, count, segments, count, segments)
-        rod = np.arange(count)
-        blocks[:, rod, :, rod, :] += (k_radius[:, :, None, None] * expanded.to_k_radius_ohm).transpose(1, 0, 2, 3)
-    drive = np.zeros((size, 1), dtype=np.complex128)
     fed = array.fed_index
-    drive[fed * segments] = 1.0
-    with one_blas_thread():
-        current = np.asarray(np.linalg.solve(matrix, drive), dtype=np.complex128).reshape(builds, count, segments)
+    current = _currents(expanded, kh, k_per_mm * station_mm, k_radius).reshape(builds, count, segments)
     moment = np.einsum("bin,bin->bi", current, broadside_moment(expanded.kh + kh, segments))
     k_station = k_per_mm * (np.asarray(array.station_mm) + station_mm)
     forward = np.exp(1j * (k_station - k_station[:, fed : fed + 1]))
@@ -200,6 +189,39 @@ def _respond(
     feed = current[:, fed, 0]
     gain = 10 * np.log10(ETA_OHM * np.abs(front) ** 2 / (math.pi * feed.real))
     return np.asarray(gain), np.asarray(back / front, dtype=np.complex128), np.asarray(1 / feed, dtype=np.complex128)
+
+
+def _currents(expanded: ExpandedArray, kh: FloatArray, k_station: FloatArray, k_radius: FloatArray) -> ComplexArray:
+    """Currents of builds: by iteration where only lengths and stations differ, else each solved by itself."""
+    segments = expanded.segments
+    along, across = np.repeat(kh, segments, axis=1), np.repeat(k_station, segments, axis=1)
+    if k_radius.any():
+        return _solved(expanded, along, across, k_radius)
+    rows = (expanded.to_kh_ohm, expanded.to_k_station_ohm)
+    fed_basis = expanded.array.fed_index * segments
+    current, settled = iterate_currents(expanded.matrix_ohm, rows, (along, across), fed_basis)
+    left = ~settled
+    if left.any():
+        current[left] = _solved(expanded, along[left], across[left], k_radius[left])
+    return current
+
+
+def _solved(expanded: ExpandedArray, along: FloatArray, across: FloatArray, k_radius: FloatArray) -> ComplexArray:
+    """Currents of builds from their own matrices; `along` and `across` are changes of kh and k station by basis."""
+    array, segments = expanded.array, expanded.segments
+    builds, count = k_radius.shape
+    rows = along[:, :, None] * expanded.to_kh_ohm
+    rows += across[:, :, None] * expanded.to_k_station_ohm
+    matrix = expanded.matrix_ohm + rows
+    matrix += rows.transpose(0, 2, 1)
+    if k_radius.any():
+        blocks = matrix.reshape(builds, count, segments, count, segments)
+        rod = np.arange(count)
+        blocks[:, rod, :, rod, :] += (k_radius[:, :, None, None] * expanded.to_k_radius_ohm).transpose(1, 0, 2, 3)
+    drive = np.zeros((count * segments, 1), dtype=np.complex128)
+    drive[array.fed_index * segments] = 1.0
+    with one_blas_thread():
+        return np.asarray(np.linalg.solve(matrix, drive)[:, :, 0], dtype=np.complex128)
 
 
 def sample_band(

@@ -26,7 +26,9 @@ def design(root: Path, tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> Path:
 
 @pytest.fixture
 def light_package(monkeypatch: pytest.MonkeyPatch) -> None:
-    """Packages of one small file: these tests are about the command line, not about solids."""
+    """Packages of one small file and few builds tried: these tests are about the command line."""
+    monkeypatch.setattr("fabgen.check.response.allot.SAMPLES", 60)
+    monkeypatch.setattr("fabgen.check.response.allot.FEWEST", 60)
     monkeypatch.setattr(
         contents, "package_files", lambda *args, **keywords: (PackageFile("tables/lengths.csv", b"x\n", "x"),)
     )
@@ -152,7 +154,7 @@ def test_a_bug_ends_with_3_and_one_message(
     design: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
 ) -> None:
     monkeypatch.delenv("FABGEN_DEBUG", raising=False)
-    monkeypatch.setattr("fabgen.cli.commands.check.judge_file", lambda path: 1 // 0)
+    monkeypatch.setattr("fabgen.cli.commands.check.judge_file", lambda path, solve: 1 // 0)
     assert run("check", str(design)) == 3
     err = capsys.readouterr().err
     assert "a bug: ZeroDivisionError" in err

@@ -58,7 +58,7 @@ def _judge_all(
     owners: dict[str, Path] = {}
     for path in designs:
         try:
-            one = judge_file(path)
+            one = judge_file(path, solve=True, keep=True)
         except FabgenError as error:
             code = max(code, error.exit_code)
             records.append(report.error_record(path, error))

@@ -14,15 +14,16 @@ DESIGNS = click.argument("designs", nargs=-1, required=True, type=click.Path(pat
 @click.command()
 @DESIGNS
 @click.option("--show", is_flag=True, help="Print every value in force and where it came from; a valid design itself.")
+@click.option("--response", is_flag=True, help="Ask the array solver whether limits are kept.")
 @click.option("--json", "as_json", is_flag=True, help="Print one JSON document.")
-def check(designs: tuple[Path, ...], show: bool, as_json: bool) -> int:
+def check(designs: tuple[Path, ...], show: bool, response: bool, as_json: bool) -> int:
     """Judge one or more design files: read, correct, arrange, check. Nothing is written."""
     if show and (as_json or len(designs) > 1):
         raise InputError("--show prints one design as YAML", "name one design, without --json")
     records, code = [], 0
     for path in designs:
         try:
-            judged = judge_file(path)
+            judged = judge_file(path, solve=response)
         except FabgenError as error:
             code = max(code, error.exit_code)
             records.append(report.error_record(path, error))

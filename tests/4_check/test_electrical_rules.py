@@ -1,0 +1,199 @@
+"""Limits and other rods: every finding of the array solver with its code, figure and severity."""
+
+import json
+from dataclasses import replace
+from pathlib import Path
+from typing import Any
+
+import pytest
+
+from fabgen.arrange.arrange import arrange
+from fabgen.check import limits as rules
+from fabgen.check.response.respond import respond
+from fabgen.check.response_store import FILE, load, store
+from fabgen.check.rules.other_rod import findings as other_rod
+from fabgen.correct.ledger import correct
+from fabgen.design.allotted import with_tolerances
+from fabgen.design.arranged import Arranged
+from fabgen.design.electrical_case import ElectricalCase, electrical_case
+from fabgen.design.findings import Finding
+from fabgen.design.limits import Limits
+from fabgen.design.response import Response
+from fabgen.read.reader import read_design
+
+BAND = (430.0, 438.0)
+
+
+def arranged_with(root: Path, limits: Limits, stem: str = "river-gauge-434") -> Arranged:
+    design = replace(read_design(root / "designs" / f"{stem}.yaml").design, limits=limits)
+    return arrange(design, correct(design))
+
+
+def case_with(arranged: Arranged, **changes: Any) -> ElectricalCase:
+    case = electrical_case(arranged)
+    assert case is not None
+    return replace(case, **changes)
+
+
+@pytest.fixture(autouse=True)
+def few_builds(monkeypatch: pytest.MonkeyPatch) -> None:
+    """Enough builds to judge by, few enough to be quick."""
+    monkeypatch.setattr("fabgen.check.response.allot.SAMPLES", 300)
+    monkeypatch.setattr("fabgen.check.response.allot.FEWEST", 300)
+
+
+@pytest.fixture
+def sound(root: Path) -> Arranged:
+    return arranged_with(root, Limits(BAND, 400.0, 0.1, 18.0, 1.5))
+
+
+def found(case: ElectricalCase, response: Response | None = None) -> list[tuple[str, str, str]]:
+    judged = rules.judged(case, response or respond(case))
+    return [(finding.code, finding.severity, finding.where) for finding in judged]
+
+
+def one(case: ElectricalCase, code: str) -> Finding:
+    return next(finding for finding in rules.judged(case, respond(case)) if finding.code == code)
+
+
+def test_limits_that_hold_find_nothing_but_the_common_error(sound: Arranged) -> None:
+    """An allowance of 5 mm known to 10 % is worth three times the shift that is allowed."""
+    assert found(case_with(sound)) == [("E04", "warn", "shift")]
+    finding = one(case_with(sound), "E04")
+    assert finding.required == 400.0
+    assert finding.measured is not None
+    assert 1000 < finding.measured < 1600
+    assert "2u" in finding.advice
+
+
+def test_a_known_allowance_is_not_told(sound: Arranged) -> None:
+    assert found(case_with(sound, allowance_u_mm=(0.0,) * 12)) == []
+
+
+def test_what_the_model_misses_itself(sound: Arranged) -> None:
+    """The model has 22.5 dB and 1.26 in this band."""
+    case = case_with(sound, limits=Limits(BAND, front_to_back_db=25.0, mismatch=1.1), allowance_u_mm=(0.0,) * 12)
+    assert found(case) == [("E02", "fail", "front_to_back"), ("E02", "fail", "mismatch")]
+    finding = one(case, "E02")
+    assert (finding.measured, finding.required, finding.unit) == (pytest.approx(22.504, abs=0.05), 25.0, "dB")
+    assert "2.5 dB" in finding.advice
+    assert "free space" in finding.advice
+
+
+def test_what_no_shop_can_hold(sound: Arranged) -> None:
+    case = case_with(sound, limits=Limits(BAND, shift_khz=20.0), allowance_u_mm=(0.0,) * 12)
+    assert found(case) == [("E03", "fail", "shift")]
+    finding = one(case, "E03")
+    assert finding.measured is not None
+    assert finding.measured > 100
+    assert "rounding" in finding.advice
+    unrounded = replace(case, rounding_mm=(0.0,) * 12)
+    assert "finest" in one(unrounded, "E03").advice
+
+
+def test_limits_that_only_miss_together(sound: Arranged) -> None:
+    """Each limit is kept by 95 % of builds, not all of them at once."""
+    case = case_with(sound, limits=Limits(BAND, shift_khz=1.0), allowance_u_mm=(0.0,) * 12)
+    response = respond(case)
+    spread = replace(response.spread, inside_share=0.93, at_95=replace(response.spread.at_95, shift_khz=0.9))
+    assert found(case, replace(response, spread=spread)) == [("E03", "fail", "limits")]
+
+
+def test_thick_rods_are_told_and_nothing_absolute_is_judged(sound: Arranged) -> None:
+    """11 mm at 434 MHz is 0.0159 wavelengths."""
+    thick = (11.0,) * 12
+    case = case_with(sound, diameter_mm=thick, modelled_diameter_mm=thick, limits=Limits(BAND, None, None, 50.0, 1.01))
+    response = respond(case)
+    assert ("E07", "warn", "rods") in found(case, response)
+    assert response.points == ()
+    assert response.fan == ()
+    assert {code for code, *_ in found(case, response)} == {"E07"}
+
+
+def test_no_limits_no_word(root: Path) -> None:
+    arranged = arranged_with(root, Limits())
+    response, told = rules.electrical(arranged, root / "nowhere", solve=False, keep=False)
+    assert (response, told) == (None, ())
+
+
+def test_limits_without_an_answer_are_not_judged(sound: Arranged, tmp_path: Path) -> None:
+    response, told = rules.electrical(sound, tmp_path, solve=False, keep=False)
+    assert response is None
+    assert [(finding.code, finding.severity) for finding in told] == [("E01", "note")]
+    assert list(tmp_path.iterdir()) == []
+
+
+def test_a_kept_response_answers_until_the_design_changes(sound: Arranged, tmp_path: Path) -> None:
+    folder = tmp_path / "records" / "gauge"
+    kept, told = rules.electrical(sound, folder, solve=True, keep=True)
+    assert [path.name for path in folder.iterdir()] == [FILE]
+    assert rules.electrical(sound, folder, solve=False, keep=False) == (kept, told)
+    other = replace(sound, design=replace(sound.design, limits=Limits(BAND, shift_khz=401.0)))
+    assert rules.electrical(other, folder, solve=False, keep=False)[0] is None
+
+
+def test_a_broken_file_does_not_answer(sound: Arranged, tmp_path: Path) -> None:
+    kept, _ = rules.electrical(sound, tmp_path, solve=True, keep=True)
+    assert kept is not None
+    path = tmp_path / FILE
+    whole = json.loads(path.read_text(encoding="utf-8"))
+    for spoiled in ("", "[]", "{", json.dumps({**whole, "fan": 3}), json.dumps({**whole, "absolute": "yes"})):
+        path.write_text(spoiled, encoding="utf-8")
+        assert load(tmp_path, kept.case_sha256) is None
+
+
+def test_a_folder_that_cannot_be_written_is_a_note(sound: Arranged, tmp_path: Path) -> None:
+    blocked = tmp_path / "records"
+    blocked.write_text("a file stands where the folder should be", encoding="utf-8")
+    response, told = rules.electrical(sound, blocked / "gauge", solve=True, keep=True)
+    assert response is not None
+    assert [(finding.code, finding.severity) for finding in told if finding.code == "E08"] == [("E08", "note")]
+
+
+def test_storing_leaves_nothing_else_behind(sound: Arranged, tmp_path: Path) -> None:
+    response, _ = rules.electrical(sound, tmp_path, solve=True, keep=False)
+    assert response is not None
+    assert list(tmp_path.iterdir()) == []
+    store(tmp_path, response)
+    store(tmp_path, response)
+    assert [path.name for path in tmp_path.iterdir()] == [FILE]
+
+
+def test_a_rod_that_no_length_makes_good(root: Path, variant: Any) -> None:
+    rods = "rods: {diameter: 4 mm, material"
+    design = variant((rods, "rods: {diameter: 0.1 mm, modelled_diameter: 60 mm, material"))
+    design = replace(design, elements=tuple(replace(e, length_mm=250.0) for e in design.elements))
+    told = list(other_rod(arrange(design, correct(design))))
+    assert {(finding.code, finding.severity) for finding in told} == {("E05", "fail")}
+
+
+def test_a_rod_outside_the_range_of_the_method(variant: Any) -> None:
+    design = variant(("rods: {diameter: 4 mm, material", "rods: {diameter: 4 mm, modelled_diameter: 8 mm, material"))
+    told = list(other_rod(arrange(design, correct(design))))
+    assert {(finding.code, finding.severity, finding.unit) for finding in told} == {("E06", "warn", "wl")}
+
+
+def test_a_change_that_leaves_too_much(sound: Arranged) -> None:
+    """Lengths left as modelled: all rods alike move the response, some rods alone spoil it."""
+    case = case_with(sound, modelled_diameter_mm=(5.0,) * 12, limits=Limits())
+    assert found(case) == [("E09", "warn", "rods, shift")]
+    some = case_with(sound, modelled_diameter_mm=(4.0,) * 3 + (8.0,) * 3 + (4.0,) * 6, limits=Limits())
+    assert ("E09", "warn", "rods, gain") in found(some)
+    assert ("E09", "warn", "rods, back/front field") in found(some)
+
+
+def test_allotted_tolerances_reach_ledger_cuts_and_holes(sound: Arranged) -> None:
+    response = respond(case_with(sound))
+    assert response.allotment is not None
+    allotted = with_tolerances(sound, response)
+    rows = {row.element: row for row in response.allotment.rows}
+    assert {line.element: line.tolerance_mm for line in allotted.ledger.lines} == {
+        name: row.length_mm for name, row in rows.items()
+    }
+    assert {cut.piece: cut.tolerance_mm for cut in allotted.cuts if cut.piece.startswith("DE")} == {
+        "DE-left": rows["DE"].length_mm / 2,
+        "DE-right": rows["DE"].length_mm / 2,
+    }
+    for before, after in zip(sound.holes, allotted.holes, strict=True):
+        wanted = rows[after.element].station_mm if after.element in rows else before.tolerance_mm
+        assert after == replace(before, tolerance_mm=wanted)
