@@ -1,6 +1,12 @@
-"""Which allowance a rod gets: by what carries it, then by the origin its mount asks for."""
+"""Which allowance a rod gets: by what carries it, then by the origin its mount asks for.
+
+`auto` takes a measurement of the mount, else a stored full solution, else the closed form, else it asks for a value.
+"""
+
+from dataclasses import replace
 
 from fabgen.correct.computed import computed
+from fabgen.correct.measured import measured
 from fabgen.correct.published import published, published_values
 from fabgen.design.design import AllowanceChoice, Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
@@ -20,7 +26,7 @@ def allowance(design: Design, element: Element) -> Allowance:
         return _of_feed(design, element)
     if design.lengths_are == "as-cut":
         return Allowance(0.0, "none", source="lengths are as cut: nothing is added", needed=False)
-    if element.mount.style == "through-nonmetal" and element.mount.allowance.origin in ("none", "auto"):
+    if not _metal_beside(design, element.mount) and element.mount.allowance.origin in ("none", "auto"):
         return Allowance(0.0, "none", source="no metal boom", needed=False)
     return _of_mount(design, element, element.mount)
 
@@ -34,17 +40,36 @@ def _of_feed(design: Design, element: Element) -> Allowance:
 
 def _of_mount(design: Design, element: Element, mount: Mount) -> Allowance:
     choice = mount.allowance
-    values = published_values(design, element, mount)
+    values = published_values(design, element, mount) if _metal_beside(design, mount) else ()
     if choice.origin == "stated":
         return _stated(choice, values)
     if choice.origin == "published":
         return published(design, choice, values)
-    if choice.origin in ("computed", "auto") and mount.style != "through-nonmetal":
-        return computed(design, element, mount, values)
-    if choice.origin == "measured":
-        remark = Remark("L10", f"mount {mount.name} has no record of a measurement")
-        return Allowance(0.0, "none", published=values, missing=True, remarks=(remark,))
+    if choice.origin in ("measured", "auto", "computed") and _metal_beside(design, mount):
+        return _found_out(design, element, mount, values)
+    if choice.origin in ("measured", "computed"):
+        return Allowance(0.0, "none", source="no metal boom", needed=False)
     return Allowance(0.0, "none", source="asked for", published=values)
+
+
+def _found_out(design: Design, element: Element, mount: Mount, values: tuple[PublishedValue, ...]) -> Allowance:
+    """Measured, else solved, else by closed form, as far as the choice goes."""
+    remarks: tuple[Remark, ...] = ()
+    if mount.allowance.origin != "computed":
+        found, remarks = measured(design, element, mount, values)
+        if found is not None:
+            return found
+    if mount.allowance.origin == "measured":
+        remarks = remarks or (Remark("L10", f"mount {mount.name} has no record of a measurement"),)
+        return Allowance(0.0, "none", published=values, missing=True, remarks=remarks)
+    found = computed(design, element, mount, values)
+    return replace(found, remarks=found.remarks + remarks)
+
+
+def _metal_beside(design: Design, mount: Mount) -> bool:
+    """Whether a boom that conducts stands beside the rod."""
+    material = design.boom.material
+    return mount.style != "through-nonmetal" and (material.kind == "metal" or material.conductive)
 
 
 def _stated(choice: AllowanceChoice, values: tuple[PublishedValue, ...]) -> Allowance:

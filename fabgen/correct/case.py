@@ -1,14 +1,10 @@
 """A rod in its mount as plain numbers for the physics."""
 
 from fabgen.design.design import Design, Element, Mount
+from fabgen.design.mount_geometry import mount_geometry
+from fabgen.design.records import MountGeometry
 from fabgen.physics.boom_mount import BoomMount, Section, Style
 from fabgen.physics.boom_uncertainty import Surroundings
-
-_STYLES = {
-    "bonded-through": Style.BONDED_THROUGH,
-    "insulated-through": Style.INSULATED_THROUGH,
-    "on-top": Style.ON_TOP,
-}
 
 
 def boom_mount(design: Design, element: Element, mount: Mount) -> BoomMount:
@@ -19,25 +15,24 @@ def boom_mount(design: Design, element: Element, mount: Mount) -> BoomMount:
         element: for the rod.
         mount: one of the three styles that meet metal.
     """
-    boom = design.boom
+    return as_boom_mount(mount_geometry(design, element, mount))
+
+
+def as_boom_mount(geometry: MountGeometry) -> BoomMount:
+    """A mount's geometry as the physics takes it."""
     return BoomMount(
-        style=_STYLES[mount.style],
-        section=Section(boom.section),
-        outside_mm=boom.width_mm,
-        rod_diameter_mm=element.rod.diameter_mm,
-        wall_mm=boom.wall_mm,
-        height_mm=boom.height_mm if boom.section == "rectangular" else 0.0,
-        hole_mm=mount.hole_mm if mount.style == "insulated-through" else 0.0,
-        axis_height_mm=mount.saddle.height_mm if mount.saddle else 0.0,
-        bush_permittivity=(mount.bush.material.permittivity or 1.0) if mount.bush else 1.0,
-        bush_length_mm=mount.bush.spigot_length_mm if mount.bush else 0.0,
-        film_insulation=film_insulated(element, mount),
+        style=Style(geometry.style),
+        section=Section(geometry.section),
+        outside_mm=geometry.outside_mm,
+        rod_diameter_mm=geometry.rod_diameter_mm,
+        wall_mm=geometry.wall_mm,
+        height_mm=geometry.height_mm,
+        hole_mm=geometry.hole_mm,
+        axis_height_mm=geometry.axis_height_mm,
+        bush_permittivity=geometry.bush_permittivity,
+        bush_length_mm=geometry.bush_length_mm,
+        film_insulation=geometry.film_insulation,
     )
-
-
-def film_insulated(element: Element, mount: Mount) -> bool:
-    """Whether nothing but an anodic film or paint stands between rod and boom."""
-    return mount.style == "insulated-through" and mount.bush is None and element.rod.finish != "bare"
 
 
 def surroundings(design: Design, element: Element) -> Surroundings:

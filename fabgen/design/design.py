@@ -9,6 +9,7 @@ from functools import cached_property
 from typing import Literal
 
 from fabgen.design.limits import NO_LIMITS, Limits
+from fabgen.design.records import Record
 
 Section = Literal["round", "square", "rectangular"]
 Style = Literal["bonded-through", "insulated-through", "on-top", "through-nonmetal"]
@@ -295,10 +296,11 @@ class Design:
 
     Attributes:
         stem: the design file's name without its ending.
-        sha256: of the design file and its tables.
+        sha256: of the design file, its tables and its records.
         lengths_are: `as-cut` lengths get no allowance.
         tip_clearance_mm: no metal nearer than this to a rod tip.
         limits: what builds may lose; nothing where the file states none.
+        records: solved and measured mounts stored beside the design file, in order of file name.
     """
 
     stem: str
@@ -318,6 +320,7 @@ class Design:
     shop: Shop
     printer: Printer
     limits: Limits = NO_LIMITS
+    records: tuple[Record, ...] = ()
 
     @cached_property
     def wavelength_mm(self) -> float:

@@ -1,7 +1,7 @@
 """Reading a design file: all of its problems in one run, or the design with what is worth noting about it."""
 
 import hashlib
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from pathlib import Path
 
 from pydantic import ValidationError
@@ -15,6 +15,7 @@ from fabgen.read.grammar import FileKeys
 from fabgen.read.kind import Context
 from fabgen.read.notes import notes_on
 from fabgen.read.reasons import Reasons
+from fabgen.read.records import read_records
 from fabgen.read.resolve import resolve
 from fabgen.read.source import Problems, read_source
 from fabgen.read.yaml_tree import Map, Scalar, parse
@@ -45,10 +46,10 @@ def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
         shown_as: the name that messages use; the path as given by default.
 
     Returns:
-        The design, complete, with its notes.
+        The design, complete, with its records and notes.
 
     Raises:
-        DesignErrors: everything that is wrong with the file, in file order.
+        DesignErrors: everything that is wrong with the file, in file order; or with its records.
         InputError: there is no such file.
         MachineError: the file cannot be read.
     """
@@ -64,8 +65,9 @@ def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
     find_contradictions(keys, tree, problems)
     problems.stop()
     reasons = Reasons()
-    sha256 = hashlib.sha256(source.data + table).hexdigest()
-    design = resolve(keys, path.stem, sha256, reasons)
+    records, stored = read_records(path)
+    sha256 = hashlib.sha256(source.data + table + stored).hexdigest()
+    design = replace(resolve(keys, path.stem, sha256, reasons), records=records)
     return Reading(design, notes_on(design, keys, context.other_unit), tree, reasons.by_path)
 
 

@@ -29,4 +29,4 @@ def _severity(allowance: Allowance, remark: Remark) -> Severity:
         return "note"
     if allowance.missing:
         return "fail"
-    return "warn" if remark.code == "L02" else "note"
+    return "warn" if remark.code in ("L02", "L06", "L07", "L08") else "note"
