@@ -9,10 +9,12 @@ from typing import Any
 
 from OCP.BRepAdaptor import BRepAdaptor_Curve
 from OCP.BRepLib import BRepLib
+from OCP.BRepMesh import BRepMesh_IncrementalMesh
+from OCP.BRepTools import BRepTools
 from OCP.GCPnts import GCPnts_TangentialDeflection
 from OCP.gp import gp_Ax2, gp_Dir, gp_Pnt
 from OCP.HLRAlgo import HLRAlgo_Projector
-from OCP.HLRBRep import HLRBRep_Algo, HLRBRep_HLRToShape
+from OCP.HLRBRep import HLRBRep_Algo, HLRBRep_HLRToShape, HLRBRep_PolyAlgo, HLRBRep_PolyHLRToShape
 
 from fabgen.design.arranged import Vector
 from fabgen.design.drawing import Item, Point, Polyline, Sheet, box_of, moved
@@ -27,6 +29,7 @@ ABOVE: Vector = (0.5, -0.8, 0.55)
 BELOW: Vector = (0.5, -0.8, -0.55)
 _ALONG_BOOM: Vector = (0.55, -0.75, 0.5)
 _CHORD_MM, _ANGLE_RAD = 0.05, 0.15
+_FACET_MM, _FACET_RAD = 0.1, 0.6
 _MARGIN_MM, _BETWEEN_MM = 4.0, 8.0
 
 
@@ -58,8 +61,7 @@ def assembly_picture(
         width_mm: largest width of the picture.
         height_mm: largest height of the picture.
     """
-    shapes = [item.product.solid.moved(location(item.frame)) for item in items]
-    return _sheet([visible_lines(shapes, _ALONG_BOOM)], width_mm, height_mm, name, f"{name}, seen from the right")
+    return _sheet([_faceted_lines(items, _ALONG_BOOM)], width_mm, height_mm, name, f"{name}, seen from the right")
 
 
 def visible_lines(shapes: Iterable[cq.Shape], eye: Vector) -> list[tuple[Point, ...]]:
@@ -75,9 +77,7 @@ def visible_lines(shapes: Iterable[cq.Shape], eye: Vector) -> list[tuple[Point, 
     algorithm = HLRBRep_Algo()
     for shape in shapes:
         algorithm.Add(shape.wrapped)
-    right = (-eye[1], eye[0], 0.0)
-    plane = gp_Ax2(gp_Pnt(0, 0, 0), gp_Dir(*eye), gp_Dir(*right))
-    algorithm.Projector(HLRAlgo_Projector(plane))
+    algorithm.Projector(_projector(eye))
     algorithm.Update()
     algorithm.Hide()
     result = HLRBRep_HLRToShape(algorithm)
@@ -87,6 +87,52 @@ def visible_lines(shapes: Iterable[cq.Shape], eye: Vector) -> list[tuple[Point, 
             BRepLib.BuildCurves3d_s(compound)
             lines += [_points(edge.wrapped) for edge in cq.Shape.cast(compound).Edges()]
     return lines
+
+
+def _faceted_lines(items: Sequence[AssemblyItem], eye: Vector) -> list[tuple[Point, ...]]:
+    """As `visible_lines`, by the solids' triangles: ten times faster for many parts, circles become polygons."""
+    for product in dict.fromkeys(item.product for item in items):
+        BRepMesh_IncrementalMesh(product.solid.wrapped, _FACET_MM, False, _FACET_RAD, False)
+    placed = [item.product.solid.moved(location(item.frame)) for item in items]
+    algorithm = HLRBRep_PolyAlgo()
+    algorithm.Load(cq.Compound.makeCompound(placed).wrapped)
+    algorithm.Projector(_projector(eye))
+    algorithm.Update()
+    result = HLRBRep_PolyHLRToShape()
+    result.Update(algorithm)
+    lines = []
+    for compound in (result.VCompound(), result.OutLineVCompound()):
+        if compound is not None and not compound.IsNull():
+            for edge in cq.Shape.cast(compound).Edges():
+                start, end = edge.startPoint(), edge.endPoint()
+                lines.append(((start.x, start.y), (end.x, end.y)))
+    for product in dict.fromkeys(item.product for item in items):
+        BRepTools.Clean_s(product.solid.wrapped)
+    return _chained(lines)
+
+
+def _chained(segments: Iterable[tuple[Point, Point]]) -> list[tuple[Point, ...]]:
+    """Segments that follow each other end to start, joined."""
+    chains: list[list[Point]] = []
+    open_at: dict[Point, list[Point]] = {}
+    for start, end in segments:
+        a, b = ((round(x, 6) + 0.0, round(y, 6) + 0.0) for x, y in (start, end))
+        if a == b:
+            continue
+        chain = open_at.pop(a, None)
+        if chain is None and (chain := open_at.pop(b, None)):
+            a, b = b, a
+        if chain is None:
+            chain = [a]
+            chains.append(chain)
+        chain.append(b)
+        open_at[b] = chain
+    return [tuple(chain) for chain in chains]
+
+
+def _projector(eye: Vector) -> Any:
+    """Parallel projection with x to the right and y up as the eye sees it."""
+    return HLRAlgo_Projector(gp_Ax2(gp_Pnt(0, 0, 0), gp_Dir(*eye), gp_Dir(-eye[1], eye[0], 0.0)))
 
 
 def _points(edge: Any) -> tuple[Point, ...]:
