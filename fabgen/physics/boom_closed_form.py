@@ -14,6 +14,7 @@ from fabgen.physics.boom_mount import ETA_OHM, BoomMount, Section, Style, wavele
 from fabgen.physics.boom_range import Advice, RangeMiss, Reason, advice_on, boom_end_misses, range_misses
 from fabgen.physics.boom_uncertainty import (
     Surroundings,
+    carrying_u_relative,
     correlated_u_relative,
     end_u_relative,
     method_u_relative,
@@ -242,6 +243,9 @@ def closed_form_allowance(
             misses += (RangeMiss(Reason.BUSH_CAPACITANCE, ratio, 0.1, ""),)
     advice = advice_on(mount, misses, near.end_distance_mm, near.widening_distance_mm)
     u_relative = method_u_relative(mount, rod_length_mm, frequency_mhz, near)
+    length_u = carrying_u_relative(mount, frequency_mhz, 0.45 * wl_mm, rod_length_mm)
+    if mount.style is Style.ON_TOP and not misses and length_u > 0.10:
+        advice += (Advice.SOLVE_RAISED,)
     u_correlated = correlated_u_relative(mount, frequency_mhz, near)
     u_end = end_u_relative(mount, near)
     if misses:

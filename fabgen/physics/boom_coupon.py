@@ -72,6 +72,19 @@ def measured_u_mm(allowance_mm: float, coupon_u_relative: float, other_u_relativ
     return abs(allowance_mm) * math.hypot(coupon_u_relative, TRANSFER_U_RELATIVE, *other_u_relative)
 
 
+def end_fall_factor(boom_mm: float, end_distance_mm: float) -> float:
+    """How much g falls for one sawn boom end; a coupon has two.
+
+    Args:
+        boom_mm: boom diameter or side.
+        end_distance_mm: rod axis to the end.
+
+    Returns:
+        0.25 B / (e + 0.1 B), to be compared with g; solved coupons fall 15 % more at e = 2 B.
+    """
+    return 0.25 * boom_mm / (end_distance_mm + 0.1 * boom_mm)
+
+
 def shortest_coupon_boom_mm(boom_mm: float) -> float:
     """Shortest piece of boom that a coupon may use, the rod in its middle.
 

@@ -1,6 +1,6 @@
 """Meshes of a free rod and of a rod in its mount on a boom.
 
-Frame and unit as in `boom_mesh`; the boom is cut at 0.3 wavelengths on each side of the rod, its ends open.
+Frame and unit as in `boom_mesh`; the boom is cut on each side of the rod, its ends open.
 """
 
 from dataclasses import dataclass
@@ -22,7 +22,8 @@ from fabgen.physics.boom_skin_mesh import (
     whole_skin,
 )
 
-BOOM_HALF_LENGTH_WL = 0.3
+LONG_BOOM_HALF_WL = 0.3
+"""Where a long boom is cut: what lies beyond moves an allowance by a few tenths of a per cent, 2 % at B .055."""
 _INSIDE_LENGTHS = 1.5
 
 
@@ -90,7 +91,13 @@ def free_rod_mesh(diameter_wl: float, length_wl: float, segments: int, fineness:
     return weld(rod_surface(section, np.zeros(len(section)), length_wl / 2, steps), mirror_z=True)
 
 
-def mounted_rod_mesh(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness) -> Mesh:
+def mounted_rod_mesh(
+    mount: BoomMount,
+    wl_mm: float,
+    length_wl: float,
+    fineness: Fineness,
+    boom_half_wl: float = LONG_BOOM_HALF_WL,
+) -> Mesh:
     """One eighth (on top: one quarter) of a rod in its mount on a boom.
 
     Args:
@@ -98,15 +105,16 @@ def mounted_rod_mesh(mount: BoomMount, wl_mm: float, length_wl: float, fineness:
         wl_mm: wavelength.
         length_wl: length of the mounted rod, tip to tip.
         fineness: mesh fineness.
+        boom_half_wl: boom on each side of the rod.
 
     Returns:
         The mesh.
     """
     if mount.style is Style.BONDED_THROUGH:
-        return _bonded(mount, wl_mm, length_wl, fineness)
+        return _bonded(mount, wl_mm, length_wl, fineness, boom_half_wl)
     if mount.style is Style.INSULATED_THROUGH:
-        return _insulated(mount, wl_mm, length_wl, fineness)
-    return _on_top(mount, wl_mm, length_wl, fineness)
+        return _insulated(mount, wl_mm, length_wl, fineness, boom_half_wl)
+    return _on_top(mount, wl_mm, length_wl, fineness, boom_half_wl)
 
 
 def _skin(mount: BoomMount, wl_mm: float, fineness: Fineness, *, inset_mm: float = 0.0, more_cells: int = 0) -> Skin:
@@ -122,7 +130,7 @@ def _cells(mount: BoomMount, fineness: Fineness, largest: float) -> SkinCells:
     return SkinCells(fineness.up, fineness.along, over, fineness.growth, largest)
 
 
-def _bonded(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness) -> Mesh:
+def _bonded(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness, boom_half_wl: float) -> Mesh:
     diameter = mount.rod_diameter_mm / wl_mm
     section = outline(diameter, fineness.up + fineness.along)
     skin = _skin(mount, wl_mm, fineness)
@@ -131,10 +139,10 @@ def _bonded(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness
     tip = fineness.tip_ratio * diameter / 2
     steps = graded(free, diameter / 2, tip, fineness.growth, fineness.rod_step_wl)
     rod = rod_surface(section, hole_on(skin, section)[:, 1], length_wl / 2, steps)
-    return weld(rod + skin_with_hole(skin, section, BOOM_HALF_LENGTH_WL, cells), mirror_z=True)
+    return weld(rod + skin_with_hole(skin, section, boom_half_wl, cells), mirror_z=True)
 
 
-def _insulated(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness) -> Mesh:
+def _insulated(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness, boom_half_wl: float) -> Mesh:
     diameter, wall = mount.rod_diameter_mm / wl_mm, mount.wall_mm / wl_mm
     half = mount.outside_mm / wl_mm / 2
     gap = (mount.hole_mm - mount.rod_diameter_mm) / 2 / wl_mm
@@ -142,7 +150,7 @@ def _insulated(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Finen
     hole = outline(mount.hole_mm / wl_mm, fineness.up + fineness.along)
     skin = _skin(mount, wl_mm, fineness)
     outer = hole_on(skin, hole)
-    pieces = skin_with_hole(skin, hole, BOOM_HALF_LENGTH_WL, _cells(mount, fineness, fineness.boom_step_wl))
+    pieces = skin_with_hole(skin, hole, boom_half_wl, _cells(mount, fineness, fineness.boom_step_wl))
     tip = fineness.tip_ratio * diameter / 2
     outside = graded(length_wl / 2 - half, gap, tip, growth, fineness.rod_step_wl)
     if mount.solid:
@@ -152,7 +160,9 @@ def _insulated(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Finen
     else:
         inside = _skin(mount, wl_mm, fineness, inset_mm=mount.wall_mm)
         bore = 2 * (half - wall)
-        pieces += skin_with_hole(inside, hole, _INSIDE_LENGTHS * 2 * half, _cells(mount, fineness, bore / 3))
+        pieces += skin_with_hole(
+            inside, hole, min(_INSIDE_LENGTHS * 2 * half, boom_half_wl), _cells(mount, fineness, bore / 3)
+        )
         through = np.linspace(0.0, 1.0, max(2, round(wall / gap / 2)) + 1)
         pieces.append(hole_wall(hole_on(inside, hole), outer, through))
         buried = graded(bore / 2, bore / 8, gap, growth, bore / 8)
@@ -161,19 +171,19 @@ def _insulated(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Finen
     return weld(rod_surface(section, np.zeros(len(section)), length_wl / 2, steps) + pieces, mirror_z=True)
 
 
-def _on_top(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness) -> Mesh:
+def _on_top(mount: BoomMount, wl_mm: float, length_wl: float, fineness: Fineness, boom_half_wl: float) -> Mesh:
     diameter, gap = mount.rod_diameter_mm / wl_mm, mount.gap_mm / wl_mm
     growth, near = fineness.growth, fineness.near_ratio
     skin = _skin(mount, wl_mm, fineness, more_cells=2)
     top = skin.radius_wl if isinstance(skin, RoundSkin) else skin.height_wl / 2
     section = outline(diameter, fineness.on_top_segments, height_wl=top + mount.axis_height_mm / wl_mm)
     first = near * min(gap + diameter / 4, skin.quarter_wl / 4)
-    along = graded(BOOM_HALF_LENGTH_WL, first, BOOM_HALF_LENGTH_WL, growth, fineness.boom_step_wl)
+    along = graded(boom_half_wl, first, boom_half_wl, growth, fineness.boom_step_wl)
     around = _around(skin, near * (gap + diameter / 2), fineness)
     tip = fineness.tip_ratio * diameter / 2
     steps = graded(length_wl / 2, near * (gap + diameter / 2), tip, growth, fineness.rod_step_wl)
     rod = rod_surface(section, np.zeros(len(section)), length_wl / 2, steps)
-    return weld(rod + whole_skin(skin, BOOM_HALF_LENGTH_WL * along, around), mirror_z=False)
+    return weld(rod + whole_skin(skin, boom_half_wl * along, around), mirror_z=False)
 
 
 def _around(skin: Skin, first: float, fineness: Fineness) -> Floats:

@@ -15,15 +15,16 @@ from functools import lru_cache
 import numpy as np
 from scipy.linalg import lu_factor, lu_solve
 
-from fabgen.physics.boom_carried import nearest_closed_form_mm
 from fabgen.physics.boom_closed_form import rod_slope_ohm_per_wl
 from fabgen.physics.boom_coupon import reactance_factor_from_allowance
+from fabgen.physics.boom_differences import nearest_closed_form_mm
 from fabgen.physics.boom_fill import centre_current, impedance_matrix, uniform_field
 from fabgen.physics.boom_mesh import Mesh
 from fabgen.physics.boom_mount import BoomMount, Style, wavelength_mm
 from fabgen.physics.boom_mount_mesh import (
     DEFAULT,
     FINE,
+    LONG_BOOM_HALF_WL,
     Fineness,
     free_rod_mesh,
     mounted_rod_mesh,
@@ -197,6 +198,8 @@ def solve_at(
     frequency_mhz: float,
     fineness: Fineness = DEFAULT,
     guess_mm: float | None = None,
+    *,
+    boom_half_mm: float | None = None,
 ) -> tuple[float, int]:
     """Allowance of one rod at one mesh size.
 
@@ -206,6 +209,7 @@ def solve_at(
         frequency_mhz: design frequency.
         fineness: mesh fineness.
         guess_mm: allowance to start from; left out: the nearest closed form's.
+        boom_half_mm: boom on each side of the rod, as of a coupon; left out: a long boom.
 
     Returns:
         Allowance in mm and the number of unknowns of the boom mesh.
@@ -222,8 +226,9 @@ def solve_at(
         guess_mm = nearest_closed_form_mm(mount, rod_length_mm, frequency_mhz)
     mounted = wanted + guess_mm / wl_mm
     segments = rod_segments(mount.style, fineness)
+    boom_half_wl = LONG_BOOM_HALF_WL if boom_half_mm is None else boom_half_mm / wl_mm
     for _ in range(_MOST_ROUNDS):
-        mode = half_wave_mode(mounted_rod_mesh(mount, wl_mm, mounted, fineness))
+        mode = half_wave_mode(mounted_rod_mesh(mount, wl_mm, mounted, fineness, boom_half_wl))
         free = free_rod_length_wl(mode.reactance_ratio, diameter, wanted, segments, fineness)
         if abs(free - wanted) <= _LENGTH_TOLERANCE_WL:
             break
@@ -238,6 +243,7 @@ def solve_allowance(
     frequency_mhz: float,
     *,
     meshes: tuple[Fineness, Fineness] = (DEFAULT, FINE),
+    boom_half_mm: float | None = None,
     progress: Progress | None = None,
 ) -> SolvedAllowance:
     """Allowance of one rod in its mount, at two mesh sizes.
@@ -247,6 +253,7 @@ def solve_allowance(
         rod_length_mm: modelled (free) rod length L0.
         frequency_mhz: design frequency.
         meshes: the coarser and the finer mesh.
+        boom_half_mm: boom on each side of the rod, as of a coupon; left out: a long boom.
         progress: told what is going on.
 
     Returns:
@@ -257,9 +264,9 @@ def solve_allowance(
     """
     tell = progress or (lambda _what, _part: None)
     tell("coarser mesh", 0.0)
-    coarse_mm, few = solve_at(mount, rod_length_mm, frequency_mhz, meshes[0])
+    coarse_mm, few = solve_at(mount, rod_length_mm, frequency_mhz, meshes[0], boom_half_mm=boom_half_mm)
     tell("finer mesh", 0.2)
-    fine_mm, many = solve_at(mount, rod_length_mm, frequency_mhz, meshes[1], coarse_mm)
+    fine_mm, many = solve_at(mount, rod_length_mm, frequency_mhz, meshes[1], coarse_mm, boom_half_mm=boom_half_mm)
     tell("solved", 1.0)
     factor = reactance_factor_from_allowance(
         fine_mm,
