@@ -9,7 +9,8 @@ from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
 from fabgen.design.mount_geometry import mount_geometry
 from fabgen.design.records import MeasuredRecord, MountGeometry
-from fabgen.physics.boom_carried import Difference, Item, differences, measured_allowance
+from fabgen.physics.boom_carried import measured_allowance
+from fabgen.physics.boom_differences import Difference, Item, differences
 
 KEEPER_U_RELATIVE = 0.01
 """What another keeper or bush of one size adds to u: it sits where a rod has current, not voltage (a judgement)."""
@@ -87,6 +88,7 @@ def _carried(design: Design, element: Element, candidate: _Candidate, values: tu
         element.length_mm,
         design.frequency_mhz,
         surroundings(design, element),
+        coupon_length_mm=record.modelled_mm,
         difference_u_relative=candidate.growth_relative,
     )
     remarks = tuple(Remark("L05", advice.value) for advice in result.advice)

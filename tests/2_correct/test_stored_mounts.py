@@ -16,7 +16,8 @@ from fabgen.design.records import MeasuredRecord, MountGeometry, SolvedRecord, S
 from fabgen.errors import DesignErrors, InputError
 from fabgen.export.records import record_bytes, write_new
 from fabgen.physics.boom_closed_form import rod_slope_ohm_per_wl
-from fabgen.physics.boom_mount import ETA_OHM
+from fabgen.physics.boom_mount import ETA_OHM, BoomMount, Section, Style
+from fabgen.physics.boom_uncertainty import carrying_u_relative
 from fabgen.pipeline import check
 from fabgen.read.reader import read_design
 
@@ -113,7 +114,10 @@ def test_a_measurement_keeps_reactance_not_millimetres(variant: Variant, element
     length_mm = design.element(element).length_mm
     assert found.value_mm == pytest.approx(5.0 * slope(design, 310.0) / slope(design, length_mm), rel=1e-9)
     ends = 0.15 if element in ("R", "D10") else 0.0  # 60 mm is less than 3.3 sides from the boom's end
-    assert found.u_mm == pytest.approx(found.value_mm * math.hypot(0.02, 0.06, ends), rel=1e-9)
+    here = geometry(design)
+    mount = BoomMount(Style.INSULATED_THROUGH, Section.SQUARE, 20.0, 4.0, wall_mm=1.5, hole_mm=here.hole_mm)
+    off = carrying_u_relative(mount, 434.0, 310.0, length_mm)
+    assert found.u_mm == pytest.approx(found.value_mm * math.hypot(0.02, 0.06, ends, off), rel=1e-9)
     assert found.correlated_u_mm == pytest.approx(0.02 * found.value_mm, rel=1e-9)
     assert correct(replace(design, records=(measured(design),))).status == "allowances: measured"
 
