@@ -6,7 +6,6 @@ Source: own study 2026, computed, unpublished.
 """
 
 import math
-from collections.abc import Mapping, Sequence
 
 from fabgen.physics.boom_closed_form import BoomAllowance, bush_term_mm
 from fabgen.physics.boom_coupon import TRANSFER_U_RELATIVE, allowance_from_reactance_factor_mm
@@ -21,71 +20,40 @@ from fabgen.physics.boom_uncertainty import (
 )
 
 
-def lengths_to_solve_mm(mount: BoomMount, lengths_mm: Sequence[float], frequency_mhz: float) -> tuple[float, ...]:
-    """Rod lengths at which a mount should be solved so that g is known for all of them.
-
-    Args:
-        mount: the mount.
-        lengths_mm: modelled (free) lengths of the rods in it.
-        frequency_mhz: design frequency.
-
-    Returns:
-        The middle of the range bonded, both ends insulated, both and the middle on top; one where all lengths are
-        within .005 wavelengths.
-    """
-    low, high = min(lengths_mm), max(lengths_mm)
-    middle = (low + high) / 2
-    if mount.style is Style.BONDED_THROUGH or high - low <= 0.005 * wavelength_mm(frequency_mhz):
-        return (middle,)
-    return (low, high) if mount.style is Style.INSULATED_THROUGH else (low, middle, high)
-
-
 def solved_allowance(
     mount: BoomMount,
-    solved_factors: Mapping[float, float],
+    reactance_factor: float,
     mesh_difference_relative: float,
     rod_length_mm: float,
     frequency_mhz: float,
     near: Surroundings | None = None,
 ) -> BoomAllowance:
-    """Allowance of one rod from solutions of its mount.
+    """Allowance of one rod from a solution of its mount.
 
     Args:
         mount: the mount, the same that was solved.
-        solved_factors: g without bush by the rod length in mm that it was solved for; one or more.
-        mesh_difference_relative: largest difference between the two meshes of a solution.
+        reactance_factor: g of the solution at this rod's length, without bush.
+        mesh_difference_relative: difference between the solution's two meshes.
         rod_length_mm: modelled (free) length of this rod.
         frequency_mhz: design frequency, that of the solution.
         near: boom end, neighbours, splices.
 
     Returns:
-        The allowance, bush term included, g interpolated between solved lengths. u as for the closed form at 0.45
-        wavelengths, which the boom's surroundings set and not the fit, with the mesh difference, and with what g is
-        off by away from solved lengths (a quarter of it between two). Without a number for an unbonded rod near
-        the boom's end.
+        The allowance, bush term included; u as for the closed form, which the boom's surroundings set and not the
+        fit, and the mesh difference. Without a number for an unbonded rod near the boom's end.
     """
     near = near or Surroundings()
-    known = sorted(solved_factors)
-    below = [length_mm for length_mm in known if length_mm <= rod_length_mm]
-    above = [length_mm for length_mm in known if length_mm >= rod_length_mm]
-    nearest_mm = min(known, key=lambda length_mm: abs(length_mm - rod_length_mm))
-    off = carrying_u_relative(mount, frequency_mhz, nearest_mm, rod_length_mm)
-    factor = solved_factors[nearest_mm]
-    if below and above and below[-1] < above[0]:
-        part = (rod_length_mm - below[-1]) / (above[0] - below[-1])
-        factor = solved_factors[below[-1]] + part * (solved_factors[above[0]] - solved_factors[below[-1]])
-        off /= 4
-    method = method_u_relative(mount, 0.45 * wavelength_mm(frequency_mhz), frequency_mhz, near)
+    method = method_u_relative(mount, rod_length_mm, frequency_mhz, near)
     term_mm = 0.0
     if mount.style is Style.INSULATED_THROUGH:
         term_mm = bush_term_mm(mount, rod_length_mm, frequency_mhz)
     return _carried(
         mount,
-        factor,
+        reactance_factor,
         rod_length_mm,
         frequency_mhz,
         near,
-        u_relative=math.hypot(method, mesh_difference_relative, off),
+        u_relative=math.hypot(method, mesh_difference_relative),
         u_correlated_relative=correlated_u_relative(mount, frequency_mhz, near),
         term_mm=term_mm,
     )
@@ -95,11 +63,11 @@ def measured_allowance(
     mount: BoomMount,
     reactance_factor: float,
     coupon_u_relative: float,
-    coupon_length_mm: float,
     rod_length_mm: float,
     frequency_mhz: float,
-    *,
     near: Surroundings | None = None,
+    *,
+    coupon_length_mm: float | None = None,
     difference_u_relative: float = 0.0,
 ) -> BoomAllowance:
     """Allowance of one rod from a coupon of its mount.
@@ -108,10 +76,10 @@ def measured_allowance(
         mount: the mount as drawn.
         reactance_factor: g of the record, bush included.
         coupon_u_relative: u(A)/A of the coupon's fit.
-        coupon_length_mm: free length of the coupon's director, at which g was had.
         rod_length_mm: modelled (free) length of this rod.
         frequency_mhz: design frequency.
         near: boom end, neighbours, splices.
+        coupon_length_mm: free length of the coupon's director, at which g was had; left out: this rod's.
         difference_u_relative: growth for a mount that differs from the record, all items in quadrature.
 
     Returns:
@@ -120,7 +88,8 @@ def measured_allowance(
         end adds.
     """
     near = near or Surroundings()
-    off = carrying_u_relative(mount, frequency_mhz, coupon_length_mm, rod_length_mm)
+    known_mm = rod_length_mm if coupon_length_mm is None else coupon_length_mm
+    off = carrying_u_relative(mount, frequency_mhz, known_mm, rod_length_mm)
     u_relative = math.hypot(TRANSFER_U_RELATIVE, off, difference_u_relative)
     unbonded = mount.style is not Style.BONDED_THROUGH
     if unbonded and near.end_distance_mm is not None and near.end_distance_mm < 3.3 * mount.outside_mm:

@@ -228,7 +228,8 @@ def closed_form_allowance(
         near: boom end, neighbours, splices; left out: an interior rod far from all of them.
 
     Returns:
-        The allowance; without a number, and with what is missed, outside the range.
+        The allowance; without a number, and with what is missed, outside the range. u of a rod above the boom is no
+        less than what the closed form's dependence on length is off by.
 
     Source: own study 2026, computed, unpublished.
     """
@@ -244,8 +245,9 @@ def closed_form_allowance(
     advice = advice_on(mount, misses, near.end_distance_mm, near.widening_distance_mm)
     u_relative = method_u_relative(mount, rod_length_mm, frequency_mhz, near)
     length_u = carrying_u_relative(mount, frequency_mhz, 0.45 * wl_mm, rod_length_mm)
-    if mount.style is Style.ON_TOP and not misses and length_u > 0.10:
-        advice += (Advice.SOLVE_RAISED,)
+    if mount.style is Style.ON_TOP and length_u > u_relative:
+        u_relative = length_u
+        advice += () if misses else (Advice.SOLVE_RAISED,)
     u_correlated = correlated_u_relative(mount, frequency_mhz, near)
     u_end = end_u_relative(mount, near)
     if misses:

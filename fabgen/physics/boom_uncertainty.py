@@ -47,8 +47,7 @@ def method_u_relative(mount: BoomMount, rod_length_mm: float, frequency_mhz: flo
     Returns:
         6 % bonded, 8 % insulated in round stock, 10 % on top, insulated in square tube or with a rod nearer than
         0.15 wavelengths; 15 % for an unbonded rod 2 to 3.3 boom widths from the end; 2 % more outside
-        .42 to .48 wavelengths; above the boom no less than what the closed form's dependence on length is off by;
-        in quadrature 10 % for a splice or clamp within 2 boom widths (a judgement).
+        .42 to .48 wavelengths; in quadrature 10 % for a splice or clamp within 2 boom widths (a judgement).
 
     Source: own study 2026, computed, unpublished.
     """
@@ -63,8 +62,6 @@ def method_u_relative(mount: BoomMount, rod_length_mm: float, frequency_mhz: flo
         u = max(u, 0.15)
     if not 0.42 <= length_wl <= 0.48:
         u += 0.02
-    if mount.style is Style.ON_TOP:
-        u = max(u, carrying_u_relative(mount, frequency_mhz, 0.45 * wl_mm, rod_length_mm))
     if near.widening_distance_mm is not None and near.widening_distance_mm < 2 * mount.outside_mm:
         u = math.hypot(u, 0.10)
     return u
