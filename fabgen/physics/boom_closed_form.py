@@ -228,8 +228,8 @@ def closed_form_allowance(
         near: boom end, neighbours, splices; left out: an interior rod far from all of them.
 
     Returns:
-        The allowance; without a number, and with what is missed, outside the range. u of a rod above the boom is no
-        less than what the closed form's dependence on length is off by.
+        The allowance; without a number, and with what is missed, outside the range. u is no less than what
+        the closed form's dependence on rod length is off by, which counts above the boom and in wide tubes.
 
     Source: own study 2026, computed, unpublished.
     """
@@ -245,9 +245,9 @@ def closed_form_allowance(
     advice = advice_on(mount, misses, near.end_distance_mm, near.widening_distance_mm)
     u_relative = method_u_relative(mount, rod_length_mm, frequency_mhz, near)
     length_u = carrying_u_relative(mount, frequency_mhz, 0.45 * wl_mm, rod_length_mm)
-    if mount.style is Style.ON_TOP and length_u > u_relative:
+    if length_u > u_relative:
         u_relative = length_u
-        advice += () if misses else (Advice.SOLVE_RAISED,)
+        advice += () if misses else (Advice.SOLVE_THIS_LENGTH,)
     u_correlated = correlated_u_relative(mount, frequency_mhz, near)
     u_end = end_u_relative(mount, near)
     if misses:

@@ -22,7 +22,7 @@ class Advice(Enum):
     LONGER_BOOM_UNBONDED = "leave at least 3.3 boom widths beyond the end rods"
     MOVE_SPLICE = "keep splices and clamps at least 2 boom widths from a rod: they act as a wider boom"
     RAISE_ROD = "raise the rod off the boom so that it cannot touch, or bond it through"
-    SOLVE_RAISED = "run the full solver: the closed form is rough for a raised rod far from 0.45 wavelengths"
+    SOLVE_THIS_LENGTH = "run the full solver: for this mount the closed form is rough so far from 0.45 wavelengths"
     SMALLER_HOLE = "use a smaller hole"
     BOND_BOTH_WALLS = "make metal contact where the rod leaves the metal, on both sides, and keep it for life"
 

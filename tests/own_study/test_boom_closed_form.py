@@ -258,7 +258,7 @@ def test_u_of_raised_rods_covers_what_their_length_changes() -> None:
         result = closed_form_allowance(mount, length_mm, MHZ)
         assert result.allowance_mm is not None
         assert abs(result.allowance_mm - solved_mm) < 1.5 * result.u_relative * result.allowance_mm
-        assert (Advice.SOLVE_RAISED in result.advice) == (length_mm != 450)
+        assert (Advice.SOLVE_THIS_LENGTH in result.advice) == (length_mm != 450)
 
 
 def test_common_part_belongs_to_interior_rods() -> None:
