@@ -16,7 +16,9 @@ from fabgen.read.source import Problems, Source, read_source
 from fabgen.read.yaml_tree import Map, Scalar, Seq
 
 
-class _Cell(NamedTuple):
+class Cell(NamedTuple):
+    """One cell: its text without quotes, its column counted from 1, and its width as written."""
+
     text: str
     column: int
     width: int
@@ -115,7 +117,7 @@ def _header(source: Source, number: int, problems: Problems) -> list[Scalar]:
     """The column names with their places; what is wrong with them is reported."""
     known = aliases(ElementKeys)
     header: list[Scalar] = []
-    for cell in _cells(source, number, problems):
+    for cell in cells_of(source, number, problems):
         name = Scalar.at(cell.text, source, number, cell.column, cell.width)
         if name not in known:
             problems.add("D06", f"`{name}` is not a column", name.place, suggestion(name, known))
@@ -132,7 +134,7 @@ def _header(source: Source, number: int, problems: Problems) -> list[Scalar]:
 
 def _row(source: Source, number: int, header: list[Scalar], problems: Problems) -> Map | None:
     before = len(problems.found)
-    cells = _cells(source, number, problems)
+    cells = cells_of(source, number, problems)
     if len(problems.found) > before:
         return None
     if len(cells) > len(header):
@@ -149,10 +151,16 @@ def _row(source: Source, number: int, header: list[Scalar], problems: Problems) 
     return row
 
 
-def _cells(source: Source, number: int, problems: Problems) -> list[_Cell]:
-    """Split one line at its commas; a cell in double quotes may hold commas and doubled quotes."""
+def cells_of(source: Source, number: int, problems: Problems) -> list[Cell]:
+    """Split one line at its commas; a cell in double quotes may hold commas and doubled quotes.
+
+    Args:
+        source: the table.
+        number: of the line, from 1.
+        problems: takes quotes that do not close.
+    """
     line = source.lines[number - 1]
-    cells: list[_Cell] = []
+    cells: list[Cell] = []
     start = 0
     while True:
         begin = start + len(line[start:]) - len(line[start:].lstrip(" \t"))
@@ -161,7 +169,7 @@ def _cells(source: Source, number: int, problems: Problems) -> list[_Cell]:
             if end is None:
                 place = source.place(number, begin + 1, len(line) - begin)
                 problems.add("D22", "a quote is not closed on its line", place, "close it before the next comma")
-                cells.append(_Cell("", begin + 1, len(line) - begin))
+                cells.append(Cell("", begin + 1, len(line) - begin))
                 return cells
             stop = line.find(",", end + 1)
             rest = line[end + 1 : stop if stop >= 0 else None]
@@ -173,7 +181,7 @@ def _cells(source: Source, number: int, problems: Problems) -> list[_Cell]:
             stop = line.find(",", start)
             text = line[start : stop if stop >= 0 else None].strip()
             width = len(text)
-        cells.append(_Cell(text, min(begin, stop if stop >= 0 else len(line)) + 1, width))
+        cells.append(Cell(text, min(begin, stop if stop >= 0 else len(line)) + 1, width))
         if stop < 0:
             return cells
         start = stop + 1
