@@ -13,7 +13,7 @@ from hypothesis import strategies as st
 
 from fabgen.physics.boom_closed_form import closed_form_allowance, relative_allowance, rod_slope_ohm_per_wl
 from fabgen.physics.boom_mount import BoomMount, Section, Style, wavelength_mm
-from fabgen.physics.boom_range import Advice, Reason
+from fabgen.physics.boom_range import Advice, Reason, touching_allowance_ratios
 from fabgen.physics.boom_uncertainty import Surroundings
 
 DATA = Path(__file__).parent / "data"
@@ -248,6 +248,18 @@ def test_uncertainty_of_the_method(mount: BoomMount, length_mm: float, near: Sur
     result = closed_form_allowance(mount, length_mm, MHZ, near)
     assert result.misses == ()
     assert result.u_relative == pytest.approx(u_relative)
+
+
+@pytest.mark.parametrize("section", [Section.ROUND, Section.SQUARE])
+@pytest.mark.parametrize(("mhz", "rod_mm"), [(144.3, 6.0), (432.2, 4.0)])
+def test_touching_rods_take_about_what_nearly_touching_ones_do(section: Section, mhz: float, rod_mm: float) -> None:
+    """At the least gap of the range a 20 mm boom takes what lies between the stated ratios, 10 % aside."""
+    ratios = touching_allowance_ratios(section)
+    assert ratios is not None
+    value = closed_form_allowance(on_top(20, rod_mm, 0.02 * rod_mm, section), 0.45 * wavelength_mm(mhz), mhz)
+    assert value.allowance_mm is not None
+    assert 0.9 * ratios[0] < value.allowance_mm / 20 < 1.1 * ratios[1]
+    assert touching_allowance_ratios(Section.RECTANGULAR) is None
 
 
 def test_u_of_raised_rods_covers_what_their_length_changes() -> None:
