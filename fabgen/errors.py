@@ -9,7 +9,7 @@ FabgenError                 carries the exit code
 Judgements about a readable design are not errors: they are findings (`fabgen.design.findings`).
 """
 
-from dataclasses import dataclass
+from fabgen.frozen import frozen
 
 
 class FabgenError(Exception):
@@ -42,7 +42,7 @@ class ProgramError(FabgenError):
     """The program contradicts itself; never the user's fault."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Place:
     """A place in a text file, counted from 1.
 
@@ -61,7 +61,7 @@ class Place:
     width: int = 1
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Problem:
     """One mistake in a design file.
 

@@ -1,7 +1,7 @@
 """The program on one screen: read → correct → arrange → check → draw → model → export → book."""
 
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass, replace
+from dataclasses import replace
 from pathlib import Path
 
 from fabgen.arrange.arrange import arrange
@@ -13,13 +13,14 @@ from fabgen.design.allotted import with_tolerances
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding, clear, in_order
 from fabgen.design.response import Response
+from fabgen.frozen import frozen
 from fabgen.read.reader import Reading, read_design
 
 Say = Callable[[str], None]
 """Takes one line of progress."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Judged:
     """One design, judged by numbers alone; `response` is None where the array solver was not asked."""
 

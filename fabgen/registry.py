@@ -8,16 +8,16 @@ import ast
 import functools
 import importlib
 from collections.abc import Callable
-from dataclasses import dataclass
 from pathlib import Path
 from typing import Any, cast
 
 from fabgen.errors import ProgramError
+from fabgen.frozen import frozen
 
 ROOT = Path(__file__).parent
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Entry:
     """One file of a listed folder.
 

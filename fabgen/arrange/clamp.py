@@ -6,7 +6,6 @@ each bolt inside the tube; a round boom is held by U-bolts of its own, a sleeve 
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.arrange.drilling import Opening
 from fabgen.arrange.fasteners import bought_material, nut, screw, screw_length_mm, washer
@@ -14,6 +13,7 @@ from fabgen.arrange.layout import Layout
 from fabgen.design.arranged import Axis, Cylinder, Frame, Vector
 from fabgen.design.design import Clamp, Design
 from fabgen.design.part_fasteners import fastener
+from fabgen.frozen import frozen
 from fabgen.stock import tables
 
 PLATE = "clamp plate"
@@ -28,7 +28,7 @@ SLEEVE_MATERIAL = "EN AW-6060 T66"
 TUBE_SLEEVE_WALL_MM, TUBE_SLEEVE_PLAY_MM = 2.0, 0.2
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ClampSize:
     """The clamp's plate and holes; local x along the boom, y across it, z away from the boom.
 

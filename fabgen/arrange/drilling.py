@@ -1,18 +1,18 @@
 """Hole rows: which walls a hole opens, with which drill, and how far its station may be off."""
 
 import functools
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Hole, Wall
 from fabgen.design.design import Design
 from fabgen.design.shop_tolerance import shop_tolerance_mm
+from fabgen.frozen import frozen
 from fabgen.stock import tables
 
 PIECE = "boom"
 _ANGLE_DEG: dict[Wall, float] = {"+z": 0.0, "+y": 90.0, "-z": 180.0, "-y": 270.0}
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Opening:
     """A hole before it has a number: `walls` are the walls it opens, in drilling order."""
 

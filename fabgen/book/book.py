@@ -10,7 +10,6 @@ The template of the same name sets `title`. `SHOWS_LENGTHS` marks a section with
 import functools
 import importlib
 from collections.abc import Mapping, Sequence
-from dataclasses import dataclass
 from pathlib import Path
 from typing import Any
 
@@ -23,6 +22,8 @@ from fabgen.book.figures import Figure
 from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.findings import Finding, clear
 from fabgen.design.fixtures import Fixture
+from fabgen.design.response import Response
+from fabgen.frozen import frozen
 from fabgen.physics.boom_mount import BoomMount
 
 Content = Mapping[str, Any]
@@ -31,7 +32,7 @@ THEORY = "theory, unmeasured"
 _HERE = Path(__file__).parent
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Book:
     """What a section can write from.
 
@@ -44,6 +45,7 @@ class Book:
         aids: the printed shop aids that the design needs, each with its picture.
         mounts: the mount of each rod on a metal boom as plain numbers, with its element.
         stamped: the design is not clear and every page says so.
+        response: what the array solver found; None where it was not asked.
     """
 
     arranged: Arranged
@@ -54,11 +56,22 @@ class Book:
     aids: tuple[tuple[Fixture, Figure], ...] = ()
     mounts: tuple[tuple[str, BoomMount], ...] = ()
     stamped: bool = False
+    response: Response | None = None
 
     @property
     def verdict(self) -> str:
         """`clear` or `not clear`."""
         return "clear" if clear(self.findings) else "not clear"
+
+    @property
+    def tolerances(self) -> str:
+        """Where the ± on lengths and stations come from."""
+        shop = self.arranged.design.shop
+        if self.response is not None and self.response.allotment is not None and self.response.allotment.feasible:
+            return "allotted from the limits of the design file, element by element"
+        if shop.stated_tolerance_mm:
+            return f"±{shop.stated_tolerance_mm:g} mm, stated in the design file"
+        return f"ISO 2768-1, class {shop.tolerance}, by size"
 
     @property
     def computed(self) -> bool:
@@ -71,7 +84,7 @@ class Book:
         return self.arranged.ledger.status + (f" – {THEORY}" if self.computed else "")
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Section:
     """One section, written.
 

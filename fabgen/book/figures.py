@@ -1,11 +1,11 @@
 """Drawings on the page: SVG that other stages wrote, made part of the document."""
 
 import re
-from dataclasses import dataclass
 
 from markupsafe import Markup
 
 from fabgen.design.drawing import Sheet
+from fabgen.frozen import frozen
 
 _PROLOGUE = re.compile(r"\A\s*(?:<\?xml[^>]*\?>\s*)?(?:<!DOCTYPE[^>]*>\s*)?")
 _OPENING = re.compile(r"<svg\b[^>]*>")
@@ -13,7 +13,7 @@ _SIZE = re.compile(r'\s(?:width|height|baseProfile|version|xmlns:(?:ev|xlink))="
 _ID = re.compile(r'\sid="[^"]*"')
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Figure:
     """One drawing.
 

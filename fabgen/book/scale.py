@@ -1,10 +1,11 @@
 """Axes and bars: round numbers for ticks, millimetres of paper for quantities."""
 
 import math
-from dataclasses import dataclass
+
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Axis:
     """A straight scale from one quantity to places on paper.
 

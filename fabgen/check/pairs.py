@@ -6,11 +6,11 @@ beside it.
 """
 
 from collections.abc import Iterator
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Arranged, Box, Interface, Placed
 from fabgen.design.distances import bounding_box, parts_distance_mm
 from fabgen.errors import ProgramError
+from fabgen.frozen import frozen
 
 REACH_MM = 12.0
 """Pairs farther apart than this are not near; no limit is larger."""
@@ -82,7 +82,7 @@ common practice, our own choice.
 """
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class NearPair:
     """Two parts that stand near each other.
 

@@ -3,7 +3,6 @@
 import functools
 import math
 from collections.abc import Callable, Iterator
-from dataclasses import dataclass
 from typing import Any
 
 from fabgen.design.arranged import Arranged, Parameters, Placed
@@ -12,6 +11,7 @@ from fabgen.design.feed_layout import RIM_MM
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
 from fabgen.design.keeper_sizes import PushRingSize, SnapKeeperSize, push_ring_size, snap_keeper_size
 from fabgen.design.saddle_sizes import EAR_WALL_MM, SaddleSize, saddle_size
+from fabgen.frozen import frozen
 
 Size = BushSize | FeedBlockSize | PushRingSize | SaddleSize | SnapKeeperSize
 
@@ -27,7 +27,7 @@ LYING_ON_SIDE = ("saddle", "folded_saddle")
 """Printed on their −y side; all others stand with their local z axis upright."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Overhang:
     """One surface that nothing supports while it is printed.
 

@@ -2,13 +2,13 @@
 
 import math
 from collections.abc import Iterator
-from dataclasses import dataclass
 
 from fabgen.correct.case import as_boom_mount, surroundings
 from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
 from fabgen.design.mount_geometry import mount_geometry
 from fabgen.design.records import MeasuredRecord, MountGeometry
+from fabgen.frozen import frozen
 from fabgen.physics.boom_carried import measured_allowance
 from fabgen.physics.boom_differences import Difference, Item, differences
 
@@ -16,7 +16,7 @@ KEEPER_U_RELATIVE = 0.01
 """What another keeper or bush of one size adds to u: it sits where a rod has current, not voltage (a judgement)."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class _Candidate:
     """A record of this mount and how far the drawn mount is from it."""
 

@@ -5,16 +5,16 @@ as it is: its match sets its length.
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.design import Design, Element
 from fabgen.design.ledger import Remark
+from fabgen.frozen import frozen
 
 U_SHARE = 0.2 / math.sqrt(3)
 """u over the change: measured rods and the formulas in print agree with it within 20 %, as a rectangle."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class RodChange:
     """What another diameter adds to a length.
 

@@ -6,7 +6,7 @@ the difference goes into u. Rods between them get theirs by the polynomial throu
 """
 
 from collections.abc import Callable, Mapping
-from dataclasses import asdict, dataclass
+from dataclasses import asdict
 from typing import Any
 
 from fabgen.correct.case import as_boom_mount
@@ -15,6 +15,7 @@ from fabgen.design.design import Design
 from fabgen.design.mount_geometry import mount_geometry
 from fabgen.design.records import MountGeometry, SolvedRecord
 from fabgen.errors import InputError
+from fabgen.frozen import frozen
 from fabgen.physics.boom_mount import wavelength_mm
 
 Progress = Callable[[str, float], None]
@@ -32,7 +33,7 @@ METHOD = (
 )
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SolveTask:
     """One distinct mount to solve.
 

@@ -5,11 +5,11 @@ is the x axis. All coordinates in mm.
 """
 
 import math
-from dataclasses import dataclass
 from typing import Literal
 
 from fabgen.design.design import Design
 from fabgen.design.ledger import Ledger, Remark
+from fabgen.frozen import frozen
 
 Vector = tuple[float, float, float]
 Axis = Literal["x", "y", "z"]
@@ -17,7 +17,7 @@ Wall = Literal["+y", "-y", "+z", "-z", "round"]
 Source = Literal["printed", "bought", "made"]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Hole:
     """One opening in one wall; a through hole is two of them with one number.
 
@@ -55,7 +55,7 @@ class Hole:
         return (0.0, round(math.sin(angle), 12), round(math.cos(angle), 12))
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Frame:
     """Where a part's local frame stands: origin, and where its z and x axes point (unit vectors)."""
 
@@ -79,7 +79,7 @@ class Frame:
         )
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Box:
     """An axis-parallel box between two corners."""
 
@@ -87,7 +87,7 @@ class Box:
     high: Vector
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Cylinder:
     """A cylinder or ring parallel to an axis; `bore_mm` is 0 when solid."""
 
@@ -112,7 +112,7 @@ Shape = Box | Cylinder
 Parameters = tuple[tuple[str, float | str | tuple[tuple[float, ...], ...]], ...]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Placed:
     """One part at one place.
 
@@ -150,7 +150,7 @@ class Placed:
         return (self.part, self.parameters)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Interface:
     """Two placed parts that meet on purpose.
 
@@ -168,7 +168,7 @@ class Interface:
     fit_mm: float | None = None
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Piece:
     """One sawn piece of boom; stations of its ends from the datum face."""
 
@@ -177,7 +177,7 @@ class Piece:
     end_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Cut:
     """One piece to saw from bar.
 
@@ -205,7 +205,7 @@ class Cut:
     note: str = ""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Bar:
     """One bar of stock and what is sawn from it, in sawing order.
 
@@ -222,7 +222,7 @@ class Bar:
     left_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class CutPlan:
     """Bars with their pieces; `proven` when no plan with fewer bars exists."""
 
@@ -237,7 +237,7 @@ class CutPlan:
         return ""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Arranged:
     """Design and lengths with everything in its place.
 

@@ -1,11 +1,10 @@
 """An array as it was built: measurements, deviations from the drawing, the response, and what to trim."""
 
-from dataclasses import dataclass
-
 from fabgen.design.response import Outcome
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Measured:
     """One measured element.
 
@@ -23,7 +22,7 @@ class Measured:
     right_mm: float | None = None
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Deviation:
     """One element against the drawing, as built less as drawn.
 
@@ -57,7 +56,7 @@ class Deviation:
         return self.station_tolerance_mm > 0 and abs(self.station_off_mm) > self.station_tolerance_mm + 1e-6
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class State:
     """The response of one state of the array, in free space.
 
@@ -80,7 +79,7 @@ class State:
     residual_ratio: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Trim:
     """What to take off one element.
 
@@ -94,7 +93,7 @@ class Trim:
     length_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class AsBuilt:
     """What the measurements say.
 

@@ -9,13 +9,13 @@ import heapq
 from bisect import bisect_left, bisect_right
 from collections import defaultdict
 from collections.abc import Iterable, Mapping
-from dataclasses import dataclass
 from enum import IntEnum
 from itertools import groupby
 from typing import Literal
 
 from fabgen.design.arranged import Arranged, Placed, Shape
 from fabgen.design.spans import span_mm
+from fabgen.frozen import frozen
 
 
 class Phase(IntEnum):
@@ -99,7 +99,7 @@ _TOUCH_MM = 1e-6
 Task = tuple[Phase, str]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Step:
     """One step of the work.
 
@@ -116,7 +116,7 @@ class Step:
     parts: tuple[str, ...]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Stuck:
     """Something that cannot go on: a closed `loop` that nothing can thread, or an `order` that waits for itself."""
 
@@ -125,7 +125,7 @@ class Stuck:
     text: str
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class AssemblyOrder:
     """The steps, and what has no place among them."""
 

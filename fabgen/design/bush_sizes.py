@@ -5,8 +5,6 @@ hole's axis. Fits are diametral, from the table of printing practice: bore = rod
 length = wall + 1, flange = hole + 4.
 """
 
-from dataclasses import dataclass
-
 from fabgen.design.arranged import Cylinder
 from fabgen.design.part_geometry import (
     bore_chamfer_mm3,
@@ -15,13 +13,14 @@ from fabgen.design.part_geometry import (
     ring_mm2,
     under_disc_mm3,
 )
+from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
 
 EDGE_MM = 0.3
 """Chamfer where a first printed layer spreads."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class BushSize:
     """One shoulder bush, or a sleeve, whose body then reaches through both walls.
 

@@ -5,12 +5,12 @@ that is to be centred at x = reach; a clamp screw comes from −x.
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Box
 from fabgen.design.bush_sizes import EDGE_MM
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
 from fabgen.design.part_geometry import PI, bore_chamfer_mm3, disc_mm2, integral, teardrop_chord_mm
+from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
 
 WALL_MM = 3.0
@@ -26,7 +26,7 @@ CLEAR_MM = 1.0
 """Between the block on the boom's wall and the flange or keeper beside it."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class CentringAidSize:
     """One of the two equal blocks.
 

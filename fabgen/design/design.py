@@ -10,6 +10,7 @@ from typing import Literal
 
 from fabgen.design.limits import NO_LIMITS, Limits
 from fabgen.design.records import Record
+from fabgen.frozen import frozen
 
 Section = Literal["round", "square", "rectangular"]
 Style = Literal["bonded-through", "insulated-through", "on-top", "through-nonmetal"]
@@ -19,7 +20,7 @@ Origin = Literal["measured", "computed", "published", "stated", "none"]
 Polarisation = Literal["horizontal", "vertical"]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Material:
     """A material in force, from the table or from the design file.
 
@@ -48,7 +49,7 @@ class Material:
     source: str = "stated in the design file"
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SheetFields:
     """Title block fields (ISO 7200); an empty one is left blank for the pen."""
 
@@ -58,7 +59,7 @@ class SheetFields:
     date: str = ""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Boom:
     """The boom as bought and sawn.
 
@@ -108,7 +109,7 @@ class Boom:
         return self.width_mm if self.section == "round" else 0.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Rod:
     """What an element is cut from.
 
@@ -127,7 +128,7 @@ class Rod:
         return self.diameter_mm if self.modelled_diameter_mm is None else self.modelled_diameter_mm
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class AllowanceChoice:
     """Where a mount's allowance shall come from; numbers only when the user states them.
 
@@ -148,7 +149,7 @@ class AllowanceChoice:
     source: str = ""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Bush:
     """An insulating sleeve in the boom wall, with its fits for one rod and hole."""
 
@@ -161,7 +162,7 @@ class Bush:
     flange_height_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Keeper:
     """The part that stops rod and bushes sliding, for one rod."""
 
@@ -172,7 +173,7 @@ class Keeper:
     length_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Saddle:
     """The block that carries a rod above the boom; `height_mm` is from the boom's top to the rod's axis."""
 
@@ -182,7 +183,7 @@ class Saddle:
     material: Material
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Mount:
     """How one rod meets the boom, with every fit in numbers.
 
@@ -204,7 +205,7 @@ class Mount:
     bond: Literal["weld", "press", "wall-screws"] | None = None
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Element:
     """A rod with a role, as modelled.
 
@@ -224,7 +225,7 @@ class Element:
     mount: Mount | None
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Feed:
     """The hardware of one driven element.
 
@@ -249,7 +250,7 @@ class Feed:
     reference_ohm: float = 50.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Clamp:
     """Boom to mast; `at_mm` is None for the free place nearest to the balance point."""
 
@@ -259,7 +260,7 @@ class Clamp:
     material: Material
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Shop:
     """What the shop can hold, saw and buy.
 
@@ -281,7 +282,7 @@ class Shop:
     paper_thickness_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Printer:
     """The printer; `hole_growth_mm` is what a printed bore comes out smaller by."""
 

@@ -6,8 +6,10 @@ width, dash and colour follow from the layer in `LAYERS`, in the order in which 
 """
 
 import math
-from dataclasses import dataclass, replace
+from dataclasses import replace
 from typing import Literal
+
+from fabgen.frozen import frozen
 
 Point = tuple[float, float]
 Box = tuple[float, float, float, float]
@@ -16,7 +18,7 @@ Anchor = Literal["start", "middle", "end"]
 Layer = Literal["stamp", "frame", "fold", "centre", "dim", "scale", "outline", "drill", "text"]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Stroke:
     """How a layer is printed.
 
@@ -53,7 +55,7 @@ Source: ISO 128-2:2020, line types and line groups (from memory); the layers' na
 """
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Line:
     """A straight line between two points."""
 
@@ -64,7 +66,7 @@ class Line:
     y1_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Polyline:
     """Straight lines through at least two points; closed joins the last to the first."""
 
@@ -73,7 +75,7 @@ class Polyline:
     closed: bool = False
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Arc:
     """A circular arc, counter-clockwise from the start angle to the end angle, less than a full turn.
 
@@ -93,7 +95,7 @@ class Arc:
         return (self.x_mm + self.radius_mm * math.cos(angle), self.y_mm + self.radius_mm * math.sin(angle))
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Circle:
     """A full circle about a point."""
 
@@ -103,7 +105,7 @@ class Circle:
     radius_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Fill:
     """A filled polygon without an edge line: arrow heads, dots, marks."""
 
@@ -111,7 +113,7 @@ class Fill:
     points_mm: tuple[Point, ...]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Text:
     """One line of lettering; characters that cannot be printed become spaces.
 
@@ -138,7 +140,7 @@ class Text:
 Item = Line | Polyline | Arc | Circle | Fill | Text
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Sheet:
     """One drawing, ready to be written in any format.
 

@@ -6,7 +6,6 @@ the boom's own faces are and all play lies on the other sides.
 """
 
 import math
-from dataclasses import dataclass
 from typing import Literal
 
 from fabgen.design import glyphs
@@ -14,6 +13,7 @@ from fabgen.design.arranged import Box
 from fabgen.design.fixture_geometry import under_hexagon_mm3, under_notch_mm3, under_strip_mm3, under_teardrop_mm3
 from fabgen.design.part_fasteners import Fastener, fastener
 from fabgen.design.part_geometry import PI, hexagon_corners_mm, integral, teardrop_mm2
+from fabgen.frozen import frozen
 
 Side = Literal["+y", "-y", "+z", "-z"]
 
@@ -37,7 +37,7 @@ SET_SCREW_LENGTHS_MM = (3.0, 4.0, 5.0, 6.0, 8.0, 10.0, 12.0)
 """Source: ISO 4026:2003, preferred lengths, from memory."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class DrillGuideSize:
     """One drill guide.
 

@@ -2,11 +2,12 @@
 
 import hashlib
 import json
-from dataclasses import asdict, dataclass
+from dataclasses import asdict
 
 from fabgen.design.arranged import Arranged
 from fabgen.design.design import Design, Feed
 from fabgen.design.limits import Limits
+from fabgen.frozen import frozen
 from fabgen.stock.electrical import conductivity_s_per_m, tolerance_classes
 
 METHOD = "thin-rod array, response 1"
@@ -16,7 +17,7 @@ LOCATING = ("rod", "bush", "saddle screw", "bond screw", "middle screw", "feed s
 """Purposes of the holes that set the station of a rod."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ElectricalCase:
     """An array for the solver, rods in order of station; one entry per rod in every tuple.
 

@@ -8,11 +8,11 @@ top.
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
 from fabgen.design.part_geometry import hexagon_corners_mm
 from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, ENGAGEMENT_MM
+from fabgen.frozen import frozen
 from fabgen.stock.fasteners import tap_drill_mm
 
 TERMINALS = ("M2", "M2.5", "M3", "M4", "M5")
@@ -45,7 +45,7 @@ BESIDE_BOOM_MM = 0.8
 CRADLE_DEG = 60.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FeedBlockLayout:
     """One feed block with its lid.
 

@@ -1,14 +1,14 @@
 """Sizes of the feed block's lid; frame and numbers are the block's."""
 
-from dataclasses import dataclass
 from typing import Any
 
 from fabgen.design.arranged import Box
 from fabgen.design.feed_layout import TOOTH_MM
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FeedLidSize:
     """A feed block's lid: a plate in the block's rabbet and the wedge that grips the cable."""
 

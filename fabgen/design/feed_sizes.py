@@ -2,7 +2,6 @@
 
 import math
 from collections.abc import Callable
-from dataclasses import dataclass
 
 from fabgen.design import feed_layout as layout
 from fabgen.design.arranged import Box
@@ -10,10 +9,11 @@ from fabgen.design.feed_layout import FeedBlockLayout
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, fastener
 from fabgen.design.part_geometry import disc_mm2, hexagon_corners_mm, integral, teardrop_mm2, under_disc_mm3
 from fabgen.design.saddle_sizes import ENGAGEMENT_MM
+from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FeedBlockSize(FeedBlockLayout):
     """One feed block; its lid takes its numbers from the same record."""
 

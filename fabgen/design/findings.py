@@ -1,13 +1,14 @@
 """Judgements about a readable design."""
 
-from dataclasses import dataclass
 from typing import Literal
+
+from fabgen.frozen import frozen
 
 Severity = Literal["fail", "warn", "note"]
 _ORDER: dict[str, int] = {"fail": 0, "warn": 1, "note": 2}
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Finding:
     """One judgement.
 

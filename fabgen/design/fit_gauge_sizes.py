@@ -6,12 +6,12 @@ plate. Under every bore stands the number of steps by which it is drawn larger t
 """
 
 import itertools
-from dataclasses import dataclass
 
 from fabgen.design import glyphs
 from fabgen.design.arranged import Box, Cylinder
 from fabgen.design.bush_sizes import EDGE_MM
 from fabgen.design.part_geometry import PI, bore_chamfer_mm3, disc_mm2
+from fabgen.frozen import frozen
 
 CELL_MM, RAISED_MM = 0.8, 0.6
 """Letters of two printed lines, raised by three layers."""
@@ -27,7 +27,7 @@ TIP_MM = 0.5
 CORNER_MM = 2.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FitGaugeSize:
     """One fit gauge.
 

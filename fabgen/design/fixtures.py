@@ -1,11 +1,10 @@
 """Shop aids that a design needs and that are no part of the array."""
 
-from dataclasses import dataclass
-
 from fabgen.design.arranged import Parameters
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Fixture:
     """One printed shop aid.
 

@@ -3,14 +3,13 @@
 Frame: a flat loop in y and z, origin at the middle of the gap in the lower, fed limb; upper limb at z = spacing.
 """
 
-from dataclasses import dataclass
-
 from fabgen.design.arranged import Box, Cylinder
 from fabgen.design.hardware_sizes import crossing_mm3
 from fabgen.design.part_geometry import PI, disc_mm2
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FoldedRodSize:
     """A rod bent to a flat loop in y and z, origin at the middle of the gap in the lower limb.
 

@@ -7,7 +7,6 @@ profile is constant along y, so that the saddle prints lying on its −y side.
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design import feed_layout as layout
 from fabgen.design.arranged import Box
@@ -26,6 +25,7 @@ from fabgen.design.part_geometry import (
     under_teardrop_mm3,
 )
 from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, EAR_WALL_MM, ENGAGEMENT_MM, FOOT_SHARE
+from fabgen.frozen import frozen
 from fabgen.stock.fasteners import tap_drill_mm, washer
 from fabgen.stock.practice import print_practice
 
@@ -37,7 +37,7 @@ TIE_PLAY_MM = 1.0
 FILLET_MM = 1.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FoldedSaddleSize:
     """One saddle for a folded dipole.
 

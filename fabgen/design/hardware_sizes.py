@@ -1,16 +1,16 @@
 """Sizes of rods and of metal hardware: clamp plate, U-bolt, crush sleeve, screw, nut, washer."""
 
 import math
-from dataclasses import dataclass
 from typing import Literal
 
 from fabgen.design.arranged import Box, Cylinder
 from fabgen.design.part_geometry import PI, disc_mm2, hexagon_corners_mm, hexagon_mm2, integral, ring_mm2
+from fabgen.frozen import frozen
 from fabgen.stock import fasteners
 from fabgen.stock.fasteners import HeadKind, ScrewHead
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class RodSize:
     """A straight rod, axis z, centred on the origin, optionally with one hole across.
 
@@ -45,7 +45,7 @@ def crossing_mm3(rod_mm: float, hole_mm: float) -> float:
     return integral(slice_mm2, -PI / 2, PI / 2, 200)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ClampPlateSize:
     """A plate with round holes (x, y, diameter), centred in x and y, z from 0 to its thickness."""
 
@@ -68,7 +68,7 @@ class ClampPlateSize:
         return (Box((-x, -y, 0.0), (x, y, self.thickness_mm)),)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class UBoltSize:
     """A round bow with two legs along −z at x = ±(inside + rod)/2, origin at the bow's centre."""
 
@@ -99,7 +99,7 @@ class UBoltSize:
         return legs[0], legs[1], Box((-x - d / 2, -d / 2, 0.0), (x + d / 2, d / 2, x + d / 2))
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class TubeSize:
     """A plain tube, axis z, z from 0 to its length: crush sleeve or washer."""
 
@@ -118,7 +118,7 @@ class TubeSize:
         return (Cylinder("z", (0.0, 0.0, self.length_mm / 2), self.outside_mm, self.length_mm, self.bore_mm),)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ScrewSize:
     """A screw with a plain shank of the thread's diameter: origin under the head, head z ≥ 0, shank below.
 
@@ -161,7 +161,7 @@ class ScrewSize:
         )
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class NutSize:
     """A hexagon nut with a plain bore of the thread's diameter, axis z, z from 0 to its height, flats towards ±y."""
 

@@ -4,17 +4,17 @@ Frame of both: axis z, origin on the face that meets the flange, z from 0 to the
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Cylinder
 from fabgen.design.part_geometry import integral, ring_mm2, strip_mm2
+from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
 
 LEAD_IN_MM = 0.4
 FLARE_MM = 0.8
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class PushRingSize:
     """One split ring that grips the rod.
 
@@ -65,7 +65,7 @@ class PushRingSize:
         return (_ring(self.outside_mm, self.bore_mm, self.length_mm),)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SnapKeeperSize:
     """One C-shaped clip, pressed on the rod from the side.
 

@@ -1,12 +1,12 @@
 """The account from each modelled length to its cut length."""
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.design import Origin, Role
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class PublishedValue:
     """What one published model says for this case.
 
@@ -27,7 +27,7 @@ class PublishedValue:
     source: str
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Remark:
     """Something to be said about a length: why there is no number, or what to keep in mind.
 
@@ -46,7 +46,7 @@ class Remark:
     unit: str = ""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Allowance:
     """A length added because of the mount, with its reason.
 
@@ -79,7 +79,7 @@ class Allowance:
         return max(values) - min(values) if len(values) > 1 else 0.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class LedgerLine:
     """One element, from modelled to cut; the columns add up as printed (three decimals).
 
@@ -115,7 +115,7 @@ class LedgerLine:
         return math.hypot(self.allowance.u_mm, self.rod_change_u_mm, self.tolerance_mm / math.sqrt(3))
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Ledger:
     """All lines, in order of station."""
 

@@ -1,9 +1,9 @@
 """What a build may lose against the design: the limits that a design file states."""
 
-from dataclasses import dataclass
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Limits:
     """Limits on every build of an array; None where the file states none.
 

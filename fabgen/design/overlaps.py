@@ -7,16 +7,16 @@ everything on purpose.
 import itertools
 import math
 from collections.abc import Iterator, Sequence
-from dataclasses import dataclass
 from typing import Literal
 
 from fabgen.design.drawing import Arc, Box, Circle, Fill, Item, Line, Point, Polyline, Sheet, Text, box_of
 from fabgen.design.lettering import text_box, text_corners
+from fabgen.frozen import frozen
 
 Kind = Literal["text on text", "text on hole", "text outside", "text on line"]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Overlap:
     """One piece of lettering that cannot be read, or that hides something.
 

@@ -1,9 +1,9 @@
 """What a package is made of before it is written."""
 
-from dataclasses import dataclass
+from fabgen.frozen import frozen
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class PackageFile:
     """One file of a package.
 

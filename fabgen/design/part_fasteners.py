@@ -1,15 +1,15 @@
 """What printed parts need of a thread in one record, from the stock tables, and the lengths that screws are sold in."""
 
 import functools
-from dataclasses import dataclass
 
+from fabgen.frozen import frozen
 from fabgen.stock.fasteners import clearance_hole_mm, nut, screw_head, thread
 
 SCREW_LENGTHS_MM = (4.0, 5.0, 6.0, 8.0, 10.0, 12.0, 16.0, 20.0, 25.0, 30.0, 35.0, 40.0, 45.0, 50.0, 55.0, 60.0)
 """Source: ISO 888:2012, preferred nominal lengths, from memory."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Fastener:
     """One thread with its clearance holes, its socket head and its hexagon nut."""
 

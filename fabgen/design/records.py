@@ -4,12 +4,14 @@ A record keeps reactance: g, the removed reactance over η B, from which every r
 """
 
 from collections.abc import Iterator
-from dataclasses import dataclass, fields
+from dataclasses import fields
+
+from fabgen.frozen import frozen
 
 _TIDY = 4
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class MountGeometry:
     """One rod's mount on a metal boom, in the numbers that decide what the boom takes from the rod.
 
@@ -54,7 +56,7 @@ class MountGeometry:
                 yield field.name, _said(mine), _said(theirs)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SolvedRod:
     """One rod of a solved mount.
 
@@ -69,7 +71,7 @@ class SolvedRod:
     reactance_factor: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SolvedRecord:
     """A mount solved in full.
 
@@ -103,7 +105,7 @@ class SolvedRecord:
         return total
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class MeasuredRecord:
     """A mount measured with a coupon.
 

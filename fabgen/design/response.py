@@ -4,8 +4,9 @@ The model: thin straight rods in free space; no boom, mount, mast, ground or fee
 rectangular distributions between their tolerances. Losses and shifts are counted against the modelled array.
 """
 
-from dataclasses import dataclass
 from typing import Literal
+
+from fabgen.frozen import frozen
 
 Quantity = Literal["length", "station"]
 
@@ -13,7 +14,7 @@ SHARE_INSIDE = 0.95
 """Of all builds: what a tolerance is allotted for, and what `at 95 %` means."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class BandPoint:
     """The modelled array at one frequency.
 
@@ -34,7 +35,7 @@ class BandPoint:
     mismatch: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FanPoint:
     """Between which values 95 % of builds lie at one frequency, within the tolerances in force."""
 
@@ -44,7 +45,7 @@ class FanPoint:
     mismatch: tuple[float, float]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Outcome:
     """What limits are held against; the worst in the band.
 
@@ -61,7 +62,7 @@ class Outcome:
     mismatch: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Sensitivity:
     """What one more millimetre of one quantity of one element changes.
 
@@ -86,7 +87,7 @@ class Sensitivity:
     loss_db_per_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Tolerances:
     """± on the length and on the station of one element."""
 
@@ -95,7 +96,7 @@ class Tolerances:
     station_mm: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Spread:
     """What random errors within tolerances do to builds.
 
@@ -110,7 +111,7 @@ class Spread:
     inside_share: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Allotment:
     """Tolerances that follow from limits.
 
@@ -123,7 +124,7 @@ class Allotment:
     feasible: bool
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class CommonError:
     """The mount's allowance wrong on all rods at once, by its own uncertainty.
 
@@ -138,7 +139,7 @@ class CommonError:
     twice: Outcome
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class LeftOver:
     """What rods of another diameter leave after their lengths were changed, before rounding.
 
@@ -157,7 +158,7 @@ class LeftOver:
     outside: tuple[str, ...]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Pattern:
     """Gain round one plane at the design frequency.
 
@@ -172,7 +173,7 @@ class Pattern:
     half_power_deg: float | None
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Response:
     """Everything the solver found about one design.
 

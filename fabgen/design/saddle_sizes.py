@@ -6,7 +6,6 @@ prints lying on its −y side, the rod's bore upright.
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Box
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
@@ -19,6 +18,7 @@ from fabgen.design.part_geometry import (
     under_strip_mm2,
     under_teardrop_mm3,
 )
+from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
 
 ENGAGEMENT_MM = 3.5
@@ -30,7 +30,7 @@ FOOT_SHARE = 0.7
 """Width of a concave foot over the boom's diameter: inside 45° on both sides, so that it prints without support."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SaddleSize:
     """One saddle.
 

@@ -7,6 +7,7 @@ from dataclasses import dataclass
 from typing import TYPE_CHECKING, Any
 
 from fabgen.design.arranged import Frame
+from fabgen.frozen import frozen
 
 if TYPE_CHECKING:
     import numpy as np
@@ -46,7 +47,7 @@ class Product:
     colour: Colour
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class AssemblyItem:
     """One place of a part: occurrence name, part, and where the part's frame stands."""
 
@@ -55,7 +56,7 @@ class AssemblyItem:
     frame: Frame
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Print:
     """One distinct printed part as it lies on the bed (z = 0), bores drawn larger by the printer's growth.
 

@@ -8,11 +8,11 @@ with flat faces each face has a strip of its own.
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Hole, Wall
 from fabgen.design.design import Boom
 from fabgen.design.drawing import Point
+from fabgen.frozen import frozen
 
 APART_MM = 4.0
 """Between the strips of a solid bar, for the scissors."""
@@ -23,7 +23,7 @@ _STEPS = 180
 """Corners of a developed outline: the chord of a 10 mm hole leaves its curve by 0.0008 mm."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Face:
     """One flat wall on the paper.
 
@@ -44,7 +44,7 @@ class Face:
         return (self.low_mm + self.high_mm) / 2
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Development:
     """The whole surface on the paper.
 

@@ -4,11 +4,11 @@ Frame of a page: origin lower left, x right, y up, mm. A table that does not fit
 """
 
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass
 
 from fabgen.design.drawing import Anchor, Sheet
 from fabgen.design.lettering import shortened, text_width_mm
 from fabgen.design.pen import LETTERING_MM, Pen
+from fabgen.frozen import frozen
 
 LEFT_MM, RIGHT_MM, TOP_MM, FOOT_MM = 15.0, 10.0, 10.0, 18.0
 _HEADING_MM = 3.5
@@ -19,7 +19,7 @@ _BOX_MM = 2.8
 _NOTE_MM = 8.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Column:
     """One column of a table.
 

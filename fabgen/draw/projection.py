@@ -4,11 +4,11 @@ A view's frame: x along the boom from the datum face, `up` across it, mm at full
 """
 
 from collections.abc import Iterator
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Arranged, Axis, Cylinder, Placed, Shape
 from fabgen.design.drawing import Box
 from fabgen.design.pen import Pen
+from fabgen.frozen import frozen
 
 RODS = ("rod", "folded_rod")
 BODIES = ("saddle", "folded_saddle", "feed_block", "clamp_plate")
@@ -18,7 +18,7 @@ _THIN_MM = 0.8
 _DOT_MM = 0.35
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class View:
     """One view on a sheet.
 

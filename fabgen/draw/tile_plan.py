@@ -6,10 +6,11 @@ Coordinates are the sheet's, in mm: origin lower left, x right, y up.
 import itertools
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass, replace
+from dataclasses import replace
 
 from fabgen.design.drawing import Box, Item, Line, Sheet, Text
 from fabgen.design.overlaps import bounds
+from fabgen.frozen import frozen
 
 GUTTER_MM, FOOT_MM, HEAD_MM = 9.0, 16.5, 10.0
 """Strips of a page left, below and above the drawing, for the bars, the foot and the stations."""
@@ -21,7 +22,7 @@ TARGET_MM = 2.0
 _DETOUR_MM = 40.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Plan:
     """Where a sheet is cut on one orientation of the paper.
 

@@ -6,7 +6,6 @@ with the same target marks, at a station that is a round number. Frame of a page
 """
 
 import math
-from dataclasses import dataclass
 
 from fabgen.design.drawing import Box, Circle, Item, Sheet, Text, moved
 from fabgen.design.lettering import shortened, text_box, text_width_mm
@@ -15,13 +14,14 @@ from fabgen.design.pen import LETTERING_MM, Pen
 from fabgen.draw.clipping import clipped, contains
 from fabgen.draw.stamp import stamped
 from fabgen.draw.tile_plan import STATION_STEP_MM, TARGET_MM, Plan, near, plan_pages, stays_whole
+from fabgen.frozen import frozen
 
 _LABEL_STEP = 5
 _OFF_TEXT_MM = 0.4
 _LABEL_ROOM_MM = 14.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Tiling:
     """A sheet cut into pages.
 

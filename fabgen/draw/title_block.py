@@ -4,13 +4,12 @@ Frame: 20 mm from the left edge for binding, 10 mm from the others, centring mar
 in the lower right corner with the fields of ISO 7200; a field the design leaves out is a blank for the pen.
 """
 
-from dataclasses import dataclass
-
 from fabgen.design.arranged import Arranged
 from fabgen.design.drawing import Box
 from fabgen.design.lettering import shortened
 from fabgen.design.pen import LETTERING_MM, Pen
 from fabgen.draw.words import allowance_words
+from fabgen.frozen import frozen
 from fabgen.stock.tables import paper
 
 WIDTH_MM, HEIGHT_MM = 180.0, 36.0
@@ -19,7 +18,7 @@ _ROW_MM = HEIGHT_MM / 4
 _CAPTION_MM = 1.8
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Format:
     """A landscape sheet: its name, size and frame."""
 

@@ -2,13 +2,13 @@
 
 import functools
 import math
-from dataclasses import dataclass
 
 from OCP.BRepAdaptor import BRepAdaptor_Surface
 from OCP.GeomAbs import GeomAbs_SurfaceType
 from OCP.TopAbs import TopAbs_Orientation
 
 from fabgen.design.arranged import Frame, Vector
+from fabgen.frozen import frozen
 from fabgen.model.kernel import cq
 from fabgen.model.neighbourhood import Body
 from fabgen.model.solids import location
@@ -16,7 +16,7 @@ from fabgen.model.solids import location
 _SAME_AXIS = 1e-6
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Fit:
     """A full cylinder in a hollow one.
 
@@ -30,7 +30,7 @@ class Fit:
     ring_mm3: float
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class _Barrel:
     """A cylindrical face; its span is measured along the axis from the point nearest to the origin."""
 

@@ -12,12 +12,12 @@ computed, unpublished.
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
 from enum import Enum
 from itertools import pairwise
 
 import numpy as np
 
+from fabgen.frozen import frozen
 from fabgen.physics.array_loss import RodLoss, impedance_matrix, rod_loss
 from fabgen.physics.array_matrix import (
     ETA_OHM,
@@ -55,7 +55,7 @@ class ThinRodRange(Enum):
         return self is not ThinRodRange.RELATIVE_ONLY
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class RodArray:
     """Parallel rods on one axis, one of them fed at its centre.
 
@@ -117,7 +117,7 @@ class RodArray:
         return ThinRodRange.STRAINED if fattest_wl > STRAINED_WL else ThinRodRange.WITHIN
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ArraySolution:
     """Currents of an array at one frequency for 1 V at the feed, and what follows from them.
 
@@ -220,7 +220,7 @@ def mismatch(impedance_ohm: ComplexArray, reference_ohm: float) -> FloatArray:
     return np.asarray((1 + reflection) / (1 - reflection))
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class BandResponse:
     """Response of one array over a band; one entry per frequency.
 

@@ -8,10 +8,10 @@ Source: adjoint method, textbook; own derivation.
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
 
 import numpy as np
 
+from fabgen.frozen import frozen
 from fabgen.physics.array import LIGHT_MM_MHZ, ArraySolution, RodArray, solution_from_current
 from fabgen.physics.array_loss import RodLoss, impedance_matrix, rod_loss
 from fabgen.physics.array_matrix import (
@@ -25,7 +25,7 @@ from fabgen.physics.blas_threads import one_blas_thread
 from fabgen.physics.thin_rod_kernel import END_EXTENSION_RADII, ComplexArray, FloatArray
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Sensitivity:
     """What one more millimetre changes, one entry per rod.
 
@@ -40,7 +40,7 @@ class Sensitivity:
     feed_impedance_ohm_per_mm: ComplexArray
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ArrayGradient:
     """Response of an array at one frequency with all its derivatives.
 

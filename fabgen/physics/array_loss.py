@@ -7,17 +7,17 @@ Source: surface impedance of a good conductor, textbook; overlaps of sinusoids i
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
 
 import numpy as np
 
+from fabgen.frozen import frozen
 from fabgen.physics.array_matrix import IMPEDANCE_FACTOR_OHM, Bases, project
 from fabgen.physics.thin_rod_kernel import NODES, ComplexArray, FloatArray
 
 MU_0_H_PER_M = 4e-7 * math.pi
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class RodLoss:
     """Surface loss of each rod; arrays are rods by bases by bases, in ohm.
 

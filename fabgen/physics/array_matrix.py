@@ -8,12 +8,12 @@ Source: J. H. Richmond's piecewise sinusoidal Galerkin method (from memory); own
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
 from functools import lru_cache
 
 import numpy as np
 from numpy.typing import NDArray
 
+from fabgen.frozen import frozen
 from fabgen.physics.thin_rod_kernel import (
     END_EXTENSION_RADII,
     NODES,
@@ -32,7 +32,7 @@ IMPEDANCE_FACTOR_OHM = 2j * ETA_OHM / (4 * math.pi)
 IntArray = NDArray[np.intp]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class _Places:
     """Which distinct node distances occur: t_first * h_i + sign * t_second * h_j, and where each is used.
 
@@ -91,7 +91,7 @@ def _self_places(segments: int) -> _Places:
     return _Places(distance, np.zeros_like(distance), minus, plus, minus_sign, np.ones((size, size)))
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Bases:
     """Symmetric sinusoidal basis functions of every rod, by the jumps of slope at their nodes.
 
@@ -161,7 +161,7 @@ def bases(length_mm: Sequence[float], diameter_mm: Sequence[float], k_per_mm: fl
     return Bases(kh, jump, slope, segments)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class NodePotentials:
     """Node potentials of all rods; axes rod i, node p, rod j, node q; slopes only where asked for.
 

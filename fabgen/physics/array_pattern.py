@@ -8,10 +8,10 @@ Source: far field of sinusoidal currents in closed form, textbook; own derivatio
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
 
 import numpy as np
 
+from fabgen.frozen import frozen
 from fabgen.physics.array import ArraySolution
 from fabgen.physics.array_matrix import ETA_OHM, bases
 from fabgen.physics.thin_rod_kernel import NODES, ComplexArray, FloatArray
@@ -20,7 +20,7 @@ AXIS_WIDTH = 1e-4
 """Sine of the angle from the rod axis below which the field, proportional to it, is set to zero."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class PatternCut:
     """Gain along a great circle.
 

@@ -8,13 +8,13 @@ Source: symmetry; polarisation ellipse from the Stokes parameters, textbook.
 
 import cmath
 import math
-from dataclasses import dataclass
 
+from fabgen.frozen import frozen
 from fabgen.physics.array import ArraySolution, RodArray, solve_array
 from fabgen.physics.array_matrix import ETA_OHM
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class CrossedSolution:
     """Both planes of a crossed array at one frequency.
 

@@ -9,10 +9,10 @@ Source: own study 2026, computed, unpublished.
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
 
 import numpy as np
 
+from fabgen.frozen import frozen
 from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, mismatch
 from fabgen.physics.array_iteration import iterate_currents
 from fabgen.physics.array_loss import impedance_matrix, rod_loss
@@ -31,7 +31,7 @@ CHUNK_ENTRIES = 2_000_000
 """Matrix entries held at once."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class BuildChanges:
     """Deviations of builds from the design, builds by rods.
 
@@ -50,7 +50,7 @@ class BuildChanges:
             raise ValueError("length_mm, station_mm and diameter_mm must all be builds by rods")
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SampledResponse:
     """Response of many builds, builds by frequencies.
 
@@ -83,7 +83,7 @@ class SampledResponse:
         return mismatch(self.feed_impedance_ohm, reference_ohm)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ExpandedArray:
     """An array at one frequency, expanded about its design.
 

@@ -11,12 +11,12 @@ Source: own study 2026, computed, unpublished.
 """
 
 import math
-from dataclasses import dataclass
 
 import numpy as np
 from numpy.typing import NDArray
 from scipy.interpolate import CubicSpline
 
+from fabgen.frozen import frozen
 from fabgen.physics.array import RodArray, solve_band
 from fabgen.physics.array_gradient import ArrayGradient
 from fabgen.physics.thin_rod_kernel import ComplexArray, FloatArray
@@ -29,7 +29,7 @@ REACH = 0.03
 """Largest shift looked for, as a fraction of the frequency."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Shift:
     """Detuning of builds; every array has one entry per build.
 
@@ -48,7 +48,7 @@ class Shift:
     at_limit: NDArray[np.bool_]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ShiftGauge:
     """The design's response, ready to measure builds against.
 
@@ -174,7 +174,7 @@ def build_shift(gauge: ShiftGauge, build: RodArray) -> Shift:
     return gauge.measure(response.gain_dbi, response.back_front)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ShiftPerMm:
     """What a millimetre at each rod does to the tuning.
 

@@ -8,8 +8,8 @@ Source: own study 2026, computed, unpublished.
 """
 
 import math
-from dataclasses import dataclass
 
+from fabgen.frozen import frozen
 from fabgen.physics.boom_mount import ETA_OHM, BoomMount, Section, Style, wavelength_mm
 from fabgen.physics.boom_range import Advice, RangeMiss, Reason, advice_on, boom_end_misses, range_misses
 from fabgen.physics.boom_uncertainty import (
@@ -31,7 +31,7 @@ _EPSILON_0_F_M = 8.8541878128e-12
 _MU_0_OVER_2_PI_H_M = 2e-7
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class BoomAllowance:
     """Length to add to one rod because of its mount, or the reasons why none is computed.
 

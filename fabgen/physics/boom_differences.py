@@ -4,9 +4,10 @@ Source: own study 2026, computed, unpublished.
 """
 
 import math
-from dataclasses import dataclass, replace
+from dataclasses import replace
 from enum import Enum
 
+from fabgen.frozen import frozen
 from fabgen.physics.boom_closed_form import (
     bonded_reactance_factor,
     bush_term_mm,
@@ -61,7 +62,7 @@ class Item(Enum):
     FREQUENCY = "frequency"
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Difference:
     """One item in which the drawn mount differs from the record.
 

@@ -1,7 +1,8 @@
 """A rod in its mount on a metal boom, as plain numbers: what the closed forms, the solver and a record share."""
 
-from dataclasses import dataclass
 from enum import Enum
+
+from fabgen.frozen import frozen
 
 SPEED_OF_LIGHT_M_S = 299_792_458.0
 ETA_OHM = 376.730313668
@@ -23,7 +24,7 @@ class Section(Enum):
     RECTANGULAR = "rectangular"
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class BoomMount:
     """One rod's mount on a long straight metal boom; the rod crosses the boom's axis at a right angle.
 

@@ -3,10 +3,9 @@
 Frame and unit as in `boom_mesh`; the boom is cut on each side of the rod, its ends open.
 """
 
-from dataclasses import dataclass
-
 import numpy as np
 
+from fabgen.frozen import frozen
 from fabgen.physics.boom_integrals import Floats
 from fabgen.physics.boom_mesh import Mesh, weld
 from fabgen.physics.boom_mount import BoomMount, Section, Style
@@ -27,7 +26,7 @@ LONG_BOOM_HALF_WL = 0.3
 _INSIDE_LENGTHS = 1.5
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Fineness:
     """How finely rod and boom are divided.
 

@@ -5,16 +5,16 @@ and, negative, down to the bottom line. Unit: wavelengths.
 """
 
 import math
-from dataclasses import dataclass
 
 import numpy as np
 
+from fabgen.frozen import frozen
 from fabgen.physics.boom_integrals import Floats
 from fabgen.physics.boom_mesh import grid
 from fabgen.physics.boom_rod_mesh import circumradius, graded
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class RoundSkin:
     """A round boom, its nodes on the circle round the polygon of equal conformal radius.
 
@@ -53,7 +53,7 @@ class RoundSkin:
         return np.stack([x, y, z], axis=-1)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class FlatSkin:
     """A square or rectangular boom with sharp corners.
 
@@ -91,7 +91,7 @@ class FlatSkin:
 Skin = RoundSkin | FlatSkin
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SkinCells:
     """How finely a skin is divided.
 

@@ -9,12 +9,12 @@ Propagation 19 (1971) 622; mesh and matching: own study 2026, computed, unpublis
 """
 
 from collections.abc import Callable
-from dataclasses import dataclass
 from functools import lru_cache
 
 import numpy as np
 from scipy.linalg import lu_factor, lu_solve
 
+from fabgen.frozen import frozen
 from fabgen.physics.boom_closed_form import rod_slope_ohm_per_wl
 from fabgen.physics.boom_coupon import reactance_factor_from_allowance
 from fabgen.physics.boom_differences import nearest_closed_form_mm
@@ -38,7 +38,7 @@ _MOST_ROUNDS = 4
 _SLOPE_STEP_WL = 0.002
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Mode:
     """The half-wave mode of a rod.
 
@@ -53,7 +53,7 @@ class Mode:
     unknowns: int
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class SolvedAllowance:
     """Allowance of one rod, solved at two mesh sizes.
 

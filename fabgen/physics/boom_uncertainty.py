@@ -6,12 +6,12 @@ Source: own study 2026, computed, unpublished.
 """
 
 import math
-from dataclasses import dataclass
 
+from fabgen.frozen import frozen
 from fabgen.physics.boom_mount import BoomMount, Section, Style, wavelength_mm
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Surroundings:
     """What stands near the rod on the boom; None where there is nothing to reckon with.
 

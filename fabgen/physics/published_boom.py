@@ -10,8 +10,9 @@ Boom Influence on Yagi Antenna, antenneX, 2010, bonded 0.25 to 0.45 D in arrays 
 """
 
 import math
-from dataclasses import dataclass
 from typing import Literal
+
+from fabgen.frozen import frozen
 
 Style = Literal["bonded-through", "insulated-through", "on-top", "through-nonmetal"]
 Model = Literal["dl6wu", "lawson", "fishenden-wiblin"]
@@ -43,7 +44,7 @@ _DOBRICIC = (
 )
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class PrintedValue:
     """What one printed statement says for one case.
 

@@ -14,11 +14,12 @@ reactance +305 kHz, the logarithmic formula -158 kHz.
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass, replace
+from dataclasses import replace
 
 import numpy as np
 from scipy.optimize import brentq
 
+from fabgen.frozen import frozen
 from fabgen.physics.array import LIGHT_MM_MHZ, RodArray
 from fabgen.physics.array_loss import impedance_matrix
 from fabgen.physics.array_matrix import bases, mutual_and_self
@@ -29,7 +30,7 @@ SEARCH = 0.15
 """The new length is sought within this fraction of the old one."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class RodChange:
     """A rod length carried over to another diameter.
 

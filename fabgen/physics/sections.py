@@ -5,11 +5,12 @@ Frame: x along the bar, y across it, z up; y = z = 0 at the centroid. `about_y` 
 """
 
 import math
-from dataclasses import dataclass
 from typing import Literal
 
+from fabgen.frozen import frozen
 
-@dataclass(frozen=True, slots=True)
+
+@frozen
 class SectionProperties:
     """Properties of one cross-section.
 

@@ -13,12 +13,13 @@ on Antennas and Propagation, 1975 (method, from memory); nodes, end extension, r
 unpublished.
 """
 
-from dataclasses import dataclass
 from functools import lru_cache
 
 import numpy as np
 from numpy.typing import NDArray
 from scipy.special import sici
+
+from fabgen.frozen import frozen
 
 FloatArray = NDArray[np.float64]
 ComplexArray = NDArray[np.complex128]
@@ -37,7 +38,7 @@ NODES: dict[int, tuple[float, ...]] = {
 unknown is the classic sinusoidal current (induced EMF)."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Potential:
     """k W and its slopes at the same places (dimensionless).
 

@@ -1,13 +1,14 @@
 """Reading a design file: all of its problems in one run, or the design with what is worth noting about it."""
 
 import hashlib
-from dataclasses import dataclass, replace
+from dataclasses import replace
 from pathlib import Path
 
 from pydantic import ValidationError
 
 from fabgen.design.design import Design
 from fabgen.design.findings import Finding
+from fabgen.frozen import frozen
 from fabgen.read.contradictions import find_contradictions
 from fabgen.read.csv_table import insert_table
 from fabgen.read.gather import gather, gather_root
@@ -21,7 +22,7 @@ from fabgen.read.source import Problems, read_source
 from fabgen.read.yaml_tree import Map, Scalar, parse
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Reading:
     """A design and how it was read.
 

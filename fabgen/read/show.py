@@ -297,7 +297,7 @@ class _Shown:
 
 
 def _is_stated(material: Material) -> bool:
-    return material.source == Material.__dataclass_fields__["source"].default
+    return bool(material.source == Material.__dataclass_fields__["source"].default)
 
 
 def _material_mapping(material: Material) -> str:

@@ -1,11 +1,10 @@
 """Hardened drill bushings for pressing in."""
 
-from dataclasses import dataclass
-
+from fabgen.frozen import frozen
 from fabgen.stock.read_csv import UnknownStockError, rows
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class DrillBushing:
     """A press-fit drill bushing without a head (DIN 179), short series: bore F7, outside n6."""
 

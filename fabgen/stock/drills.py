@@ -1,9 +1,9 @@
 """Twist drills in metric and inch sizes."""
 
 import functools
-from dataclasses import dataclass
 from typing import Literal
 
+from fabgen.frozen import frozen
 from fabgen.stock.read_csv import UnknownStockError, rows
 from fabgen.units import in_to_mm
 
@@ -12,7 +12,7 @@ DrillSeries = Literal["metric", "inch", "both"]
 _TINY_MM = 1e-6
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Drill:
     """A twist drill: its name in the trade and its diameter."""
 

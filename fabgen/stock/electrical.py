@@ -1,11 +1,10 @@
 """Conductivity of rod materials, and the classes of tolerance that a shop can hold."""
 
-from dataclasses import dataclass
-
+from fabgen.frozen import frozen
 from fabgen.stock.read_csv import index, rows
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ToleranceClass:
     """A tolerance that a shop can hold by a known way of working.
 

@@ -1,15 +1,15 @@
 """Metric coarse threads, their holes, screw heads, nuts and washers."""
 
 import functools
-from dataclasses import dataclass
 from typing import Literal
 
+from fabgen.frozen import frozen
 from fabgen.stock.read_csv import UnknownStockError, index, row
 
 HeadKind = Literal["socket", "hex", "button", "pan"]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Thread:
     """A metric coarse thread (ISO 261) and its tap drill."""
 
@@ -53,7 +53,7 @@ def clearance_hole_mm(name: str, fit: Literal["fine", "medium", "coarse"] = "med
     return float(found[f"iso273_{fit}_mm"])
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class ScrewHead:
     """The head of a screw, at its largest.
 
@@ -98,7 +98,7 @@ def screw_head(name: str, kind: HeadKind = "socket") -> ScrewHead:
     )
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Nut:
     """A hexagon nut (ISO 4032): largest height, smallest width across corners."""
 
@@ -126,7 +126,7 @@ def nut(name: str) -> Nut:
     )
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Washer:
     """A plain washer: `normal` ISO 7089 with nominal thickness, `large` ISO 7093-1 with the largest thickness."""
 

@@ -1,13 +1,13 @@
 """Materials, and which metals may touch outdoors."""
 
 import functools
-from dataclasses import dataclass
 from typing import Literal, cast
 
+from fabgen.frozen import frozen
 from fabgen.stock.read_csv import index, number, row
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Material:
     """One material; None where the table has no value.
 

@@ -1,13 +1,13 @@
 """Paper and title block, and what a shop can do: hole distances, printed walls, saws, stock lengths."""
 
 import functools
-from dataclasses import dataclass
 from typing import Literal
 
+from fabgen.frozen import frozen
 from fabgen.stock.read_csv import UnknownStockError, row, rows
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Paper:
     """A sheet in portrait, with the margins of its drawing frame (ISO 5457).
 
@@ -52,7 +52,7 @@ def paper_size_mm(name: str) -> tuple[float, float]:
     return sheet.width_mm, sheet.height_mm
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class TitleField:
     """A field of the title block (ISO 7200); `max_characters` is None where the standard sets no number."""
 

@@ -1,12 +1,13 @@
 """Allowance against the size of the boom, for each mount: computed band, published curves, and where this design is."""
 
 from collections.abc import Callable, Iterable
-from dataclasses import dataclass, replace
+from dataclasses import replace
 
 from fabgen.book.book import Book, Content
 from fabgen.book.scale import Axis, axis
 from fabgen.design.design import Mount
 from fabgen.design.ledger import LedgerLine
+from fabgen.frozen import frozen
 from fabgen.physics.boom_closed_form import closed_form_allowance
 from fabgen.physics.boom_mount import BoomMount, Section
 from fabgen.physics.published_boom import equivalent_round_mm, published_values
@@ -22,7 +23,7 @@ NBS_POINT_WL = (0.0085, 0.005, 0.001)
 Point = tuple[float, float]
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class BoomPicture:
     """One mount's picture; all points are on paper.
 

@@ -1,10 +1,10 @@
 """Cautions that apply to this array, with the bodies that issue the rules."""
 
-from dataclasses import dataclass
 from pathlib import Path
 
 from fabgen.book import exposure
 from fabgen.book.book import Book, Content
+from fabgen.frozen import frozen
 
 PLACE = 30
 FOLDER = Path(__file__).parent.parent / "words" / "cautions"
@@ -12,7 +12,7 @@ RADIATED_W = (1.0, 10.0, 100.0, 1000.0)
 GROUND_FACTOR = 4.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Caution:
     """One caution.
 

@@ -1,10 +1,9 @@
 """Cut plan: every bar drawn with its pieces, and the list of pieces."""
 
-from dataclasses import dataclass
-
 from fabgen.book.book import Book, Content
 from fabgen.design.arranged import Bar, Cut
 from fabgen.design.lettering import CAP_EM, text_width_mm
+from fabgen.frozen import frozen
 from fabgen.units import format_mm
 
 PLACE = 60
@@ -18,7 +17,7 @@ PITCH_MM = 2.7
 NARROW_MM = 0.25
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Band:
     """One stretch of a drawn bar.
 
@@ -36,7 +35,7 @@ class Band:
     upright: bool = False
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class DrawnBar:
     """One bar over the page's width.
 

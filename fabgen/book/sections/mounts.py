@@ -1,11 +1,10 @@
 """What is in print for each mount, beside what this design uses: values, ranges, sources, and their spread."""
 
-from dataclasses import dataclass
-
 from fabgen.book.book import Book, Content
 from fabgen.book.scale import Axis, axis
 from fabgen.design.design import Design, Mount
 from fabgen.design.ledger import LedgerLine
+from fabgen.frozen import frozen
 from fabgen.physics.half_wave import shift_khz
 
 PLACE = 55
@@ -13,7 +12,7 @@ SHOWS_LENGTHS = True
 WIDTH_MM, LEFT_MM, ROW_MM, HEAD_MM, FOOT_MM = 178.0, 16.0, 4.6, 4.2, 9.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Printed:
     """One published statement over all rods of a mount.
 
@@ -35,7 +34,7 @@ class Printed:
     source: str
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class MountSpread:
     """One mount with its rods and everything in print for it.
 

@@ -1,16 +1,16 @@
 """What to buy, make and print."""
 
 from collections import Counter
-from dataclasses import dataclass
 
 from fabgen.book.book import Book, Content
 from fabgen.design.arranged import Placed, Source
+from fabgen.frozen import frozen
 
 PLACE = 80
 SHOWS_LENGTHS = True
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Row:
     """One distinct part: the first place it stands at, how many there are, and for which elements."""
 

@@ -5,14 +5,13 @@ class within it. The number is searched with builds to first order; what it give
 solved, and tightened until 95 % of those are inside.
 """
 
-from dataclasses import dataclass
-
 import numpy as np
 
 from fabgen.check.response.gauge import Gauge, Outcomes, Sampled
 from fabgen.check.response.slopes import Slopes
 from fabgen.design.electrical_case import ElectricalCase
 from fabgen.design.response import SHARE_INSIDE, Allotment, Spread, Tolerances
+from fabgen.frozen import frozen
 from fabgen.physics.array import RodArray
 from fabgen.physics.thin_rod_kernel import FloatArray
 
@@ -26,7 +25,7 @@ SPARE_SHARE = 0.004
 """Builds to spare over 95 % in the search, for what the first order leaves out."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Tried:
     """Tolerances with the builds that were tried within them.
 

@@ -1,7 +1,5 @@
 """What limits are held against: shift, gain lost, front-to-back ratio and mismatch of many builds at once."""
 
-from dataclasses import dataclass
-
 import numpy as np
 from numpy.typing import NDArray
 
@@ -9,6 +7,7 @@ from fabgen.check.response.arrays import at_terminals, modelled_array
 from fabgen.design.electrical_case import ElectricalCase
 from fabgen.design.limits import Limits
 from fabgen.design.response import SHARE_INSIDE, Outcome
+from fabgen.frozen import frozen
 from fabgen.physics.array import RodArray, mismatch, solve_band
 from fabgen.physics.array_sampling import BuildChanges, sample_band
 from fabgen.physics.array_shift import ShiftGauge, shift_gauge
@@ -18,7 +17,7 @@ POINTS = 9
 """Frequencies of the shift measure; its sums over a smooth response need no more."""
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Outcomes:
     """The four judged values of many builds, one entry per build."""
 
@@ -59,7 +58,7 @@ def _most(limit: float | None) -> float:
     return np.inf if limit is None else limit
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Gauge:
     """The modelled array, ready to hold builds against.
 
@@ -114,7 +113,7 @@ class Gauge:
         return outcomes, sampled.taken(order)
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Sampled:
     """Responses of builds, builds by frequencies."""
 

@@ -1,13 +1,12 @@
 """What a millimetre costs, from the exact derivatives of the drawn array."""
 
-from dataclasses import dataclass
-
 import numpy as np
 
 from fabgen.check.response.arrays import step_up
 from fabgen.check.response.gauge import Gauge, Outcomes
 from fabgen.design.limits import Limits
 from fabgen.design.response import Quantity, Sensitivity
+from fabgen.frozen import frozen
 from fabgen.physics.array import RodArray
 from fabgen.physics.array_gradient import ArrayGradient, gradient_band
 from fabgen.physics.thin_rod_kernel import ComplexArray, FloatArray
@@ -15,7 +14,7 @@ from fabgen.physics.thin_rod_kernel import ComplexArray, FloatArray
 _KINDS: tuple[Quantity, Quantity] = ("length", "station")
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class Slopes:
     """First-order response of an array; quantities are all lengths, then all stations.
 

@@ -5,7 +5,6 @@ Running dimensions follow ISO 129-1, the scale is one of ISO 5455, the sheet ISO
 
 import itertools
 import math
-from dataclasses import dataclass
 
 from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.drawing import Sheet
@@ -13,6 +12,7 @@ from fabgen.design.lettering import shortened, text_width_mm
 from fabgen.design.pen import LETTERING_MM, Pen, spread
 from fabgen.draw.projection import View, draw, reach_mm
 from fabgen.draw.title_block import HEIGHT_MM, WIDTH_MM, Format, draw_frame, draw_title_block, landscape
+from fabgen.frozen import frozen
 from fabgen.units import format_mm
 
 PLACE = "drawings"
@@ -32,7 +32,7 @@ _LEAST_SHARE = 0.35
 _NOTES_MM = 12.0
 
 
-@dataclass(frozen=True, slots=True)
+@frozen
 class _Layout:
     """A sheet and a scale on which everything has its place."""
 
