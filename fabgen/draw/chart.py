@@ -40,22 +40,20 @@ class Panel:
         pen.dot(*self.at(point), diameter_mm, "outline")
 
 
-def panel(
-    pen: Pen, box: Box, x_range: tuple[float, float], y_range: tuple[float, float], *, title: str, below: str
-) -> Panel:
+def panel(pen: Pen, box: Box, points: Sequence[Point], *, title: str, below: str) -> Panel:
     """Draw axes with their numbers and a thin grid.
 
     Args:
         pen: records them.
         box: room for axes and lettering.
-        x_range: smallest and largest quantity to show to the right.
-        y_range: the same upwards.
+        points: everything that shall find room, in the axes' own units.
         title: what is drawn, above the axes.
         below: what stands to the right, with its unit.
     """
     left, low, right, high = box
-    x = axis(*x_range, left + LEFT_MM, right - RIGHT_MM)
-    y = axis(*y_range, low + FOOT_MM, high - TOP_MM, 6)
+    across, up = [x for x, _ in points], [y for _, y in points]
+    x = axis(min(across), max(across), left + LEFT_MM, right - RIGHT_MM)
+    y = axis(min(up), max(up), low + FOOT_MM, high - TOP_MM, 6)
     for label, at in y.marks:
         pen.line("dim", x.start_mm, at, x.end_mm, at)
         pen.text(x.start_mm - 1.5, at, label, LETTERS_MM, anchor="end", level="middle")

@@ -51,10 +51,7 @@ def trim_sheet(name: str, title: str, curves: Sequence[TrimCurve], notes: Sequen
 
 def _panel(pen: Pen, curve: TrimCurve, box: tuple[float, float, float, float]) -> None:
     points = [*curve.free, *curve.mounted, *curve.free_line, *curve.mounted_line]
-    across, up = [x for x, _ in points], [y for _, y in points]
-    axes = panel(
-        pen, box, (min(across), max(across)), (min(up), max(up)), title=curve.title, below="director, tip to tip, mm"
-    )
+    axes = panel(pen, box, points, title=curve.title, below="director, tip to tip, mm")
     axes.curve(pen, curve.free_line)
     axes.curve(pen, curve.mounted_line, "fold")
     for point in curve.free:
