@@ -213,6 +213,7 @@ def _book(order: Order) -> Files:
         aids=tuple((aid, figure(sheet, svg(sheet))) for aid, sheet in zip(aids, aid_pictures, strict=True)),
         mounts=metal_mounts(order.arranged.design),
         stamped=order.stamped,
+        response=order.response,
     )
     return (PackageFile("book.html", book_html(book), "the build book: opens offline in any browser"),)
 
