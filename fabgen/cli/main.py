@@ -27,6 +27,13 @@ class Commands(click.Group):
             return None
         return cast(click.Command, registry.entry(_FOLDER, cmd_name).function())
 
+    def format_commands(self, ctx: click.Context, formatter: click.HelpFormatter) -> None:
+        """One line per command: the first lines of their files, so that listing loads none."""
+        del ctx
+        rows = [(entry.name, entry.summary.partition(": ")[2]) for entry in registry.entries(_FOLDER)]
+        with formatter.section("Commands"):
+            formatter.write_dl(rows)
+
     def resolve_command(
         self, ctx: click.Context, args: list[str]
     ) -> tuple[str | None, click.Command | None, list[str]]:
@@ -57,27 +64,47 @@ def main(arguments: list[str] | None = None) -> None:
     """
     os.environ.setdefault("OPENBLAS_NUM_THREADS", "1")  # small systems: a second thread only waits
     try:
+        code = _run(arguments)
+    except (BrokenPipeError, SystemExit) as end:  # nobody reads on; click then ends the process with a code of its own
+        code = 0 if isinstance(end, SystemExit) and not end.code else 3
+        _let_go()
+    sys.exit(code)
+
+
+def _run(arguments: list[str] | None) -> int:
+    """Run one command, say how it ended, and return the exit code."""
+    try:
         result: Any = group.main(args=arguments, prog_name="fabgen", standalone_mode=False)
-        code = result if isinstance(result, int) else 0
-        sys.stdout.flush()
+        if sys.stdout is not None:  # None where the process was started without one
+            sys.stdout.flush()
     except click.ClickException as error:
         error.show()
-        code = error.exit_code
+        return error.exit_code
+    except BrokenPipeError:
+        raise
     except (click.Abort, KeyboardInterrupt):
-        click.echo("fabgen: stopped; nothing was changed", err=True)
-        code = 3
+        click.echo("fabgen: stopped; no file is half written", err=True)
+        return 3
     except FabgenError as error:
         from fabgen.cli.report import tell
 
         tell(error)
-        code = error.exit_code
-    except BrokenPipeError:
-        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
-        code = 3
+        return error.exit_code
+    except OSError as error:
+        reason = error.strerror or type(error).__name__
+        click.echo(f"fabgen: {error.filename or 'the output'}: {reason}; no file is half written", err=True)
+        return 3
     except Exception as error:
         click.echo(f"fabgen: a bug: {type(error).__name__}: {error}", err=True)
-        click.echo("  set FABGEN_DEBUG=1 to see where; nothing was changed in the output folder", err=True)
+        click.echo("  set FABGEN_DEBUG=1 to see where; no file is half written", err=True)
         if os.environ.get("FABGEN_DEBUG"):
             raise
-        code = 3
-    sys.exit(code)
+        return 3
+    return result if isinstance(result, int) else 0
+
+
+def _let_go() -> None:
+    """Point stdout and stderr at nothing, so that the process does not fail on them again while it ends."""
+    nothing = os.open(os.devnull, os.O_WRONLY)
+    for descriptor in (1, 2):
+        os.dup2(nothing, descriptor)

@@ -1,9 +1,13 @@
 """The command line: what goes where, and one exit code for each kind of ending."""
 
+import errno
+import io
 import json
+import os
 import subprocess
 import sys
 from pathlib import Path
+from typing import Any
 
 import pytest
 
@@ -178,6 +182,9 @@ def test_new_writes_once_and_only_here(design: Path, capsys: pytest.CaptureFixtu
     assert len(text.splitlines()) <= 20
     assert run("new", "first") == 2
     assert run("new", "../first") == 2
+    for name in ("", ".", "..", ".hidden", "two\nlines"):
+        assert run("new", name) == 2
+    assert sorted(each.name for each in Path().iterdir()) == ["first.yaml", "gauge.yaml"]
     assert path.read_text(encoding="utf-8") == text
 
 
@@ -194,14 +201,77 @@ def test_no_colour_when_it_is_not_wanted(design: Path) -> None:
     assert "\x1b" not in found.stdout + found.stderr
 
 
-def test_a_closed_pipe_is_no_traceback(design: Path) -> None:
-    command = f"{sys.executable} -m fabgen explain | head -n 1"
+def test_help_says_what_each_command_does_in_full(capsys: pytest.CaptureFixture[str]) -> None:
+    assert run("--help") == 0
+    commands = capsys.readouterr().out.partition("Commands:")[2]
+    assert "judge designs without writing anything" in commands
+    assert "..." not in commands
+
+
+@pytest.mark.parametrize(
+    ("words", "code"),
+    [
+        ("explain | true", 3),
+        ("check nowhere.yaml 2>&1 | true", 3),
+        ("check wrong.yaml 2> >(true)", 3),
+        ("explain >&-", 0),
+        ("check nowhere.yaml 2>&-", 2),
+    ],
+)
+def test_output_that_nobody_reads_is_no_traceback_and_no_finding(design: Path, words: str, code: int) -> None:
+    design.with_name("wrong.yaml").write_text("x: 1\n" * 200, encoding="utf-8")
+    command = f"{sys.executable} -m fabgen {words}; exit ${{PIPESTATUS[0]}}"
     found = subprocess.run(["bash", "-c", command], capture_output=True, text=True, check=False, env=_environment())
+    assert found.returncode == code
     assert "Traceback" not in found.stderr
     assert "Exception" not in found.stderr
 
 
-def _environment() -> dict[str, str]:
-    import os
+@pytest.mark.skipif(not Path("/dev/full").exists(), reason="no device that is always full")
+def test_output_that_does_not_fit_is_the_machines_fault(design: Path) -> None:
+    command = f"{sys.executable} -m fabgen explain > /dev/full"
+    found = subprocess.run(["bash", "-c", command], capture_output=True, text=True, check=False, env=_environment())
+    assert found.returncode == 3
+    assert found.stderr.startswith("fabgen: the output: ")
+    assert "bug" not in found.stderr
 
+
+def test_a_file_that_may_not_be_read_stops_no_other(
+    design: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
+) -> None:
+    locked = design.with_name("locked.yaml")
+    locked.write_text("fabgen: 1\n", encoding="utf-8")
+    opened = Path.open
+
+    def refuse(path: Path, *args: Any, **keywords: Any) -> Any:
+        if path.name == locked.name:
+            raise PermissionError(errno.EACCES, "Permission denied", str(path))
+        return opened(path, *args, **keywords)
+
+    monkeypatch.setattr(Path, "open", refuse)
+    monkeypatch.setattr(os, "access", lambda path, mode: Path(path).name != locked.name)
+    assert run("check", str(locked), str(design)) == 3
+    out, err = capsys.readouterr()
+    assert "RGL-434-06_A: clear" in out
+    assert err.startswith(f"fabgen: {locked} cannot be read: Permission denied")
+
+
+def test_a_design_file_that_cannot_be_written_whole_is_not_left_there(
+    design: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
+) -> None:
+    def full(*args: Any, **keywords: Any) -> Any:
+        Path("first.yaml").touch()
+        return Full()
+
+    class Full(io.StringIO):
+        def write(self, text: str) -> int:
+            raise OSError(errno.ENOSPC, "No space left on device")
+
+    monkeypatch.setattr(Path, "open", full)
+    assert run("new", "first") == 3
+    assert "No space left" in capsys.readouterr().err
+    assert not Path("first.yaml").exists()
+
+
+def _environment() -> dict[str, str]:
     return {**os.environ, "PYTHONPATH": str(Path(contents.__file__).parents[1])}

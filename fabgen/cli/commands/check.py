@@ -8,7 +8,8 @@ from fabgen.cli import report
 from fabgen.errors import FabgenError, InputError
 from fabgen.pipeline import check as judge_file
 
-DESIGNS = click.argument("designs", nargs=-1, required=True, type=click.Path(path_type=Path))
+DESIGNS = click.argument("designs", nargs=-1, required=True, type=click.Path(path_type=Path, readable=False))
+"""Whether a file can be read is found when it is read, one design at a time."""
 
 
 @click.command()

@@ -14,14 +14,21 @@ def new(name: str) -> None:
     from fabgen.read.starter import starter
 
     path = Path(name if name.endswith((".yaml", ".yml")) else f"{name}.yaml")
-    if path.parent != Path():
-        raise InputError(f"{name} is not a plain file name", "change to the folder first, then `fabgen new NAME`")
+    if path.parent != Path() or not path.name[0].isalnum() or not path.name.isprintable():
+        raise InputError(
+            f"{name!r} is not a plain file name",
+            "begin with a letter or digit; to write it elsewhere, change to that folder first",
+        )
     text = starter(path.stem)
+    made = False
     try:
         with path.open("x", encoding="utf-8", newline="\n") as out:
+            made = True
             out.write(text)
     except FileExistsError:
         raise InputError(f"{path} is there already", "choose another name") from None
     except OSError as error:
-        raise MachineError(f"cannot write {path}: {error.strerror}") from error
+        if made:
+            path.unlink(missing_ok=True)
+        raise MachineError(f"cannot write {path}: {error.strerror}", "change to a folder with room for it") from error
     click.echo(str(path))
