@@ -3,6 +3,11 @@
 Parts take `cq` from here, so that a missing system library becomes a message with the package's name and no traceback.
 """
 
+import contextlib
+import signal
+import threading
+from collections.abc import Iterator
+
 from fabgen.errors import MachineError, ProgramError
 
 
@@ -16,10 +21,27 @@ def cannot_load(error: ImportError) -> MachineError:
     return MachineError(f"the CAD kernel does not load: {error}", "install fabgen again in a fresh virtual environment")
 
 
+@contextlib.contextmanager
+def _uninterrupted() -> Iterator[None]:
+    """Put Ctrl-C off until the end: it crashes the kernel's libraries while they load, or looks like their fault."""
+    if threading.current_thread() is not threading.main_thread():
+        yield
+        return
+    pressed: list[int] = []
+    before = signal.signal(signal.SIGINT, lambda number, _: pressed.append(number))
+    try:
+        yield
+    finally:
+        signal.signal(signal.SIGINT, before)
+    if pressed:
+        signal.raise_signal(signal.SIGINT)
+
+
 try:
-    import cadquery as cq
-    from OCP.Bnd import Bnd_Box
-    from OCP.BRepBndLib import BRepBndLib
+    with _uninterrupted():
+        import cadquery as cq
+        from OCP.Bnd import Bnd_Box
+        from OCP.BRepBndLib import BRepBndLib
 except ImportError as error:
     raise cannot_load(error) from error
 

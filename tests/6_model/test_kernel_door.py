@@ -42,6 +42,24 @@ def test_any_other_failure_to_load_is_a_machine_error_too(tmp_path, root):
     assert "libgl1" not in said
 
 
+def test_ctrl_c_while_the_kernel_loads_waits_until_it_has_loaded(tmp_path, root):
+    press = "import os, signal\nos.kill(os.getpid(), signal.SIGINT)\n"
+    (tmp_path / "cadquery.py").write_text(press + "loaded = True\n", encoding="utf-8")
+    script = (
+        "import sys\n"
+        "try:\n    import fabgen.model.kernel\n"
+        "except KeyboardInterrupt:\n    print('stopped', sys.modules['cadquery'].loaded)\n"
+    )
+    done = subprocess.run(
+        [sys.executable, "-c", script],
+        env=os.environ | {"PYTHONPATH": os.pathsep.join([str(tmp_path), str(root)])},
+        capture_output=True,
+        text=True,
+        check=True,
+    )
+    assert done.stdout == "stopped True\n"
+
+
 def test_a_machine_error_exits_with_three():
     assert MachineError("x").exit_code == 3
 
