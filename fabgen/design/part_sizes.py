@@ -5,6 +5,7 @@ the part's local frame and the volume of its solid; the solids take their number
 """
 
 from fabgen.design.bush_sizes import BushSize, bush_size, sleeve_size
+from fabgen.design.coupon_holder_sizes import CouponHolderSize, coupon_holder_size
 from fabgen.design.feed_lid_sizes import FeedLidSize, feed_lid_size
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
 from fabgen.design.folded_rod_sizes import FoldedRodSize, folded_rod_size
@@ -30,6 +31,7 @@ from fabgen.design.saddle_sizes import SaddleSize, saddle_size
 __all__ = [
     "BushSize",
     "ClampPlateSize",
+    "CouponHolderSize",
     "FeedBlockSize",
     "FeedLidSize",
     "FoldedRodSize",
@@ -44,6 +46,7 @@ __all__ = [
     "UBoltSize",
     "bush_size",
     "clamp_plate_size",
+    "coupon_holder_size",
     "crush_sleeve_size",
     "feed_block_size",
     "feed_lid_size",
