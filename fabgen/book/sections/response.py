@@ -27,7 +27,7 @@ class Panel:
         y: the quantity.
         fan: outline of 95 % of builds.
         nominal: the modelled array.
-        limit: height of the stated limit; None without one.
+        limit_mm: height of the stated limit on paper; None without one.
     """
 
     name: str
@@ -35,7 +35,7 @@ class Panel:
     y: Axis
     fan: tuple[Point, ...]
     nominal: tuple[Point, ...]
-    limit: float | None
+    limit_mm: float | None
 
 
 @frozen
@@ -122,7 +122,7 @@ def _panel(
         fan=tuple(on_paper(frequency, ends[1]) for frequency, ends in fan)
         + tuple(on_paper(frequency, ends[0]) for frequency, ends in reversed(fan)),
         nominal=tuple(on_paper(frequency, value) for frequency, value in nominal),
-        limit=None if limit is None else y.at(limit),
+        limit_mm=None if limit is None else y.at(limit),
     )
 
 
