@@ -105,14 +105,31 @@ def near_pairs(arranged: Arranged) -> Iterator[NearPair]:
     Raises:
         ProgramError: a pair that nobody declared.
     """
-    declared = {frozenset({i.first, i.second}): i for i in arranged.interfaces}
-    for first, second in _sweep(arranged):
+    for first, second, interface in _classed(arranged):
         distance_mm = parts_distance_mm(first.shapes, second.shapes)
-        if distance_mm > REACH_MM:
-            continue
-        interface = declared.get(frozenset({first.name, second.name}))
-        limit_mm = 0.0 if interface else _limit_mm(first, second)
-        yield NearPair(first, second, interface, limit_mm, distance_mm)
+        if distance_mm <= REACH_MM:
+            yield NearPair(first, second, interface, 0.0 if interface else _limit_mm(first, second), distance_mm)
+
+
+def too_near(arranged: Arranged) -> Iterator[NearPair]:
+    """The pairs meant to stay apart that do not, worked out without measuring the others.
+
+    Raises:
+        ProgramError: a pair that nobody declared.
+    """
+    for first, second, interface in _classed(arranged):
+        if interface is None:
+            limit_mm = _limit_mm(first, second)
+            distance_mm = parts_distance_mm(first.shapes, second.shapes) if limit_mm > 0 else 0.0
+            if distance_mm < limit_mm - 1e-9:
+                yield NearPair(first, second, None, limit_mm, distance_mm)
+
+
+def _classed(arranged: Arranged) -> Iterator[tuple[Placed, Placed, Interface | None]]:
+    """Pairs whose boxes are near, each with the interface that was declared for it."""
+    declared = {(i.first, i.second): i for i in arranged.interfaces}
+    for first, second in _sweep(arranged):
+        yield first, second, declared.get((first.name, second.name)) or declared.get((second.name, first.name))
 
 
 def _limit_mm(first: Placed, second: Placed) -> float:

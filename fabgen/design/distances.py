@@ -51,6 +51,8 @@ def box_of(shape: Shape) -> Box:
 def bounding_box(shapes: Sequence[Shape]) -> Box:
     """The smallest box round some shapes."""
     boxes = [box_of(shape) for shape in shapes]
+    if len(boxes) == 1:
+        return boxes[0]
     low = [min(box.low[i] for box in boxes) for i in range(3)]
     high = [max(box.high[i] for box in boxes) for i in range(3)]
     return Box((low[0], low[1], low[2]), (high[0], high[1], high[2]))

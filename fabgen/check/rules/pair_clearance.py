@@ -3,9 +3,9 @@
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding
-from fabgen.check.pairs import near_pairs
+from fabgen.check.pairs import too_near
 from fabgen.design.arranged import Arranged, Box, Placed, Vector
-from fabgen.design.distances import bounding_box, box_of, parts_distance_mm, point_distance_mm
+from fabgen.design.distances import bounding_box, parts_distance_mm, point_distance_mm
 from fabgen.design.findings import Finding
 
 _MAST_MM = 5.0
@@ -14,10 +14,9 @@ _ADVICE = "move one of them along the boom, or choose a smaller part"
 
 def findings(arranged: Arranged) -> Iterator[Finding]:
     """C10 too near, C11 mast too near, C12 metal near a rod's tip."""
-    for pair in near_pairs(arranged):
-        if pair.interface is None and pair.distance_mm < pair.limit_mm - 1e-9:
-            where = f"{pair.first.name} / {pair.second.name}"
-            yield finding("C10", "fail", where, _ADVICE, measured=pair.distance_mm, required=pair.limit_mm, unit="mm")
+    for pair in too_near(arranged):
+        where = f"{pair.first.name} / {pair.second.name}"
+        yield finding("C10", "fail", where, _ADVICE, measured=pair.distance_mm, required=pair.limit_mm, unit="mm")
     yield from _mast(arranged)
     yield from _tips(arranged)
 
@@ -43,10 +42,12 @@ def _tips(arranged: Arranged) -> Iterator[Finding]:
         metals.append(("mast", "clamp", (arranged.mast,)))
     bodies = [(name, owner, shapes, bounding_box(shapes)) for name, owner, shapes in metals]
     for rod in arranged.placed:
-        if rod.part != "rod":
+        if rod.part not in ("rod", "folded_rod"):
             continue
-        for tip in _outer_tips(rod):
-            for name, owner, shapes, box in bodies:
+        x_mm = rod.frame.origin[0]
+        beside = [body for body in bodies if body[3].low[0] - limit_mm < x_mm < body[3].high[0] + limit_mm]
+        for tip in _outer_tips(rod) if beside else ():
+            for name, owner, shapes, box in beside:
                 if owner == rod.owner or not _near(tip, box, limit_mm):
                     continue
                 distance_mm = min(point_distance_mm(tip, shape) for shape in shapes)
@@ -64,7 +65,7 @@ def _near(point: Vector, box: Box, reach_mm: float) -> bool:
 
 def _outer_tips(rod: Placed) -> list[tuple[float, float, float]]:
     """Both ends of a whole rod, the outer end of a half rod."""
-    box = box_of(rod.shapes[0])
+    box = bounding_box(rod.shapes)
     x, z = (box.low[0] + box.high[0]) / 2, (box.low[2] + box.high[2]) / 2
     ends = [box.low[1], box.high[1]]
     if box.low[1] * box.high[1] > 0:

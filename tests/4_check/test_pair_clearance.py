@@ -1,0 +1,123 @@
+"""Near pairs: declared, apart, too near, or an error of the program."""
+
+import dataclasses
+import math
+from collections.abc import Callable
+
+import pytest
+from hypothesis import given
+from hypothesis import strategies as st
+
+from fabgen.arrange.arrange import arrange
+from fabgen.check.pairs import near_pairs, too_near
+from fabgen.check.rules.pair_clearance import findings
+from fabgen.correct.ledger import correct
+from fabgen.design.arranged import Arranged, Box, Cylinder, Shape
+from fabgen.design.design import Design
+from fabgen.design.distances import distance_mm
+from fabgen.errors import ProgramError
+
+Variant = Callable[..., Design]
+
+
+def arranged(design: Design) -> Arranged:
+    return arrange(design, correct(design))
+
+
+def test_a_clear_design_has_only_interfaces_and_distances_over_their_limits(variant: Variant) -> None:
+    found = arranged(variant())
+    pairs = list(near_pairs(found))
+    assert len(pairs) > 100
+    assert all(pair.interface or pair.distance_mm >= pair.limit_mm for pair in pairs)
+    assert list(findings(found)) == []
+
+
+def test_flanges_of_neighbours_need_room_for_a_tool(variant: Variant) -> None:
+    """Flanges of 12 mm on rods 13 mm apart leave 1 mm, the limit; on rods 12.5 mm apart half of it."""
+    assert not [f for f in findings(arranged(variant(("at: 307,", "at: 203,")))) if f.code == "C10"]
+    seen = [f for f in findings(arranged(variant(("at: 307,", "at: 202.5,")))) if f.code == "C10"]
+    assert {(f.measured, f.required) for f in seen} == {(0.5, 1.0)}
+    assert "D1 bush left / D2 bush left" in {f.where for f in seen}
+
+
+def test_a_rod_above_the_boom_hits_the_feed_block(variant: Variant) -> None:
+    found = arranged(variant(("at: 560,", "at: 350,"), base="meter-reading-169.yaml"))
+    codes = {(f.code, f.severity) for f in findings(found)}
+    assert ("C10", "fail") in codes
+
+
+def test_the_mast_among_the_rods_is_too_near(variant: Variant) -> None:
+    found = arranged(variant(("clamp: {at: balance", "clamp: {at: 803 mm")))
+    seen = {f.code: f for f in findings(found)}
+    assert seen["C11"].measured == 0.0
+    assert seen["C11"].required == 5.0
+    assert "C10" in seen
+
+
+def test_metal_near_a_tip_is_named_with_its_distance(variant: Variant) -> None:
+    """With a tip clearance of 200 mm the clamp, 143 mm across the boom from D5's tip and 50 mm along, is too near."""
+    found = arranged(variant(("clamp: {at: balance", "clearance: {tip: 200 mm}\nclamp: {at: balance")))
+    seen = [f for f in findings(found) if f.code == "C12"]
+    assert seen
+    assert all(f.measured is not None and f.measured < 200.0 for f in seen)
+
+
+def test_a_pair_that_nobody_declared_is_an_error_of_the_program(variant: Variant) -> None:
+    found = arranged(variant())
+    plate = found.part("clamp plate")
+    intruder = dataclasses.replace(found.part("D5"), name="D5 copy", owner="clamp", shapes=plate.shapes)
+    with pytest.raises(ProgramError, match="nobody declared"):
+        list(too_near(dataclasses.replace(found, placed=(*found.placed, intruder))))
+    stranger = dataclasses.replace(intruder, part="turnbuckle")
+    with pytest.raises(ProgramError, match="turnbuckle"):
+        list(too_near(dataclasses.replace(found, placed=(*found.placed, stranger))))
+
+
+def test_distances_by_hand() -> None:
+    unit = Box((0.0, 0.0, 0.0), (1.0, 1.0, 1.0))
+    assert distance_mm(unit, Box((4.0, 5.0, 0.5), (6.0, 6.0, 0.6))) == 5.0
+    along_x = Cylinder("x", (10.0, 0.0, 0.0), 4.0, 10.0)
+    assert distance_mm(along_x, Cylinder("x", (10.0, 6.0, 8.0), 2.0, 4.0)) == 10.0 - 3.0
+    assert distance_mm(along_x, Cylinder("x", (22.0, 0.0, 0.0), 4.0, 6.0)) == 4.0
+    assert distance_mm(along_x, Box((10.0, 5.0, 6.0), (11.0, 7.0, 7.0))) == pytest.approx(math.hypot(5, 6) - 2)
+    ring = Cylinder("x", (10.0, 0.0, 0.0), 10.0, 2.0, bore_mm=6.0)
+    assert distance_mm(ring, along_x) == 1.0
+    assert distance_mm(along_x, Cylinder("y", (10.0, 0.0, 9.0), 2.0, 50.0)) == 9.0 - 2.0 - 1.0
+
+
+PLACES = st.floats(-20.0, 20.0).map(lambda x: round(x, 3))
+SIZES = st.floats(0.5, 10.0).map(lambda x: round(x, 3))
+
+
+@st.composite
+def shapes(draw: st.DrawFn) -> Shape:
+    x, y, z = draw(PLACES), draw(PLACES), draw(PLACES)
+    if draw(st.booleans()):
+        return Box((x, y, z), (x + draw(SIZES), y + draw(SIZES), z + draw(SIZES)))
+    return Cylinder(draw(st.sampled_from(["x", "y", "z"])), (x, y, z), draw(SIZES), draw(SIZES))
+
+
+def points(shape: Shape) -> list[tuple[float, float, float]]:
+    """Points of a shape, its surface among them."""
+    if isinstance(shape, Box):
+        steps = (0.0, 0.25, 0.5, 0.75, 1.0)
+        sides = [[a + (b - a) * s for s in steps] for a, b in zip(shape.low, shape.high, strict=True)]
+        return [(x, y, z) for x in sides[0] for y in sides[1] for z in sides[2]]
+    found = []
+    order = {"x": (0, 1, 2), "y": (1, 2, 0), "z": (2, 0, 1)}[shape.axis]
+    for turn in range(16):
+        for reach in (0.0, shape.diameter_mm / 2):
+            for along in (-0.5, -0.25, 0.0, 0.25, 0.5):
+                point = list(shape.centre)
+                point[order[0]] += along * shape.length_mm
+                point[order[1]] += reach * math.cos(math.tau * turn / 16)
+                point[order[2]] += reach * math.sin(math.tau * turn / 16)
+                found.append((point[0], point[1], point[2]))
+    return found
+
+
+@given(shapes(), shapes())
+def test_a_distance_is_symmetric_and_never_more_than_between_two_points(first: Shape, second: Shape) -> None:
+    apart = distance_mm(first, second)
+    assert apart == distance_mm(second, first)
+    assert apart <= min(math.dist(p, q) for p in points(first)[::3] for q in points(second)[::3]) + 1e-9
