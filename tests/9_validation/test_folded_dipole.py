@@ -4,24 +4,27 @@ import itertools
 import math
 
 import pytest
-from hypothesis import given
+from hypothesis import assume, given
 from hypothesis import strategies as st
 
-from fabgen.physics.folded_dipole import bend_radius_mm, developed_length_mm, step_up_ratio
+from fabgen.design.folded_rod_sizes import folded_rod_size
+from fabgen.physics.folded_dipole import step_up_ratio
 
 
 def test_developed_length_of_a_worked_rod():
     """Geometry by hand: L 340, s 30, d 6, gap 12: straights 304 each, half circles of radius 15."""
     expected = 304 + 15 * math.pi + 304 + 15 * math.pi - 12
-    assert bend_radius_mm(30) == 15
-    found = developed_length_mm(length_mm=340, spacing_mm=30, diameter_mm=6, gap_mm=12)
-    assert found == pytest.approx(expected, rel=1e-12)
+    found = folded_rod_size(length_mm=340, spacing_mm=30, diameter_mm=6, gap_mm=12)
+    assert found.bend_radius_mm == 15
+    assert found.developed_mm == pytest.approx(expected, rel=1e-12)
 
 
 @given(st.floats(100, 2000), st.floats(10, 60), st.floats(2, 8), st.floats(0, 20))
 def test_the_bent_rod_has_the_asked_length_over_its_bends(length_mm, spacing_mm, diameter_mm, gap_mm):
     """Walk the centre line in small steps from one fed end to the other and measure its extent and its way."""
-    total = developed_length_mm(length_mm=length_mm, spacing_mm=spacing_mm, diameter_mm=diameter_mm, gap_mm=gap_mm)
+    assume(spacing_mm > diameter_mm)
+    rod = folded_rod_size(length_mm=length_mm, spacing_mm=spacing_mm, diameter_mm=diameter_mm, gap_mm=gap_mm)
+    total = rod.developed_mm
     radius = spacing_mm / 2
     end = length_mm / 2 - diameter_mm / 2 - radius
     arc = [
@@ -34,12 +37,10 @@ def test_the_bent_rod_has_the_asked_length_over_its_bends(length_mm, spacing_mm,
     assert max(z for _, z in path) == pytest.approx(spacing_mm)
 
 
-@pytest.mark.parametrize(
-    "change", [{"spacing_mm": 6}, {"gap_mm": 304}, {"gap_mm": -1}, {"length_mm": 36}, {"length_mm": 10}]
-)
+@pytest.mark.parametrize("change", [{"spacing_mm": 6}, {"gap_mm": 304}, {"length_mm": 36}, {"length_mm": 10}])
 def test_rods_that_cannot_be_bent_are_refused(change):
-    with pytest.raises(ValueError, match=r"limbs|gap"):
-        developed_length_mm(**{"length_mm": 340, "spacing_mm": 30, "diameter_mm": 6, "gap_mm": 12} | change)
+    with pytest.raises(ValueError, match="no room for limbs"):
+        folded_rod_size(**{"length_mm": 340, "spacing_mm": 30, "diameter_mm": 6, "gap_mm": 12} | change)
 
 
 @pytest.mark.parametrize(
