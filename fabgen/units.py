@@ -166,25 +166,6 @@ def format_mm(length_mm: float, decimals: int = 3) -> str:
     return printed.removeprefix("-") if float(printed) == 0 else printed
 
 
-def nearest_inch_fraction(length_mm: float, denominator: int = 64) -> tuple[str, float]:
-    """The nearest inch fraction, as a ruler shows it.
-
-    Args:
-        length_mm: length in mm.
-        denominator: finest graduation, a power of two.
-
-    Returns:
-        The text, for example `1-1/2 in`, and its difference from the length in mm (fraction minus length).
-    """
-    steps = round(Fraction(length_mm) / MM_PER_IN * denominator)
-    value = Fraction(steps, denominator)
-    whole, rest = divmod(abs(value), 1)
-    parts = [str(whole)] if whole or not rest else []
-    parts += [f"{rest.numerator}/{rest.denominator}"] if rest else []
-    sign = "-" if value < 0 else ""
-    return f"{sign}{'-'.join(parts)} in", float(value * MM_PER_IN - Fraction(length_mm))
-
-
 def _prepare(text: str, example: str) -> tuple[str, str]:
     """The text as messages show it, and the text with one spelling for signs, quotes, spaces and fractions.
 

@@ -94,11 +94,6 @@ class Boom:
         return self.width_mm - 2 * self.wall_mm if self.hollow else 0.0
 
     @property
-    def inside_height_mm(self) -> float:
-        """Bore along z; 0 for a solid bar."""
-        return self.height_mm - 2 * self.wall_mm if self.hollow else 0.0
-
-    @property
     def top_mm(self) -> float:
         """Height of the top face over the axis, of the crown when round."""
         return self.height_mm / 2

@@ -37,8 +37,6 @@ RELATIVE_ONLY_WL = 0.015
 ABSOLUTE_FREQUENCY_UNCERTAINTY = 0.003
 """Fraction: no absolute centre frequency from this model is better than that."""
 
-FREE_SPACE_STATEMENT = "Modelled: thin straight rods in free space, without boom, mounts, mast, ground and feed line."
-
 
 class ThinRodRange(Enum):
     """How far the thin-rod model carries for the fattest rod of an array."""

@@ -12,7 +12,6 @@ from fabgen.units import (
     format_mm,
     in_to_mm,
     mm_to_in,
-    nearest_inch_fraction,
     parse_frequency_mhz,
     parse_length_mm,
     wavelength_mm,
@@ -198,11 +197,9 @@ def test_any_text_is_a_finite_length_or_a_unit_error(text):
 
 
 @given(st.integers(0, 200), st.integers(0, 63))
-def test_a_printed_inch_fraction_is_read_back_exactly(whole, sixty_fourths):
+def test_an_inch_fraction_is_read_exactly(whole, sixty_fourths):
     length_mm = float((whole + Fraction(sixty_fourths, 64)) * Fraction("25.4"))
-    text, difference_mm = nearest_inch_fraction(length_mm)
-    assert parse_length_mm(text, None) == length_mm
-    assert difference_mm == pytest.approx(0, abs=1e-12)
+    assert parse_length_mm(f"{whole}-{sixty_fourths}/64 in", None) == length_mm
 
 
 @given(st.decimals(-9999, 9999, places=3))
@@ -210,16 +207,6 @@ def test_a_printed_length_is_read_back_exactly(value):
     printed = format_mm(float(value))
     assert parse_length_mm(printed, "mm") == float(value)
     assert len(printed.partition(".")[2]) == 3
-
-
-def test_nearest_inch_fraction_names_what_it_leaves():
-    text, difference_mm = nearest_inch_fraction(10.0)
-    assert text == "25/64 in"
-    assert difference_mm == pytest.approx(25 / 64 * 25.4 - 10)
-    assert nearest_inch_fraction(38.1)[0] == "1-1/2 in"
-    assert nearest_inch_fraction(-12.7)[0] == "-1/2 in"
-    assert nearest_inch_fraction(0.0)[0] == "0 in"
-    assert nearest_inch_fraction(10.0, denominator=8)[0] == "3/8 in"
 
 
 def test_printed_lengths_have_no_negative_zero_and_no_nan():
