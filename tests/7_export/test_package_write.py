@@ -3,7 +3,6 @@
 import errno
 import json
 import os
-import stat
 import subprocess
 import sys
 import textwrap
@@ -83,7 +82,9 @@ def test_a_kill_at_any_step_leaves_the_old_package_or_the_new_one(tmp_path: Path
         output = tmp_path / str(deadly)
         package.write(OLD, output=output, name="X-1_A")
         environment = os.environ | {"PYTHONPATH": str(Path(package.__file__).parents[2])}
-        run = subprocess.run([sys.executable, "-c", KILLER, str(output), str(deadly), way], env=environment, check=False)
+        run = subprocess.run(
+            [sys.executable, "-c", KILLER, str(output), str(deadly), way], env=environment, check=False
+        )
         target = output / "X-1_A"
         if not target.exists():
             assert way == "renames"
@@ -143,13 +144,15 @@ def test_a_link_where_the_package_should_be_is_not_followed(tmp_path: Path) -> N
     assert list((tmp_path / "elsewhere").iterdir()) == []
 
 
-@pytest.mark.skipif(os.geteuid() == 0, reason="root may write everywhere")
-def test_a_folder_without_permission(tmp_path: Path) -> None:
-    locked = tmp_path / "locked"
-    locked.mkdir()
-    locked.chmod(stat.S_IRUSR | stat.S_IXUSR)
-    with pytest.raises(MachineError, match="no permission"):
-        package.write(NEW, output=locked / "output", name="X-1_A")
+def test_a_folder_without_permission(tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    def refused(path: Path, *args: object, **keywords: object) -> None:
+        raise PermissionError(errno.EACCES, os.strerror(errno.EACCES), str(path))
+
+    monkeypatch.setattr(Path, "mkdir", refused)
+    with pytest.raises(MachineError, match="output: no permission to write there") as raised:
+        package.write(NEW, output=tmp_path / "output", name="X-1_A")
+    assert "--output" in raised.value.fix
+    assert list(tmp_path.iterdir()) == []
 
 
 @pytest.mark.parametrize("name", ["../X", "a/b", "", ".", "..", "/X"])
