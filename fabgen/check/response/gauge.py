@@ -13,7 +13,7 @@ from fabgen.physics.array_sampling import BuildChanges, sample_band
 from fabgen.physics.array_shift import ShiftGauge, shift_gauge
 from fabgen.physics.thin_rod_kernel import ComplexArray, FloatArray
 
-POINTS = 9
+POINTS = 13
 """Frequencies of the shift measure; its sums over a smooth response need no more."""
 
 
