@@ -35,7 +35,7 @@ class Finding:
     def __str__(self) -> str:
         numbers = ""
         if self.measured is not None:
-            numbers = f" {self.measured:.3f}"
+            numbers = f": {self.measured:.3f}"
             if self.required is not None:
                 numbers += f" against {self.required:.3f}"
             numbers += f" {self.unit}" if self.unit else ""
