@@ -40,8 +40,8 @@ class SheetKeys(Keys):
     """Title block."""
 
     owner: Annotated[str, Text(80, "River Board workshop", blank=True)] = ""
-    creator: Annotated[str, Text(80, "K. Lund", blank=True)] = ""
-    approved: Annotated[str, Text(80, "M. Roth", blank=True)] = ""
+    creator: Annotated[str, Text(80, "drawing office", blank=True)] = ""
+    approved: Annotated[str, Text(80, "workshop lead", blank=True)] = ""
     date: Annotated[str, Date()] = ""
 
 
