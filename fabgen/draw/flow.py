@@ -93,10 +93,6 @@ class Flow:
             self._row(columns, row[: len(columns)], notes)
         self.y_mm -= 1.0
 
-    def space(self, height_mm: float) -> None:
-        """Leave some height free."""
-        self.y_mm -= height_mm
-
     def sheets(self, name: str, title: str, foot: Callable[[Pen, int, int], None]) -> list[Sheet]:
         """Freeze the pages; the foot is drawn by a function of pen, page number and number of pages."""
         for number, pen in enumerate(self._pens, start=1):
