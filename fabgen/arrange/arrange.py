@@ -150,7 +150,11 @@ def _clamp(layout: Layout, design: Design, balance_mm: float) -> tuple[float | N
         )
         layout.remarks.append(("clamp", Remark("C01", why)))
         return None, None
-    part, mast = clamp.lay_out(design, design.clamp, station_mm)
+    try:
+        part, mast = clamp.lay_out(design, design.clamp, station_mm)
+    except ValueError as error:
+        layout.remarks.append(("clamp", Remark("F01", str(error))))
+        return None, None
     layout.add(part)
     return station_mm, mast
 

@@ -1,12 +1,12 @@
 """A rod in metal contact with both boom walls: welded, pressed, or held by a screw at each wall."""
 
 from fabgen.arrange.drilling import Opening
-from fabgen.arrange.fasteners import screw, screw_length_mm
+from fabgen.arrange.fasteners import screw
 from fabgen.arrange.layout import SIDES, Layout, side_name
 from fabgen.arrange.rods import straight_rod
 from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import LedgerLine
-from fabgen.design.part_fasteners import fastener
+from fabgen.design.part_fasteners import fastener, sold_length_mm
 from fabgen.stock import tables
 
 BOND_SCREW = "M3"
@@ -30,7 +30,7 @@ def _bond_screws(layout: Layout, design: Design, element: Element) -> None:
     boom = design.boom
     inside_mm = boom.width_mm / 2 - boom.wall_mm
     rod_top_mm = element.rod.diameter_mm / 2
-    length_mm = screw_length_mm(boom.top_mm - rod_top_mm)
+    length_mm = sold_length_mm(boom.top_mm - rod_top_mm)
     tap_mm = tables.tap_drill_mm(BOND_SCREW)
     for side in SIDES:
         y_mm, name = side * (inside_mm - BOND_SCREW_FROM_WALL_MM), f"{element.id} bond screw {side_name(side)}"

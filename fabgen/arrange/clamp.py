@@ -8,11 +8,11 @@ each bolt inside the tube; a round boom is held by U-bolts of its own, a sleeve 
 import math
 
 from fabgen.arrange.drilling import Opening
-from fabgen.arrange.fasteners import bought_material, nut, screw, screw_length_mm, washer
+from fabgen.arrange.fasteners import bought_material, nut, screw, washer
 from fabgen.arrange.layout import Layout
 from fabgen.design.arranged import Axis, Cylinder, Frame, Vector
 from fabgen.design.design import Clamp, Design
-from fabgen.design.part_fasteners import fastener
+from fabgen.design.part_fasteners import fastener, sold_length_mm
 from fabgen.frozen import frozen
 from fabgen.stock import tables
 
@@ -217,7 +217,7 @@ def _through_bolts(layout: Layout, design: Design, size: ClampSize, station_mm: 
     hole_mm = fastener(BOLT).clearance_mm
     horizontal = design.polarisation == "horizontal"
     thickness_mm, nut_mm = tables.washer(BOLT).thickness_mm, tables.nut(BOLT).height_mm
-    length_mm = screw_length_mm(depth_mm + size.plate_mm + 2 * thickness_mm + nut_mm + 2.0)
+    length_mm = sold_length_mm(depth_mm + size.plate_mm + 2 * thickness_mm + nut_mm + 2.0)
     for count, offset_mm in enumerate((-size.bolt_x_mm, size.bolt_x_mm), start=1):
         x_mm = station_mm + offset_mm
         layout.openings.append(

@@ -6,7 +6,7 @@ from fabgen.arrange.drilling import Opening
 from fabgen.arrange.layout import Layout
 from fabgen.design.arranged import Frame, Vector
 from fabgen.design.design import Design, Element, Material
-from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, fastener
+from fabgen.design.part_fasteners import fastener, sold_length_mm
 from fabgen.stock import tables
 
 UP: Vector = (0.0, 0.0, 1.0)
@@ -100,11 +100,6 @@ def _frame(seat: Vector, up: Vector) -> Frame:
     return Frame(seat, z=up, x=(0.0, 0.0, 1.0) if up[0] else (1.0, 0.0, 0.0))
 
 
-def screw_length_mm(at_least_mm: float) -> float:
-    """The shortest screw sold that is not shorter; the longest sold when none is."""
-    return next((length for length in SCREW_LENGTHS_MM if length >= at_least_mm - 1e-9), SCREW_LENGTHS_MM[-1])
-
-
 def middle_screw_thread(rod_diameter_mm: float) -> str:
     """Thread of the one screw through a rod's middle: at most half the rod. Source: common practice."""
     return "M3" if rod_diameter_mm >= 6 else "M2.5" if rod_diameter_mm >= 5 else "M2"
@@ -117,7 +112,7 @@ def middle_screw(layout: Layout, design: Design, element: Element) -> None:
     layout.openings.append(Opening(element.id, element.station_mm, ("+z",), 0.0, sizes.clearance_mm, "middle screw"))
     top_mm = design.boom.top_mm
     name = f"{element.id} middle screw"
-    length_mm = screw_length_mm(top_mm + 0.3 * element.rod.diameter_mm)
+    length_mm = sold_length_mm(top_mm + 0.3 * element.rod.diameter_mm)
     screw(layout, name, thread, length_mm, owner=element.id, seat=(element.station_mm, 0.0, top_mm))
     layout.meet(name, "boom", "screw head on wall", 0.0, sizes.clearance_mm - sizes.diameter_mm)
     layout.meet(name, element.id, "thread in rod", 0.0, tables.tap_drill_mm(thread) - sizes.diameter_mm)

@@ -1,6 +1,6 @@
 """A folded dipole: one rod bent to a flat loop, pushed into a saddle on the boom's top and screwed to it."""
 
-from fabgen.arrange.fasteners import hold_down, nut, screw, screw_length_mm, washer
+from fabgen.arrange.fasteners import hold_down, nut, screw, washer
 from fabgen.arrange.layout import SIDES, Layout, side_name
 from fabgen.design.arranged import Cut, Frame, Vector
 from fabgen.design.design import Design, Feed
@@ -125,7 +125,7 @@ def _retainer(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSize
         layout,
         bolt,
         thread,
-        screw_length_mm(length_mm),
+        length_mm,
         owner=element.id,
         seat=(x_mm + thickness_mm, 0.0, z_mm),
         up=_FRONT,

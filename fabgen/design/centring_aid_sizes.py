@@ -8,7 +8,7 @@ import math
 
 from fabgen.design.arranged import Box
 from fabgen.design.bush_sizes import EDGE_MM
-from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
+from fabgen.design.part_fasteners import Fastener, fastener, sold_length_mm
 from fabgen.design.part_geometry import PI, bore_chamfer_mm3, disc_mm2, integral, teardrop_chord_mm
 from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
@@ -104,7 +104,7 @@ class CentringAidSize:
     def screw_length_mm(self) -> float:
         """Length to buy: the shortest that reaches the gauge rod with a turn to spare."""
         least = -self.body_x_mm[0] - self.rod_diameter_mm / 2 + 1.0
-        return next(length for length in SCREW_LENGTHS_MM if length >= least)
+        return sold_length_mm(least)
 
     @property
     def volume_mm3(self) -> float:

@@ -5,7 +5,7 @@ piece of boom; the rod lies in a slot in each, which fixes its station; the piec
 """
 
 from fabgen.design.arranged import Box
-from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
+from fabgen.design.part_fasteners import Fastener, fastener, sold_length_mm
 from fabgen.design.part_geometry import disc_mm2
 from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, EAR_WALL_MM, ENGAGEMENT_MM, saddle_size
 from fabgen.frozen import frozen
@@ -140,7 +140,7 @@ class CouponHolderSize:
 def shortest_screw_mm(thread: Fastener) -> float:
     """Length of a hold-down screw, the same as of a saddle."""
     least = max(4.0, 1.2 * thread.diameter_mm) + ENGAGEMENT_MM
-    return next(length for length in SCREW_LENGTHS_MM if length >= least)
+    return sold_length_mm(least)
 
 
 def least_height_mm(*, rest_mm: float, screw: str = "M3") -> float:

@@ -9,7 +9,7 @@ top.
 
 import math
 
-from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
+from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener, sold_length_mm
 from fabgen.design.part_geometry import hexagon_corners_mm
 from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, ENGAGEMENT_MM
 from fabgen.frozen import frozen
@@ -117,7 +117,7 @@ class FeedBlockLayout:
         """Screw length to buy: the shortest that leaves enough plastic between rod and nut."""
         bolt = self.terminal_fastener
         least = self.rod_diameter_mm + TAG_MM + LEAST_UNDER_ROD_MM + bolt.nut_height_mm + BEYOND_NUT_MM
-        return next(length for length in SCREW_LENGTHS_MM if length >= least)
+        return sold_length_mm(least)
 
     @property
     def trap_top_mm(self) -> float:

@@ -11,7 +11,7 @@ import math
 from fabgen.design import feed_layout as layout
 from fabgen.design.arranged import Box
 from fabgen.design.feed_sizes import terminal_for
-from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
+from fabgen.design.part_fasteners import Fastener, fastener, sold_length_mm
 from fabgen.design.part_geometry import (
     PI,
     disc_mm2,
@@ -105,7 +105,7 @@ class FoldedSaddleSize:
         bolt = self.terminal_fastener
         least = self.rod_diameter_mm + layout.TAG_MM + layout.LEAST_UNDER_ROD_MM
         least += bolt.nut_height_mm + layout.BEYOND_NUT_MM
-        return next(length for length in SCREW_LENGTHS_MM if length >= least)
+        return sold_length_mm(least)
 
     @property
     def tip_mm(self) -> float:
@@ -151,7 +151,7 @@ class FoldedSaddleSize:
     def screw_length_mm(self) -> float:
         """Hold-down length to buy: the shortest with enough plastic under its head."""
         least = max(4.0, 1.2 * self.fastener.diameter_mm) + ENGAGEMENT_MM
-        return next(length for length in SCREW_LENGTHS_MM if length >= least)
+        return sold_length_mm(least)
 
     @property
     def seat_mm(self) -> float:

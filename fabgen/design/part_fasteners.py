@@ -5,8 +5,23 @@ import functools
 from fabgen.frozen import frozen
 from fabgen.stock.fasteners import clearance_hole_mm, nut, screw_head, thread
 
-SCREW_LENGTHS_MM = (4.0, 5.0, 6.0, 8.0, 10.0, 12.0, 16.0, 20.0, 25.0, 30.0, 35.0, 40.0, 45.0, 50.0, 55.0, 60.0)
+SCREW_LENGTHS_MM = (
+    4.0, 5.0, 6.0, 8.0, 10.0, 12.0, 16.0, 20.0, 25.0, 30.0, 35.0, 40.0, 45.0, 50.0, 55.0, 60.0, 65.0, 70.0, 80.0, 90.0,
+    100.0, 110.0, 120.0, 130.0, 140.0, 150.0, 160.0, 180.0, 200.0,
+)  # fmt: skip
 """Source: ISO 888:2012, preferred nominal lengths, from memory."""
+
+
+def sold_length_mm(least_mm: float) -> float:
+    """The shortest screw sold that is not shorter than asked for.
+
+    Raises:
+        ValueError: none is that long.
+    """
+    for length_mm in SCREW_LENGTHS_MM:
+        if length_mm >= least_mm - 1e-9:
+            return length_mm
+    raise ValueError(f"no screw of {least_mm:g} mm is sold, the longest has {SCREW_LENGTHS_MM[-1]:g} mm")
 
 
 @frozen

@@ -8,7 +8,7 @@ prints lying on its −y side, the rod's bore upright.
 import math
 
 from fabgen.design.arranged import Box
-from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener
+from fabgen.design.part_fasteners import Fastener, fastener, sold_length_mm
 from fabgen.design.part_geometry import (
     PI,
     disc_mm2,
@@ -71,7 +71,7 @@ class SaddleSize:
     def screw_length_mm(self) -> float:
         """Length to buy: the shortest with enough plastic under its head."""
         least = max(4.0, 1.2 * self.fastener.diameter_mm) + ENGAGEMENT_MM
-        return next(length for length in SCREW_LENGTHS_MM if length >= least)
+        return sold_length_mm(least)
 
     @property
     def seat_mm(self) -> float:

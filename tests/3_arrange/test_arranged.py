@@ -83,6 +83,22 @@ def test_the_clamp_takes_the_free_place_nearest_to_the_balance_point(variant: Va
     assert abs(found.clamp_mm - found.balance_mm) <= 0.5
 
 
+@pytest.mark.parametrize("side_mm", [20, 46, 50, 80, 120])
+def test_the_clamps_bolts_reach_through_boom_plate_and_nut(variant: Variant, side_mm: int) -> None:
+    """M6: washers 1.6 mm (ISO 7089) under head and nut, nut 5.2 mm (ISO 4032), plate 5 mm."""
+    found = arranged(variant(("outside: 20 mm", f"outside: {side_mm} mm")))
+    bolts = [part for part in found.placed if part.name in ("clamp bolt 1", "clamp bolt 2")]
+    assert len(bolts) == 2
+    for bolt in bolts:
+        assert float(str(dict(bolt.parameters)["length_mm"])) >= side_mm + 5 + 2 * 1.6 + 5.2
+
+
+def test_a_boom_too_thick_for_any_bolt_is_remarked(variant: Variant) -> None:
+    found = arranged(variant(("outside: 20 mm", "outside: 200 mm")))
+    assert found.clamp_mm is None
+    assert ("clamp", "F01") in [(where, remark.code) for where, remark in found.remarks]
+
+
 def test_a_crowded_balance_point_moves_the_clamp(variant: Variant) -> None:
     found = arranged(variant(("at: 915,", "at: 795,")))
     assert found.clamp_mm is not None
