@@ -64,16 +64,18 @@ def coupon_array(
     spacing_mm: float,
     expected_allowance_mm: float,
     cut_step_mm: float,
+    driven_diameter_mm: float | None = None,
 ) -> CouponArray:
     """The test array for a mount.
 
     Args:
         rods_mm: modelled lengths of the rods that the mount carries; their mean decides the director, within limits.
-        rod_diameter_mm: of all three rods.
+        rod_diameter_mm: of reflector and director.
         frequency_mhz: design frequency.
         spacing_mm: driven rod to director.
         expected_allowance_mm: what theory expects of the mount.
         cut_step_mm: the shop's step.
+        driven_diameter_mm: left out: as the others.
 
     Returns:
         The array, with all lengths whole steps.
@@ -88,9 +90,11 @@ def coupon_array(
     behind_mm = REFLECTOR_BEHIND_WL * wl_mm
     stations = (0.0, round(behind_mm, 1), round(behind_mm + spacing_mm, 1))
 
+    fed_mm = rod_diameter_mm if driven_diameter_mm is None else driven_diameter_mm
+
     def rods(driven_mm: float) -> RodArray:
         lengths = (_whole(REFLECTOR_WL * wl_mm, cut_step_mm), driven_mm, sum(free_mm) / STEPS)
-        return RodArray(stations, lengths, (rod_diameter_mm,) * 3, 1)
+        return RodArray(stations, lengths, (rod_diameter_mm, fed_mm, rod_diameter_mm), 1)
 
     def reactance_ohm(driven_mm: float) -> float:
         return solve_array(rods(driven_mm), frequency_mhz).feed_impedance_ohm.imag

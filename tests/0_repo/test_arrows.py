@@ -7,11 +7,11 @@ import pytest
 
 pytestmark = pytest.mark.house
 
-FOUNDATION = {"errors", "units", "registry"}
+FOUNDATION = {"errors", "frozen", "units", "registry"}
 STAGES = {"read", "correct", "arrange", "check", "draw", "model", "export", "book"}
 RECORDS = {"design", "stock", "physics"}
-# The program on one screen, and the list of what a package holds.
-RUN = {"pipeline", "contents"}
+# The program on one screen, and the lists of what a package and a coupon package hold.
+RUN = {"pipeline", "contents", "coupon"}
 # What each part of the package may import besides itself.
 ALLOWED = {
     **dict.fromkeys(FOUNDATION, FOUNDATION),
