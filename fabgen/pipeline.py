@@ -7,6 +7,7 @@ from pathlib import Path
 from fabgen.arrange.arrange import arrange
 from fabgen.check.judge import judge
 from fabgen.check.limits import electrical
+from fabgen.check.mount_shift import mount_shift
 from fabgen.check.response_store import records_folder
 from fabgen.correct.ledger import correct
 from fabgen.design.allotted import with_tolerances
@@ -62,7 +63,8 @@ def check(path: Path, *, solve: bool = False, keep: bool = False) -> Judged:
     records = records_folder(path, reading.design.stem)
     response, electric = electrical(general, records, solve=solve, keep=keep)
     arranged = with_tolerances(general, response)
-    return Judged(reading, arranged, in_order([*reading.notes, *judge(arranged), *electric]), response)
+    judged = [*reading.notes, *judge(arranged), *electric, *mount_shift(arranged, response)]
+    return Judged(reading, arranged, in_order(judged), response)
 
 
 def drawn(judged: Judged) -> Judged:
