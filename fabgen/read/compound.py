@@ -1,43 +1,16 @@
-"""Values of a design file that are more than one scalar: sections, a material, sizes with two or three numbers."""
+"""Values of a design file that are more than one scalar: a material, sizes with two or three numbers."""
 
 import functools
 from typing import Annotated, Any, cast
 
-from pydantic import BaseModel, ConfigDict, Field, GetCoreSchemaHandler, ValidationError, ValidationInfo
-from pydantic_core import CoreSchema, core_schema
-
 from fabgen.design.design import Material
-from fabgen.read.kind import Broken, Context, Kind, refuse, scalar_of
+from fabgen.read.keys import Field, Keys, ValidationInfo
+from fabgen.read.kind import Context, Kind, refuse, scalar_of
 from fabgen.read.nearest import suggestion
 from fabgen.read.quantities import Length, Number
 from fabgen.read.words import Text, Word
 from fabgen.read.yaml_tree import Map, Scalar, Seq
 from fabgen.stock import tables
-
-
-class Keys(BaseModel):
-    """A mapping of the design file: a key is a field's alias, else its name; unknown keys are refused."""
-
-    model_config = ConfigDict(extra="forbid", frozen=True, defer_build=True)
-
-
-class Section:
-    """Wraps a section, a row or a value of the top level.
-
-    When it does not validate, its reasons are kept and the rest of the file goes on.
-    """
-
-    def read(self, value: Any, handler: Any, info: ValidationInfo) -> Any:
-        """The validated section, or None with the reasons left in the context."""
-        context = cast(Context, info.context)
-        try:
-            return handler(value)
-        except ValidationError as error:
-            context.broken.append(Broken(value, info.field_name or "", error))
-            return None
-
-    def __get_pydantic_core_schema__(self, source: Any, handler: GetCoreSchemaHandler) -> CoreSchema:
-        return core_schema.with_info_wrap_validator_function(self.read, handler(source))
 
 
 class Lengths(Kind):
@@ -105,7 +78,7 @@ class MaterialValue(Kind):
     def read(self, value: Any, info: ValidationInfo) -> Material:
         """The material in force."""
         if isinstance(value, Map):
-            return _stated(MaterialKeys.model_validate(value, context=info.context))
+            return _stated(MaterialKeys.validate(value, cast(Context, info.context)))
         name = scalar_of(value, self.example)
         try:
             return table_material(str(name))

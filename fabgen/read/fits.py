@@ -65,13 +65,13 @@ def mount_for_rod(
     )
     bush = None
     if keys.style == "insulated-through":
-        bush = _bush(f"{path}.bush", keys.bush or BushKeys.model_construct(), rod_mm, hole_mm, boom, reasons)
+        bush = _bush(f"{path}.bush", keys.bush or BushKeys(), rod_mm, hole_mm, boom, reasons)
     keeper = None
     if hold == "keepers":
-        keeper = _keeper(f"{path}.keeper", keys.keeper or KeeperKeys.model_construct(), rod_mm, bush, reasons)
+        keeper = _keeper(f"{path}.keeper", keys.keeper or KeeperKeys(), rod_mm, bush, reasons)
     saddle = None
     if keys.style == "on-top":
-        saddle = _saddle(f"{path}.saddle", keys.saddle or SaddleKeys.model_construct(), rod_mm, reasons)
+        saddle = _saddle(f"{path}.saddle", keys.saddle or SaddleKeys(), rod_mm, reasons)
     origin: Literal["auto", "none"] = "none" if keys.style == "through-nonmetal" else "auto"
     why = "no metal beside the rod" if origin == "none" else "measured, else solved, else closed form"
     return Mount(

@@ -1,13 +1,13 @@
-"""Pydantic's reasons become problems with a place, the nearest valid name and an example."""
+"""The validator's reasons become problems with a place, the nearest valid name and an example."""
 
-from typing import Annotated, Any, get_args, get_origin
+from typing import Any
 
-from pydantic import ValidationError
-from pydantic.fields import FieldInfo
+from pydantic_core import ValidationError
 
 from fabgen.errors import Place
-from fabgen.read.compound import Keys, MaterialKeys, MaterialValue
+from fabgen.read.compound import MaterialKeys, MaterialValue
 from fabgen.read.grammar import ElementKeys, FileKeys
+from fabgen.read.keys import FieldInfo, Keys, keys_in
 from fabgen.read.kind import Broken, Kind
 from fabgen.read.nearest import nearest, suggestion
 from fabgen.read.source import Problems
@@ -33,9 +33,9 @@ def gather(broken: Broken, root: Map, problems: Problems) -> None:
         problems: takes the reports.
     """
     info = FileKeys.model_fields[broken.field]
-    key = info.alias or broken.field
+    key = info.alias
     name = _called(broken.node, root) or key
-    model = _keys_in(info.annotation)
+    model = keys_in(info.annotation)
     for reason in _reasons(broken.error, model):
         _report(broken.node, root.key(key), name, model, reason, problems)
 
@@ -47,7 +47,7 @@ def gather_root(error: ValidationError, root: Map, problems: Problems) -> None:
 
 
 def _reasons(error: ValidationError, model: type[Keys] | None) -> list[Any]:
-    """Pydantic's reasons, without the missing keys that an unknown neighbour was meant to be."""
+    """The validator's reasons, without the missing keys that an unknown neighbour was meant to be."""
     reasons = error.errors(include_url=False, include_input=False)
     meant = set()
     for reason in reasons:
@@ -136,22 +136,22 @@ def _report_shape(
 
 def aliases(model: type[Keys]) -> list[str]:
     """The keys of a section, in the order of the grammar."""
-    return [info.alias or name for name, info in model.model_fields.items()]
+    return [info.alias for info in model.model_fields.values()]
 
 
 def _homes(alias: str) -> list[str]:
     """The sections of the file that have a key of that name."""
-    sections = {info.alias or name: _keys_in(info.annotation) for name, info in FileKeys.model_fields.items()}
+    sections = {info.alias: keys_in(info.annotation) for info in FileKeys.model_fields.values()}
     return [name for name, model in sections.items() if model is not None and _field(model, alias) is not None]
 
 
 def required(model: type[Keys]) -> list[str]:
     """The keys that a section must have."""
-    return [info.alias or name for name, info in model.model_fields.items() if info.is_required()]
+    return [info.alias for info in model.model_fields.values() if info.needed]
 
 
 def _field(model: type[Keys], alias: str) -> FieldInfo | None:
-    return next((info for name, info in model.model_fields.items() if (info.alias or name) == alias), None)
+    return next((info for info in model.model_fields.values() if info.alias == alias), None)
 
 
 def _model_at(model: type[Keys] | None, loc: Loc) -> type[Keys] | None:
@@ -162,16 +162,8 @@ def _model_at(model: type[Keys] | None, loc: Loc) -> type[Keys] | None:
         info = _field(model, str(part))
         if info is None:
             return None
-        model = MaterialKeys if any(isinstance(m, MaterialValue) for m in info.metadata) else _keys_in(info.annotation)
+        model = MaterialKeys if any(isinstance(m, MaterialValue) for m in info.metadata) else keys_in(info.annotation)
     return model
-
-
-def _keys_in(annotation: Any) -> type[Keys] | None:
-    """The model named in an annotation such as `BoomKeys | None`."""
-    if isinstance(annotation, type) and issubclass(annotation, Keys):
-        return annotation
-    parts = get_args(annotation)[:1] if get_origin(annotation) is Annotated else get_args(annotation)
-    return next((found for part in parts if (found := _keys_in(part)) is not None), None)
 
 
 def _example(model: type[Keys] | None, alias: str) -> str:

@@ -5,10 +5,9 @@ Everything optional is None here: defaults and fits are filled in by `resolve`, 
 
 from typing import Annotated, Any, Literal
 
-from pydantic import Field, model_validator
-
 from fabgen.design.design import Finish, Material, Polarisation, Role, Style
-from fabgen.read.compound import Keys, Lengths, MaterialValue, Section
+from fabgen.read.compound import Lengths, MaterialValue
+from fabgen.read.keys import Field, Keys, Section
 from fabgen.read.limits import LimitsKeys
 from fabgen.read.quantities import Frequency, Length, Number, WordOrLength
 from fabgen.read.words import Date, Name, Text, Word
@@ -83,10 +82,9 @@ class AllowanceKeys(Keys):
     uncertainty_mm: Annotated[float | None, Length(0, 50, "0.4 mm")] = Field(default=None, alias="uncertainty")
     source: Annotated[str | None, Text(200, "own readings 2026-03")] = None
 
-    @model_validator(mode="before")
     @classmethod
-    def _from_word(cls, value: Any) -> Any:
-        """Read a single word as the origin."""
+    def before(cls, value: Any) -> Any:
+        """A single word is the origin."""
         return {"origin": value} if isinstance(value, Scalar) and not value.empty else value
 
 

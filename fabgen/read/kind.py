@@ -3,8 +3,8 @@
 from abc import ABC, abstractmethod
 from typing import Any, NamedTuple, NoReturn
 
-from pydantic import GetCoreSchemaHandler, GetJsonSchemaHandler, ValidationError, ValidationInfo
-from pydantic_core import CoreSchema, PydanticCustomError, core_schema
+from pydantic_core import PydanticCustomError, ValidationError
+from pydantic_core.core_schema import ValidationInfo
 
 from fabgen.errors import Place
 from fabgen.read.yaml_tree import Node, Scalar, Seq
@@ -72,7 +72,7 @@ def scalar_of(value: Any, example: str) -> Scalar:
 
 
 class Kind(ABC):
-    """Base of the kinds: plugs `read` into pydantic and `schema` into its JSON Schema.
+    """Base of the kinds of value: how one is read, and what may be written for it.
 
     Plain classes, because these are made at every start of the program and a dataclass costs a millisecond each.
 
@@ -89,9 +89,3 @@ class Kind(ABC):
     @abstractmethod
     def schema(self) -> dict[str, Any]:
         """The JSON Schema of what may be written."""
-
-    def __get_pydantic_core_schema__(self, _source: Any, _handler: GetCoreSchemaHandler) -> CoreSchema:
-        return core_schema.with_info_plain_validator_function(self.read)
-
-    def __get_pydantic_json_schema__(self, _schema: CoreSchema, _handler: GetJsonSchemaHandler) -> dict[str, Any]:
-        return self.schema()

@@ -4,10 +4,8 @@ import re
 from collections.abc import Iterator
 from typing import Annotated, Any
 
-from pydantic import Field, ValidationInfo
-
 from fabgen.design.limits import Limits
-from fabgen.read.compound import Keys
+from fabgen.read.keys import Field, Keys, ValidationInfo
 from fabgen.read.kind import Kind, refuse, scalar_of
 from fabgen.read.places import value_place
 from fabgen.read.quantities import Frequency, Number

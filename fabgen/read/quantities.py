@@ -6,7 +6,7 @@ A length that is readable but only likely in the other unit leaves a warning in 
 import re
 from typing import Any, NoReturn, cast
 
-from pydantic import ValidationInfo
+from pydantic_core.core_schema import ValidationInfo
 
 from fabgen.read.kind import Context, Kind, OtherUnit, refuse, scalar_of
 from fabgen.read.nearest import suggestion

@@ -4,7 +4,7 @@ import hashlib
 from dataclasses import replace
 from pathlib import Path
 
-from pydantic import ValidationError
+from pydantic_core import ValidationError
 
 from fabgen.design.design import Design
 from fabgen.design.findings import Finding
@@ -82,7 +82,7 @@ def _unit(tree: Map) -> str | None:
 def _validate(tree: Map, context: Context, problems: Problems) -> FileKeys:
     """Validate the file; unknown and missing keys of the top level are reported and then left aside."""
     try:
-        return FileKeys.model_validate(tree, context=context)
+        return FileKeys.validate(tree, context)
     except ValidationError as error:
         gather_root(error, tree, problems)
         known = dict(tree)
@@ -94,4 +94,4 @@ def _validate(tree: Map, context: Context, problems: Problems) -> FileKeys:
                 known.pop(key, None)
         context.broken.clear()
         context.other_unit.clear()
-        return FileKeys.model_validate(known, context=context)
+        return FileKeys.validate(known, context)

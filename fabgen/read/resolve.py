@@ -55,9 +55,9 @@ def resolve(keys: FileKeys, stem: str, sha256: str, reasons: Reasons) -> Design:
     rows = [row for row in keys.elements if row is not None]
     pick = reasons.pick
     boom = resolve_boom(keys.boom, [row.at_mm for row in rows], reasons)
-    shop = _shop(keys.shop or ShopKeys.model_construct(), reasons)
+    shop = _shop(keys.shop or ShopKeys(), reasons)
     as_cut = keys.lengths_are == "as-cut"
-    sheet = keys.sheet or SheetKeys.model_construct()
+    sheet = keys.sheet or SheetKeys()
     return Design(
         stem=stem,
         sha256=sha256,
@@ -74,7 +74,7 @@ def resolve(keys: FileKeys, stem: str, sha256: str, reasons: Reasons) -> Design:
         clamp=_clamp(keys.clamp, reasons) if keys.clamp is not None else None,
         tip_clearance_mm=pick("clearance.tip", keys.clearance.tip_mm if keys.clearance else None, 25.0),
         shop=shop,
-        printer=_printer(keys.printer or PrinterKeys.model_construct(), reasons),
+        printer=_printer(keys.printer or PrinterKeys(), reasons),
         limits=resolve_limits(keys.limits),
     )
 
@@ -185,7 +185,7 @@ def _clamp(keys: ClampKeys, reasons: Reasons) -> Clamp:
 
 def _shop(keys: ShopKeys, reasons: Reasons) -> Shop:
     pick = reasons.pick
-    stock = keys.stock or StockKeys.model_construct()
+    stock = keys.stock or StockKeys()
     stated_mm = keys.tolerance if isinstance(keys.tolerance, float) else 0.0
     letter = None if isinstance(keys.tolerance, float) else keys.tolerance
     standard: ToleranceClass = "m"

@@ -1,9 +1,12 @@
 """The JSON Schema of design files, from the same models that read them; editors complete and check with it."""
 
-from typing import Any
+import inspect
+from typing import Annotated, Any, get_args, get_origin
 
 from fabgen.read.compound import MaterialKeys
 from fabgen.read.grammar import ORIGINS, FileKeys, MountKeys
+from fabgen.read.keys import Keys, one_of
+from fabgen.read.kind import Kind
 from fabgen.read.mount_contradictions import STYLE_KEYS
 
 DIALECT = "https://json-schema.org/draft/2020-12/schema"
@@ -11,26 +14,63 @@ DIALECT = "https://json-schema.org/draft/2020-12/schema"
 
 def schema() -> dict[str, Any]:
     """JSON Schema (draft 2020-12) of a design file."""
-    whole = FileKeys.model_json_schema(by_alias=True)
-    definitions = whole.pop("$defs")
-    definitions["Material"] = MaterialKeys.model_json_schema(by_alias=True)
+    definitions: dict[str, Any] = {"Material": _section(MaterialKeys, {})}
+    whole = _section(FileKeys, definitions)
     definitions["MountKeys"]["allOf"] = [_style_rule(style, keys) for style, keys in STYLE_KEYS.items()]
     definitions["AllowanceKeys"] = {"anyOf": [{"enum": list(ORIGINS)}, definitions["AllowanceKeys"]]}
     properties = whole["properties"]
-    properties["mounts"]["additionalProperties"] = False
     properties["elements"] = {"anyOf": [properties["elements"], _table()]}
     return {
         "$schema": DIALECT,
-        **_tidy(whole),
+        **whole,
         "title": "fabgen design file",
         "description": "One array: what was modelled, how it is mounted, what the shop can do.",
-        "$defs": {name: _tidy(definition) for name, definition in sorted(definitions.items())},
+        "$defs": dict(sorted(definitions.items())),
     }
+
+
+def _section(model: type[Keys], definitions: dict[str, Any]) -> dict[str, Any]:
+    """A section's keys; sections inside it go to the definitions."""
+    fields = model.model_fields.values()
+    return {
+        "additionalProperties": False,
+        "description": inspect.cleandoc(model.__doc__ or ""),
+        "properties": {info.alias: _value(info.annotation, info.metadata, definitions) for info in fields},
+        "required": [info.alias for info in fields if info.needed],
+        "type": "object",
+    }
+
+
+def _value(annotation: Any, metadata: tuple[Any, ...], definitions: dict[str, Any]) -> dict[str, Any]:
+    """What may be written for one key."""
+    kind = next((each for each in metadata if isinstance(each, Kind)), None)
+    if kind is not None:
+        return _with_material(kind.schema())
+    annotation = one_of(annotation)
+    origin, parts = get_origin(annotation), get_args(annotation)
+    if origin is Annotated:
+        return _value(parts[0], parts[1:], definitions)
+    if origin is list:
+        return {"items": _value(parts[0], (), definitions), "type": "array"}
+    if origin is dict:
+        name, value = (_value(part, (), definitions) for part in parts)
+        return {"additionalProperties": False, "patternProperties": {name["pattern"]: value}, "type": "object"}
+    if annotation.__name__ not in definitions:
+        definitions[annotation.__name__] = {}
+        definitions[annotation.__name__] = _section(annotation, definitions)
+    return {"$ref": f"#/$defs/{annotation.__name__}"}
+
+
+def _with_material(part: dict[str, Any]) -> dict[str, Any]:
+    """The same with the mapping of a material where its place is kept."""
+    options = part.get("anyOf", [])
+    kept = [{"$ref": "#/$defs/Material"} if o.get("$comment") == "Material" else o for o in options]
+    return part | {"anyOf": kept} if options else part
 
 
 def _style_rule(style: str, keys: tuple[str, ...]) -> dict[str, Any]:
     """Keys that have no meaning for a style are not offered for it."""
-    every = [info.alias or name for name, info in MountKeys.model_fields.items()]
+    every = [info.alias for info in MountKeys.model_fields.values()]
     useless = [key for key in every if key not in (*keys, "style", "allowance")]
     return {
         "if": {"properties": {"style": {"const": style}}},
@@ -46,27 +86,3 @@ def _table() -> dict[str, Any]:
         "required": ["table"],
         "properties": {"table": {"type": "string", "description": said, "examples": ["elements.csv"]}},
     }
-
-
-def _tidy(part: Any) -> Any:
-    """Without the titles that repeat key names, and without defaults that only say `left out`."""
-    if isinstance(part, list):
-        return [_tidy(item) for item in part]
-    if not isinstance(part, dict):
-        return part
-    if part.get("$comment") == "Material":
-        return {"$ref": "#/$defs/Material"}
-    kept = {
-        key: _tidy(value)
-        for key, value in part.items()
-        if not (key == "default" and value is None) and not (key == "title" and isinstance(value, str))
-    }
-    options = kept.get("anyOf")
-    if options and {"type": "null"} in options:
-        rest = [option for option in options if option != {"type": "null"}]
-        kept = {**{key: value for key, value in kept.items() if key != "anyOf"}, **_one_of(rest)}
-    return kept
-
-
-def _one_of(options: list[Any]) -> dict[str, Any]:
-    return options[0] if len(options) == 1 else {"anyOf": options}

@@ -4,7 +4,7 @@ import re
 from datetime import date
 from typing import Any
 
-from pydantic import ValidationInfo
+from pydantic_core.core_schema import ValidationInfo
 
 from fabgen.read.kind import Kind, refuse, scalar_of
 from fabgen.read.nearest import suggestion
