@@ -1,4 +1,4 @@
-"""Imports run one way: cli → pipeline → stages → design, stock, physics → units, errors, registry."""
+"""Imports run one way: cli → pipeline → stages → design, stock, physics → units, errors, registry, frozen."""
 
 import ast
 from collections.abc import Iterator
