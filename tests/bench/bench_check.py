@@ -1,7 +1,7 @@
 """`fabgen check` on 80 elements against importing the three libraries that any command line of its kind loads.
 
-Run with `pytest tests/bench/bench_check.py -s`. Whole processes in turn, processor time, the median of the pairwise ratios; the
-limit is 3. One process is long enough for the ratio to be steady to about a tenth on a quiet machine.
+Run with `pytest tests/bench/bench_check.py -s`. Whole processes in turn, processor time, the median of the pairwise
+ratios; the limit is 3.
 """
 
 import os
