@@ -3,6 +3,7 @@
 from fabgen.design.arranged import Arranged, Bar, Cut, CutPlan
 from fabgen.design.lettering import text_width_mm
 from fabgen.draw.flow import LEFT_MM, Column, Flow
+from fabgen.draw.words import origin_lines
 from fabgen.units import format_mm
 
 _COLUMNS = (
@@ -34,6 +35,8 @@ def cuts(flow: Flow, arranged: Arranged, plan: CutPlan) -> None:
         "stop length; saw to the length with trim only if the finished array will be measured and its rods shortened. "
         "The centre mark is from either end; rods stand out of the boom equally on both sides."
     )
+    for line in origin_lines(arranged.ledger):
+        flow.paragraph(line)
     if plan.proven:
         flow.paragraph("Proven: these pieces cannot be had from fewer bars.")
     by_name = {cut.piece: cut for cut in arranged.cuts}

@@ -4,7 +4,7 @@ from collections.abc import Sequence
 
 from fabgen.design.arranged import Hole, Wall
 from fabgen.design.design import Boom
-from fabgen.design.ledger import Ledger
+from fabgen.design.ledger import Ledger, LedgerLine
 
 WALLS: dict[Wall, str] = {"+z": "TOP", "+y": "LEFT", "-y": "RIGHT", "-z": "BOTTOM"}
 """Looking forward from the datum end."""
@@ -41,6 +41,34 @@ def ids(names: Sequence[str], most: int = 6) -> str:
     if len(names) <= most:
         return ", ".join(names)
     return f"{', '.join(names[: most - 2])} … {names[-1]} ({len(names)})"
+
+
+def origin_lines(ledger: Ledger) -> list[str]:
+    """One sentence per origin: which rods, how sure in mm and kHz, and what the trim is for."""
+    groups: dict[str, list[LedgerLine]] = {}
+    for line in ledger.lines:
+        if line.allowance.needed and line.allowance.origin != "none":
+            groups.setdefault(line.allowance.source, []).append(line)
+    said = []
+    for source, lines in groups.items():
+        u_mm = [line.allowance.u_mm for line in lines]
+        khz = [line.shift_khz for line in lines]
+        said.append(
+            f"Allowance of {ids([line.element for line in lines], 8)}: {source}; ±2u (95 %) "
+            f"{_span([2 * u for u in u_mm], 2)} mm, {_span([2 * k for k in khz], 0)} kHz of a single rod."
+        )
+    if said:
+        said.append(
+            "Trim is that 95 %, up to the cut step, only for someone who will measure: leave it on, then shorten, the "
+            "same from both ends and on all rods alike; shorter is higher in frequency."
+        )
+    return said
+
+
+def _span(values: list[float], decimals: int) -> str:
+    """`0.65` or `0.65 to 1.10`."""
+    low, high = f"{min(values):.{decimals}f}", f"{max(values):.{decimals}f}"
+    return low if low == high else f"{low} to {high}"
 
 
 def allowance_words(ledger: Ledger) -> str:

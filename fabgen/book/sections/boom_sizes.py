@@ -7,9 +7,11 @@ from fabgen.book.book import Book, Content
 from fabgen.book.scale import Axis, axis
 from fabgen.design.design import Mount
 from fabgen.design.ledger import LedgerLine
+from fabgen.design.records import MeasuredRecord
 from fabgen.frozen import frozen
 from fabgen.physics.boom_closed_form import closed_form_allowance
-from fabgen.physics.boom_mount import BoomMount, Section
+from fabgen.physics.boom_coupon import allowance_from_reactance_factor_mm
+from fabgen.physics.boom_mount import BoomMount, Section, wavelength_mm
 from fabgen.physics.published_boom import equivalent_round_mm, published_values
 
 PLACE = 56
@@ -38,6 +40,7 @@ class BoomPicture:
         printed: name, validity as dash, polyline of each published statement.
         own: this design's rods.
         nbs: place and half height of the one measured array point; None for other mounts.
+        measured: date, place, and the two ends of ±2u of every coupon on record for this mount.
     """
 
     mount: Mount
@@ -50,6 +53,7 @@ class BoomPicture:
     printed: tuple[tuple[str, bool, tuple[Point, ...]], ...]
     own: tuple[Point, ...]
     nbs: tuple[Point, Point] | None
+    measured: tuple[tuple[str, Point, Point], ...]
 
 
 def content(book: Book) -> Content | None:
@@ -75,6 +79,8 @@ def _picture(book: Book, here: BoomMount, mount: Mount, lines: list[LedgerLine])
     used_mm = [line.allowance.value_mm + k * line.allowance.u_mm for line in lines for k in (-2, 2)]
     tops_mm = [value + 2 * u for value, u in filter(None, computed)]
     tops_mm += [mm for _, _, curve in printed for _, mm in curve]
+    measured = _measured(book, mount, length_mm)
+    tops_mm += [mm + 2 * u for _, _, mm, u in measured]
     x = axis(min(LOW_WL, own_wl), max(HIGH_WL, own_wl), LEFT_MM, WIDTH_MM - 6.0)
     y = axis(min(0.0, *used_mm), max(*tops_mm, *used_mm), HEIGHT_MM - FOOT_MM, 3.0)
     runs = _runs(zip(sizes_wl, computed, strict=True))
@@ -100,7 +106,28 @@ def _picture(book: Book, here: BoomMount, mount: Mount, lines: list[LedgerLine])
         )
         if bonded and y.high >= (added_wl + error_wl) * wl_mm
         else None,
+        measured=tuple(
+            (date, (x.at(wl), y.at(mm)), (y.at(mm + 2 * u), y.at(mm - 2 * u))) for date, wl, mm, u in measured
+        ),
     )
+
+
+def _measured(book: Book, mount: Mount, length_mm: float) -> list[tuple[str, float, float, float]]:
+    """Date, boom in wavelengths, allowance at this length and its u for every coupon of the mount on record."""
+    found = []
+    for record in book.arranged.design.records:
+        if isinstance(record, MeasuredRecord) and record.mount == mount.name:
+            there = record.geometry
+            mm = allowance_from_reactance_factor_mm(
+                record.reactance_factor,
+                boom_mm=there.outside_mm,
+                rod_diameter_mm=there.rod_diameter_mm,
+                rod_length_mm=length_mm,
+                frequency_mhz=there.frequency_mhz,
+            )
+            u_mm = mm * record.u_mm / record.allowance_mm
+            found.append((record.date, there.outside_mm / wavelength_mm(there.frequency_mhz), mm, u_mm))
+    return found
 
 
 def _computed(here: BoomMount, boom_mm: float, length_mm: float, frequency_mhz: float) -> Point | None:
