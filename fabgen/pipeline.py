@@ -8,7 +8,6 @@ from fabgen.arrange.arrange import arrange
 from fabgen.check.judge import judge
 from fabgen.check.limits import electrical
 from fabgen.check.mount_shift import mount_shift
-from fabgen.check.response_store import records_folder
 from fabgen.correct.ledger import correct
 from fabgen.design.allotted import with_tolerances
 from fabgen.design.arranged import Arranged
@@ -16,6 +15,7 @@ from fabgen.design.findings import Finding, clear, in_order
 from fabgen.design.response import Response
 from fabgen.frozen import frozen
 from fabgen.read.reader import Reading, read_design
+from fabgen.read.records import records_folder
 
 Say = Callable[[str], None]
 """Takes one line of progress."""
@@ -60,8 +60,7 @@ def check(path: Path, *, solve: bool = False, keep: bool = False) -> Judged:
     reading = read_design(path)
     ledger = correct(reading.design)
     general = arrange(reading.design, ledger)
-    records = records_folder(path, reading.design.stem)
-    response, electric = electrical(general, records, solve=solve, keep=keep)
+    response, electric = electrical(general, records_folder(path), solve=solve, keep=keep)
     arranged = with_tolerances(general, response)
     judged = [*reading.notes, *judge(arranged), *electric, *mount_shift(arranged, response)]
     return Judged(reading, arranged, in_order(judged), response)

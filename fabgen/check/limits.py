@@ -6,7 +6,7 @@ from pathlib import Path
 from fabgen.check.finding import finding
 from fabgen.check.response_store import load, store
 from fabgen.design.arranged import Arranged
-from fabgen.design.electrical_case import ElectricalCase, electrical_case
+from fabgen.design.electrical_case import ElectricalCase, electrical_case, no_case
 from fabgen.design.findings import Finding
 from fabgen.design.limits import Limits
 from fabgen.design.response import SHARE_INSIDE, Outcome, Response
@@ -35,7 +35,7 @@ def electrical(
     """
     case = electrical_case(arranged)
     if case is None:
-        return None, tuple(_not_judged(arranged, "no single rod is driven; the solver needs one"))
+        return None, tuple(_not_judged(arranged, no_case(arranged.design)))
     if not solve:
         response = load(records, case.sha256)
         why = "no stored response fits this design: `fabgen check --response` or `fabgen build` judges them"

@@ -16,11 +16,6 @@ FILE = "response.json"
 LARGEST_BYTES = 5_000_000
 
 
-def records_folder(design_file: Path, stem: str) -> Path:
-    """Where records of a design lie: `records/<design stem>` beside it."""
-    return design_file.parent / "records" / stem
-
-
 def load(folder: Path, case_sha256: str) -> Response | None:
     """The stored response, None where there is none that fits.
 

@@ -35,6 +35,7 @@ def judged_record(path: Path, judged: Judged) -> dict[str, Any]:
         "revision": design.revision,
         "verdict": judged.verdict,
         "status": judged.arranged.ledger.status,
+        "limits": _limits(judged),
         "findings": [finding_record(finding) for finding in judged.findings],
     }
 
@@ -72,12 +73,15 @@ def print_judged(judged: Judged) -> None:
         click.secho(str(finding), fg=_COLOURS[finding.severity], color=None if _colour() else False)
     counts = {severity: sum(f.severity == severity for f in judged.findings) for severity in _COLOURS}
     tally = ", ".join(f"{count} {severity}" for severity, count in counts.items() if count) or "no findings"
-    click.echo(f"{judged.name}: {judged.verdict} ({tally}); {judged.arranged.ledger.status}{_limits(judged)}")
+    limits = "; limits not judged" if _limits(judged) == "not judged" else ""
+    click.echo(f"{judged.name}: {judged.verdict} ({tally}); {judged.arranged.ledger.status}{limits}")
 
 
 def _limits(judged: Judged) -> str:
-    """What the verdict line says about limits that were not judged."""
-    return "; limits not judged" if any(finding.code == "E01" for finding in judged.findings) else ""
+    """Whether the limits of a design were judged."""
+    if not judged.arranged.design.limits.stated:
+        return "none stated"
+    return "not judged" if any(finding.code == "E01" for finding in judged.findings) else "judged"
 
 
 def _colour() -> bool:

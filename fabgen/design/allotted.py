@@ -2,7 +2,7 @@
 
 from dataclasses import replace
 
-from fabgen.design.arranged import Arranged
+from fabgen.design.arranged import Arranged, Hole
 from fabgen.design.electrical_case import LOCATING
 from fabgen.design.response import Response
 
@@ -15,7 +15,8 @@ def with_tolerances(arranged: Arranged, response: Response | None) -> Arranged:
         response: what the solver found; None where it was not asked.
 
     Returns:
-        The same places, holes and lengths, other ±. Half rods of a split dipole get half the ± of the whole.
+        The same places, holes and lengths, other ±. Half rods of a split dipole get half the ± of the whole; screw
+        holes, whose parts have a pitch, are never looser than the general tolerance.
     """
     if response is None or response.allotment is None or not response.allotment.feasible:
         return arranged
@@ -30,9 +31,13 @@ def with_tolerances(arranged: Arranged, response: Response | None) -> Arranged:
         for cut in arranged.cuts
     )
     holes = tuple(
-        replace(hole, tolerance_mm=station_mm[hole.element])
+        replace(hole, tolerance_mm=_hole_mm(hole, station_mm[hole.element]))
         if hole.element in station_mm and hole.purpose in LOCATING
         else hole
         for hole in arranged.holes
     )
     return replace(arranged, ledger=replace(arranged.ledger, lines=lines), cuts=cuts, holes=holes)
+
+
+def _hole_mm(hole: Hole, station_mm: float) -> float:
+    return station_mm if hole.purpose in ("rod", "bush") else min(station_mm, hole.tolerance_mm)

@@ -10,7 +10,7 @@ from fabgen.design.limits import Limits
 from fabgen.frozen import frozen
 from fabgen.stock.electrical import conductivity_s_per_m, tolerance_classes
 
-METHOD = "thin-rod array, response 1"
+METHOD = "thin-rod array, response 2"
 """Changes when the computation changes, so that a response stored before no longer fits."""
 
 LOCATING = ("rod", "bush", "saddle screw", "bond screw", "middle screw", "feed screw")
@@ -38,7 +38,8 @@ class ElectricalCase:
         reference_ohm: what mismatch is counted against.
         conductivity_s_per_m: of all rods, the lowest; 0 where the table has none: a perfect conductor.
         limits: what builds may lose.
-        classes_mm: tolerances that can be allotted, the finest first.
+        classes_mm: tolerances that a length can get, the finest first.
+        station_classes_mm: those that a station can get.
         method: of the computation.
     """
 
@@ -59,6 +60,7 @@ class ElectricalCase:
     conductivity_s_per_m: float
     limits: Limits
     classes_mm: tuple[float, ...]
+    station_classes_mm: tuple[float, ...]
     method: str = METHOD
 
     @property
@@ -72,16 +74,32 @@ class ElectricalCase:
         return self.limits.band_mhz or (self.frequency_mhz, self.frequency_mhz)
 
 
+def no_case(design: Design) -> str:
+    """Why a design cannot be modelled; empty where it can.
+
+    Args:
+        design: as read.
+    """
+    if sum(element.role == "driven" for element in design.elements) != 1:
+        return "the array solver needs one driven rod"
+    on_metal = any(element.mount and element.mount.style != "through-nonmetal" for element in design.elements)
+    if design.lengths_are == "as-cut" and on_metal:
+        return (
+            "lengths are as cut, with what the boom takes in them: their free lengths, which the solver needs, are lost"
+        )
+    return ""
+
+
 def electrical_case(arranged: Arranged) -> ElectricalCase | None:
-    """The case of an arranged design; None where no rod or more than one is fed.
+    """The case of an arranged design; None where `no_case` says why.
 
     Args:
         arranged: with its general tolerances.
     """
     design, ledger = arranged.design, arranged.ledger
-    fed = [index for index, element in enumerate(design.elements) if element.role == "driven"]
-    if len(fed) != 1:
+    if no_case(design):
         return None
+    fed = [index for index, element in enumerate(design.elements) if element.role == "driven"]
     feed = design.feed_of(design.elements[fed[0]])
     stations = {hole.element: hole.tolerance_mm for hole in arranged.holes if hole.purpose in LOCATING}
     lines = [ledger.line(element.id) for element in design.elements]
@@ -103,6 +121,7 @@ def electrical_case(arranged: Arranged) -> ElectricalCase | None:
         conductivity_s_per_m=_conductivity_s_per_m(design),
         limits=design.limits,
         classes_mm=tuple(each.tolerance_mm for each in tolerance_classes()),
+        station_classes_mm=tuple(each.tolerance_mm for each in tolerance_classes() if each.holes),
     )
 
 

@@ -13,7 +13,7 @@ from numpy.typing import NDArray
 from fabgen.physics.blas_threads import one_blas_thread
 from fabgen.physics.thin_rod_kernel import ComplexArray, FloatArray
 
-TOLERANCE = 1e-10
+TOLERANCE = 1e-8
 """Largest last step over the largest current of the design."""
 STEPS = 40
 

@@ -11,12 +11,14 @@ class ToleranceClass:
     Attributes:
         name: its name.
         tolerance_mm: ± on a length or a station.
+        holes: whether a hole may be placed so, and not only a rod be sawn.
         how: what it takes.
         source: where it comes from.
     """
 
     name: str
     tolerance_mm: float
+    holes: bool
     how: str
     source: str
 
@@ -34,6 +36,6 @@ def conductivity_s_per_m(material: str) -> float | None:
 def tolerance_classes() -> tuple[ToleranceClass, ...]:
     """All classes, the finest first."""
     return tuple(
-        ToleranceClass(row["class"], float(row["tolerance_mm"]), row["how"], row["source"])
+        ToleranceClass(row["class"], float(row["tolerance_mm"]), row["holes"] == "yes", row["how"], row["source"])
         for row in rows("tolerance_classes")
     )

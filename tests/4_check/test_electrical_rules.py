@@ -116,6 +116,15 @@ def test_no_limits_no_word(root: Path) -> None:
     assert (response, told) == (None, ())
 
 
+def test_lengths_as_cut_cannot_be_modelled(sound: Arranged, tmp_path: Path) -> None:
+    """What the boom takes is in them, and the solver knows free rods only."""
+    as_cut = replace(sound, design=replace(sound.design, lengths_are="as-cut"))
+    response, told = rules.electrical(as_cut, tmp_path, solve=True, keep=True)
+    assert response is None
+    assert [(finding.code, finding.severity) for finding in told] == [("E01", "note")]
+    assert "as cut" in told[0].advice
+
+
 def test_limits_without_an_answer_are_not_judged(sound: Arranged, tmp_path: Path) -> None:
     response, told = rules.electrical(sound, tmp_path, solve=False, keep=False)
     assert response is None
@@ -196,4 +205,6 @@ def test_allotted_tolerances_reach_ledger_cuts_and_holes(sound: Arranged) -> Non
     }
     for before, after in zip(sound.holes, allotted.holes, strict=True):
         wanted = rows[after.element].station_mm if after.element in rows else before.tolerance_mm
+        if after.purpose not in ("rod", "bush"):
+            wanted = min(wanted, before.tolerance_mm)
         assert after == replace(before, tolerance_mm=wanted)

@@ -134,7 +134,7 @@ def test_a_hole_without_room_is_listed_above_the_paper(arranged_as):
     arranged, plan = arranged_as("dense")
     [sheet, *_] = sheets_of("templates", arranged, plan)
     upright = [item.text for item in sheet.items if isinstance(item, Text) and item.angle_deg == 90]
-    assert any("LEFT + RIGHT  DIRECTOR-LONG-02 152.300 drill 6 mm" in text for text in upright)
+    assert any("LEFT + RIGHT  DIRECTOR-LONG-02 152.300 ±0.5 drill 6 mm" in text for text in upright)
 
 
 def clamp_circles(arranged, plan):

@@ -275,3 +275,39 @@ def test_a_design_file_that_cannot_be_written_whole_is_not_left_there(
 
 def _environment() -> dict[str, str]:
     return {**os.environ, "PYTHONPATH": str(Path(contents.__file__).parents[1])}
+
+
+@pytest.mark.usefixtures("light_package")
+def test_build_keeps_the_response_and_a_later_check_uses_it(
+    design: Path, capsys: pytest.CaptureFixture[str], monkeypatch: pytest.MonkeyPatch
+) -> None:
+    assert run("check", str(design)) == 0
+    out = capsys.readouterr().out
+    assert out.splitlines()[-1].endswith("limits not judged")
+    assert "E01 note" in out
+    assert run("build", str(design)) == 0
+    assert (design.parent / "records/gauge/response.json").is_file()
+    capsys.readouterr()
+    monkeypatch.setattr("fabgen.check.response.respond.respond", None)  # a check does not ask again
+    assert run("check", "--json", str(design)) == 0
+    (record,) = json.loads(capsys.readouterr().out)["designs"]
+    assert record["limits"] == "judged"
+    assert "E04" in {finding["code"] for finding in record["findings"]}
+    text = design.read_text(encoding="utf-8")
+    design.write_text(text.replace("length: 338.4", "length: 338.5"), encoding="utf-8")
+    assert run("check", str(design)) == 0
+    assert capsys.readouterr().out.splitlines()[-1].endswith("limits not judged")
+
+
+def test_check_with_response_judges_and_writes_nothing(
+    design: Path, capsys: pytest.CaptureFixture[str], monkeypatch: pytest.MonkeyPatch
+) -> None:
+    monkeypatch.setattr("fabgen.check.response.allot.SAMPLES", 60)
+    monkeypatch.setattr("fabgen.check.response.allot.FEWEST", 60)
+    text = design.read_text(encoding="utf-8")
+    design.write_text(text.replace("front_to_back: 18 dB", "front_to_back: 30 dB"), encoding="utf-8")
+    assert run("check", "--response", str(design)) == 1
+    out = capsys.readouterr().out
+    assert "E02 fail: front_to_back" in out
+    assert "not judged" not in out
+    assert [path.name for path in design.parent.iterdir()] == ["gauge.yaml"]

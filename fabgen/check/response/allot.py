@@ -18,7 +18,7 @@ from fabgen.physics.thin_rod_kernel import FloatArray
 SAMPLES = 2000
 LARGEST_WORK = SAMPLES * 12**2
 """Builds times rods squared: larger arrays are tried with fewer builds, but never with fewer than `FEWEST`."""
-FEWEST = 400
+FEWEST = 300
 SEED = 20_260_301
 TRIES = 6
 SPARE_SHARE = 0.004
@@ -82,7 +82,9 @@ def allot(gauge: Gauge, array: RodArray, found: Slopes, unit: FloatArray) -> tup
         unit: errors between -1 and 1.
     """
     case = gauge.case
-    steps = _steps(found.weights(case.limits), np.array(case.classes_mm))
+    steps = _steps(
+        found.weights(case.limits), [case.classes_mm] * array.count + [case.station_classes_mm] * array.count
+    )
     wanted = SHARE_INSIDE + SPARE_SHARE
     place = _loosest(found, unit, steps, wanted, len(steps) - 1)
     for _ in range(TRIES):
@@ -98,19 +100,18 @@ def allot(gauge: Gauge, array: RodArray, found: Slopes, unit: FloatArray) -> tup
     return Allotment(_rows(case, tried.tolerance_mm), share >= SHARE_INSIDE), tried
 
 
-def _steps(weights: FloatArray, classes_mm: FloatArray) -> list[FloatArray]:
+def _steps(weights: FloatArray, classes_mm: list[tuple[float, ...]]) -> list[FloatArray]:
     """Every set of tolerances on the way from the finest to the loosest, each looser in one quantity at a time."""
-    taken = weights[:, None] * classes_mm
     order = sorted(
-        (float(taken[quantity, rank]), rank, quantity)
-        for quantity in range(weights.size)
-        for rank in range(1, classes_mm.size)
+        (float(weight * tolerance_mm), quantity, tolerance_mm)
+        for quantity, (weight, own) in enumerate(zip(weights, classes_mm, strict=True))
+        for tolerance_mm in own[1:]
     )
-    current = np.full(weights.size, classes_mm[0])
+    current = np.array([own[0] for own in classes_mm])
     steps = [current]
-    for _, rank, quantity in order:
+    for _, quantity, tolerance_mm in order:
         current = current.copy()
-        current[quantity] = classes_mm[rank]
+        current[quantity] = tolerance_mm
         steps.append(current)
     return steps
 

@@ -21,7 +21,7 @@ def inspect(design: Path, measured: Path, as_json: bool) -> int:
     Ends with 0 when everything is within tolerance and limits, with 1 when not.
     """
     from fabgen.check.response.as_built import as_built
-    from fabgen.design.electrical_case import electrical_case
+    from fabgen.design.electrical_case import electrical_case, no_case
     from fabgen.read.measured_csv import read_measured
 
     judged = judge_file(design)
@@ -32,7 +32,7 @@ def inspect(design: Path, measured: Path, as_json: bool) -> int:
         judged = judge_file(design, solve=True)
     case = electrical_case(judged.arranged)
     if case is None:
-        raise InputError(f"{design} has no single driven rod", "the solver needs one")
+        raise InputError(f"{design}: {no_case(judged.arranged.design)}", "inspect needs an array that can be modelled")
     try:
         found = as_built(case, judged.arranged, rows)
     except ValueError as error:

@@ -113,12 +113,16 @@ def _spot(laid: Development, hole: Hole, shift: float, base: float, paper: Box) 
 
 
 def _lettered(pen: Pen, drawn: Drawn, spot: Spot, hole: Hole) -> bool:
-    """Letter a hole on its wall: element and station over its axis, number and drill under it."""
-    above = [hole.element, format_mm(hole.station_mm)]
+    """Letter a hole on its wall: element, station and its ± over its axis, number and drill under it."""
+    above = [hole.element, format_mm(hole.station_mm), _tolerance(hole)]
     if letter_hole(pen, drawn, spot, above, [hole.number, *drill_words(hole)]):
         return True
     mark_hole(pen, drawn, spot, hole.number)
     return False
+
+
+def _tolerance(hole: Hole) -> str:
+    return f"±{hole.tolerance_mm:g}"
 
 
 def _wall_names(pen: Pen, drawn: Drawn, laid: Development, paper: Box, base: float) -> None:
@@ -190,7 +194,8 @@ def _crowded(pen: Pen, holes: Iterable[Hole], shift: float, from_y_mm: float) ->
     for group, x, slot in zip(groups, xs, spread(xs, 1.6 * SMALLEST_MM), strict=True):
         walls = " + ".join(wall_of(hole) for hole in group)
         first = group[0]
-        words = f"{first.number} {walls}  {first.element} {format_mm(first.station_mm)} {' '.join(drill_words(first))}"
+        station = f"{format_mm(first.station_mm)} {_tolerance(first)}"
+        words = f"{first.number} {walls}  {first.element} {station} {' '.join(drill_words(first))}"
         pen.polyline("dim", [(x, from_y_mm), (x, from_y_mm + 1.0), (slot, y_mm - 0.5)])
         pen.text(slot, y_mm, words, SMALLEST_MM, angle_deg=90, level="middle")
         longest = max(longest, text_width_mm(words, SMALLEST_MM))
