@@ -24,6 +24,7 @@ if sys.platform != "win32":
 
 _AT_FDCWD = -100
 _RENAME_EXCHANGE = 2
+_MOVE_OUT = "move it out of the folder: a build replaces the whole of it"
 
 
 def manifest(
@@ -64,7 +65,7 @@ def write(files: Sequence[PackageFile], *, output: Path, name: str) -> Path:
         The package folder.
 
     Raises:
-        MachineError: the disk or a permission is in the way; nothing has changed then.
+        MachineError: the disk, a permission or a file that is not ours is in the way; nothing has changed then.
         ProgramError: a name would lead outside the output folder.
     """
     if PurePosixPath(name).name != name or name in {"", ".", ".."}:
@@ -82,6 +83,8 @@ def _write_locked(files: Sequence[PackageFile], output: Path, name: str) -> Path
     _repair(target, fresh, aside)
     if target.is_symlink() or (target.exists() and not target.is_dir()):
         raise MachineError(f"{target} is not a folder", "move it away; a package folder goes there")
+    if target.exists():
+        _refuse_strangers(target)
     try:
         for file in files:
             _write_file(fresh, file)
@@ -105,6 +108,26 @@ def _repair(target: Path, fresh: Path, aside: Path) -> None:
     for rest in (fresh, aside):
         if rest.exists():
             shutil.rmtree(rest)
+
+
+def _refuse_strangers(target: Path) -> None:
+    """Raise when a folder that would be replaced holds what its builder put or filled in there.
+
+    Everything in it must be as its manifest says; hidden files do not count.
+    """
+    try:
+        files = json.loads((target / "manifest.json").read_bytes())["files"]
+        digests = {"manifest.json": None} | {file["path"]: file.get("sha256") for file in files}
+    except (FileNotFoundError, ValueError, TypeError, KeyError):
+        digests = {}
+    for path in sorted(target.rglob("*")):
+        name = path.relative_to(target).as_posix()
+        if path.is_dir() or path.name.startswith("."):
+            continue
+        if name not in digests:
+            raise MachineError(f"{target} holds {name}, which is of no package", _MOVE_OUT)
+        if digests[name] not in (None, hashlib.sha256(path.read_bytes()).hexdigest()):
+            raise MachineError(f"{target} holds {name}, which was changed since it was written", _MOVE_OUT)
 
 
 def _write_file(folder: Path, file: PackageFile) -> None:

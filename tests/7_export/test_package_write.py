@@ -14,9 +14,11 @@ from fabgen.design.package import PackageFile
 from fabgen.errors import MachineError, ProgramError
 from fabgen.export import package
 
-OLD = (PackageFile("manifest.json", b"old manifest", "m"), PackageFile("tables/a.csv", b"old a", "a"))
+LISTS_A = b'{"files": [{"path": "tables/a.csv"}]}'
+LISTS_A_AND_B = b'{"files": [{"path": "tables/a.csv"}, {"path": "model/b.step"}]}'
+OLD = (PackageFile("manifest.json", LISTS_A, "m"), PackageFile("tables/a.csv", b"old a", "a"))
 NEW = (
-    PackageFile("manifest.json", b"new manifest", "m"),
+    PackageFile("manifest.json", LISTS_A_AND_B, "m"),
     PackageFile("tables/a.csv", b"new a", "a"),
     PackageFile("model/b.step", b"new b", "b"),
 )
@@ -68,7 +70,9 @@ KILLER = textwrap.dedent(
         setattr(owner, name, mortal(getattr(owner, name)))
     if not exchange:
         package._exchange = lambda first, second: False
-    files = [PackageFile(n, b"new " + n.encode(), "x") for n in ("manifest.json", "tables/a.csv", "model/b.step")]
+    lists = b'{"files": [{"path": "tables/a.csv"}, {"path": "model/b.step"}]}'
+    files = [PackageFile("manifest.json", lists, "m"), PackageFile("tables/a.csv", b"new a", "a"),
+             PackageFile("model/b.step", b"new b", "b")]
     package.write(files, output=output, name="X-1_A")
     """
 )
@@ -76,7 +80,7 @@ KILLER = textwrap.dedent(
 
 @pytest.mark.parametrize("way", ["exchange", "renames"])
 def test_a_kill_at_any_step_leaves_the_old_package_or_the_new_one(tmp_path: Path, way: str) -> None:
-    new = {n: b"new " + n.encode() for n in ("manifest.json", "tables/a.csv", "model/b.step")}
+    new = expected(NEW)
     seen = set()
     for deadly in range(1, 60):
         output = tmp_path / str(deadly)
@@ -133,6 +137,42 @@ def test_a_file_where_the_package_should_be(tmp_path: Path) -> None:
     with pytest.raises(MachineError, match="is not a folder"):
         package.write(NEW, output=tmp_path, name="X-1_A")
     assert (tmp_path / "X-1_A").read_text() == "mine"
+
+
+@pytest.mark.parametrize("place", ["notes.txt", "tables/readings.csv"])
+def test_a_builders_own_file_is_never_thrown_away(tmp_path: Path, place: str) -> None:
+    folder = package.write(OLD, output=tmp_path, name="X-1_A")
+    (folder / place).write_text("mine")
+    (folder / ".hidden").write_text("a file manager's")
+    with pytest.raises(MachineError, match=f"holds {place}, which is of no package"):
+        package.write(NEW, output=tmp_path, name="X-1_A")
+    assert (folder / place).read_text() == "mine"
+    assert (folder / "tables" / "a.csv").read_bytes() == b"old a"
+    (folder / place).unlink()
+    package.write(NEW, output=tmp_path, name="X-1_A")
+    assert contents(folder) == expected(NEW)
+
+
+def test_a_sheet_that_was_filled_in_is_never_thrown_away(tmp_path: Path) -> None:
+    sheet = PackageFile("readings.csv", b"step,reading\n1,\n", "to fill in")
+    listed = package.manifest(
+        [sheet], number="X-1", revision="A", design_sha256="0" * 64, verdict="clear", versions={"fabgen": "1"}
+    )
+    folder = package.write([sheet, listed], output=tmp_path, name="X-1_A")
+    assert package.write([sheet, listed], output=tmp_path, name="X-1_A") == folder
+    (folder / "readings.csv").write_text("step,reading\n1,0.3\n")
+    with pytest.raises(MachineError, match="which was changed") as raised:
+        package.write([sheet, listed], output=tmp_path, name="X-1_A")
+    assert "move it out" in raised.value.fix
+    assert (folder / "readings.csv").read_text() == "step,reading\n1,0.3\n"
+
+
+def test_a_folder_that_is_no_package_is_not_replaced(tmp_path: Path) -> None:
+    (tmp_path / "X-1_A").mkdir()
+    (tmp_path / "X-1_A" / "thesis.txt").write_text("mine")
+    with pytest.raises(MachineError, match="holds thesis"):
+        package.write(NEW, output=tmp_path, name="X-1_A")
+    assert (tmp_path / "X-1_A" / "thesis.txt").read_text() == "mine"
 
 
 def test_a_link_where_the_package_should_be_is_not_followed(tmp_path: Path) -> None:
