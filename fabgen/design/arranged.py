@@ -117,7 +117,7 @@ class Placed:
     """One part at one place.
 
     Attributes:
-        name: occurrence name, ASCII, unique, for example `D1 bush +y`.
+        name: occurrence name, ASCII, unique, for example `D1 bush left`.
         owner: the element id, `boom`, `feed` or `clamp`.
         part: file in `model/parts`.
         parameters: its keyword arguments, sorted by name; part and parameters together are a distinct part.
@@ -156,7 +156,7 @@ class Interface:
 
     Attributes:
         first, second: occurrence names.
-        kind: for example `bore on rod`, `spigot in hole`, `flange on wall`, `keeper on flange`.
+        kind: for example `bore on rod`, `spigot in hole`, `saddle on boom`, `thread in wall`.
         gap_mm: the smallest nominal distance between the two solids; 0 where they touch.
         fit_mm: diametral clearance, negative for a grip; None where the interface is a face.
     """

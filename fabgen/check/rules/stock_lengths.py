@@ -8,7 +8,7 @@ from fabgen.design.findings import Finding
 
 
 def findings(arranged: Arranged) -> Iterator[Finding]:
-    """A03 a rod longer than its bar, A04 the boom; trim counted, the bar's rough end not."""
+    """A03 a rod longer than its bar, A04 the boom; its trim and the bar's rough end counted."""
     shop = arranged.design.shop
     for cut in arranged.cuts:
         rod = cut.stock == "rod"
