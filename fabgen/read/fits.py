@@ -7,7 +7,9 @@ import math
 from typing import Literal
 
 from fabgen.design.design import AllowanceChoice, Boom, Bush, Keeper, Material, Mount, Saddle, Style
-from fabgen.physics.split_ring import largest_push_ring_outside_mm
+from fabgen.design.keeper_sizes import snap_keeper_size
+from fabgen.design.wall_depth import wall_depth_mm
+from fabgen.physics.split_ring import largest_push_ring_outside_mm, push_ring_strain, snap_clip_strain
 from fabgen.read.compound import table_material
 from fabgen.read.grammar import AllowanceKeys, BushKeys, KeeperKeys, MountKeys, SaddleKeys
 from fabgen.read.reasons import Reasons
@@ -22,6 +24,12 @@ HOLE_OVER_ROD_MM: dict[Style, float] = {
 
 SNAP_GRIP_MM = 0.2
 """What a snap keeper's bore is below the rod; common practice."""
+
+LESSER_SNAP_GRIPS_MM = (0.15, 0.1, 0.05)
+"""Grips of a C-clip on rods too thin for the usual one."""
+
+CLIP_OVER_ROD_MM = (1.2, 3.2)
+"""What a C-clip is wider than its rod by, at least and at most; common practice."""
 
 LESSER_GRIPS_MM = (0.25, 0.2, 0.15, 0.1)
 """Grips of a split ring on rods too thin for the usual one."""
@@ -123,7 +131,10 @@ def _bush(path: str, keys: BushKeys, rod_mm: float, hole_mm: float, boom: Boom, 
         )
     )
     if boom.hollow:
-        length_mm, why = boom.wall_mm + beyond, f"computed, wall + {beyond:g} mm"
+        through_mm = wall_depth_mm(boom, hole_mm)
+        length_mm, why = through_mm + beyond, f"computed, wall + {beyond:g} mm"
+        if through_mm > boom.wall_mm:
+            length_mm, why = math.ceil(length_mm * 10 - 1e-6) / 10, f"computed, wall at the hole's side + {beyond:g} mm"
     else:
         length_mm, why = boom.width_mm / 2 - 0.5, "computed, half the solid bar − 0.5 mm"
     pick = reasons.pick
@@ -143,8 +154,8 @@ def _keeper(path: str, keys: KeeperKeys, rod_mm: float, bush: Bush | None, reaso
     usual: Literal["push-ring", "snap"] = "push-ring"
     kind = pick(f"{path}.kind", keys.kind, usual)
     if kind == "snap":
-        bore_mm, why_bore = _tidy(rod_mm - SNAP_GRIP_MM), f"computed, rod − {SNAP_GRIP_MM:g} mm"
-        outside_mm, why_outside = _tidy(rod_mm + min(3.2, 0.8 * rod_mm)), "computed, rod + 3.2 mm, 1.8 × rod if thin"
+        bore_mm, why_bore = default_snap_bore_mm(rod_mm)
+        outside_mm, why_outside = default_snap_outside_mm(rod_mm, keys.bore_mm or bore_mm)
     else:
         bore_mm, why_bore = default_ring_bore_mm(rod_mm)
         largest_mm = bush.flange_mm - 1 if bush is not None else rod_mm + 6
@@ -157,6 +168,42 @@ def _keeper(path: str, keys: KeeperKeys, rod_mm: float, bush: Bush | None, reaso
         outside_mm=pick(f"{path}.outside", keys.outside_mm, outside_mm, why_outside),
         length_mm=pick(f"{path}.length", keys.length_mm, 6.0 if kind == "snap" else 5.0),
     )
+
+
+def default_snap_bore_mm(rod_mm: float) -> tuple[float, str]:
+    """Bore of a C-clip and its reason: the usual grip, or less where it would not hold or would strain too far."""
+    for grip in (SNAP_GRIP_MM, *LESSER_SNAP_GRIPS_MM):
+        if _widest_clip_mm(rod_mm, rod_mm - grip) > 0:
+            why = "" if grip == SNAP_GRIP_MM else f": {SNAP_GRIP_MM:g} mm would strain it over {_limit_percent():g} %"
+            return _tidy(rod_mm - grip), f"computed, rod − {grip:g} mm{why}"
+    return _tidy(rod_mm * 0.97), "computed, 0.97 × rod"
+
+
+def default_snap_outside_mm(rod_mm: float, bore_mm: float) -> tuple[float, str]:
+    """Outside of a C-clip and its reason: the thickest one that strain allows, up to rod + 3.2 mm."""
+    widest_mm = _widest_clip_mm(rod_mm, bore_mm)
+    if not widest_mm:
+        return _tidy(rod_mm + CLIP_OVER_ROD_MM[0]), f"computed, rod + {CLIP_OVER_ROD_MM[0]:g} mm"
+    return widest_mm, f"computed, the thickest clip up to {_limit_percent():g} % strain"
+
+
+def _widest_clip_mm(rod_mm: float, bore_mm: float) -> float:
+    """Outside of the thickest clip within the strain limit, in steps of 0.2 mm; 0 where none holds the rod."""
+    thinnest, thickest = CLIP_OVER_ROD_MM
+    over_mm = thickest
+    while over_mm >= thinnest - 1e-9:
+        try:
+            clip = snap_keeper_size(
+                rod_diameter_mm=rod_mm, bore_mm=bore_mm, outside_diameter_mm=_tidy(rod_mm + over_mm)
+            )
+        except ValueError:
+            return 0.0
+        passing = snap_clip_strain(rod_mm=rod_mm, bore_mm=bore_mm, outside_mm=clip.outside_mm, mouth_mm=clip.mouth_mm)
+        sitting = push_ring_strain(rod_mm=rod_mm, bore_mm=bore_mm, outside_mm=clip.outside_mm)
+        if 100 * max(passing, sitting) <= _limit_percent():
+            return clip.outside_mm
+        over_mm -= 0.2
+    return 0.0
 
 
 def default_ring_bore_mm(rod_mm: float) -> tuple[float, str]:

@@ -1,6 +1,5 @@
 """Does every bush go into its hole, with plastic enough round the rod and through the wall?"""
 
-import math
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding
@@ -8,6 +7,7 @@ from fabgen.check.tolerances import drilled_over_mm, printed_accuracy_mm
 from fabgen.design.arranged import Arranged
 from fabgen.design.design import Boom, Bush, Element
 from fabgen.design.findings import Finding
+from fabgen.design.wall_depth import wall_depth_mm
 from fabgen.stock import tables
 
 LOOSEST_MM = 0.6
@@ -60,11 +60,3 @@ def _length(element: Element, bush: Bush, hole_mm: float, boom: Boom) -> Iterato
     if bush.spigot_length_mm < through_mm - 1e-9:
         advice = "the hole's inner edge stays bare and cuts the rod's bearing short; make spigot_length longer"
         yield finding("F05", "warn", element.id, advice, measured=bush.spigot_length_mm, required=through_mm, unit="mm")
-
-
-def wall_depth_mm(boom: Boom, hole_mm: float) -> float:
-    """From the outer surface (round: the crown) down to where a hole leaves the wall at its lowest edge."""
-    inner_mm, half_mm = boom.inside_width_mm / 2, hole_mm / 2
-    if boom.section != "round" or half_mm >= inner_mm:
-        return boom.wall_mm
-    return boom.width_mm / 2 - math.sqrt(inner_mm**2 - half_mm**2)
