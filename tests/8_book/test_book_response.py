@@ -127,3 +127,9 @@ def test_thick_rods_get_no_absolute_picture(limited: Book) -> None:
     body = text_of(replace(limited, response=response), "response")
     assert "Nothing absolute is stated" in body
     assert "<svg" not in body
+
+
+def test_sources_name_the_tables_behind_the_tolerances(limited: Book, general: Book) -> None:
+    assert "Classes of tolerance" in text_of(limited, "sources")
+    assert "Conductivity of rods" in text_of(general, "sources")
+    assert "Classes of tolerance" not in text_of(general, "sources")

@@ -59,11 +59,19 @@ def _tables(book: Book) -> Iterator[str]:
         yield "iso7089_washers"
     yield "edge_distance"
     yield "process"
+    yield from _tables_of_the_solver(book)
     if book.aids:
         yield "din179_bushings"
     if any(each.source == "printed" for each in placed):
         yield "print_practice"
     yield "paper"
+
+
+def _tables_of_the_solver(book: Book) -> Iterator[str]:
+    if book.response is not None:
+        yield "conductivity"
+        if book.response.allotment is not None:
+            yield "tolerance_classes"
 
 
 def _once(sources: Iterable[str]) -> list[str]:
