@@ -11,6 +11,7 @@ from fabgen.check.mount_shift import mount_shift
 from fabgen.correct.ledger import correct
 from fabgen.design.allotted import with_tolerances
 from fabgen.design.arranged import Arranged
+from fabgen.design.design import Design
 from fabgen.design.findings import Finding, clear, in_order
 from fabgen.design.response import Response
 from fabgen.frozen import frozen
@@ -58,12 +59,23 @@ def check(path: Path, *, solve: bool = False, keep: bool = False) -> Judged:
         DesignErrors: the file is no valid design.
     """
     reading = read_design(path)
-    ledger = correct(reading.design)
-    general = arrange(reading.design, ledger)
+    general = _arranged(reading.design)
     response, electric = electrical(general, records_folder(path), solve=solve, keep=keep)
     arranged = with_tolerances(general, response)
     judged = [*reading.notes, *judge(arranged), *electric, *mount_shift(arranged, response)]
     return Judged(reading, arranged, in_order(judged), response)
+
+
+def _arranged(design: Design) -> Arranged:
+    """Lengths and arrangement; a clamp beside a rod makes its length less certain, so lengths are asked twice."""
+    ledger = correct(design)
+    found = arrange(design, ledger)
+    if found.clamp_mm is None or design.clamp is None:
+        return found
+    half_mm = found.clamp_width_mm / 2
+    placed = replace(design.clamp, span_mm=(found.clamp_mm - half_mm, found.clamp_mm + half_mm))
+    settled = correct(replace(design, clamp=placed))
+    return found if settled == ledger else arrange(design, settled)
 
 
 def drawn(judged: Judged) -> Judged:

@@ -36,11 +36,20 @@ def as_boom_mount(geometry: MountGeometry) -> BoomMount:
 
 
 def surroundings(design: Design, element: Element) -> Surroundings:
-    """How far the boom's ends and the nearest other rod are from a rod."""
+    """How far the boom's ends, the nearest other rod and the clamp are from a rod."""
     stations = [other.station_mm for other in design.elements if other.id != element.id]
     through = [other.station_mm for other in design.elements if other.mount is not None]
     return Surroundings(
         end_distance_mm=min(element.station_mm, design.boom.length_mm - element.station_mm),
         neighbour_distance_mm=min((abs(station - element.station_mm) for station in stations), default=None),
+        widening_distance_mm=_to_clamp_mm(design, element.station_mm),
         interior=min(through) < element.station_mm < max(through),
     )
+
+
+def _to_clamp_mm(design: Design, station_mm: float) -> float | None:
+    """From a rod to the clamp's plate; None while the clamp has no place."""
+    if design.clamp is None or design.clamp.span_mm is None:
+        return None
+    low_mm, high_mm = design.clamp.span_mm
+    return max(0.0, low_mm - station_mm, station_mm - high_mm)

@@ -247,12 +247,18 @@ class Feed:
 
 @frozen
 class Clamp:
-    """Boom to mast; `at_mm` is None for the free place nearest to the balance point."""
+    """Boom to mast.
+
+    Attributes:
+        at_mm: None for the free place nearest to the balance point.
+        span_mm: from where to where along the boom it reaches, once it has its place.
+    """
 
     at_mm: float | None
     mast_mm: float
     plate_mm: float
     material: Material
+    span_mm: tuple[float, float] | None = None
 
 
 @frozen

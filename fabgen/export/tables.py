@@ -5,14 +5,14 @@ import io
 from collections import Counter
 from collections.abc import Iterable, Sequence
 
-from fabgen.design.arranged import Arranged, Cut, CutPlan
+from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.ledger import Ledger
 from fabgen.design.package import PackageFile
 from fabgen.units import format_mm
 
 LENGTHS = (
     "element", "role", "station_mm", "rod_mm", "modelled_mm", "allowance_mm", "allowance_origin", "allowance_u_mm",
-    "rod_change_mm", "rounding_mm", "cut_mm", "tolerance_mm", "trim_mm", "allowance_u_khz", "allowance_source",
+    "rod_change_mm", "rounding_mm", "cut_mm", "tolerance_mm", "trim_mm",
 )  # fmt: skip
 DRILLING = (
     "piece", "hole", "element", "station_mm", "wall", "angle_deg", "across_mm", "diameter_mm", "pilot_mm",
@@ -20,7 +20,6 @@ DRILLING = (
 )  # fmt: skip
 CUT_LIST = (
     "piece", "element", "rod_mm", "material", "cut_mm", "trim_mm", "half_mm", "projection_mm", "tolerance_mm", "bar",
-    "allowance_origin", "allowance_u_mm", "allowance_u_khz",
 )  # fmt: skip
 PARTS = ("part", "quantity", "source", "material", "size", "mass_g")
 
@@ -48,7 +47,7 @@ def lengths_csv(ledger: Ledger) -> bytes:
             (
                 line.element, line.role, line.station_mm, line.rod_mm, line.modelled_mm, line.allowance.value_mm,
                 line.allowance.origin, line.allowance.u_mm, line.rod_change_mm, line.rounding_mm, line.cut_mm,
-                line.tolerance_mm, line.trim_mm, line.shift_khz, line.allowance.source,
+                line.tolerance_mm, line.trim_mm,
             )
             for line in ledger.lines
         ),
@@ -76,19 +75,11 @@ def cut_list_csv(arranged: Arranged, plan: CutPlan) -> bytes:
         (
             (
                 cut.piece, cut.element, cut.rod_mm, cut.material, cut.cut_mm, cut.trim_mm, cut.half_mm,
-                cut.projection_mm, cut.tolerance_mm, plan.bar_of(cut.piece), *_allowance(arranged.ledger, cut),
+                cut.projection_mm, cut.tolerance_mm, plan.bar_of(cut.piece),
             )
             for cut in arranged.cuts
         ),
     )  # fmt: skip
-
-
-def _allowance(ledger: Ledger, cut: Cut) -> tuple[str, float | str, float | str]:
-    """Origin of the allowance in a sawn length, its u in mm and in kHz; empty for the boom."""
-    for line in ledger.lines:
-        if line.element == cut.element:
-            return line.allowance.origin, line.allowance.u_mm, line.shift_khz
-    return "", "", ""
 
 
 def parts_csv(arranged: Arranged) -> bytes:

@@ -4,16 +4,19 @@ import csv
 import io
 import math
 from collections.abc import Callable
+from pathlib import Path
 
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
+from fabgen import pipeline
 from fabgen.correct.ledger import correct
 from fabgen.design.design import Design
 from fabgen.design.ledger import Allowance, Ledger, LedgerLine
 from fabgen.export.tables import lengths_csv
 from fabgen.physics import published_boom
+from fabgen.read.reader import read_design
 
 Variant = Callable[..., Design]
 COMPUTED = "allowance: {origin: computed}"
@@ -200,3 +203,13 @@ def test_rounding_never_moves_a_length_by_more_than_half_a_step(step: float, len
 
     cut = _nearest_step_um(round(Fraction(length) * 1000), step)
     assert abs(cut - 1000 * length) <= 500 * step + 1
+
+
+def test_a_clamp_beside_a_rod_makes_its_length_less_certain(root: Path) -> None:
+    """The river gauge's clamp stands 11 mm from D5: a tenth of its allowance joins the others in quadrature."""
+    ledger = pipeline.check(root / "designs" / "river-gauge-434.yaml").arranged.ledger
+    design = read_design(root / "designs" / "river-gauge-434.yaml").design
+    alone, beside = correct(design).line("D5").allowance, ledger.line("D5").allowance
+    assert beside.value_mm == alone.value_mm
+    assert beside.u_mm == pytest.approx(math.hypot(alone.u_mm, 0.1 * alone.value_mm), rel=1e-3)
+    assert ledger.line("D8").allowance.u_mm == correct(design).line("D8").allowance.u_mm

@@ -266,3 +266,13 @@ def test_the_lengths_to_solve_span_the_table(variant: Variant) -> None:
     assert solve_tasks(replace(design, records=(solved(design, hole_mm=9.0),)))[0].stored == ""
     with pytest.raises(InputError, match="no rod is carried by a mount other"):
         solve_tasks(design, "other")
+
+
+def test_a_screw_through_the_middle_is_said_to_bond_nothing(variant: Variant) -> None:
+    """Electrically the rod is insulated in its holes: the same value as with keepers, and the reason beside it."""
+    kept = variant(AUTO)
+    screwed = variant(AUTO, ("keeper: {kind: push-ring, material: ASA}", "hold: middle-screw"))
+    found = allowance(screwed)
+    assert found.value_mm == allowance(kept).value_mm
+    assert any(remark.code == "L05" and "bonds nothing" in remark.text for remark in found.remarks)
+    assert not any("bonds nothing" in remark.text for remark in allowance(kept).remarks)

@@ -119,6 +119,6 @@ def test_a_clamp_near_a_rod(found, made, advice):
     near = far | {"clamp.at": 387 + 39 + half_mm}
     assert found("clamp_near_rod", near) == [("L18", "note", "D2", 39, 40)]
     allowance_mm = made(near).ledger.line("D2").allowance.value_mm
-    assert f"gains {0.1 * allowance_mm:.2f} mm" in advice("clamp_near_rod", near)
+    assert f"adds up to {0.1 * allowance_mm:.2f} mm" in advice("clamp_near_rod", near)
     assert found("clamp_near_rod", near | {"clamp": None}) == []
     assert found("clamp_near_rod", near | {"lengths_are": "as-cut"}) == []

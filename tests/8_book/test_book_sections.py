@@ -10,10 +10,10 @@ from fabgen import registry
 from fabgen.book import exposure
 from fabgen.book.book import SECTIONS, Book, sections
 from fabgen.book.figures import Figure
-from fabgen.book.scale import axis
 from fabgen.book.sections import boom_sizes, cautions, cutting, drilling, mounts, printing
 from fabgen.book.wording import FILTERS
 from fabgen.design.arranged import Arranged, Bar, Cut
+from fabgen.design.scale import axis
 
 TOPICS = (
     "overhead-lines", "work-at-height", "wind-and-falling-parts", "clamps-and-masts", "rod-tips-and-eyes", "exposure",

@@ -4,10 +4,10 @@ from collections.abc import Callable, Iterable
 from dataclasses import replace
 
 from fabgen.book.book import Book, Content
-from fabgen.book.scale import Axis, axis
 from fabgen.design.design import Mount
 from fabgen.design.ledger import LedgerLine
 from fabgen.design.records import MeasuredRecord
+from fabgen.design.scale import Axis, axis
 from fabgen.frozen import frozen
 from fabgen.physics.boom_closed_form import closed_form_allowance
 from fabgen.physics.boom_coupon import allowance_from_reactance_factor_mm

@@ -3,8 +3,8 @@
 from collections.abc import Callable
 
 from fabgen.book.book import Book, Content
-from fabgen.book.scale import Axis, axis
 from fabgen.design.response import Response, Sensitivity
+from fabgen.design.scale import Axis, axis
 from fabgen.frozen import frozen
 from fabgen.stock.electrical import tolerance_classes
 

@@ -1,9 +1,9 @@
 """What is in print for each mount, beside what this design uses: values, ranges, sources, and their spread."""
 
 from fabgen.book.book import Book, Content
-from fabgen.book.scale import Axis, axis
 from fabgen.design.design import Design, Mount
 from fabgen.design.ledger import LedgerLine
+from fabgen.design.scale import Axis, axis
 from fabgen.frozen import frozen
 from fabgen.physics.half_wave import shift_khz
 

@@ -3,8 +3,8 @@
 import math
 
 from fabgen.book.book import Book, Content
-from fabgen.book.scale import Axis, axis
 from fabgen.design.response import Pattern, Response
+from fabgen.design.scale import Axis, axis
 from fabgen.frozen import frozen
 
 PLACE = 53

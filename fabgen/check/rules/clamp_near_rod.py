@@ -1,6 +1,5 @@
 """Does the clamp stand so near to a rod that it acts as a wider boom?"""
 
-import math
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding
@@ -16,7 +15,7 @@ U_SHARE = 0.10
 
 
 def findings(arranged: Arranged) -> Iterator[Finding]:
-    """L18: told once, with the nearest rod's distance; it is not in the ledger, which knows no clamp."""
+    """L18: told once, with the nearest rod's distance."""
     design, limit_mm = arranged.design, NEAR_IN_BOOMS * arranged.design.boom.width_mm
     if arranged.clamp_mm is None or not design.boom.material.conductive:
         return
@@ -29,10 +28,10 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     if near:
         nearest_mm = max(0.0, min(mm for mm, _ in near))
         worst_mm = max(U_SHARE * abs(line.allowance.value_mm) for _, line in near)
-        with_it_mm = max(math.hypot(line.u_mm, U_SHARE * line.allowance.value_mm) for _, line in near)
         where = names([element.id for element in design.elements], [line.element for _, line in near])
         advice = (
-            f"it acts as a wider boom there: u gains {worst_mm:.2f} mm in quadrature, {with_it_mm:.2f} mm in all "
-            "(own study 2026, a judgement, unpublished); move the clamp to a longer gap, or leave it"
+            f"it adds up to {worst_mm:.2f} mm of uncertainty in quadrature, counted in the ledger of computed and "
+            "measured allowances (own study 2026, a judgement, unpublished); move the clamp to a longer gap, or leave "
+            "it"
         )
         yield finding("L18", "note", where, advice, measured=nearest_mm, required=limit_mm, unit="mm")
