@@ -11,6 +11,11 @@ from fabgen.correct.published import published, published_values
 from fabgen.design.design import AllowanceChoice, Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
 
+MIDDLE_SCREW = (
+    "the screw through a rod's middle holds it and bonds nothing: the middle is at the boom's potential anyway, so the "
+    "allowance is that of an insulated rod"
+)
+
 
 def allowance(design: Design, element: Element) -> Allowance:
     """The length to add to one rod, with origin, uncertainty and the published values beside it.
@@ -28,7 +33,10 @@ def allowance(design: Design, element: Element) -> Allowance:
         return Allowance(0.0, "none", source="lengths are as cut: nothing is added", needed=False)
     if not _metal_beside(design, element.mount) and element.mount.allowance.origin in ("none", "auto"):
         return Allowance(0.0, "none", source="no metal boom", needed=False)
-    return _of_mount(design, element, element.mount)
+    found = _of_mount(design, element, element.mount)
+    if element.mount.hold == "middle-screw" and found.needed:
+        return replace(found, remarks=(*found.remarks, Remark("L05", MIDDLE_SCREW)))
+    return found
 
 
 def _of_feed(design: Design, element: Element) -> Allowance:

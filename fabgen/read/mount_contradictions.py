@@ -22,7 +22,7 @@ _WHY = {
     "bush": "bushes belong to insulated-through",
     "saddle": "saddles belong to on-top",
     "keeper": "the joint itself holds a bonded rod",
-    "hold": "the joint itself holds a bonded rod",
+    "hold": "the joint itself holds a bonded rod, and a screw through its middle bonds nothing",
     "hole": "nothing is drilled through for a rod on top",
 }
 
