@@ -20,6 +20,7 @@ from fabgen.design.records import MountGeometry
 from fabgen.errors import InputError
 from fabgen.physics.boom_coupon import good_coupon_boom_mm
 from fabgen.physics.boom_differences import nearest_closed_form_mm
+from fabgen.physics.boom_mount import Section
 from fabgen.pipeline import Judged, check
 from fabgen.stock.tables import material_names
 
@@ -109,7 +110,7 @@ def _plan(
 
     wl_mm, rod_mm = design.wavelength_mm, geometry.rod_diameter_mm
     middle_mm = sum(rods_mm) / len(rods_mm)
-    allowance_mm = nearest_closed_form_mm(as_boom_mount(geometry), middle_mm, design.frequency_mhz)
+    allowance_mm = _theory_mm(geometry, middle_mm)
     driven_mm = max(rod_mm, THINNEST_DRIVEN_MM)
     trims = coupon_array(
         rods_mm=rods_mm,
@@ -155,6 +156,18 @@ def _plan(
         holder=(),
         expected=expected,
     )
+
+
+def _theory_mm(geometry: MountGeometry, length_mm: float) -> float:
+    """What theory expects, whatever its range: of a flat boom the mean of the two square ones."""
+    mount, frequency_mhz = as_boom_mount(geometry), geometry.frequency_mhz
+    if mount.section is not Section.RECTANGULAR:
+        return nearest_closed_form_mm(mount, length_mm, frequency_mhz)
+    squares = (
+        replace(mount, section=Section.SQUARE, outside_mm=side_mm, height_mm=0.0)
+        for side_mm in (mount.outside_mm, mount.height_mm)
+    )
+    return sum(nearest_closed_form_mm(square, length_mm, frequency_mhz) for square in squares) / 2
 
 
 def _piece(design: Design, element: Element, plan: CouponPlan) -> Arranged:

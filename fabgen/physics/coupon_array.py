@@ -21,6 +21,9 @@ LEAST_SPACING_WL = 0.20
 DIRECTOR_WL = (0.42, 0.44)
 """Free lengths of the director between which the feed answers it well: shorter it does little, longer it takes over."""
 
+MIDDLE_REFLECTION, LEAST_WL = 1 / 3, 0.40
+"""Reflection at the middle length, SWR 2, above which a shorter director is taken, down to this length."""
+
 STEPS, SPAN_RELATIVE = 8, 0.05
 """Lengths of a trim series, and its span over the middle length: more, and a quadratic no longer follows."""
 
@@ -83,25 +86,34 @@ def coupon_array(
     wl_mm = LIGHT_MM_MHZ / frequency_mhz
     low_mm, high_mm = (part * wl_mm for part in DIRECTOR_WL)
     middle_mm = min(max(sum(rods_mm) / len(rods_mm), low_mm), high_mm)
-    step_mm = _whole(SPAN_RELATIVE * middle_mm / (STEPS - 1), cut_step_mm)
-    longest_mm = _whole(middle_mm + step_mm * (STEPS - 1) / 2, cut_step_mm)
-    free_mm = tuple(longest_mm - k * step_mm for k in range(STEPS))
-    added_mm = _whole(expected_allowance_mm, cut_step_mm)
+    fed_mm = rod_diameter_mm if driven_diameter_mm is None else driven_diameter_mm
     behind_mm = REFLECTOR_BEHIND_WL * wl_mm
     stations = (0.0, round(behind_mm, 1), round(behind_mm + spacing_mm, 1))
+    reflector_mm = _whole(REFLECTOR_WL * wl_mm, cut_step_mm)
 
-    fed_mm = rod_diameter_mm if driven_diameter_mm is None else driven_diameter_mm
+    def tuned(director_mm: float) -> RodArray:
+        """The array whose feed is resistive with that director."""
 
-    def rods(driven_mm: float) -> RodArray:
-        lengths = (_whole(REFLECTOR_WL * wl_mm, cut_step_mm), driven_mm, sum(free_mm) / STEPS)
-        return RodArray(stations, lengths, (rod_diameter_mm, fed_mm, rod_diameter_mm), 1)
+        def rods(driven_mm: float) -> RodArray:
+            lengths = (reflector_mm, driven_mm, director_mm)
+            return RodArray(stations, lengths, (rod_diameter_mm, fed_mm, rod_diameter_mm), 1)
 
-    def reactance_ohm(driven_mm: float) -> float:
-        return solve_array(rods(driven_mm), frequency_mhz).feed_impedance_ohm.imag
+        def reactance_ohm(driven_mm: float) -> float:
+            return solve_array(rods(driven_mm), frequency_mhz).feed_impedance_ohm.imag
 
-    driven_mm = float(brentq(reactance_ohm, 0.40 * wl_mm, 0.52 * wl_mm, xtol=0.01))
+        driven_mm = float(brentq(reactance_ohm, 0.40 * wl_mm, 0.52 * wl_mm, xtol=0.01))
+        return rods(_whole(driven_mm, cut_step_mm))
+
+    array = tuned(middle_mm)
+    while abs(feed_reflection(array, middle_mm, frequency_mhz)) > MIDDLE_REFLECTION and middle_mm > LEAST_WL * wl_mm:
+        middle_mm -= 0.0025 * wl_mm
+        array = tuned(middle_mm)
+    step_mm = _whole(SPAN_RELATIVE * middle_mm / (STEPS - 1), cut_step_mm)
+    longest_mm = _whole(middle_mm + step_mm * (STEPS - 1) / 2, cut_step_mm)
+    free_mm = tuple(round(longest_mm - k * step_mm, 6) for k in range(STEPS))
+    added_mm = _whole(expected_allowance_mm, cut_step_mm)
     return CouponArray(
-        rods(_whole(driven_mm, cut_step_mm)),
+        array,
         tuple(round(part * frequency_mhz, 1) if part != 1.0 else frequency_mhz for part in FREQUENCIES_RELATIVE),
         free_mm,
         tuple(round(length_mm + added_mm, 6) for length_mm in free_mm),
