@@ -3,6 +3,7 @@
 One JSON file, `records/<design stem>/response.json`, keyed by a hash of everything it was computed from.
 """
 
+import errno
 import json
 import os
 from dataclasses import asdict, fields
@@ -46,11 +47,15 @@ def store(folder: Path, response: Response) -> None:
     Raises:
         OSError: the disk or a permission is in the way.
     """
+    if folder.is_symlink() or folder.parent.is_symlink():
+        raise OSError(errno.ELOOP, "it is a link that may lead elsewhere", str(folder))
     folder.mkdir(parents=True, exist_ok=True)
     text = json.dumps(asdict(response), indent=1, ensure_ascii=False) + "\n"
     fresh = folder / f".{FILE}.{os.getpid()}"
     try:
-        fresh.write_text(text, encoding="utf-8", newline="\n")
+        fresh.unlink(missing_ok=True)
+        with fresh.open("x", encoding="utf-8", newline="\n") as out:
+            out.write(text)
         fresh.replace(folder / FILE)
     finally:
         fresh.unlink(missing_ok=True)

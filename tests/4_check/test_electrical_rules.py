@@ -1,7 +1,7 @@
 """Limits and other rods: every finding of the array solver with its code, figure and severity."""
 
 import json
-from dataclasses import replace
+from dataclasses import fields, replace
 from pathlib import Path
 from typing import Any
 
@@ -208,3 +208,34 @@ def test_allotted_tolerances_reach_ledger_cuts_and_holes(sound: Arranged) -> Non
         if after.purpose not in ("rod", "bush"):
             wanted = min(wanted, before.tolerance_mm)
         assert after == replace(before, tolerance_mm=wanted)
+
+
+def test_a_link_out_of_the_records_is_not_followed(sound: Arranged, tmp_path: Path) -> None:
+    elsewhere = tmp_path / "elsewhere"
+    elsewhere.mkdir()
+    (tmp_path / "records").mkdir()
+    (tmp_path / "records" / "gauge").symlink_to(elsewhere)
+    _, told = rules.electrical(sound, tmp_path / "records" / "gauge", solve=True, keep=True)
+    assert "E08" in {finding.code for finding in told}
+    assert list(elsewhere.iterdir()) == []
+
+
+@pytest.mark.parametrize("kept", [(1,), (0, 1), (1, 2)])
+@pytest.mark.parametrize("factor", [0.25, 1.0, 2.2])
+def test_odd_arrays_are_answered(sound: Arranged, kept: tuple[int, ...], factor: float, tmp_path: Path) -> None:
+    """One rod, two rods, rods far from half a wavelength: numbers that can be stored and read, and no exception."""
+    case = case_with(sound)
+    per_rod = {name: value for name, value in vars_of(case).items() if isinstance(value, tuple) and len(value) == 12}
+    some: dict[str, Any] = {name: tuple(value[index] for index in kept) for name, value in per_rod.items()}
+    some["modelled_mm"] = tuple(factor * length for length in some["modelled_mm"])
+    odd = replace(case, fed=kept.index(1), **some)
+    response = respond(odd)
+    store(tmp_path, response)
+    assert load(tmp_path, odd.sha256) == response
+    assert "NaN" not in (tmp_path / FILE).read_text(encoding="utf-8")
+    assert "Infinity" not in (tmp_path / FILE).read_text(encoding="utf-8")
+    assert found(odd, response)
+
+
+def vars_of(case: ElectricalCase) -> dict[str, Any]:
+    return {field.name: getattr(case, field.name) for field in fields(case)}

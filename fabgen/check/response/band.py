@@ -5,10 +5,10 @@ import math
 import numpy as np
 
 from fabgen.check.response.arrays import at_terminals
-from fabgen.check.response.gauge import Sampled
+from fabgen.check.response.gauge import Sampled, swr
 from fabgen.design.electrical_case import ElectricalCase
 from fabgen.design.response import SHARE_INSIDE, BandPoint, FanPoint, Pattern
-from fabgen.physics.array import RodArray, mismatch, solve_array, solve_band
+from fabgen.physics.array import RodArray, solve_array, solve_band
 from fabgen.physics.array_pattern import PatternCut, e_plane_cut, h_plane_cut, half_power_beamwidth_deg
 from fabgen.physics.array_shift import HALF_BAND
 from fabgen.physics.thin_rod_kernel import FloatArray
@@ -33,7 +33,7 @@ def band_points(case: ElectricalCase, array: RodArray) -> tuple[BandPoint, ...]:
     impedance = at_terminals(case, found.feed_impedance_ohm)
     columns = (
         found.frequency_mhz, found.gain_dbi, found.front_to_back_db, impedance.real, impedance.imag,
-        mismatch(impedance, case.reference_ohm),
+        swr(case, found.feed_impedance_ohm),
     )  # fmt: skip
     return tuple(BandPoint(*(round(float(cell), 4) for cell in row)) for row in zip(*columns, strict=True))
 

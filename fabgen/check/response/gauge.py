@@ -17,6 +17,10 @@ POINTS = 13
 """Frequencies of the shift measure; its sums over a smooth response need no more."""
 
 
+HIGHEST_MISMATCH = 999.0
+NO_GAIN_DBI = -99.0
+
+
 @frozen
 class Outcomes:
     """The four judged values of many builds, one entry per build."""
@@ -54,6 +58,13 @@ class Outcomes:
         )
 
 
+def swr(case: ElectricalCase, impedance_ohm: ComplexArray) -> FloatArray:
+    """Standing wave ratio at the feed's terminals; a feed that sends power back counts as the highest."""
+    with np.errstate(divide="ignore"):
+        found = mismatch(at_terminals(case, impedance_ohm), case.reference_ohm)
+    return np.asarray(np.where((found >= 1) & (found < HIGHEST_MISMATCH), found, HIGHEST_MISMATCH))
+
+
 def _most(limit: float | None) -> float:
     return np.inf if limit is None else limit
 
@@ -79,14 +90,14 @@ class Gauge:
     def judge(self, gain_dbi: FloatArray, back_front: ComplexArray, impedance_ohm: ComplexArray) -> Outcomes:
         """Judge builds by their response at `frequency_mhz`, builds by frequencies."""
         own = self.shift.frequency_mhz.size
+        gain_dbi = np.where(np.isfinite(gain_dbi), gain_dbi, NO_GAIN_DBI)
         shift = self.shift.measure(gain_dbi[:, :own], back_front[:, :own])
         band = self.in_band
-        swr = mismatch(at_terminals(self.case, impedance_ohm[:, band]), self.case.reference_ohm)
         return Outcomes(
             shift_khz=shift.shift_khz,
             gain_loss_db=(self.modelled_dbi[band] - gain_dbi[:, band]).max(axis=1),
             front_to_back_db=-20 * np.log10(np.abs(back_front[:, band]).max(axis=1)),
-            mismatch=np.where(swr >= 1, swr, np.inf).max(axis=1),
+            mismatch=swr(self.case, impedance_ohm[:, band]).max(axis=1),
         )
 
     def outcome(self, array: RodArray) -> Outcome:
@@ -105,11 +116,14 @@ class Gauge:
         Returns:
             the judged values, and the responses in the band.
         """
-        found = sample_band(array, self.frequency_mhz, BuildChanges(length_mm, station_mm, np.zeros_like(length_mm)))
+        changes = BuildChanges(length_mm, station_mm, np.zeros_like(length_mm))
+        with np.errstate(invalid="ignore", divide="ignore"):
+            found = sample_band(array, self.frequency_mhz, changes)
         outcomes = self.judge(found.gain_dbi, found.back_front, found.feed_impedance_ohm)
         order = np.argsort(self.frequency_mhz, kind="stable")
-        swr = mismatch(at_terminals(self.case, found.feed_impedance_ohm), self.case.reference_ohm)
-        sampled = Sampled(self.frequency_mhz, found.gain_dbi, found.front_to_back_db, np.where(swr >= 1, swr, np.inf))
+        gain_dbi = np.where(np.isfinite(found.gain_dbi), found.gain_dbi, NO_GAIN_DBI)
+        match = swr(self.case, found.feed_impedance_ohm)
+        sampled = Sampled(self.frequency_mhz, gain_dbi, found.front_to_back_db, match)
         return outcomes, sampled.taken(order)
 
 
