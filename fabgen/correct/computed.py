@@ -1,6 +1,7 @@
 """Allowances computed from the drawn mount, by a stored full solution or by closed form: theory, unmeasured."""
 
 from fabgen.correct.case import as_boom_mount, boom_mount, surroundings
+from fabgen.correct.remarks import advice_remarks, missing_remarks
 from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
 from fabgen.design.mount_geometry import mount_geometry
@@ -78,9 +79,9 @@ def _stale(
 def _allowance(
     result: BoomAllowance, source: str, values: tuple[PublishedValue, ...], remarks: tuple[Remark, ...] = ()
 ) -> Allowance:
-    remarks += tuple(Remark("L05", advice.value) for advice in result.advice)
+    remarks += advice_remarks(result)
     if result.allowance_mm is None or result.u_mm is None:
-        return Allowance(0.0, "none", published=values, missing=True, remarks=_misses(result) + remarks)
+        return Allowance(0.0, "none", published=values, missing=True, remarks=missing_remarks(result) + remarks)
     return Allowance(
         result.allowance_mm,
         "computed",
@@ -90,11 +91,3 @@ def _allowance(
         published=values,
         remarks=remarks,
     )
-
-
-def _misses(result: BoomAllowance) -> tuple[Remark, ...]:
-    return tuple(
-        Remark("L04", miss.reason.value, miss.measured, miss.required, miss.unit) if miss.required
-        else Remark("L04", miss.reason.value)
-        for miss in result.misses
-    )  # fmt: skip

@@ -4,6 +4,7 @@ import math
 from collections.abc import Iterator
 
 from fabgen.correct.case import as_boom_mount, surroundings
+from fabgen.correct.remarks import advice_remarks, missing_remarks
 from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
 from fabgen.design.mount_geometry import mount_geometry
@@ -91,14 +92,11 @@ def _carried(design: Design, element: Element, candidate: _Candidate, values: tu
         coupon_length_mm=record.modelled_mm,
         difference_u_relative=candidate.growth_relative,
     )
-    remarks = tuple(Remark("L05", advice.value) for advice in result.advice)
+    remarks = advice_remarks(result)
     if candidate.differing:
         remarks += (Remark("L07", f"{record.file} differs from the drawn mount: {candidate.named}"),)
     if result.allowance_mm is None or result.u_mm is None:
-        misses = tuple(
-            Remark("L04", miss.reason.value, miss.measured, miss.required, miss.unit) for miss in result.misses
-        )
-        return Allowance(0.0, "none", published=values, missing=True, remarks=misses + remarks)
+        return Allowance(0.0, "none", published=values, missing=True, remarks=missing_remarks(result) + remarks)
     return Allowance(
         result.allowance_mm,
         "measured",
