@@ -1,0 +1,38 @@
+"""What the physics has to say about an allowance, as remarks of the ledger."""
+
+from fabgen.design.ledger import Remark
+from fabgen.physics.boom_closed_form import BoomAllowance
+from fabgen.physics.boom_range import Advice
+
+_COMMANDS = {
+    Advice.SOLVE: "`fabgen solve`",
+    Advice.SOLVE_THIS_LENGTH: "`fabgen solve`",
+    Advice.MEASURE: "`fabgen coupon` writes what that takes",
+}
+"""The command that does what an advice asks for."""
+
+
+def advice_remarks(result: BoomAllowance) -> tuple[Remark, ...]:
+    """L05: what the builder should do or know.
+
+    Args:
+        result: an allowance, or why there is none.
+    """
+    return tuple(
+        Remark("L05", f"{advice.value}: {_COMMANDS[advice]}" if advice in _COMMANDS else advice.value)
+        for advice in result.advice
+    )
+
+
+def missing_remarks(result: BoomAllowance) -> tuple[Remark, ...]:
+    """L04: why there is no number.
+
+    Args:
+        result: an allowance without one.
+    """
+    return tuple(
+        Remark("L04", miss.reason.value, miss.measured, miss.required, miss.unit)
+        if miss.required
+        else Remark("L04", miss.reason.value)
+        for miss in result.misses
+    )
