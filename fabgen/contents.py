@@ -13,7 +13,7 @@ from fabgen.design.package import PackageFile
 from fabgen.design.response import Response
 from fabgen.design.solids import AssemblyItem, Print
 
-GROUPS = ("tables", "templates", "bench", "model", "prints", "fixtures", "book")
+GROUPS = ("tables", "templates", "bench", "drawings", "model", "prints", "fixtures", "book")
 """What `--only` can name."""
 
 CROWDED = 120
@@ -125,7 +125,14 @@ def _bench(order: Order) -> Files:
 
     design = order.arranged.design
     pages = sheets_of("bench", order.arranged, order.cut_plan, stamp=order.stamped)
-    files = [PackageFile("bench.pdf", pdf(pages, f"{design.number} {design.revision} bench"), "for the drill press")]
+    return (PackageFile("bench.pdf", pdf(pages, f"{design.number} {design.revision} bench"), "for the drill press"),)
+
+
+def _drawings(order: Order) -> Files:
+    from fabgen.draw.sheet_list import sheets_of
+    from fabgen.export.pdf import pdf
+
+    files: list[PackageFile] = []
     for sheet in sheets_of("drawings", order.arranged, order.cut_plan, stamp=order.stamped):
         files += _drawn(f"drawings/{sheet.name}", sheet, sheet.title)
         files.append(PackageFile(f"drawings/{sheet.name}.pdf", pdf([sheet], sheet.title), sheet.title))
@@ -222,6 +229,7 @@ _WRITERS: dict[str, Callable[[Order], Files]] = {
     "tables": _tables,
     "templates": _templates,
     "bench": _bench,
+    "drawings": _drawings,
     "model": _model,
     "prints": _prints,
     "fixtures": _fixtures,

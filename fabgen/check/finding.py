@@ -1,7 +1,7 @@
 """Short forms in which the rules write their findings."""
 
 from fabgen import registry
-from fabgen.design.findings import Finding, Severity
+from fabgen.design.findings import Finding, Severity, decimals
 
 _ROUNDING_MM = 1e-9
 
@@ -16,7 +16,7 @@ def finding(
     required: float | None = None,
     unit: str = "",
 ) -> Finding:
-    """One finding, titled by its code's page; numbers rounded to a thousandth.
+    """One finding, titled by its code's page; numbers rounded to a thousandth, wavelengths to a hundredth of that.
 
     Args:
         code: a code with a page in `fabgen/codes`.
@@ -27,7 +27,7 @@ def finding(
         required: the limit.
         unit: of both.
     """
-    numbers = [None if value is None else round(value, 3) + 0.0 for value in (measured, required)]
+    numbers = [None if value is None else round(value, decimals(unit)) + 0.0 for value in (measured, required)]
     return Finding(code, severity, where, numbers[0], numbers[1], unit, advice, registry.code_title(code))
 
 

@@ -35,12 +35,18 @@ class Finding:
     def __str__(self) -> str:
         numbers = ""
         if self.measured is not None:
-            numbers = f": {self.measured:.3f}"
+            digits = decimals(self.unit)
+            numbers = f": {self.measured:.{digits}f}"
             if self.required is not None:
-                numbers += f" against {self.required:.3f}"
+                numbers += f" against {self.required:.{digits}f}"
             numbers += f" {self.unit}" if self.unit else ""
         head = f"{self.code} {self.severity}: {self.where}: {self.title or 'finding'}{numbers}"
         return f"{head}\n    {self.advice}" if self.advice else head
+
+
+def decimals(unit: str) -> int:
+    """How many decimals a finding's numbers carry: three, of wavelengths five."""
+    return 5 if unit == "wl" else 3
 
 
 def in_order(findings: list[Finding]) -> tuple[Finding, ...]:

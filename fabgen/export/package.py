@@ -84,6 +84,7 @@ def _write_locked(files: Sequence[PackageFile], output: Path, name: str) -> Path
     if target.is_symlink() or (target.exists() and not target.is_dir()):
         raise MachineError(f"{target} is not a folder", "move it away; a package folder goes there")
     if target.exists():
+        _refuse_other_design(target, files)
         _refuse_strangers(target)
     try:
         for file in files:
@@ -108,6 +109,19 @@ def _repair(target: Path, fresh: Path, aside: Path) -> None:
     for rest in (fresh, aside):
         if rest.exists():
             shutil.rmtree(rest)
+
+
+def _refuse_other_design(target: Path, files: Sequence[PackageFile]) -> None:
+    """Raise when the folder is another design's: number `a_b` revision `c` and number `a` revision `b_c` share one."""
+    try:
+        old = json.loads((target / "manifest.json").read_bytes())
+        new = json.loads(next(file.data for file in files if file.path == "manifest.json"))
+        owners = [(str(each["number"]), str(each["revision"])) for each in (old, new)]
+    except (FileNotFoundError, ValueError, TypeError, KeyError, StopIteration):
+        return
+    if owners[0] != owners[1]:
+        number, revision = owners[0]
+        raise MachineError(f"{target} is the package of number {number} revision {revision}", "use another number")
 
 
 def _refuse_strangers(target: Path) -> None:

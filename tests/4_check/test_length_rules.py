@@ -21,7 +21,7 @@ def test_a_published_curve_beyond_its_range_warns(found):
     """DL6WU's curve ends at a boom of 0.055 wavelengths; 40 mm are 0.0579 at 434 MHz."""
     changes = {"boom.section": "round", "boom.outside": 40, "boom.corner_radius": None}
     changes["mounts.line.allowance"] = {"origin": "published", "model": "dl6wu"}
-    assert found("missing_allowance", changes) == [("L02", "warn", "R, D1, D2", round(40 / WL_MM, 3), 0.055)]
+    assert found("missing_allowance", changes) == [("L02", "warn", "R, D1, D2", round(40 / WL_MM, 5), 0.055)]
 
 
 def test_one_driven_element(found):
@@ -44,10 +44,10 @@ def test_thick_rods_and_booms(found):
     assert found("thickness_in_wavelengths") == []
     assert found("thickness_in_wavelengths", {"rods.diameter": 6.9, "mounts.line.hole": 12}) == []
     thick = {"rods.diameter": 8, "mounts.line.hole": 12}
-    assert found("thickness_in_wavelengths", thick) == [("L14", "warn", "R…D2", round(8 / WL_MM, 3), 0.01)]
+    assert found("thickness_in_wavelengths", thick) == [("L14", "warn", "R…D2", round(8 / WL_MM, 5), 0.01)]
     assert found("thickness_in_wavelengths", {"boom.outside": 37.9}) == []
     assert found("thickness_in_wavelengths", {"boom.outside": 40}) == [
-        ("L15", "warn", "boom", round(40 / WL_MM, 3), 0.055)
+        ("L15", "warn", "boom", round(40 / WL_MM, 5), 0.055)
     ]
 
 

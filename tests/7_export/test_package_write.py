@@ -220,3 +220,16 @@ def test_the_manifest_lists_every_file_with_its_hash() -> None:
     openssl = subprocess.run(["openssl", "dgst", "-sha256", "-r"], input=b"new b", capture_output=True, check=False)
     if openssl.returncode == 0:
         assert record["files"][0]["sha256"] == openssl.stdout.decode().split()[0]
+
+
+def test_another_designs_package_of_the_same_name_is_left_alone(tmp_path: Path) -> None:
+    def files(number: str, revision: str) -> tuple[PackageFile, ...]:
+        made = package.manifest(
+            NEW[1:], number=number, revision=revision, design_sha256="", verdict="clear", versions={"fabgen": "1"}
+        )
+        return (*NEW[1:], made)
+
+    package.write(files("a_b", "c"), output=tmp_path, name="a_b_c")
+    with pytest.raises(MachineError, match="is the package of number a_b revision c"):
+        package.write(files("a", "b_c"), output=tmp_path, name="a_b_c")
+    package.write(files("a_b", "c"), output=tmp_path, name="a_b_c")
