@@ -2,6 +2,7 @@
 
 import datetime as dt
 import hashlib
+import math
 from collections import defaultdict
 from collections.abc import Mapping, Sequence
 from dataclasses import asdict
@@ -26,6 +27,10 @@ METHOD = (
     "two trim series of one director, free and mounted, fitted together: one quadratic of length per reading and "
     "frequency, shifted by the allowance; weighted least squares"
 )
+
+
+MISFIT_RATIO = 0.0015
+"""What a quadratic misses of a reflection over a trim series of 5 % of the length; it counts with the noise."""
 
 
 class ReadingsRefusedError(FabgenError):
@@ -158,7 +163,7 @@ def channels_of(sheet: ReadingSheet) -> tuple[Channel, ...]:
                 "read both set-ups, free and mounted, at the same frequencies",
             )
         if kind == "reflection":
-            noise = [sheet.reflection_noise_ratio] * len(readings)
+            noise = [math.hypot(sheet.reflection_noise_ratio, MISFIT_RATIO)] * len(readings)
             channels.append(_channel("re", readings, [r.reflection.real for r in readings], noise))
             channels.append(_channel("im", readings, [r.reflection.imag for r in readings], noise))
         else:
@@ -169,8 +174,8 @@ def channels_of(sheet: ReadingSheet) -> tuple[Channel, ...]:
 
 def _square_noise(size: float, sheet: ReadingSheet) -> float:
     """What an SWR's noise makes of the square of the reflection's magnitude."""
-    noise = sheet.swr_noise_ratio * (1 - size) ** 2 / 2
-    return float((4 * size**2 * noise**2 + noise**4) ** 0.5)
+    noise = math.hypot(sheet.swr_noise_ratio * (1 - size) ** 2 / 2, MISFIT_RATIO)
+    return math.hypot(2 * size * noise, noise**2)
 
 
 def _channel(name: str, readings: Sequence[Reading], values: list[float], noise: list[float]) -> Channel:

@@ -102,6 +102,16 @@ def test_a_known_allowance_comes_back(plan: CouponArray, kind: str) -> None:
     assert abs(np.mean(errors)) < 0.05
 
 
+@pytest.mark.parametrize("kind", KINDS)
+def test_readings_without_noise_are_not_refused_for_it(plan: CouponArray, kind: str) -> None:
+    """A quadratic is no exact model; a very good instrument must not be punished for that."""
+    frequencies = (MHZ,) if kind != "swr" else (plan.frequencies_mhz[0], plan.frequencies_mhz[2])
+    sheet = Bench(plan, 4.7, frequencies).sheet(kind, random(), 1e-5)
+    fit = fit_trim_series(channels_of(sheet))
+    assert fit.allowance_mm == pytest.approx(4.7, abs=2 * fit.u_mm)
+    assert fit.u_mm < 0.12
+
+
 def test_the_readings_alone_explain_their_part_of_u(plan: CouponArray) -> None:
     """Four times the noise makes four times the part of u that the readings are answerable for, within sampling."""
     bench, parts = Bench(plan, 4.7, (MHZ,)), []
