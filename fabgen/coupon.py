@@ -65,6 +65,17 @@ def coupon_plan(design: Design, mount: str) -> tuple[CouponPlan, Arranged, Judge
     raise InputError(f"no test array for mount {mount}: {failing.code} {failing.where}: {failing.advice}")
 
 
+def other_rods_mm(design: Design, mount: str) -> tuple[float, ...]:
+    """Diameters of rods that the same mount carries and that this coupon says nothing about.
+
+    Args:
+        design: as read.
+        mount: the user's name for the mount.
+    """
+    diameters = [geometry.rod_diameter_mm for _, geometry in mounted_rods(design, mount)]
+    return tuple(sorted(set(diameters[1:]) - {diameters[0]}))
+
+
 def coupon_files(design: Design, mount: str, say: Say) -> tuple[CouponPlan, tuple[PackageFile, ...]]:
     """All files of a coupon package but its manifest.
 

@@ -9,7 +9,7 @@ import pytest
 
 from fabgen.book.procedure import procedure
 from fabgen.correct.coupon_record import mount_key, mounted_rods, record_coupon
-from fabgen.coupon import coupon_files, coupon_plan
+from fabgen.coupon import coupon_files, coupon_plan, other_rods_mm
 from fabgen.design.coupon import CouponPlan
 from fabgen.design.coupon_holder_sizes import coupon_holder_size
 from fabgen.design.design import Design
@@ -41,10 +41,15 @@ CASES = {
 }
 
 
+PLANS: dict[str, tuple[Design, CouponPlan, object, object]] = {}
+
+
 @pytest.fixture(params=CASES)
 def planned(variant: Variant, request: pytest.FixtureRequest) -> tuple[Design, CouponPlan, object, object]:
-    design = variant(*CASES[request.param])
-    return (design, *coupon_plan(design, "line"))
+    if request.param not in PLANS:
+        design = variant(*CASES[request.param])
+        PLANS[request.param] = (design, *coupon_plan(design, "line"))
+    return PLANS[request.param]
 
 
 def test_the_test_array_is_a_clear_design_of_three_rods(planned) -> None:
@@ -151,6 +156,13 @@ def test_a_mount_without_metal_has_no_coupon(variant: Variant, root: Path) -> No
     wood = read_design(root / "designs/sonde-finder-401.yaml").design
     with pytest.raises(InputError):
         coupon_plan(wood, "stick")
+
+
+def test_a_mount_with_two_kinds_of_rod_needs_two_coupons(variant: Variant) -> None:
+    design = variant(("length: 281.7}", "length: 281.7, diameter: 5 mm}"))
+    assert other_rods_mm(design, "line") == (5.0,)
+    assert other_rods_mm(variant(), "line") == ()
+    assert dict(coupon_plan(design, "line")[0].holder)["rod_diameter_mm"] == 4.0
 
 
 @pytest.mark.slow

@@ -15,7 +15,7 @@ def coupon(design: Path, mount: str, output: Path) -> int:
     With it the mount is measured on the bench; `fabgen record` then reads the filled-in sheet.
     """
     from fabgen.contents import versions
-    from fabgen.coupon import coupon_files
+    from fabgen.coupon import coupon_files, other_rods_mm
     from fabgen.export import package
     from fabgen.read.reader import read_design
 
@@ -31,5 +31,9 @@ def coupon(design: Path, mount: str, output: Path) -> int:
     )
     folder = package.write([*files, manifest], output=output, name=f"{read.name}_coupon-{mount}")
     click.echo(f"mount {mount}: expected allowance {plan.allowance_mm:.2f} mm (theory, unmeasured)")
+    for rod_mm in other_rods_mm(read, mount):
+        click.echo(
+            f"  rods of {rod_mm:g} mm in this mount need a coupon of their own: give them a mount of their own name"
+        )
     click.echo(str(folder))
     return 0
