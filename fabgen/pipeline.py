@@ -84,8 +84,7 @@ def drawn(judged: Judged) -> Judged:
     from fabgen.check.sheets import sheet_findings
     from fabgen.draw.sheet_list import PLACES, sheets_of
 
-    arranged = judged.arranged
-    cut_plan = plan(arranged.cuts, arranged.design.shop)
+    arranged, cut_plan = judged.arranged, plan(judged.arranged.cuts, judged.arranged.design.shop)
     sheets = [sheet for place in PLACES for sheet in sheets_of(place, arranged, cut_plan)]
     return replace(judged, findings=in_order([*judged.findings, *sheet_findings(sheets)]))
 
@@ -109,18 +108,12 @@ def build(judged: Judged, *, output: Path, stamped: bool = False, only: Sequence
     from fabgen.contents import package_files, versions
     from fabgen.export import package
 
-    design = judged.arranged.design
-    files = package_files(
-        judged.arranged, judged.findings, response=judged.response, stamped=stamped, only=only, say=say
-    )
+    arranged, design = judged.arranged, judged.arranged.design
+    files = package_files(arranged, judged.findings, response=judged.response, stamped=stamped, only=only, say=say)
     name = "_".join([design.name, *(["NOT-CLEARED"] if stamped else []), *(["only", *only] if only else [])])
     contents = package.manifest(
-        files,
-        number=design.number,
-        revision=design.revision,
-        design_sha256=design.sha256,
-        verdict=judged.verdict,
-        versions=versions(),
-    )
+        files, number=design.number, revision=design.revision, design_sha256=design.sha256,
+        verdict=judged.verdict, versions=versions(),
+    )  # fmt: skip
     say(f"{name}: writing {len(files) + 1} files")
     return package.write([*files, contents], output=output, name=name)
