@@ -13,7 +13,7 @@ _COMMANDS = {
 
 
 def advice_remarks(result: BoomAllowance) -> tuple[Remark, ...]:
-    """L05: what the builder should do or know.
+    """L05: what the builder should do or know; of a clamp near a rod a rule of its own speaks, L18.
 
     Args:
         result: an allowance, or why there is none.
@@ -21,6 +21,7 @@ def advice_remarks(result: BoomAllowance) -> tuple[Remark, ...]:
     return tuple(
         Remark("L05", f"{advice.value}: {_COMMANDS[advice]}" if advice in _COMMANDS else advice.value)
         for advice in result.advice
+        if advice is not Advice.MOVE_SPLICE
     )
 
 

@@ -186,7 +186,7 @@ def test_every_line_says_where_its_value_came_from(tmp_path: Path) -> None:
 
 def test_sizes_that_differ_by_rod_are_listed(tmp_path: Path) -> None:
     path = tmp_path / "d.yaml"
-    text = starter("trial").replace("length: 309", "length: 309, diameter: 5").replace(", hole: 8", "")
+    text = starter("trial").replace("length: 296", "length: 296, diameter: 5").replace(", hole: 8", "")
     path.write_text(text, encoding="utf-8")
     reading = read_design(path)
     shown = show(reading)
