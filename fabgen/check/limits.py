@@ -105,8 +105,8 @@ def _common(case: ElectricalCase, response: Response, told: set[str]) -> Iterato
         if name in told:
             continue
         advice = (
-            f"an allowance wrong by 2u on all rods at once (u {low_mm:.3g} to {high_mm:.3g} mm) takes {measured:.4g} "
-            f"{unit}".rstrip()
+            "an allowance wrong by 2u on all rods alike, the worst that it may do "
+            + f"(u {low_mm:.3g} to {high_mm:.3g} mm), takes {measured:.4g} {unit}".rstrip()
             + ", more than any care with saw and drill saves; measure the mount on a coupon, or trim"
         )
         yield finding("E04", "warn", name, advice, measured=measured, required=required, unit=unit)

@@ -10,7 +10,7 @@ from fabgen.design.limits import Limits
 from fabgen.frozen import frozen
 from fabgen.stock.electrical import conductivity_s_per_m, tolerance_classes
 
-METHOD = "thin-rod array, response 2"
+METHOD = "thin-rod array, response 3"
 """Changes when the computation changes, so that a response stored before no longer fits."""
 
 LOCATING = ("rod", "bush", "saddle screw", "bond screw", "middle screw", "feed screw")
@@ -32,6 +32,7 @@ class ElectricalCase:
         rod_change_mm: what another diameter adds to the length.
         rounding_mm: what rounding to the shop's step adds.
         allowance_u_mm: u of the mount's allowance, 0 for a rod without one.
+        common_u_mm: the part of it that is common to all rods for certain.
         length_tolerance_mm: general tolerance of the length, ±.
         station_tolerance_mm: general tolerance of the station, ±.
         spacing_mm: of a folded driven rod's limbs, 0 for a straight one.
@@ -53,6 +54,7 @@ class ElectricalCase:
     rod_change_mm: tuple[float, ...]
     rounding_mm: tuple[float, ...]
     allowance_u_mm: tuple[float, ...]
+    common_u_mm: tuple[float, ...]
     length_tolerance_mm: tuple[float, ...]
     station_tolerance_mm: tuple[float, ...]
     spacing_mm: float
@@ -114,6 +116,7 @@ def electrical_case(arranged: Arranged) -> ElectricalCase | None:
         rod_change_mm=tuple(line.rod_change_mm for line in lines),
         rounding_mm=tuple(line.rounding_mm for line in lines),
         allowance_u_mm=tuple(line.allowance.u_mm if line.allowance.needed else 0.0 for line in lines),
+        common_u_mm=tuple(min(line.allowance.correlated_u_mm, line.allowance.u_mm) for line in lines),
         length_tolerance_mm=tuple(line.tolerance_mm for line in lines),
         station_tolerance_mm=tuple(stations.get(element.id, 0.0) for element in design.elements),
         spacing_mm=_spacing_mm(feed),

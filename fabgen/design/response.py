@@ -130,11 +130,13 @@ class CommonError:
 
     Attributes:
         u_mm: smallest and largest u of an allowance in the ledger.
-        once: all rods off by one u (two times in three less), the worse of both directions.
+        certain: all rods off by twice the part of u that is common to them for certain.
+        once: all rods off by one u, the worse of both directions: what one formula for one mount may do at worst.
         twice: all rods off by two u (95 %).
     """
 
     u_mm: tuple[float, float]
+    certain: Outcome
     once: Outcome
     twice: Outcome
 

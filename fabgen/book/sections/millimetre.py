@@ -48,7 +48,13 @@ def content(book: Book) -> Content | None:
         "height_mm": HEAD_MM + row_mm * len(elements) + FOOT_MM,
         "foot_mm": HEAD_MM + row_mm * len(elements),
         "row_mm": row_mm,
-        "shares": [("±1u", found.common.once), ("±2u (95 %)", found.common.twice)] if found.common else [],
+        "shares": [
+            ("twice the part common for certain", found.common.certain),
+            ("1u, all alike", found.common.once),
+            ("2u, all alike", found.common.twice),
+        ]
+        if found.common
+        else [],
     }
 
 

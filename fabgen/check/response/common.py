@@ -23,7 +23,7 @@ def common_error(gauge: Gauge, array: RodArray) -> CommonError | None:
     if not counted:
         return None
 
-    def off_by(times: float) -> Outcome:
+    def off_by(times: float, u_mm: tuple[float, ...] = u_mm) -> Outcome:
         ends = []
         for sign in (-1.0, 1.0):
             lengths_mm = tuple(length + sign * times * u for length, u in zip(array.length_mm, u_mm, strict=True))
@@ -35,7 +35,8 @@ def common_error(gauge: Gauge, array: RodArray) -> CommonError | None:
             mismatch=max(end.mismatch for end in ends),
         )
 
-    return CommonError((round(min(counted), 4), round(max(counted), 4)), off_by(1.0), off_by(2.0))
+    certain = off_by(2.0, gauge.case.common_u_mm)
+    return CommonError((round(min(counted), 4), round(max(counted), 4)), certain, off_by(1.0), off_by(2.0))
 
 
 def left_over(gauge: Gauge) -> LeftOver | None:
