@@ -6,9 +6,20 @@ number: MANY-{count}
 revision: A
 frequency: 1296.2 MHz
 units: mm
-boom: {{section: square, outside: 12 mm, wall: 1.5 mm, corner_radius: 1 mm, material: EN AW-6060 T66, overhang: {{rear: 110 mm, front: 30 mm}}}}
+boom:
+  section: square
+  outside: 12 mm
+  wall: 1.5 mm
+  corner_radius: 1 mm
+  material: EN AW-6060 T66
+  overhang: {{rear: 110 mm, front: 30 mm}}
 mounts:
-  line: {{style: insulated-through, hole: 4.8 mm, bush: {{kind: shoulder, material: POM-C}}, keeper: {{kind: push-ring, material: POM-C}}, allowance: {{origin: published, model: dl6wu}}}}
+  line:
+    style: insulated-through
+    hole: 4.8 mm
+    bush: {{kind: shoulder, material: POM-C}}
+    keeper: {{kind: push-ring, material: POM-C}}
+    allowance: {{origin: published, model: dl6wu}}
 rods: {{diameter: 2 mm, material: EN AW-6060 T66}}
 elements:
 """

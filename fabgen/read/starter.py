@@ -1,7 +1,7 @@
 """The shortest design that builds, for a new file.
 
-Its three lengths are modelled with this program's own array solver: 7.2 dBi, front to back 20 dB and a mismatch below 1.2
-to 50 Ω at 434.2 MHz.
+Its three lengths are modelled with this program's own array solver: 7.2 dBi, front to back 20 dB and a mismatch below
+1.2 to 50 Ω at 434.2 MHz.
 """
 
 import re
