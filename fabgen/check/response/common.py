@@ -16,7 +16,7 @@ def common_error(gauge: Gauge, array: RodArray) -> CommonError | None:
 
     Args:
         gauge: what the result is held against.
-        array: as drawn.
+        array: its rods before rounding, so that the known error of rounding is not counted here.
     """
     u_mm = gauge.case.allowance_u_mm
     counted = [u for u in u_mm if u > 0]

@@ -5,7 +5,13 @@ from dataclasses import replace
 import numpy as np
 
 from fabgen.check.response.allot import allot, errors, spread, try_out
-from fabgen.check.response.arrays import absolute_values_hold, drawn_array, modelled_array, thickest_wl
+from fabgen.check.response.arrays import (
+    absolute_values_hold,
+    changed_array,
+    drawn_array,
+    modelled_array,
+    thickest_wl,
+)
 from fabgen.check.response.band import band_points, fan, patterns
 from fabgen.check.response.common import common_error, left_over
 from fabgen.check.response.gauge import gauge
@@ -53,7 +59,7 @@ def respond(case: ElectricalCase) -> Response:
         drawn=measure.outcome(drawn),
         allotment=allotment,
         spread=spread(measure, tried),
-        common=common_error(measure, drawn),
+        common=common_error(measure, changed_array(case)),
         left_over=left_over(measure),
         h_plane=h_plane,
         e_plane=e_plane,
