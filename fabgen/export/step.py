@@ -21,7 +21,7 @@ if TYPE_CHECKING:
 _REPRESENTATION = re.compile(r"\n#\d+ = ADVANCED_BREP_SHAPE_REPRESENTATION\('[^']*',\(([^)]*)\),\s*#(\d+)\);")
 _SOLID = re.compile(r"\n#(\d+) = MANIFOLD_SOLID_BREP\(")
 _OCCURRENCE = re.compile(
-    r"NEXT_ASSEMBLY_USAGE_OCCURRENCE\('\d+',\s*'((?:[^']|'')*)',\s*'',\s*(#\d+),\s*(#\d+),\s*\$\s*\);"
+    r"NEXT_ASSEMBLY_USAGE_OCCURRENCE\(\s*'\d+'\s*,\s*'((?:[^']|'')*)'\s*,\s*''\s*,\s*(#\d+)\s*,\s*(#\d+)\s*,\s*\$\s*\);"
 )
 _HEADER = re.compile(r"FILE_NAME\(.*?\);\n", flags=re.DOTALL)
 
@@ -138,12 +138,16 @@ def _text(written: str, name: str, colours: Sequence[Colour]) -> bytes:
     text = _HEADER.sub(lambda _: header, written, count=1)
     numbers = count(1)
     # The kernel breaks lines by length, so a longer counter would also move the break.
-    text = _OCCURRENCE.sub(
+    text, counted = _OCCURRENCE.subn(
         lambda found: "NEXT_ASSEMBLY_USAGE_OCCURRENCE('{}','{}','',{},{},$);".format(
             next(numbers), found[1].replace("\n", ""), found[2], found[3]
         ),
         text,
     )
+    if counted != text.count("NEXT_ASSEMBLY_USAGE_OCCURRENCE("):
+        raise ProgramError(
+            "a STEP file has occurrences that were not renumbered: its bytes would differ from run to run"
+        )
     end = text.index("ENDSEC;", text.index("\nDATA;"))
     used = int(re.findall(r"\n#(\d+) = ", text)[-1])
     styles = "".join(f"{line}\n" for line in _styles(text, colours, used))
