@@ -52,7 +52,7 @@ def _of_mount(design: Design, element: Element, mount: Mount) -> Allowance:
     if choice.origin == "stated":
         return _stated(choice, values)
     if choice.origin == "published":
-        return published(design, choice, values)
+        return published(design, mount, values)
     if choice.origin in ("measured", "auto", "computed") and _metal_beside(design, mount):
         return _found_out(design, element, mount, values)
     if choice.origin in ("measured", "computed"):

@@ -2,7 +2,7 @@
 
 import math
 
-from fabgen.design.design import AllowanceChoice, Design, Element, Mount
+from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
 from fabgen.physics import published_boom
 
@@ -27,11 +27,13 @@ def published_values(design: Design, element: Element, mount: Mount) -> tuple[Pu
     )
 
 
-def published(design: Design, choice: AllowanceChoice, values: tuple[PublishedValue, ...]) -> Allowance:
+def published(design: Design, mount: Mount, values: tuple[PublishedValue, ...]) -> Allowance:
     """The chosen model's value; its uncertainty is the spread of all printed values over √12."""
+    choice = mount.allowance
     chosen = next((value for value in values if value.model == choice.model and not value.is_bound), None)
     if chosen is None:
-        remark = Remark("L01", f"no value is in print by {choice.model} for this mount")
+        known = " or ".join(published_boom.published_models(mount.style)) or "nobody"
+        remark = Remark("L01", f"no value is in print by {choice.model} for this mount, only by {known}")
         return Allowance(0.0, "none", published=values, missing=True, remarks=(remark,))
     found = Allowance(chosen.value_mm, "published", source=chosen.source, published=values)
     remarks = []

@@ -14,9 +14,6 @@ practice with hand-held instruments."""
 COLUMNS = ("setup", "step", "length_mm", "frequency_mhz", "re", "im", "magnitude", "phase_deg", "swr")
 """Of the sheet of readings; a row holds `re` and `im`, or `magnitude` and `phase_deg`, or `swr`."""
 
-FEWEST_FREQUENCIES = 2
-"""Frequencies that SWR must be read at."""
-
 
 @frozen
 class Reading:
