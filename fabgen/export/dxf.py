@@ -41,6 +41,8 @@ def dxf(sheet: Sheet) -> bytes:
         for _, items in sheet.by_layer():
             for item in items:
                 _add(space, item)
+        for kind in sorted(document.entitydb.dxf_types_in_use()):  # the library would take them in order of a set
+            document.classes.add_class(kind)
         stream = io.StringIO(newline="\n")
         document.write(stream)
     finally:

@@ -147,7 +147,7 @@ def test_empty_sheet_is_a_document():
     assert entities(dxf(Sheet("s", "s", 100, 100, ())), "LINE") == []
 
 
-def test_same_bytes_in_one_process_and_in_two_with_other_hash_seeds():
+def test_same_bytes_in_one_process_and_in_six_with_other_hash_seeds():
     assert dxf(recorded()) == dxf(recorded())
     code = (
         "import sys; from fabgen.design.pen import Pen; from fabgen.export.dxf import dxf; pen = Pen();"
@@ -158,7 +158,7 @@ def test_same_bytes_in_one_process_and_in_two_with_other_hash_seeds():
         subprocess.run(
             [sys.executable, "-c", code], capture_output=True, check=True, env={**os.environ, "PYTHONHASHSEED": seed}
         ).stdout
-        for seed in ("1", "2")
+        for seed in map(str, range(1, 7))
     ]
-    assert runs[0] == runs[1]
+    assert len(set(runs)) == 1, "two seeds alone agreed by luck: the library takes some of its names from a set"
     assert len(runs[0]) > 1000

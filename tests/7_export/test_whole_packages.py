@@ -40,7 +40,7 @@ def hashes(folder: Path) -> dict[str, str]:
 
 @pytest.fixture(scope="module")
 def twice(tmp_path_factory: pytest.TempPathFactory) -> tuple[Path, Path]:
-    """The first demo design built by two processes with different hash seeds."""
+    """The river gauge built by two processes with different hash seeds; the tests' own process has a third."""
     folder = tmp_path_factory.mktemp("twice")
     for seed in ("1", "2"):
         build(DESIGNS / "river-gauge-434.yaml", folder / seed, seed)
