@@ -78,6 +78,16 @@ class Frame:
             o[2] + a * u[2] + b * v[2] + c * w[2],
         )
 
+    def local(self, point: Vector) -> Vector:
+        """A point of the array's frame seen from this one."""
+        (a, b, c), (u, v, w), o = point, (self.x, self.y, self.z), self.origin
+        a, b, c = a - o[0], b - o[1], c - o[2]
+        return (
+            a * u[0] + b * u[1] + c * u[2],
+            a * v[0] + b * v[1] + c * v[2],
+            a * w[0] + b * w[1] + c * w[2],
+        )
+
 
 @frozen
 class Box:

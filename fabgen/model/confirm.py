@@ -14,6 +14,7 @@ from fabgen.design.arranged import Cylinder, Frame, Interface, Placed
 from fabgen.errors import ProgramError
 from fabgen.model.envelope import outside_envelope
 from fabgen.model.fits import fits
+from fabgen.model.kernel import common
 from fabgen.model.neighbourhood import Body, neighbourhood, relative
 from fabgen.model.separation import separation_mm
 from fabgen.model.solids import location
@@ -133,4 +134,4 @@ def _formula_is_exact(first: Placed, second: Placed) -> bool:
 @functools.cache
 def _overlap_mm3(first: Body, second: Body, frame: Frame) -> float:
     """Common volume of two bodies, the second standing at `frame` in the first one's frame."""
-    return float(first.solid.intersect(second.solid.moved(location(frame))).Volume())
+    return float(common(first.solid, second.solid.moved(location(frame))).Volume())

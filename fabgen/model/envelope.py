@@ -2,16 +2,19 @@
 
 import functools
 import math
+from typing import Any
 
 from fabgen.design.arranged import Axis, Box, Cylinder, Frame, Parameters, Placed, Shape, Vector
 from fabgen.design.distances import bounding_box
-from fabgen.model.kernel import bounds_mm, cq
+from fabgen.model.kernel import bounds_mm, cq, cut
 from fabgen.model.solids import location, solid_of, without_growth
 
 _DECIMALS = 7
 _OUTSIDE_MM3 = 1e-6
 _BOX_MM = 1e-6
 _VOLUME_REL = 1e-9
+_UNDRILLED: dict[str, dict[str, Any]] = {"boom": {"holes": ()}, "rod": {"cross_hole_mm": 0.0, "cross_hole_z_mm": 0.0}}
+"""What a drill takes away lies within what it was taken from."""
 _AXES: dict[Axis, Vector] = {"x": (1.0, 0.0, 0.0), "y": (0.0, 1.0, 0.0), "z": (0.0, 0.0, 1.0)}
 
 
@@ -19,10 +22,10 @@ def outside_envelope(placed: Placed) -> str:
     """What the shapes of a placed part leave out of its solid, in words; empty when they hold it."""
     frame = Frame(z=placed.frame.z, x=placed.frame.x)
     shapes = tuple(_from_origin(shape, placed.frame.origin) for shape in placed.shapes)
-    parameters = without_growth(placed.parameters)
-    if placed.part == "boom":  # a drill only takes away
-        parameters = (*(pair for pair in parameters if pair[0] != "holes"), ("holes", ()))
-    return _outside(placed.part, parameters, frame, shapes, placed.exact)
+    parameters = dict(without_growth(placed.parameters))
+    if not placed.exact:
+        parameters |= _UNDRILLED.get(placed.part, {})
+    return _outside(placed.part, tuple(sorted(parameters.items())), frame, shapes, placed.exact)
 
 
 @functools.cache
@@ -38,7 +41,7 @@ def _outside(part: str, parameters: Parameters, frame: Frame, shapes: tuple[Shap
         above = [s - b for s, b in zip(high, box.high, strict=True)]
         over_mm = max(*below, *above)
         return f"{part} stands out of its shapes by {over_mm:.6f} mm" if over_mm > _BOX_MM else ""
-    left_mm3 = solid.cut(*(_solid(shape) for shape in shapes)).Volume()
+    left_mm3 = cut(solid, *(_solid(shape) for shape in shapes)).Volume()
     return f"{part} stands out of its shapes with {left_mm3:.6f} mm³" if left_mm3 > _OUTSIDE_MM3 else ""
 
 
@@ -68,5 +71,5 @@ def _solid(shape: Shape) -> cq.Shape:
     foot = cq.Vector(*shape.centre) - axis * (shape.length_mm / 2)
     full: cq.Shape = cq.Solid.makeCylinder(shape.diameter_mm / 2, shape.length_mm, foot, axis)
     if shape.bore_mm:
-        full = full.cut(cq.Solid.makeCylinder(shape.bore_mm / 2, shape.length_mm, foot, axis))
+        full = cut(full, cq.Solid.makeCylinder(shape.bore_mm / 2, shape.length_mm, foot, axis))
     return full

@@ -9,7 +9,7 @@ from OCP.TopAbs import TopAbs_Orientation
 
 from fabgen.design.arranged import Frame, Vector
 from fabgen.frozen import frozen
-from fabgen.model.kernel import cq
+from fabgen.model.kernel import cq, faces_of
 from fabgen.model.neighbourhood import Body
 from fabgen.model.solids import location
 
@@ -71,7 +71,7 @@ def fits(first: Body, second: Body, frame: Frame) -> tuple[Fit, ...]:
 def _barrels(shape: cq.Shape) -> list[_Barrel]:
     """The cylindrical faces; those that continue each other round one axis count once."""
     found: dict[tuple[object, ...], _Barrel] = {}
-    for face in shape.Faces():
+    for face in faces_of(shape):
         surface = BRepAdaptor_Surface(face.wrapped)
         if surface.GetType() != GeomAbs_SurfaceType.GeomAbs_Cylinder:
             continue

@@ -40,22 +40,21 @@ def neighbourhood(placed: Placed, other: Placed, distance_mm: float) -> tuple[Bo
     frame, margin_mm = placed.frame, distance_mm + _BEYOND_MM
     if placed.part == "boom":
         frame = _boom_piece(parameters, frame, _span(other, frame.origin, frame.x, margin_mm))
-    elif placed.part == "rod":
+    elif placed.part == "rod" and not parameters.get("cross_hole_mm"):
         frame = _rod_piece(parameters, frame, _span(other, frame.origin, frame.z, margin_mm))
     return Body(placed.part, tuple(sorted(parameters.items()))), frame
 
 
 def relative(first: Frame, second: Frame) -> Frame:
     """Where the second frame stands in the first one, rounded so that equal placements are equal."""
-    between = tuple(b - a for a, b in zip(first.origin, second.origin, strict=True))
-    return Frame(_in(first, between), _in(first, second.z), _in(first, second.x))
-
-
-def _in(frame: Frame, vector: tuple[float, ...]) -> Vector:
-    x, y, z = (
-        round(sum(v * a for v, a in zip(vector, axis, strict=True)), _DECIMALS) + 0.0
-        for axis in (frame.x, frame.y, frame.z)
+    turned = Frame(z=first.z, x=first.x)
+    return Frame(
+        _rounded(first.local(second.origin)), _rounded(turned.local(second.z)), _rounded(turned.local(second.x))
     )
+
+
+def _rounded(vector: Vector) -> Vector:
+    x, y, z = (round(value, _DECIMALS) + 0.0 for value in vector)  # takes the sign from -0.0
     return (x, y, z)
 
 
@@ -82,16 +81,8 @@ def _boom_piece(parameters: dict[str, Any], frame: Frame, span: tuple[float, flo
 
 
 def _rod_piece(parameters: dict[str, Any], frame: Frame, span: tuple[float, float]) -> Frame:
-    """Shorten a rod to the span, a hole across it kept whole; return where the piece stands."""
-    low, high = span
+    """Shorten a rod without a hole to the span; return where the piece stands."""
     half = parameters["length_mm"] / 2
-    hole, at = parameters.pop("cross_hole_mm", 0.0), parameters.pop("cross_hole_z_mm", 0.0)
-    if hole and low < at + hole and at - hole < high:
-        low, high = min(low, at - hole), max(high, at + hole)
-        parameters["cross_hole_mm"] = hole
-    low, high = max(low, -half), min(high, half)
-    middle = (low + high) / 2
-    if "cross_hole_mm" in parameters:
-        parameters["cross_hole_z_mm"] = round(at - middle, _DECIMALS)
+    low, high = max(span[0], -half), min(span[1], half)
     parameters["length_mm"] = round(high - low, _DECIMALS)
-    return Frame(frame.point((0.0, 0.0, middle)), frame.z, frame.x)
+    return Frame(frame.point((0.0, 0.0, (low + high) / 2)), frame.z, frame.x)

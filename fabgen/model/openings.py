@@ -18,7 +18,7 @@ from OCP.TopoDS import TopoDS_Face, TopoDS_Shell, TopoDS_Solid, TopoDS_Wire
 
 from fabgen.design.arranged import Vector
 from fabgen.errors import ProgramError
-from fabgen.model.kernel import cq
+from fabgen.model.kernel import cq, faces_of
 
 _TOLERANCE_MM = 1e-7
 
@@ -60,7 +60,7 @@ def with_openings(tube: cq.Solid, openings: Iterable[Opening]) -> cq.Solid:
     builder = BRep_Builder()
     shell = TopoDS_Shell()
     builder.MakeShell(shell)
-    for face in tube.Faces():
+    for face in faces_of(tube):
         drawn = face.wrapped
         if face.geomType() == "PLANE":
             centre, normal = face.Center().toTuple(), face.normalAt().toTuple()

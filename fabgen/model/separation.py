@@ -2,6 +2,7 @@
 
 import functools
 import itertools
+import math
 from collections.abc import Iterable
 from typing import Any, NamedTuple
 
@@ -14,10 +15,10 @@ from OCP.gp import gp_Pnt
 from OCP.TopAbs import TopAbs_State
 from OCP.TopoDS import TopoDS_Compound
 
-from fabgen.design.arranged import Box, Frame
+from fabgen.design.arranged import Box, Frame, Vector
 from fabgen.design.distances import bounding_box, distance_mm
 from fabgen.errors import ProgramError
-from fabgen.model.kernel import cq
+from fabgen.model.kernel import cq, faces_of
 from fabgen.model.neighbourhood import Body
 from fabgen.model.solids import location
 
@@ -43,28 +44,29 @@ def separation_mm(first: Body, second: Body, frame: Frame, within_mm: float) -> 
     Returns:
         0 where they touch or overlap, infinite where they are certainly farther apart than `within_mm`.
     """
-    moved = second.solid.moved(location(frame))
     own, others = _faces(first), [_Face(each.face, _turned(each.box, frame)) for each in _faces(second)]
     own_box, others_box = (bounding_box([face.box for face in faces]) for faces in (own, others))
     near = [face.face for face in own if distance_mm(face.box, others_box) <= within_mm]
     near_others = [face.face for face in others if distance_mm(face.box, own_box) <= within_mm]
-    if _inside(first.solid, moved) or _inside(moved, first.solid):
+    apart_mm = math.inf
+    if near and near_others:
+        measured = BRepExtrema_DistShapeShape(
+            _compound(near), cq.Shape.cast(_compound(near_others)).moved(location(frame)).wrapped
+        )
+        if not measured.IsDone():
+            raise ProgramError(f"the kernel found no distance between {first.part} and {second.part}")
+        apart_mm = float(measured.Value())
+    # Surfaces that do not meet may still lie one within the other; then every vertex does.
+    if apart_mm > 0 and (_holds(first, frame.point(_vertex(second))) or _holds(second, frame.local(_vertex(first)))):
         return 0.0
-    if not near or not near_others:
-        return float("inf")
-    measured = BRepExtrema_DistShapeShape(
-        _compound(near), cq.Shape.cast(_compound(near_others)).moved(location(frame)).wrapped
-    )
-    if not measured.IsDone():
-        raise ProgramError(f"the kernel found no distance between {first.part} and {second.part}")
-    return float(measured.Value())
+    return apart_mm
 
 
 @functools.cache
 def _faces(body: Body) -> tuple[_Face, ...]:
     """The faces of a body, each with a box that holds it."""
     found = []
-    for face in body.solid.Faces():
+    for face in faces_of(body.solid):
         box = Bnd_Box()
         BRepBndLib.Add_s(face.wrapped, box, False)
         low, high = box.CornerMin(), box.CornerMax()
@@ -79,11 +81,23 @@ def _turned(box: Box, frame: Frame) -> Box:
     return bounding_box([Box(corner, corner) for corner in corners])
 
 
-def _inside(outer: cq.Shape, inner: cq.Shape) -> bool:
-    """Whether a vertex of one shape lies inside the other one's material."""
-    place = inner.Vertices()[0].Center()
-    sought = BRepClass3d_SolidClassifier(outer.wrapped, gp_Pnt(place.x, place.y, place.z), _POINT_MM)
+@functools.cache
+def _vertex(body: Body) -> Vector:
+    """One vertex of a body."""
+    return body.solid.Vertices()[0].toTuple()
+
+
+def _holds(body: Body, place: Vector) -> bool:
+    """Whether a point lies inside the body's material."""
+    sought = _classifier(body)
+    sought.Perform(gp_Pnt(*place), _POINT_MM)
     return bool(sought.State() == TopAbs_State.TopAbs_IN)
+
+
+@functools.cache
+def _classifier(body: Body) -> Any:
+    """What tells inside from outside, loaded once."""
+    return BRepClass3d_SolidClassifier(body.solid.wrapped)
 
 
 def _compound(faces: Iterable[Any]) -> Any:

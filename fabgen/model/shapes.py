@@ -3,7 +3,7 @@
 import math
 from collections.abc import Sequence
 
-from fabgen.model.kernel import cq
+from fabgen.model.kernel import cq, cut
 
 Range = tuple[float, float]
 Point = tuple[float, float]
@@ -98,7 +98,7 @@ def fillet_prism(corner_mm: Point, towards: Point, radius_mm: float, y_mm: Range
     (x, z), (sx, sz), r = corner_mm, towards, radius_mm
     block = box(_ordered(x, x + sx * r), y_mm, _ordered(z, z + sz * r))
     tool = cylinder(2 * r, (x + sx * r, y_mm[0] - 1, z + sz * r), Y, y_mm[1] - y_mm[0] + 2)
-    return _solid(cq.Workplane(block.cut(tool)))
+    return _solid(cq.Workplane(cut(block, tool)))
 
 
 def _ordered(first: float, second: float) -> Range:

@@ -17,7 +17,7 @@ from OCP.TopLoc import TopLoc_Location
 from fabgen.design.arranged import Vector
 from fabgen.design.solids import Mesh
 from fabgen.errors import ProgramError
-from fabgen.model.kernel import cq
+from fabgen.model.kernel import cq, faces_of
 
 VIEW_RAD, PRINT_RAD = (0.24, 0.12, 0.06), (0.15, 0.08, 0.04)
 """Steps of refinement; the kernel halves the angle: 53 sides to a circle for viewing, 84 for printing."""
@@ -42,7 +42,7 @@ def mesh_of(solid: cq.Solid, angles_rad: Sequence[float] = PRINT_RAD) -> Mesh:
     exact_mm3 = solid.Volume()
     if exact_mm3 <= 0:
         raise ProgramError(f"a solid of {exact_mm3:.3f} mm³")
-    many = angles_rad is VIEW_RAD and len(solid.Faces()) > _MANY_FACES
+    many = angles_rad is VIEW_RAD and len(faces_of(solid)) > _MANY_FACES
     for angle_rad in (_COARSE_RAD, *angles_rad) if many else angles_rad:
         mesh = _triangles(solid, angle_rad)
         if abs(volume_mm3(mesh) / exact_mm3 - 1) <= VOLUME_TOLERANCE:
@@ -66,7 +66,7 @@ def _triangles(solid: cq.Solid, angle_rad: float) -> Mesh:
     BRepMesh_IncrementalMesh(solid.wrapped, asked)
     points: list[Vector] = []
     corners: list[tuple[int, int, int]] = []
-    for face in solid.Faces():
+    for face in faces_of(solid):
         place = TopLoc_Location()
         drawn = BRep_Tool.Triangulation_s(face.wrapped, place)
         if drawn is None:

@@ -1,6 +1,7 @@
 """The kernel's word on near pairs: right ones pass, contradictions are named, equal places are measured once."""
 
 import dataclasses
+import math
 
 import pytest
 
@@ -10,6 +11,7 @@ from fabgen.design.distances import parts_distance_mm
 from fabgen.errors import ProgramError
 from fabgen.model import confirm as module
 from fabgen.model.confirm import confirm
+from fabgen.model.neighbourhood import Body
 from fabgen.model.separation import separation_mm
 
 LEFT, RIGHT = (0.0, 1.0, 0.0), (0.0, -1.0, 0.0)
@@ -162,14 +164,29 @@ def test_a_hole_on_the_edge_of_the_neighbourhood_is_kept_whole():
     assert frame.origin[0] + holes[0][0] == pytest.approx(100)
 
 
-def test_a_hole_across_a_rod_is_kept_where_it_is_near():
+def test_a_rod_with_a_hole_across_is_measured_whole():
+    """It is a part of its own, built once; a piece with its hole would be one more cut for every neighbour."""
     bar = placed(
         "DE-left", "rod", Frame((100, 85, 0), z=LEFT), [Cylinder("y", (100, 85, 0), 4, 160)],
         diameter_mm=4.0, length_mm=160.0, cross_hole_mm=2.2, cross_hole_z_mm=-75.0,
     )  # fmt: skip
-    near, _ = module.neighbourhood(bar, bush("B", 100), 0.0)
-    assert dict(near.parameters)["cross_hole_mm"] == 2.2
-    far = dataclasses.replace(bush("B", 100), shapes=(Cylinder("y", (100, 120, 0), 12, 3),))
-    piece, frame = module.neighbourhood(bar, far, 0.0)
-    assert "cross_hole_mm" not in dict(piece.parameters)
-    assert frame.origin == pytest.approx((100, 120, 0))
+    body, frame = module.neighbourhood(bar, bush("B", 100), 0.0)
+    assert body.parameters == bar.parameters
+    assert frame == bar.frame
+
+
+@pytest.mark.parametrize("swapped", [False, True])
+def test_a_part_inside_another_ones_material_touches_it(swapped):
+    """Surfaces of a thin rod inside a thick one are 8 mm apart; the solids are not."""
+    thick, thin = rod("R", 100, diameter=20.0, length=50.0), rod("D", 100, diameter=4.0, length=20.0)
+    bodies = [Body(part.part, part.parameters) for part in (thick, thin)]
+    own, other = reversed(bodies) if swapped else bodies
+    assert separation_mm(own, other, Frame(), math.inf) == 0.0
+    assert separation_mm(own, other, Frame(), 0.01) == 0.0
+    beside = Frame(origin=(30.0, 0.0, 0.0))
+    assert separation_mm(own, other, beside, math.inf) == pytest.approx(18.0, abs=1e-9)
+
+
+def test_a_frame_sees_its_own_points_where_they_are():
+    frame = Frame((1.0, 2.0, 3.0), z=(0.0, 1.0, 0.0), x=(0.0, 0.0, 1.0))
+    assert frame.local(frame.point((4.0, 5.0, 6.0))) == pytest.approx((4.0, 5.0, 6.0))

@@ -60,6 +60,18 @@ def test_ctrl_c_while_the_kernel_loads_waits_until_it_has_loaded(tmp_path, root)
     assert done.stdout == "stopped True\n"
 
 
+def test_windows_library_is_not_loaded_and_not_missed():
+    """VTK as a whole takes a third of the kernel's load; what the kernel itself uses of it works without."""
+    script = (
+        "import gc, sys\nfrom fabgen.model.kernel import cq\n"
+        "print('vtkmodules.vtkRenderingVolume' in sys.modules, 'vtk' in sys.modules, gc.isenabled())\n"
+        "print(cq.Workplane().box(1, 2, 3).val().toVtkPolyData(0.1).GetNumberOfPoints() > 0)\n"
+        "import vtk\nprint(vtk.vtkSphereSource.__name__)\n"
+    )
+    done = subprocess.run([sys.executable, "-c", script], capture_output=True, text=True, check=True)
+    assert done.stdout.splitlines() == ["False False True", "True", "vtkSphereSource"]
+
+
 def test_a_machine_error_exits_with_three():
     assert MachineError("x").exit_code == 3
 

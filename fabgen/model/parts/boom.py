@@ -15,7 +15,7 @@ from collections.abc import Iterable, Sequence
 from typing import Literal, NamedTuple
 
 from fabgen.errors import ProgramError
-from fabgen.model.kernel import cq
+from fabgen.model.kernel import cq, cut
 from fabgen.model.openings import Opening, with_openings
 
 SOURCE = "made"
@@ -158,7 +158,7 @@ def _cut(bar: cq.Solid, rows: Iterable[_Hole], reach: float) -> cq.Solid:
         start = row.at(-reach if through else 0.0)
         length = 2 * reach if through else reach
         drills.append(cq.Solid.makeCylinder(row.diameter_mm / 2, length, cq.Vector(*start), cq.Vector(*row.axis)))
-    solids = bar.cut(*drills).Solids()
+    solids = cut(bar, *drills).Solids()
     if len(solids) != 1:
         raise ProgramError(f"the holes leave {len(solids)} pieces of one boom")
     return solids[0]

@@ -5,7 +5,7 @@ On a round boom, whose axis is local x, the flange's foot is concave. Printed fl
 """
 
 from fabgen.design.part_sizes import BushSize, bush_size
-from fabgen.model.kernel import cq, fused, on_bed, part_of
+from fabgen.model.kernel import cq, cut, fused, on_bed, part_of
 from fabgen.model.shapes import boom_round, revolved
 
 SOURCE = "printed"
@@ -65,7 +65,7 @@ def turned(size: BushSize) -> cq.Workplane:
     foot = -1.0 - size.foot_drop_mm if size.boom_diameter_mm else 0.0
     shoulder: cq.Shape = revolved([(0, foot), (flange, foot), (flange, high - rim), (flange - rim, high), (0, high)])
     if size.boom_diameter_mm:
-        shoulder = shoulder.cut(boom_round(size.boom_diameter_mm, 2 * size.flange_mm))
+        shoulder = cut(shoulder, boom_round(size.boom_diameter_mm, 2 * size.flange_mm))
     body = revolved([(0, low), (spigot - lead, low), (spigot, low + lead), (spigot, high / 2), (0, high / 2)])
     hole = revolved(
         [
@@ -77,7 +77,7 @@ def turned(size: BushSize) -> cq.Workplane:
             (0, high + edge),
         ]
     )
-    return part_of(fused(shoulder, body).cut(hole))
+    return part_of(cut(fused(shoulder, body), hole))
 
 
 def print_pose(part: cq.Workplane) -> cq.Workplane:

@@ -10,7 +10,7 @@ face, the bore upright: no support.
 
 from fabgen.design.bush_sizes import EDGE_MM
 from fabgen.design.centring_aid_sizes import ARM_MM, HEIGHT_MM, centring_aid_size
-from fabgen.model.kernel import cq, fused, on_bed, part_of
+from fabgen.model.kernel import cq, cut, fused, on_bed, part_of
 from fabgen.model.shapes import Z, box, revolved, teardrop, upright
 
 SOURCE = "printed"
@@ -60,7 +60,7 @@ def centring_aid(
     sight = upright(size.sight_mm, (size.reach_mm, 0.0), (-1.0, ARM_MM + 1))
     slot = box(size.nut_x_mm, (-size.nut_y_mm, size.nut_y_mm), (size.slot_z_mm, HEIGHT_MM + 1))
     way = teardrop(size.clearance_mm, (low - 1, 0.0, size.screw_z_mm), (1.0, 0.0, 0.0), Z, 1 - low)
-    return part_of(fused(body, arm).cut(bore, sight, slot, way))
+    return part_of(cut(fused(body, arm), bore, sight, slot, way))
 
 
 def print_pose(part: cq.Workplane) -> cq.Workplane:

@@ -4,7 +4,7 @@ Frame: local z = normal, plate from z = 0 to its thickness, centred in x and y.
 """
 
 from fabgen.design.part_sizes import clamp_plate_size
-from fabgen.model.kernel import cq, part_of
+from fabgen.model.kernel import cq, cut, part_of
 from fabgen.model.shapes import Z, box, cylinder
 
 SOURCE = "made"
@@ -45,4 +45,4 @@ def clamp_plate(
     solid = plate.solids().val()
     assert isinstance(solid, cq.Solid)
     tools = [cylinder(d, (hx, hy, -1.0), Z, size.thickness_mm + 2) for hx, hy, d in size.holes]
-    return part_of(solid.cut(*tools) if tools else solid)
+    return part_of(cut(solid, *tools) if tools else solid)

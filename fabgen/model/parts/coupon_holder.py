@@ -6,7 +6,7 @@ and is tied down through the four slots of the floor. Printed on its floor, the 
 """
 
 from fabgen.design.coupon_holder_sizes import CHEEK_MM, TIE_MM, coupon_holder_size
-from fabgen.model.kernel import cq, fused, on_bed, part_of
+from fabgen.model.kernel import cq, cut, fused, on_bed, part_of
 from fabgen.model.shapes import Y, box, cylinder, upright
 
 SOURCE = "printed"
@@ -64,7 +64,7 @@ def coupon_holder(
             tie_x, tie_y = side * size.tie_x_mm, across * size.tie_y_mm
             along, wide = TIE_MM[0] / 2, TIE_MM[1] / 2
             tools.append(box((tie_x - along, tie_x + along), (tie_y - wide, tie_y + wide), (-1.0, size.floor_mm + 1)))
-    return part_of(body.cut(*tools))
+    return part_of(cut(body, *tools))
 
 
 def print_pose(part: cq.Workplane) -> cq.Workplane:

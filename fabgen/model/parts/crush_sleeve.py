@@ -4,7 +4,7 @@ Frame: axis = local z, from z = 0 to its length.
 """
 
 from fabgen.design.part_sizes import TubeSize, crush_sleeve_size
-from fabgen.model.kernel import cq, part_of
+from fabgen.model.kernel import cq, cut, part_of
 from fabgen.model.shapes import upright
 
 SOURCE = "made"
@@ -27,4 +27,4 @@ def crush_sleeve(*, length_mm: float = 17.0, bore_mm: float = 6.6, outside_mm: f
 def tube(size: TubeSize) -> cq.Workplane:
     """The solid of a plain tube."""
     outer = upright(size.outside_mm, (0.0, 0.0), (0.0, size.length_mm))
-    return part_of(outer.cut(upright(size.bore_mm, (0.0, 0.0), (-1.0, size.length_mm + 1))))
+    return part_of(cut(outer, upright(size.bore_mm, (0.0, 0.0), (-1.0, size.length_mm + 1))))

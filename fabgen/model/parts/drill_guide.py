@@ -19,7 +19,7 @@ from fabgen.design.drill_guide_sizes import (
     Side,
     drill_guide_size,
 )
-from fabgen.model.kernel import cq, on_bed, part_of, solid_of
+from fabgen.model.kernel import cq, cut, on_bed, part_of, solid_of
 from fabgen.model.marks import lettering
 from fabgen.model.shapes import Triple, X, Y, Z, hexagon, prism, teardrop
 
@@ -74,7 +74,7 @@ def drill_guide(
         hole_growth_mm=hole_growth_mm,
     )
     tube, ends = _round_tube(size) if size.boom_diameter_mm else _flat_tube(size)
-    return part_of(tube.cut(*ends, *_window(size), *_bushings(size), *_clamps(size), *_marks(size)).clean())
+    return part_of(cut(tube, *ends, *_window(size), *_bushings(size), *_clamps(size), *_marks(size)).clean())
 
 
 def _tube(size: DrillGuideSize, cavity: cq.Wire) -> cq.Solid:

@@ -8,7 +8,7 @@ boom between 45° and 60°, and the nut traps' roofs are stepped, so that each l
 
 from fabgen.design import feed_layout as layout
 from fabgen.design.part_sizes import FeedBlockSize, feed_block_size
-from fabgen.model.kernel import cq, on_bed, part_of
+from fabgen.model.kernel import cq, cut, on_bed, part_of
 from fabgen.model.shapes import X, Z, box, cylinder, hexagon, teardrop, upright
 
 SOURCE = "printed"
@@ -64,7 +64,7 @@ def feed_block(
     tools = [*_opened_above(size), *_rods(size), *_terminals(size), *_hold_downs(size), *_cable(size)]
     if size.boom_diameter_mm:
         tools.append(_cradle(size))
-    return part_of(body.cut(*tools))
+    return part_of(cut(body, *tools))
 
 
 def _opened_above(size: FeedBlockSize) -> list[cq.Shape]:
@@ -79,7 +79,7 @@ def _opened_above(size: FeedBlockSize) -> list[cq.Shape]:
             pilots.append(
                 upright(size.drawn_mm(size.pilot_mm), (x, y), (size.lid_seat_mm - layout.PILOT_DEPTH_MM, above))
             )
-    chamber = box((-cx, cx), (-cy, cy), (size.height_mm, size.lid_seat_mm)).cut(*keep)
+    chamber = cut(box((-cx, cx), (-cy, cy), (size.height_mm, size.lid_seat_mm)), *keep)
     return [chamber, box((-rx, rx), (-ry, ry), (size.lid_seat_mm, above)), *pilots]
 
 
@@ -127,7 +127,7 @@ def _cradle(size: FeedBlockSize) -> cq.Shape:
     groove = teardrop(size.boom_diameter_mm, start, X, Z, length)
     wide = size.boom_diameter_mm
     flat_roof = box((start[0], start[0] + length), (-wide, wide), (size.roof_mm, size.roof_mm + wide))
-    return groove.cut(flat_roof)
+    return cut(groove, flat_roof)
 
 
 def print_pose(part: cq.Workplane) -> cq.Workplane:

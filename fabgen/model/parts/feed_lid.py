@@ -7,7 +7,7 @@ diameter against the block; two ridges bite into its jacket. Printed upside down
 from fabgen.design import feed_layout as layout
 from fabgen.design.part_fasteners import fastener
 from fabgen.design.part_sizes import FeedBlockSize, feed_block_size
-from fabgen.model.kernel import cq, fused, on_bed, part_of
+from fabgen.model.kernel import cq, cut, fused, on_bed, part_of
 from fabgen.model.shapes import X, Z, box, prism, upright
 
 SOURCE = "printed"
@@ -66,7 +66,7 @@ def feed_lid(
         for side_x in (-1, 1)
         for side_y in (-1, 1)
     ]
-    return part_of(fused(plate, _wedge(size)).cut(*holes))
+    return part_of(cut(fused(plate, _wedge(size)), *holes))
 
 
 def _wedge(size: FeedBlockSize) -> cq.Shape:

@@ -8,7 +8,7 @@ Frame: origin at the plate's lower left corner on its underside, x along the row
 """
 
 from fabgen.design.fit_gauge_sizes import CELL_MM, CORNER_MM, PLATE_MM, RAISED_MM, FitGaugeSize, fit_gauge_size
-from fabgen.model.kernel import cq, fused, on_bed, part_of
+from fabgen.model.kernel import cq, cut, fused, on_bed, part_of
 from fabgen.model.marks import lettering
 from fabgen.model.shapes import X, Y, Z, prism, revolved
 
@@ -53,7 +53,7 @@ def fit_gauge(
         profile = size.plug_profile_mm
         turned = revolved([(0.0, PLATE_MM), *profile, (0.0, profile[-1][1])])
         raised.append(turned.translate(cq.Vector(size.plug_x_mm, size.row_y_mm, 0.0)))
-    return part_of(fused(plate.cut(*bores), *raised))
+    return part_of(fused(cut(plate, *bores), *raised))
 
 
 def _bore(size: FitGaugeSize, diameter_mm: float, x_mm: float) -> cq.Shape:

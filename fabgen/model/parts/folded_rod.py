@@ -4,7 +4,7 @@ Frame: loop in local y and z, origin at the middle of the gap, upper limb at z =
 """
 
 from fabgen.design.part_sizes import FoldedRodSize, folded_rod_size
-from fabgen.model.kernel import cq, fused, part_of
+from fabgen.model.kernel import cq, cut, fused, part_of
 from fabgen.model.shapes import X, Y, cylinder
 
 SOURCE = "made"
@@ -48,7 +48,7 @@ def folded_rod(
     solid = fused(cylinder(d, (0.0, -straight, size.spacing_mm), Y, 2 * straight), *pieces)
     if size.cross_hole_mm:
         at = size.gap_mm / 2 + size.cross_hole_from_end_mm
-        solid = solid.cut(*[cylinder(size.cross_hole_mm, (-d, side * at, 0.0), X, 2 * d) for side in (-1, 1)])
+        solid = cut(solid, *[cylinder(size.cross_hole_mm, (-d, side * at, 0.0), X, 2 * d) for side in (-1, 1)])
     return part_of(solid)
 
 

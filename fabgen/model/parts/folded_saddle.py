@@ -9,7 +9,7 @@ underside are bridges no longer than a slot is wide. No support.
 
 from fabgen.design import folded_saddle_sizes as sizes
 from fabgen.design.part_sizes import FoldedSaddleSize, folded_saddle_size
-from fabgen.model.kernel import cq, fused, on_bed, part_of
+from fabgen.model.kernel import cq, cut, fused, on_bed, part_of
 from fabgen.model.shapes import X, Y, Z, boom_round, box, cylinder, fillet_prism, hexagon, teardrop
 
 SOURCE = "printed"
@@ -73,7 +73,7 @@ def folded_saddle(
     )
     if size.boom_diameter_mm:
         tools.append(boom_round(size.boom_diameter_mm, 4 * (size.x_mm[1] - size.x_mm[0])))
-    return part_of(fused(column, base, *fillets).cut(*tools))
+    return part_of(cut(fused(column, base, *fillets), *tools))
 
 
 def _depth(size: FoldedSaddleSize) -> float:

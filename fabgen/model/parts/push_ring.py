@@ -5,7 +5,7 @@ upright: no support.
 """
 
 from fabgen.design.part_sizes import push_ring_size
-from fabgen.model.kernel import cq, on_bed, part_of
+from fabgen.model.kernel import cq, cut, on_bed, part_of
 from fabgen.model.shapes import box, revolved
 
 SOURCE = "printed"
@@ -46,7 +46,7 @@ def push_ring(
         [(bore + lead, 0), (outer, 0), (outer, high), (bore + lead, high), (bore, high - lead), (bore, lead)]
     )
     half = size.slit_mm / 2
-    return part_of(ring.cut(box((0.0, outer + 1), (-half, half), (-1.0, high + 1))))
+    return part_of(cut(ring, box((0.0, outer + 1), (-half, half), (-1.0, high + 1))))
 
 
 def print_pose(part: cq.Workplane) -> cq.Workplane:

@@ -4,7 +4,7 @@ Frame: axis = local z, centred on the origin.
 """
 
 from fabgen.design.part_sizes import rod_size
-from fabgen.model.kernel import cq, part_of
+from fabgen.model.kernel import cq, cut, part_of
 from fabgen.model.shapes import X, cylinder, upright
 
 SOURCE = "made"
@@ -34,5 +34,5 @@ def rod(
     solid: cq.Shape = upright(size.diameter_mm, (0.0, 0.0), (-half, half))
     if size.cross_hole_mm:
         reach = size.diameter_mm
-        solid = solid.cut(cylinder(size.cross_hole_mm, (-reach, 0.0, size.cross_hole_z_mm), X, 2 * reach))
+        solid = cut(solid, cylinder(size.cross_hole_mm, (-reach, 0.0, size.cross_hole_z_mm), X, 2 * reach))
     return part_of(solid)

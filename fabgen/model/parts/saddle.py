@@ -6,7 +6,7 @@ within 45°: no support.
 """
 
 from fabgen.design.part_sizes import SaddleSize, saddle_size
-from fabgen.model.kernel import cq, fused, on_bed, part_of
+from fabgen.model.kernel import cq, cut, fused, on_bed, part_of
 from fabgen.model.shapes import Y, Z, boom_round, box, cylinder, fillet_prism, teardrop
 
 SOURCE = "printed"
@@ -56,7 +56,7 @@ def saddle(
     arch = cylinder(2 * column, (0.0, -y, size.height_mm), Y, 2 * y)
     blocks: list[cq.Shape] = [
         box((-column, column), across, (low, max(size.height_mm, size.ear_mm))),
-        arch.cut(box((-2 * column, 2 * column), (-y - 1, y + 1), (size.height_mm - 2 * column, size.height_mm))),
+        cut(arch, box((-2 * column, 2 * column), (-y - 1, y + 1), (size.height_mm - 2 * column, size.height_mm))),
     ]
     if size.fillet_mm:
         blocks += [fillet_prism((side * column, size.ear_mm), (side, 1), size.fillet_mm, across) for side in (-1, 1)]
@@ -66,7 +66,7 @@ def saddle(
         tools += screw_hole(size, screw_x)
     if size.boom_diameter_mm:
         tools.append(boom_round(size.boom_diameter_mm, 2 * size.length_mm))
-    return part_of(body.cut(*tools))
+    return part_of(cut(body, *tools))
 
 
 def screw_hole(size: SaddleSize, x_mm: float) -> list[cq.Shape]:

@@ -4,7 +4,7 @@ Frame: axis = local z, origin under the head, head at z â‰¥ 0, shank from z = âˆ
 """
 
 from fabgen.design.part_sizes import screw_size
-from fabgen.model.kernel import cq, fused, part_of
+from fabgen.model.kernel import cq, cut, fused, part_of
 from fabgen.model.shapes import Y, Z, hexagon, upright
 from fabgen.stock.fasteners import HeadKind
 
@@ -30,5 +30,5 @@ def screw(*, thread: str = "M3", length_mm: float = 8.0, head: HeadKind = "socke
         top = upright(size.head.diameter_mm, (0.0, 0.0), (0.0, high))
     solid = fused(top, upright(size.diameter_mm, (0.0, 0.0), (-size.length_mm, 0.0)))
     if size.socket_mm:
-        solid = solid.cut(hexagon(flats, (0.0, 0.0, high - size.socket_mm), Z, Y, size.socket_mm + 1))
+        solid = cut(solid, hexagon(flats, (0.0, 0.0, high - size.socket_mm), Z, Y, size.socket_mm + 1))
     return part_of(solid)

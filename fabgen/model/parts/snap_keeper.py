@@ -5,7 +5,7 @@ upright: no support.
 """
 
 from fabgen.design.part_sizes import snap_keeper_size
-from fabgen.model.kernel import cq, on_bed, part_of
+from fabgen.model.kernel import cq, cut, on_bed, part_of
 from fabgen.model.shapes import X, Z, prism, upright
 
 SOURCE = "printed"
@@ -48,7 +48,7 @@ def snap_keeper(
     mouth = [(-half, 0.0), (half, 0.0), (half, start), (flare, end), (-flare, end), (-half, start)]
     ring = upright(size.outside_mm, (0.0, 0.0), (0.0, high))
     bore = upright(size.drawn_bore_mm, (0.0, 0.0), (-1.0, high + 1))
-    return part_of(ring.cut(bore, prism(mouth, (0.0, 0.0, -1.0), Z, X, high + 2)))
+    return part_of(cut(ring, bore, prism(mouth, (0.0, 0.0, -1.0), Z, X, high + 2)))
 
 
 def print_pose(part: cq.Workplane) -> cq.Workplane:
