@@ -8,13 +8,13 @@ Source: own study 2026, computed, unpublished.
 """
 
 import math
-from collections.abc import Sequence
+from collections.abc import Iterator, Sequence
 
 import numpy as np
 
 from fabgen.frozen import frozen
 from fabgen.physics.array import LIGHT_MM_MHZ, RodArray, mismatch
-from fabgen.physics.array_iteration import iterate_currents
+from fabgen.physics.array_iteration import Iteration, iterate_currents, iteration
 from fabgen.physics.array_loss import impedance_matrix, rod_loss
 from fabgen.physics.array_matrix import (
     ETA_OHM,
@@ -154,14 +154,11 @@ def respond(expanded: ExpandedArray, changes: BuildChanges) -> SampledResponse:
     Returns:
         builds by one frequency.
     """
-    size = expanded.matrix_ohm.shape[0]
-    step = max(1, CHUNK_ENTRIES // size**2)
-    parts = []
-    for start in range(0, changes.length_mm.shape[0], step):
-        chunk = slice(start, start + step)
-        parts.append(
-            _respond(expanded, changes.length_mm[chunk], changes.station_mm[chunk], changes.diameter_mm[chunk])
-        )
+    about = iteration(expanded.matrix_ohm, (expanded.to_kh_ohm, expanded.to_k_station_ohm))
+    parts = [
+        _respond(expanded, about, changes.length_mm[chunk], changes.station_mm[chunk], changes.diameter_mm[chunk])
+        for chunk in _chunks(changes.length_mm.shape[0], expanded.matrix_ohm.shape[0])
+    ]
     return SampledResponse(
         frequency_mhz=np.array([expanded.frequency_mhz]),
         gain_dbi=np.concatenate([gain for gain, _, _ in parts])[:, None],
@@ -170,8 +167,18 @@ def respond(expanded: ExpandedArray, changes: BuildChanges) -> SampledResponse:
     )
 
 
+def _chunks(builds: int, entries: int) -> Iterator[slice]:
+    """Builds in parts, `entries` of each build held at once."""
+    step = max(1, CHUNK_ENTRIES // entries)
+    return (slice(start, start + step) for start in range(0, builds, step))
+
+
 def _respond(
-    expanded: ExpandedArray, length_mm: FloatArray, station_mm: FloatArray, diameter_mm: FloatArray
+    expanded: ExpandedArray,
+    about: Iteration,
+    length_mm: FloatArray,
+    station_mm: FloatArray,
+    diameter_mm: FloatArray,
 ) -> tuple[FloatArray, ComplexArray, ComplexArray]:
     """Gain in dBi, back/front ratio and feed impedance of a few builds."""
     array, segments = expanded.array, expanded.segments
@@ -180,7 +187,7 @@ def _respond(
     k_radius = 0.5 * k_per_mm * diameter_mm
     kh = 0.5 * k_per_mm * length_mm + END_EXTENSION_RADII * k_radius
     fed = array.fed_index
-    current = _currents(expanded, kh, k_per_mm * station_mm, k_radius).reshape(builds, count, segments)
+    current = _currents(expanded, about, kh, k_per_mm * station_mm, k_radius).reshape(builds, count, segments)
     moment = np.einsum("bin,bin->bi", current, broadside_moment(expanded.kh + kh, segments))
     k_station = k_per_mm * (np.asarray(array.station_mm) + station_mm)
     forward = np.exp(1j * (k_station - k_station[:, fed : fed + 1]))
@@ -191,15 +198,15 @@ def _respond(
     return np.asarray(gain), np.asarray(back / front, dtype=np.complex128), np.asarray(1 / feed, dtype=np.complex128)
 
 
-def _currents(expanded: ExpandedArray, kh: FloatArray, k_station: FloatArray, k_radius: FloatArray) -> ComplexArray:
+def _currents(
+    expanded: ExpandedArray, about: Iteration, kh: FloatArray, k_station: FloatArray, k_radius: FloatArray
+) -> ComplexArray:
     """Currents of builds: by iteration where only lengths and stations differ, else each solved by itself."""
     segments = expanded.segments
     along, across = np.repeat(kh, segments, axis=1), np.repeat(k_station, segments, axis=1)
     if k_radius.any():
         return _solved(expanded, along, across, k_radius)
-    rows = (expanded.to_kh_ohm, expanded.to_k_station_ohm)
-    fed_basis = expanded.array.fed_index * segments
-    current, settled = iterate_currents(expanded.matrix_ohm, rows, (along, across), fed_basis)
+    current, settled = iterate_currents(about, (along, across), expanded.array.fed_index * segments)
     left = ~settled
     if left.any():
         current[left] = _solved(expanded, along[left], across[left], k_radius[left])
@@ -208,6 +215,15 @@ def _currents(expanded: ExpandedArray, kh: FloatArray, k_station: FloatArray, k_
 
 def _solved(expanded: ExpandedArray, along: FloatArray, across: FloatArray, k_radius: FloatArray) -> ComplexArray:
     """Currents of builds from their own matrices; `along` and `across` are changes of kh and k station by basis."""
+    size = expanded.matrix_ohm.shape[0]
+    chunks = _chunks(along.shape[0], size**2)
+    return np.concatenate([_solved_at_once(expanded, along[at], across[at], k_radius[at]) for at in chunks])
+
+
+def _solved_at_once(
+    expanded: ExpandedArray, along: FloatArray, across: FloatArray, k_radius: FloatArray
+) -> ComplexArray:
+    """Of few enough builds to hold all their matrices."""
     array, segments = expanded.array, expanded.segments
     builds, count = k_radius.shape
     rows = along[:, :, None] * expanded.to_kh_ohm

@@ -24,7 +24,7 @@ def both(tolerance_mm: float, monkeypatch: pytest.MonkeyPatch) -> tuple[SampledR
     monkeypatch.setattr(
         array_sampling,
         "iterate_currents",
-        lambda matrix, rows, scales, fed: (np.zeros(scales[0].shape, complex), np.zeros(scales[0].shape[0], bool)),
+        lambda about, scales, fed: (np.zeros(scales[0].shape, complex), np.zeros(scales[0].shape[0], bool)),
     )
     return iterated, respond(expanded, changes)
 
