@@ -111,9 +111,9 @@ def _guide(boom: Boom, face: Face, drill_mm: float, growth_mm: float, *, walls: 
         quantity=1,
         purpose=f"guides a drill of {drill_mm:g} mm through {where}",
         needs=(
-            f"{walls} x drill bushing DIN 179 {drill_mm:g} x {bushing.outside_mm:g} x {bushing.length_mm:g}",
-            f"{screws} x set screw {size.screw} x {size.set_screw_mm:g}",
-            f"{screws} x nut {size.screw}",
+            (walls, f"drill bushing DIN 179 {drill_mm:g} x {bushing.outside_mm:g} x {bushing.length_mm:g}"),
+            (screws, f"set screw {size.screw} x {size.set_screw_mm:g}"),
+            (screws, f"nut {size.screw}"),
         ),
         use=(
             "Press a bushing from outside into each wall that is drilled, against its lip; lay the nuts into their "
@@ -147,15 +147,12 @@ def _aids(arranged: Arranged) -> Iterable[Fixture]:
             label=f"centring aid rod {rod_mm:g}",
             quantity=2,
             purpose=f"sets a rod of {rod_mm:g} mm so that it stands out evenly on both sides",
-            needs=(
-                f"1 x screw {size.screw} x {size.screw_length_mm:g}",
-                f"1 x nut {size.screw}",
-                f"for the pair an offcut of the rod, {projection_mm + 2 * HEIGHT_MM:.0f} mm or longer",
-            ),
+            needs=((1, f"screw {size.screw} x {size.screw_length_mm:g}"), (1, f"nut {size.screw}")),
             use=(
-                "Clamp two on an offcut of the rod, their flat faces the same way and apart by the projection in the "
-                "cut list. Hold the first against the boom beside the rod, its arm turned up; push the rod until its "
-                "tip meets the arm of the second. The other side must then show the same."
+                f"Clamp two on an offcut of the rod, {projection_mm + 2 * HEIGHT_MM:.0f} mm or longer, their flat "
+                "faces the same way and apart by the projection in the cut list. Hold the first against the boom "
+                "beside the rod, its arm turned up; push the rod until its tip meets the arm of the second. The other "
+                "side must then show the same."
             ),
         )
 

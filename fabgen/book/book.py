@@ -64,6 +64,12 @@ class Book:
         return "clear" if clear(self.findings) else "not clear"
 
     @property
+    def counts(self) -> Mapping[str, int]:
+        """How many findings there are of each severity."""
+        severities = [finding.severity for finding in self.findings]
+        return {severity: severities.count(severity) for severity in ("fail", "warn", "note")}
+
+    @property
     def tolerances(self) -> str:
         """Where the ± on lengths and stations come from."""
         shop = self.arranged.design.shop

@@ -14,7 +14,7 @@ class Fixture:
         label: what to call it, ASCII, unique.
         quantity: how many to print.
         purpose: what it is for, one line.
-        needs: what is bought for one of them.
+        needs: number and name of what is bought for one of them.
         use: how it is used, in sentences.
     """
 
@@ -23,5 +23,5 @@ class Fixture:
     label: str
     quantity: int
     purpose: str
-    needs: tuple[str, ...]
+    needs: tuple[tuple[int, str], ...]
     use: str

@@ -115,9 +115,16 @@ def test_every_number_of_the_tables_is_there(book_of: Callable[..., Book], stem:
         assert bar.name in text
     for aid, _ in book.aids:
         assert f"{aid.quantity} {aid.label} {aid.purpose}" in text
-        assert all(need in text for need in aid.needs)
+        assert all(f"{number} × {need}" in text for number, need in aid.needs)
     for figure in (*book.views, *book.pictures, *(figure for _, figure in book.aids)):
         assert figure.caption in text
+
+
+@pytest.mark.parametrize("stem", DESIGNS)
+def test_the_verdict_comes_before_everything_but_the_title(book_of: Callable[..., Book], stem: str) -> None:
+    text = "".join(read(book_of(stem)).text)
+    assert text.index("Verdict:") < text.index("At a glance")
+    assert text.count("Verdict: ") == 2  # once more above the findings
 
 
 @pytest.mark.parametrize("stem", DESIGNS)

@@ -102,6 +102,21 @@ def test_three_panels_two_patterns_and_a_bar_for_each_quantity(limited: Book) ->
     assert costs.count("<rect") == 3 * 2 * len(limited.arranged.design.elements)
 
 
+def test_a_curve_above_the_picture_is_said_to_be_cut_but_never_at_the_design_frequency(general: Book) -> None:
+    found = response_of(general)
+    design_mhz = general.arranged.design.frequency_mhz
+    poor = tuple(replace(point, mismatch=9.0 + abs(point.frequency_mhz - design_mhz)) for point in found.points)
+    ends = tuple(replace(each, mismatch=(9.0, 9.5)) for each in found.fan)
+    book = replace(general, response=replace(found, points=poor, fan=ends))
+    assert "is drawn along it" in text_of(book, "response")
+    assert "is drawn along it" not in text_of(replace(general, response=replace(found, fan=())), "response")
+    nominal = re.findall(
+        r'<polyline points="([^"]+)" fill="none" stroke="#000" stroke-width="0.6"/>', text_of(book, "response")
+    )
+    heights = [float(point.split(",")[1]) for point in nominal[2].split()]
+    assert heights[len(heights) // 2] > min(heights)
+
+
 def test_bars_are_as_long_as_their_numbers(limited: Book) -> None:
     """The longest bar of the shift column over the shortest is the ratio of the table's numbers."""
     bars = re.findall(

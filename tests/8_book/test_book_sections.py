@@ -1,5 +1,6 @@
 """The pieces of the book: cautions that apply, drawn bars, axes, distances, wording."""
 
+import re
 from collections.abc import Callable
 from dataclasses import replace
 from pathlib import Path
@@ -7,13 +8,13 @@ from pathlib import Path
 import pytest
 
 from fabgen import registry
-from fabgen.book import exposure
 from fabgen.book.book import SECTIONS, Book, sections
 from fabgen.book.figures import Figure
-from fabgen.book.sections import boom_sizes, cautions, cutting, drilling, mounts, printing
+from fabgen.book.sections import aids, assembly, boom_sizes, cautions, cutting, drilling, mounts, printing, sources
 from fabgen.book.wording import FILTERS
 from fabgen.design.arranged import Arranged, Bar, Cut
 from fabgen.design.scale import axis
+from fabgen.physics import exposure
 
 TOPICS = (
     "overhead-lines", "work-at-height", "wind-and-falling-parts", "clamps-and-masts", "rod-tips-and-eyes", "exposure",
@@ -71,6 +72,39 @@ def test_sections_with_nothing_to_say_are_left_out(book_of: Callable[..., Book])
     assert "aids" not in names(replace(book, aids=()))
     unprinted = without(book, placed=tuple(p for p in book.arranged.placed if p.source != "printed"))
     assert "printing" not in names(unprinted)
+
+
+def test_what_is_bought_for_the_aids_is_added_up(book_of: Callable[..., Book]) -> None:
+    """By hand: guides for both side walls and for the top share one bushing; two nuts and set screws each."""
+    book = book_of("river-gauge-434")
+    bought = dict(aids.content(book)["bought"])
+    assert bought["drill bushing DIN 179 2.5 x 5 x 6"] == 3
+    assert bought["set screw M4 x 6"] == bought["nut M4"] == 4
+    assert bought["screw M3 x 10"] == bought["nut M3"] == 2
+
+
+def test_a_rod_goes_where_it_belongs(book_of: Callable[..., Book]) -> None:
+    steps = assembly.content(book_of("river-gauge-434"))["steps"]
+    rods = next(parts for step, parts in steps if "each rod" in step.text)
+    assert rods[0] == (("R",), 1, "rod 4 x 345.000")
+    assert (("D3", "D4"), 2, "rod 4 x 294.000") in rods
+    keepers = next(parts for step, parts in steps if "keeper" in step.text)
+    assert keepers == [((), 22, "push-ring keeper rod 4")]
+
+
+def test_the_trim_of_a_folded_rod_is_not_taken_off_its_bends(book_of: Callable[..., Book]) -> None:
+    body = {s.name: s.body for s in sections(book_of("valley-television-637"))}["trimming"]
+    assert "is not shortened once it is bent" in body
+    assert "Sawn with trim" not in body
+    straight = {s.name: s.body for s in sections(book_of("river-gauge-434"))}["trimming"]
+    assert "is not shortened once it is bent" not in straight
+
+
+def test_every_body_that_issues_a_rule_is_spelled_out() -> None:
+    letters = [word for short, _ in sources.letters() for word in short.split(", ")]
+    bodies = " ".join(body for caution in cautions.cautions() for body in caution.bodies)
+    assert set(re.findall(r"\b[A-Z]{2,6}\b", bodies)) <= {*letters, "OET", "EU", "EC", "US"}
+    assert len(letters) == len(set(letters))
 
 
 def test_every_printed_part_has_its_pose(root: Path) -> None:

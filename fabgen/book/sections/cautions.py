@@ -2,9 +2,9 @@
 
 from pathlib import Path
 
-from fabgen.book import exposure
 from fabgen.book.book import Book, Content
 from fabgen.frozen import frozen
+from fabgen.physics import exposure
 
 PLACE = 30
 FOLDER = Path(__file__).parent.parent / "words" / "cautions"

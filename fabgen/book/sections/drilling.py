@@ -8,6 +8,7 @@ from fabgen.design.arranged import Hole
 from fabgen.stock.tables import process_range
 
 PLACE = 70
+NEW_PAGE = True
 
 
 def content(book: Book) -> Content:

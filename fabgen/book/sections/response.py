@@ -12,6 +12,8 @@ WIDTH_MM, HEIGHT_MM, LEFT_MM, FOOT_MM = 178.0, 52.0, 12.0, 9.5
 HIGHEST_FRONT_TO_BACK_DB = 40.0
 """Above that a front-to-back ratio is a null that no build keeps."""
 HIGHEST_MISMATCH = 5.0
+"""Above that a mismatch is no more than bad, unless the band itself goes higher."""
+ROOM = 1.2
 RADIUS_MM, DEEPEST_DB = 36.0, 40.0
 
 Point = tuple[float, float]
@@ -28,6 +30,7 @@ class Panel:
         fan: outline of 95 % of builds.
         nominal: the modelled array.
         limit_mm: height of the stated limit on paper; None without one.
+        cut: something lies above the top and is drawn along it.
     """
 
     name: str
@@ -36,6 +39,7 @@ class Panel:
     fan: tuple[Point, ...]
     nominal: tuple[Point, ...]
     limit_mm: float | None
+    cut: bool
 
 
 @frozen
@@ -74,7 +78,8 @@ def content(book: Book) -> Content | None:
 
 
 def _panels(found: Response, book: Book) -> list[Panel]:
-    limits = book.arranged.design.limits
+    limits, design_mhz = book.arranged.design.limits, book.arranged.design.frequency_mhz
+    low_mhz, high_mhz = limits.band_mhz or (design_mhz, design_mhz)
     gains = [(point.frequency_mhz, point.gain_dbi) for point in found.points]
     ratios = [(point.frequency_mhz, point.front_to_back_db) for point in found.points]
     swr = [(point.frequency_mhz, point.mismatch) for point in found.points]
@@ -92,7 +97,10 @@ def _panels(found: Response, book: Book) -> list[Panel]:
             swr,
             [(each.frequency_mhz, each.mismatch) for each in found.fan],
             limits.mismatch,
-            max(HIGHEST_MISMATCH, 1.5 * min(value for _, value in swr)),
+            max(
+                HIGHEST_MISMATCH,
+                ROOM * max(value for frequency_mhz, value in swr if low_mhz <= frequency_mhz <= high_mhz),
+            ),
         ),
     ]
 
@@ -123,6 +131,7 @@ def _panel(
         + tuple(on_paper(frequency, ends[0]) for frequency, ends in reversed(fan)),
         nominal=tuple(on_paper(frequency, value) for frequency, value in nominal),
         limit_mm=None if limit is None else y.at(limit),
+        cut=any(value > highest for value in (*(value for _, value in nominal), *(high for _, (_, high) in fan))),
     )
 
 

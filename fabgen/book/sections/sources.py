@@ -1,17 +1,18 @@
-"""Every source that the numbers of this book come from."""
+"""Every source that the numbers of this book come from, and what its letters and signs stand for."""
 
 from collections.abc import Iterable, Iterator
+from pathlib import Path
 
 from fabgen.book.book import Book, Content
-from fabgen.book.sections import cautions
 from fabgen.design.design import Design, Material
 from fabgen.stock.read_csv import rows
 
 PLACE = 900
+LETTERS = Path(__file__).parent.parent / "words" / "letters.txt"
 
 
 def content(book: Book) -> Content:
-    """Source lines by what they stand for."""
+    """Source lines by what they stand for, and the abbreviations."""
     arranged = book.arranged
     allowances = [line.allowance for line in arranged.ledger.lines]
     lengths = [allowance.source for allowance in allowances if allowance.origin != "none"]
@@ -20,9 +21,15 @@ def content(book: Book) -> Content:
         "lengths": _once(lengths),
         "materials": sorted({(material.name, material.source) for material in _materials(arranged.design)}),
         "tables": [(table, _once(row["source"] for row in rows(table))) for table in _tables(book)],
-        "bodies": [(caution.title, caution.bodies) for caution in cautions.applying(book)],
         "computed": book.computed,
+        "letters": letters(),
     }
+
+
+def letters() -> tuple[tuple[str, str], ...]:
+    """Every abbreviation of `words/letters.txt` with its meaning."""
+    lines = LETTERS.read_text(encoding="utf-8").splitlines()
+    return tuple((short, meaning) for short, _, meaning in (line.partition(": ") for line in lines))
 
 
 def _materials(design: Design) -> Iterator[Material]:

@@ -15,4 +15,5 @@ def content(book: Book) -> Content | None:
         for line in book.arranged.ledger.lines
         if line.trim_mm > 0
     ]
-    return {"rows": rows} if rows else None
+    folded = any(feed.kind == "folded-dipole" for feed in design.feeds)
+    return {"rows": rows, "folded": folded} if rows else None
