@@ -1,6 +1,11 @@
 """What a package is made of before it is written."""
 
+from collections.abc import Callable
+
 from fabgen.frozen import frozen
+
+Say = Callable[[str], None]
+"""Takes one line of progress."""
 
 
 @frozen

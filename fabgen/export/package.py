@@ -1,7 +1,7 @@
 """A package folder is written beside its place and swapped in by one exchange.
 
 Whatever happens, the folder that a builder opens is the old package or the new one, complete. All of it happens inside
-the output folder, under a lock, so that two runs cannot mix.
+the output folder, under a lock, so that two runs cannot mix; what a killed run left there goes with the next.
 """
 
 import contextlib
@@ -16,7 +16,7 @@ from collections.abc import Iterator, Sequence
 from pathlib import Path, PurePosixPath
 from typing import Any
 
-from fabgen.design.package import PackageFile
+from fabgen.design.package import PackageFile, Say
 from fabgen.errors import MachineError, ProgramError
 
 if sys.platform != "win32":
@@ -24,6 +24,9 @@ if sys.platform != "win32":
 
 _AT_FDCWD = -100
 _RENAME_EXCHANGE = 2
+_LOCK, _FRESH, _ASIDE = ".fabgen.lock", ".fabgen.new", ".fabgen.old"
+"""In the output folder; under the lock, whatever bears the other two names is a killed run's."""
+
 _MOVE_OUT = "move it out of the folder: a build replaces the whole of it"
 
 
@@ -53,13 +56,14 @@ def manifest(
     return PackageFile("manifest.json", text.encode("utf-8"), "what is in this package")
 
 
-def write(files: Sequence[PackageFile], *, output: Path, name: str) -> Path:
+def write(files: Sequence[PackageFile], *, output: Path, name: str, say: Say = lambda _: None) -> Path:
     """Write a package folder, complete or not at all.
 
     Args:
         files: all files, the manifest among them.
         output: the output folder; made when missing.
         name: the package folder's name below it.
+        say: takes progress.
 
     Returns:
         The package folder.
@@ -72,15 +76,16 @@ def write(files: Sequence[PackageFile], *, output: Path, name: str) -> Path:
         raise ProgramError(f"package name {name!r} is not a plain folder name")
     try:
         output.mkdir(parents=True, exist_ok=True)
-        with _locked(output):
+        with _locked(output, say):
+            say(f"{name}: writing {len(files)} files")
             return _write_locked(files, output, name)
     except OSError as error:
         raise MachineError(_say(error, output), _fix(error)) from error
 
 
 def _write_locked(files: Sequence[PackageFile], output: Path, name: str) -> Path:
-    target, fresh, aside = output / name, output / f".{name}.new", output / f".{name}.old"
-    _repair(target, fresh, aside)
+    target, fresh = output / name, output / _FRESH
+    _repair(output)
     if target.is_symlink() or (target.exists() and not target.is_dir()):
         raise MachineError(f"{target} is not a folder", "move it away; a package folder goes there")
     if target.exists():
@@ -89,24 +94,27 @@ def _write_locked(files: Sequence[PackageFile], output: Path, name: str) -> Path
     try:
         for file in files:
             _write_file(fresh, file)
-        _sync_folder(fresh)
-        if target.exists():
-            _swap(fresh, target, aside)
-        else:
+        for folder in (fresh, *(path for path in fresh.rglob("*") if path.is_dir())):
+            _sync_folder(folder)
+        if not target.exists():
+            fresh.rename(target)
+        elif not _exchange(fresh, target):
+            (output / _ASIDE).mkdir()
+            target.rename(output / _ASIDE / name)
             fresh.rename(target)
         _sync_folder(output)
     finally:
-        shutil.rmtree(fresh, ignore_errors=True)
-        if target.exists():
-            shutil.rmtree(aside, ignore_errors=True)
+        with contextlib.suppress(OSError):  # else the next run does it
+            _repair(output)
     return target
 
 
-def _repair(target: Path, fresh: Path, aside: Path) -> None:
-    """Finish what a killed run left: an old package set aside goes back when nothing took its place."""
-    if aside.exists() and not target.exists():
-        aside.rename(target)
-    for rest in (fresh, aside):
+def _repair(output: Path) -> None:
+    """Finish what a run left: a package set aside goes back when nothing took its place, the rest goes."""
+    for old in (output / _ASIDE).glob("*"):
+        if not (output / old.name).exists():
+            old.rename(output / old.name)
+    for rest in (output / _FRESH, output / _ASIDE):
         if rest.exists():
             shutil.rmtree(rest)
 
@@ -125,10 +133,13 @@ def _refuse_other_design(target: Path, files: Sequence[PackageFile]) -> None:
 
 
 def _refuse_strangers(target: Path) -> None:
-    """Raise when a folder that would be replaced holds what its builder put or filled in there.
+    """Raise when a folder that would be replaced is write-protected or holds what its builder put or filled in there.
 
     Everything in it must be as its manifest says; hidden files do not count.
     """
+    for folder in (target, *(path for path in target.rglob("*") if path.is_dir())):
+        if not os.access(folder, os.W_OK | os.X_OK):
+            raise PermissionError(errno.EACCES, os.strerror(errno.EACCES), str(folder))
     try:
         files = json.loads((target / "manifest.json").read_bytes())["files"]
         digests = {"manifest.json": None} | {file["path"]: file.get("sha256") for file in files}
@@ -156,15 +167,8 @@ def _write_file(folder: Path, file: PackageFile) -> None:
         os.fsync(out.fileno())
 
 
-def _swap(fresh: Path, target: Path, aside: Path) -> None:
-    """Exchange two folders in one step where the system can; by two renames elsewhere."""
-    if _exchange(fresh, target):
-        return
-    target.rename(aside)
-    fresh.rename(target)
-
-
 def _exchange(first: Path, second: Path) -> bool:
+    """Exchange two folders in one step; False where the system cannot."""
     try:
         renameat2 = ctypes.CDLL(None, use_errno=True).renameat2
     except (OSError, AttributeError, TypeError):
@@ -186,11 +190,15 @@ def _sync_folder(folder: Path) -> None:
 
 
 @contextlib.contextmanager
-def _locked(output: Path) -> Iterator[None]:
-    """Hold the output folder; a second run waits."""
-    with (output / ".fabgen.lock").open("w") as lock:
+def _locked(output: Path, say: Say) -> Iterator[None]:
+    """Hold the output folder; a second run says so and waits."""
+    with (output / _LOCK).open("a") as lock:
         if sys.platform != "win32":
-            fcntl.flock(lock, fcntl.LOCK_EX)
+            try:
+                fcntl.flock(lock, fcntl.LOCK_EX | fcntl.LOCK_NB)
+            except BlockingIOError:
+                say(f"another run is writing to {output}: waiting for it to end")
+                fcntl.flock(lock, fcntl.LOCK_EX)
         yield
 
 
