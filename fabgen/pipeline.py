@@ -1,6 +1,6 @@
 """The program on one screen: read → correct → arrange → check → draw → model → export → book."""
 
-from collections.abc import Callable, Sequence
+from collections.abc import Sequence
 from dataclasses import replace
 from pathlib import Path
 
@@ -12,14 +12,13 @@ from fabgen.correct.ledger import correct
 from fabgen.design.allotted import with_tolerances
 from fabgen.design.arranged import Arranged
 from fabgen.design.design import Design
+from fabgen.design.electrical_case import electrical_case
 from fabgen.design.findings import Finding, clear, in_order
+from fabgen.design.package import Say
 from fabgen.design.response import Response
 from fabgen.frozen import frozen
 from fabgen.read.reader import Reading, read_design
-from fabgen.read.records import records_folder
-
-Say = Callable[[str], None]
-"""Takes one line of progress."""
+from fabgen.read.stored_response import stored_response
 
 
 @frozen
@@ -47,20 +46,22 @@ class Judged:
         return "clear" if self.clear else "not clear"
 
 
-def check(path: Path, *, solve: bool = False, keep: bool = False) -> Judged:
-    """Read one design file and judge it; no CAD kernel, no package written.
+def check(path: Path, *, solve: bool = False, say: Say = lambda _: None) -> Judged:
+    """Read one design file and judge it; no CAD kernel, nothing written.
 
     Args:
         path: the design file.
-        solve: ask the array solver about its limits; else a stored response that still fits answers.
-        keep: store what the solver found in the design's records.
+        solve: ask the array solver about its limits where no stored response fits.
+        say: takes progress.
 
     Raises:
         DesignErrors: the file is no valid design.
     """
     reading = read_design(path)
     general = _arranged(reading.design)
-    response, electric = electrical(general, records_folder(path), solve=solve, keep=keep)
+    case = electrical_case(general)
+    stored = stored_response(path, case.sha256) if case else None
+    response, electric = electrical(general, case, stored, solve=solve, say=say)
     arranged = with_tolerances(general, response)
     judged = [*reading.notes, *judge(arranged), *electric, *mount_shift(arranged, response)]
     return Judged(reading, arranged, in_order(judged), response)
@@ -115,5 +116,4 @@ def build(judged: Judged, *, output: Path, stamped: bool = False, only: Sequence
         files, number=design.number, revision=design.revision, design_sha256=design.sha256,
         verdict=judged.verdict, versions=versions(),
     )  # fmt: skip
-    say(f"{name}: writing {len(files) + 1} files")
-    return package.write([*files, contents], output=output, name=name)
+    return package.write([*files, contents], output=output, name=name, say=say)

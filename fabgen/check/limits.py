@@ -1,14 +1,13 @@
 """Are the limits kept: by the model, by 95 % of the builds, by the common error?"""
 
 from collections.abc import Iterator
-from pathlib import Path
 
 from fabgen.check.finding import finding
-from fabgen.check.response_store import load, store
 from fabgen.design.arranged import Arranged
-from fabgen.design.electrical_case import ElectricalCase, electrical_case, no_case
+from fabgen.design.electrical_case import ElectricalCase, no_case
 from fabgen.design.findings import Finding
 from fabgen.design.limits import Limits
+from fabgen.design.package import Say
 from fabgen.design.response import SHARE_INSIDE, Outcome, Response
 
 NOT_JUDGED = "E01"
@@ -20,42 +19,40 @@ FREE_SPACE = "modelled as thin rods in free space, without boom, mast, ground an
 
 
 def electrical(
-    arranged: Arranged, records: Path, *, solve: bool, keep: bool
+    arranged: Arranged,
+    case: ElectricalCase | None,
+    stored: Response | None,
+    *,
+    solve: bool = False,
+    say: Say = lambda _: None,
 ) -> tuple[Response | None, tuple[Finding, ...]]:
     """The response of a design and what it says about its limits.
 
     Args:
         arranged: with general tolerances.
-        records: the design's folder of records.
-        solve: ask the solver; else take a stored response that still fits.
-        keep: store what the solver found.
+        case: what the response is computed from; None where the design cannot be modelled.
+        stored: the response of an earlier run to the same case; the solver would find it again.
+        solve: ask the solver where none is stored.
+        say: takes progress.
 
     Returns:
         the response, None where there is none, and the findings.
     """
-    case = electrical_case(arranged)
     if case is None:
         return None, tuple(_not_judged(arranged, no_case(arranged.design)))
+    if stored is not None:
+        return stored, tuple(judged(case, stored))
     if not solve:
-        response = load(records, case.sha256)
         why = "no stored response fits this design: `fabgen check --response` or `fabgen build` judges them"
-        return response, tuple(judged(case, response) if response else _not_judged(arranged, why))
+        return None, tuple(_not_judged(arranged, why))
     from fabgen.check.response.respond import respond
 
+    say(f"{arranged.design.name}: array response")
     try:
         response = respond(case)
     except ValueError as error:
         return None, tuple(_not_judged(arranged, f"the solver refuses this array: {error}"))
-    found = list(judged(case, response))
-    if keep:
-        try:
-            store(records, response)
-        except OSError as error:
-            advice = (
-                f"{records.name}: {error.strerror or 'it failed'}; `fabgen check` will not judge limits until it is"
-            )
-            found.append(finding("E08", "note", "records", advice))
-    return response, tuple(found)
+    return response, tuple(judged(case, response))
 
 
 def _not_judged(arranged: Arranged, why: str) -> Iterator[Finding]:

@@ -4,11 +4,16 @@ The model: thin straight rods in free space; no boom, mount, mast, ground or fee
 rectangular distributions between their tolerances. Losses and shifts are counted against the modelled array.
 """
 
-from typing import Literal
+import hashlib
+import json
+from typing import Any, Literal
 
 from fabgen.frozen import frozen
 
 Quantity = Literal["length", "station"]
+
+STORED_NAME = "response.json"
+"""Of the file in a design's records folder."""
 
 SHARE_INSIDE = 0.95
 """Of all builds: what a tolerance is allotted for, and what `at 95 %` means."""
@@ -210,3 +215,12 @@ class Response:
     left_over: LeftOver | None
     h_plane: Pattern
     e_plane: Pattern
+
+
+def digest(content: dict[str, Any]) -> str:
+    """What a stored response carries so that a changed file never answers.
+
+    Args:
+        content: the response as plain values, without the digest.
+    """
+    return hashlib.sha256(json.dumps(content, sort_keys=True).encode("utf-8")).hexdigest()

@@ -1,6 +1,5 @@
 """Limits and other rods: every finding of the array solver with its code, figure and severity."""
 
-import json
 from dataclasses import fields, replace
 from pathlib import Path
 from typing import Any
@@ -10,7 +9,6 @@ import pytest
 from fabgen.arrange.arrange import arrange
 from fabgen.check import limits as rules
 from fabgen.check.response.respond import respond
-from fabgen.check.response_store import FILE, load, store
 from fabgen.check.rules.other_rod import findings as other_rod
 from fabgen.correct.ledger import correct
 from fabgen.design.allotted import with_tolerances
@@ -18,8 +16,11 @@ from fabgen.design.arranged import Arranged
 from fabgen.design.electrical_case import ElectricalCase, electrical_case
 from fabgen.design.findings import Finding
 from fabgen.design.limits import Limits
-from fabgen.design.response import Response
+from fabgen.design.response import STORED_NAME, Response
+from fabgen.export.records import write_response
 from fabgen.read.reader import read_design
+from fabgen.read.records import records_folder
+from fabgen.read.stored_response import stored_response
 
 BAND = (430.0, 438.0)
 
@@ -112,60 +113,34 @@ def test_thick_rods_are_told_and_nothing_absolute_is_judged(sound: Arranged) -> 
 
 def test_no_limits_no_word(root: Path) -> None:
     arranged = arranged_with(root, Limits())
-    response, told = rules.electrical(arranged, root / "nowhere", solve=False, keep=False)
+    response, told = rules.electrical(arranged, case_with(arranged), None)
     assert (response, told) == (None, ())
 
 
-def test_lengths_as_cut_cannot_be_modelled(sound: Arranged, tmp_path: Path) -> None:
+def test_lengths_as_cut_cannot_be_modelled(sound: Arranged) -> None:
     """What the boom takes is in them, and the solver knows free rods only."""
     as_cut = replace(sound, design=replace(sound.design, lengths_are="as-cut"))
-    response, told = rules.electrical(as_cut, tmp_path, solve=True, keep=True)
+    response, told = rules.electrical(as_cut, electrical_case(as_cut), None, solve=True)
     assert response is None
     assert [(finding.code, finding.severity) for finding in told] == [("E01", "note")]
     assert "as cut" in told[0].advice
 
 
-def test_limits_without_an_answer_are_not_judged(sound: Arranged, tmp_path: Path) -> None:
-    response, told = rules.electrical(sound, tmp_path, solve=False, keep=False)
+def test_limits_without_an_answer_are_not_judged(sound: Arranged) -> None:
+    response, told = rules.electrical(sound, case_with(sound), None)
     assert response is None
     assert [(finding.code, finding.severity) for finding in told] == [("E01", "note")]
-    assert list(tmp_path.iterdir()) == []
 
 
-def test_a_kept_response_answers_until_the_design_changes(sound: Arranged, tmp_path: Path) -> None:
-    folder = tmp_path / "records" / "gauge"
-    kept, told = rules.electrical(sound, folder, solve=True, keep=True)
-    assert [path.name for path in folder.iterdir()] == [FILE]
-    assert rules.electrical(sound, folder, solve=False, keep=False) == (kept, told)
-    other = replace(sound, design=replace(sound.design, limits=Limits(BAND, shift_khz=401.0)))
-    assert rules.electrical(other, folder, solve=False, keep=False)[0] is None
-
-
-def test_a_broken_file_does_not_answer(sound: Arranged, tmp_path: Path) -> None:
-    kept, _ = rules.electrical(sound, tmp_path, solve=True, keep=True)
-    assert kept is not None
-    path = tmp_path / FILE
-    whole = json.loads(path.read_text(encoding="utf-8"))
-    for spoiled in ("", "[]", "{", json.dumps({**whole, "fan": 3}), json.dumps({**whole, "absolute": "yes"})):
-        path.write_text(spoiled, encoding="utf-8")
-        assert load(tmp_path, kept.case_sha256) is None
-
-
-def test_a_folder_that_cannot_be_written_is_a_note(sound: Arranged, tmp_path: Path) -> None:
-    blocked = tmp_path / "records"
-    blocked.write_text("a file stands where the folder should be", encoding="utf-8")
-    response, told = rules.electrical(sound, blocked / "gauge", solve=True, keep=True)
-    assert response is not None
-    assert [(finding.code, finding.severity) for finding in told if finding.code == "E08"] == [("E08", "note")]
-
-
-def test_storing_leaves_nothing_else_behind(sound: Arranged, tmp_path: Path) -> None:
-    response, _ = rules.electrical(sound, tmp_path, solve=True, keep=False)
-    assert response is not None
-    assert list(tmp_path.iterdir()) == []
-    store(tmp_path, response)
-    store(tmp_path, response)
-    assert [path.name for path in tmp_path.iterdir()] == [FILE]
+def test_a_stored_response_answers_without_the_solver(sound: Arranged, monkeypatch: pytest.MonkeyPatch) -> None:
+    said: list[str] = []
+    case = case_with(sound)
+    found_anew = rules.electrical(sound, case, None, solve=True, say=said.append)
+    assert said == ["RGL-434-06_A: array response"]
+    monkeypatch.delattr("fabgen.check.response.respond.respond")
+    for solve in (False, True):
+        assert rules.electrical(sound, case, found_anew[0], solve=solve, say=said.append) == found_anew
+    assert len(said) == 1
 
 
 def test_a_rod_that_no_length_makes_good(root: Path, variant: Any) -> None:
@@ -210,16 +185,6 @@ def test_allotted_tolerances_reach_ledger_cuts_and_holes(sound: Arranged) -> Non
         assert after == replace(before, tolerance_mm=wanted)
 
 
-def test_a_link_out_of_the_records_is_not_followed(sound: Arranged, tmp_path: Path) -> None:
-    elsewhere = tmp_path / "elsewhere"
-    elsewhere.mkdir()
-    (tmp_path / "records").mkdir()
-    (tmp_path / "records" / "gauge").symlink_to(elsewhere)
-    _, told = rules.electrical(sound, tmp_path / "records" / "gauge", solve=True, keep=True)
-    assert "E08" in {finding.code for finding in told}
-    assert list(elsewhere.iterdir()) == []
-
-
 @pytest.mark.parametrize("kept", [(1,), (0, 1), (1, 2)])
 @pytest.mark.parametrize("factor", [0.25, 1.0, 2.2])
 def test_odd_arrays_are_answered(sound: Arranged, kept: tuple[int, ...], factor: float, tmp_path: Path) -> None:
@@ -230,10 +195,12 @@ def test_odd_arrays_are_answered(sound: Arranged, kept: tuple[int, ...], factor:
     some["modelled_mm"] = tuple(factor * length for length in some["modelled_mm"])
     odd = replace(case, fed=kept.index(1), **some)
     response = respond(odd)
-    store(tmp_path, response)
-    assert load(tmp_path, odd.sha256) == response
-    assert "NaN" not in (tmp_path / FILE).read_text(encoding="utf-8")
-    assert "Infinity" not in (tmp_path / FILE).read_text(encoding="utf-8")
+    design = tmp_path / "odd.yaml"
+    write_response(response, folder=records_folder(design))
+    assert repr(stored_response(design, odd.sha256)) == repr(response)
+    text = (records_folder(design) / STORED_NAME).read_text(encoding="utf-8")
+    assert "NaN" not in text
+    assert "Infinity" not in text
     assert found(odd, response)
 
 

@@ -158,7 +158,7 @@ def test_a_bug_ends_with_3_and_one_message(
     design: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]
 ) -> None:
     monkeypatch.delenv("FABGEN_DEBUG", raising=False)
-    monkeypatch.setattr("fabgen.cli.commands.check.judge_file", lambda path, solve: 1 // 0)
+    monkeypatch.setattr("fabgen.cli.commands.check.judge_file", lambda path, **_: 1 // 0)
     assert run("check", str(design)) == 3
     err = capsys.readouterr().err
     assert "a bug: ZeroDivisionError" in err

@@ -7,7 +7,7 @@ import click
 from fabgen.cli import report
 from fabgen.cli.commands.check import DESIGNS
 from fabgen.contents import GROUPS
-from fabgen.errors import FabgenError, InputError
+from fabgen.errors import FabgenError, InputError, MachineError
 from fabgen.pipeline import Judged
 from fabgen.pipeline import build as build_package
 from fabgen.pipeline import check as judge_file
@@ -58,7 +58,8 @@ def _judge_all(
     owners: dict[str, Path] = {}
     for path in designs:
         try:
-            one = judge_file(path, solve=True, keep=True)
+            one = judge_file(path, solve=True, say=_say)
+            _keep(path, one)
         except FabgenError as error:
             code = max(code, error.exit_code)
             records.append(report.error_record(path, error))
@@ -73,6 +74,20 @@ def _judge_all(
         owners[key] = path
         judged.append((path, one))
     return judged, records, code
+
+
+def _keep(path: Path, judged: Judged) -> None:
+    """Store the response for the next check; where that fails, nothing of the package depends on it."""
+    from fabgen.check.finding import finding
+    from fabgen.export.records import write_response
+    from fabgen.read.records import records_folder
+
+    if judged.response is None:
+        return
+    try:
+        write_response(judged.response, folder=records_folder(path))
+    except MachineError as error:
+        _say(str(finding("E08", "note", "records", error.message)))
 
 
 def _say(line: str) -> None:

@@ -24,7 +24,7 @@ def check(designs: tuple[Path, ...], show: bool, response: bool, as_json: bool) 
     records, code = [], 0
     for path in designs:
         try:
-            judged = judge_file(path, solve=response)
+            judged = judge_file(path, solve=response, say=lambda line: click.echo(line, err=True))
         except FabgenError as error:
             code = max(code, error.exit_code)
             records.append(report.error_record(path, error))
