@@ -1,14 +1,12 @@
 """The text files of a coupon package: the test array as a design file, the sheet of readings, the expected readings."""
 
 import cmath
-import csv
-import io
 import math
-from collections.abc import Iterable, Sequence
 
 from fabgen.design.coupon import REAR_MM, CouponPlan, Expected
 from fabgen.design.design import Design
 from fabgen.design.readings import COLUMNS, REFLECTION_NOISE, SWR_NOISE
+from fabgen.export.csv_table import csv_bytes
 
 EXPECTED_COLUMNS = ("setup", "step", "length_mm", "frequency_mhz", "re", "im", "magnitude", "phase_deg", "swr")
 
@@ -65,12 +63,13 @@ def readings_csv(plan: CouponPlan) -> bytes:
         f"#swr_noise,{SWR_NOISE:g}",
     ]
     rows = ((step.setup, step.step, f"{step.length_mm:.3f}", f"{step.frequency_mhz:.3f}") for step in plan.expected)
-    return ("\n".join(head) + "\n" + _table(COLUMNS, [(*row, "", "", "", "", "") for row in rows])).encode("utf-8")
+    table = csv_bytes(COLUMNS, [(*row, "", "", "", "", "") for row in rows])
+    return ("\n".join(head) + "\n").encode("utf-8") + table
 
 
 def expected_csv(plan: CouponPlan) -> bytes:
     """What the feed should read at every step."""
-    return _table(EXPECTED_COLUMNS, [_expected(step) for step in plan.expected]).encode("utf-8")
+    return csv_bytes(EXPECTED_COLUMNS, [_expected(step) for step in plan.expected])
 
 
 def _expected(step: Expected) -> tuple[str, ...]:
@@ -79,11 +78,3 @@ def _expected(step: Expected) -> tuple[str, ...]:
         step.setup, f"{step.step}", f"{step.length_mm:.3f}", f"{step.frequency_mhz:.3f}", f"{step.reflection.real:.3f}",
         f"{step.reflection.imag:.3f}", f"{size:.3f}", f"{math.degrees(angle):.1f}", f"{step.swr:.2f}",
     )  # fmt: skip
-
-
-def _table(header: Sequence[str], rows: Iterable[Sequence[object]]) -> str:
-    out = io.StringIO()
-    writer = csv.writer(out, lineterminator="\n")
-    writer.writerow(header)
-    writer.writerows(rows)
-    return out.getvalue()

@@ -1,11 +1,8 @@
 """Response and sensitivities as CSV."""
 
-import csv
-import io
-from collections.abc import Iterable, Sequence
-
 from fabgen.design.package import PackageFile
 from fabgen.design.response import Response
+from fabgen.export.csv_table import csv_bytes
 
 RESPONSE = ("f_mhz", "gain_dbi", "front_to_back_db", "r_ohm", "x_ohm", "mismatch")
 SENSITIVITY = (
@@ -30,7 +27,7 @@ def files(response: Response) -> tuple[PackageFile, ...]:
 
 def response_csv(response: Response) -> bytes:
     """The modelled array in free space, one row per frequency."""
-    return _csv(
+    return csv_bytes(
         RESPONSE,
         (
             (
@@ -44,7 +41,7 @@ def response_csv(response: Response) -> bytes:
 
 def sensitivity_csv(response: Response) -> bytes:
     """What one more millimetre changes, two rows per element."""
-    return _csv(
+    return csv_bytes(
         SENSITIVITY,
         (
             (
@@ -54,11 +51,3 @@ def sensitivity_csv(response: Response) -> bytes:
             for row in response.sensitivities
         ),
     )  # fmt: skip
-
-
-def _csv(header: Sequence[str], rows: Iterable[Sequence[str]]) -> bytes:
-    out = io.StringIO()
-    writer = csv.writer(out, lineterminator="\n")
-    writer.writerow(header)
-    writer.writerows(rows)
-    return out.getvalue().encode("utf-8")

@@ -1,14 +1,11 @@
 """The four tables of a package as CSV: UTF-8, comma, `.` decimal, three decimals, columns that add up as printed."""
 
-import csv
-import io
 from collections import Counter
-from collections.abc import Iterable, Sequence
 
 from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.ledger import Ledger
 from fabgen.design.package import PackageFile
-from fabgen.units import format_mm
+from fabgen.export.csv_table import csv_bytes
 
 LENGTHS = (
     "element", "role", "station_mm", "rod_mm", "modelled_mm", "allowance_mm", "allowance_origin", "allowance_u_mm",
@@ -41,7 +38,7 @@ def files(arranged: Arranged, plan: CutPlan) -> tuple[PackageFile, ...]:
 
 def lengths_csv(ledger: Ledger) -> bytes:
     """The ledger, one row per element in order of station."""
-    return _csv(
+    return csv_bytes(
         LENGTHS,
         (
             (
@@ -56,7 +53,7 @@ def lengths_csv(ledger: Ledger) -> bytes:
 
 def drilling_csv(arranged: Arranged) -> bytes:
     """Every hole, one row per opening."""
-    return _csv(
+    return csv_bytes(
         DRILLING,
         (
             (
@@ -70,7 +67,7 @@ def drilling_csv(arranged: Arranged) -> bytes:
 
 def cut_list_csv(arranged: Arranged, plan: CutPlan) -> bytes:
     """Every sawn piece with the bar it comes from."""
-    return _csv(
+    return csv_bytes(
         CUT_LIST,
         (
             (
@@ -94,13 +91,4 @@ def parts_csv(arranged: Arranged) -> bytes:
             rows.append(
                 (placed.part, counts[key], placed.source, placed.material, placed.size, placed.mass_g),
             )
-    return _csv(PARTS, rows)
-
-
-def _csv(header: Sequence[str], rows: Iterable[Sequence[str | float | int]]) -> bytes:
-    out = io.StringIO()
-    writer = csv.writer(out, lineterminator="\n")
-    writer.writerow(header)
-    for row in rows:
-        writer.writerow([format_mm(cell) if isinstance(cell, float) else cell for cell in row])
-    return out.getvalue().encode("utf-8")
+    return csv_bytes(PARTS, rows)
