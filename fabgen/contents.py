@@ -9,12 +9,9 @@ from fabgen import __version__
 from fabgen.design.arranged import Arranged, CutPlan
 from fabgen.design.drawing import Sheet
 from fabgen.design.findings import Finding, clear
-from fabgen.design.package import PackageFile
+from fabgen.design.package import PackageFile, Say
 from fabgen.design.response import Response
 from fabgen.design.solids import AssemblyItem, Print
-
-GROUPS = ("tables", "templates", "bench", "drawings", "model", "prints", "fixtures", "book")
-"""What `--only` can name."""
 
 CROWDED = 120
 SPECKS = ("bush", "crush_sleeve", "nut", "push_ring", "screw", "sleeve", "snap_keeper", "washer")
@@ -54,7 +51,7 @@ def package_files(
     *,
     stamped: bool,
     only: Sequence[str],
-    say: Callable[[str], None],
+    say: Say,
     response: Response | None = None,
 ) -> Files:
     """All files of a package but its manifest.
@@ -71,11 +68,10 @@ def package_files(
 
     order = Order(arranged, findings, plan(arranged.cuts, arranged.design.shop), stamped, response)
     files = [_findings(findings)]
-    for group in GROUPS:
-        if group not in _WRITERS or (only and group not in only):
-            continue
-        say(f"{arranged.design.name}: {group}")
-        files += _WRITERS[group](order)
+    for group, written in _WRITERS.items():
+        if not only or group in only:
+            say(f"{arranged.design.name}: {group}")
+            files += written(order)
     return tuple(files)
 
 
@@ -83,7 +79,7 @@ def versions() -> dict[str, str]:
     """Program and libraries that shape the bytes of a package."""
     import importlib.metadata
 
-    names = ("cadquery", "ezdxf", "jinja2", "numpy", "svgwrite", "trimesh", "typst")
+    names = ("cadquery", "cadquery-ocp", "ezdxf", "jinja2", "numpy", "scipy", "svgwrite", "trimesh", "typst")
     return {"fabgen": __version__} | {name: importlib.metadata.version(name) for name in names}
 
 
@@ -235,3 +231,5 @@ _WRITERS: dict[str, Callable[[Order], Files]] = {
     "fixtures": _fixtures,
     "book": _book,
 }
+GROUPS = tuple(_WRITERS)
+"""What `--only` can name."""

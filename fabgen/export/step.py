@@ -5,15 +5,14 @@ The kernel would also write the clock, a count of all occurrences since the proc
 memory addresses; a pass over the text takes these away and adds the colours in the order of the parts.
 """
 
+import io
 import re
-import tempfile
 from collections.abc import Sequence
 from itertools import count
-from pathlib import Path
 from typing import TYPE_CHECKING, Any
 
 from fabgen.design.solids import AssemblyItem, Colour, Product
-from fabgen.errors import MachineError, ProgramError
+from fabgen.errors import ProgramError
 
 if TYPE_CHECKING:
     from fabgen.design.arranged import Frame
@@ -44,7 +43,7 @@ def assembly_bytes(items: Sequence[AssemblyItem], *, name: str) -> bytes:
         name: of the whole, printable ASCII.
 
     Raises:
-        MachineError: the kernel could not write its temporary file.
+        ProgramError: the kernel did not write the parts that it was given.
     """
     from OCP.XCAFDoc import XCAFDoc_DocumentTool
 
@@ -66,7 +65,7 @@ def part_bytes(product: Product) -> bytes:
     """One part as a STEP file, in its own frame.
 
     Raises:
-        MachineError: the kernel could not write its temporary file.
+        ProgramError: the kernel did not write the parts that it was given.
     """
     document = _document()
     _part(document, product.solid, product.name)
@@ -121,11 +120,10 @@ def _written(document: Any) -> str:
     Interface_Static.SetIVal_s("write.surfacecurve.mode", 0)
     writer.SetNameMode(True)
     writer.SetColorMode(False)
-    with tempfile.TemporaryDirectory(prefix="fabgen-") as folder:
-        path = Path(folder) / "model.step"
-        if not (writer.Transfer(document, STEPControl_AsIs) and writer.Write(str(path)) == IFSelect_RetDone):
-            raise MachineError("the kernel could not write a STEP file to the temporary folder")
-        return path.read_text(encoding="latin-1")
+    out = io.BytesIO()
+    if not (writer.Transfer(document, STEPControl_AsIs) and writer.WriteStream(out) == IFSelect_RetDone):
+        raise ProgramError("the kernel could not write a STEP file")
+    return out.getvalue().decode("latin-1")
 
 
 def _text(written: str, name: str, colours: Sequence[Colour]) -> bytes:
