@@ -1,14 +1,17 @@
 """How far a sawn length or a station may be off."""
 
 from fabgen.design.design import Shop
-from fabgen.stock.tables import NoToleranceError, linear_tolerance_mm
+from fabgen.stock.tables import linear_tolerance_mm
+
+_TABLED_MM = {"f": (0.5, 2000.0), "m": (0.5, 4000.0), "c": (0.5, 4000.0), "v": (6.0, 4000.0)}
+"""Sizes of the first and the last row with a value, by class. Source: ISO 2768-1:1989, table 1, secondary source."""
 
 
 def shop_tolerance_mm(shop: Shop, size_mm: float) -> float:
     """± on a length or station: the stated tolerance, or ISO 2768-1 by size and class.
 
     Beyond the table (a station over 4 m, or over 2 m in class f) its nearest row of that class serves: tighter than the
-    standard would go, never looser. Class v has no row below 3 mm: its first serves.
+    standard would go, never looser. Class v has no row up to 3 mm: its first serves.
 
     Args:
         shop: states a tolerance or a class.
@@ -16,9 +19,5 @@ def shop_tolerance_mm(shop: Shop, size_mm: float) -> float:
     """
     if shop.stated_tolerance_mm > 0:
         return shop.stated_tolerance_mm
-    for nearest_mm in (size_mm, 4000.0, 2000.0, 6.0):
-        try:
-            return linear_tolerance_mm(max(nearest_mm, 0.5), shop.tolerance)
-        except NoToleranceError:
-            continue
-    raise NoToleranceError(f"ISO 2768-1 has no class {shop.tolerance}")
+    smallest_mm, largest_mm = _TABLED_MM[shop.tolerance]
+    return linear_tolerance_mm(min(max(size_mm, smallest_mm), largest_mm), shop.tolerance)
