@@ -10,6 +10,7 @@ from fabgen.arrange.arrange import arrange
 from fabgen.correct.case import as_boom_mount
 from fabgen.correct.coupon_record import mount_key, mounted_rods
 from fabgen.correct.ledger import correct
+from fabgen.correct.rod_change import free_length_mm
 from fabgen.design.arranged import Arranged, Box, Shape
 from fabgen.design.coupon import CouponPlan, Expected
 from fabgen.design.coupon_holder_sizes import least_height_mm
@@ -20,7 +21,6 @@ from fabgen.design.records import MountGeometry
 from fabgen.errors import InputError
 from fabgen.physics.boom_coupon import good_coupon_boom_mm
 from fabgen.physics.boom_differences import nearest_closed_form_mm
-from fabgen.physics.boom_mount import Section
 from fabgen.pipeline import Judged, check
 from fabgen.stock.tables import material_names
 
@@ -49,7 +49,7 @@ def coupon_plan(design: Design, mount: str) -> tuple[CouponPlan, Arranged, Judge
         InputError: no rod has this mount on metal, or no test array for it can be built.
     """
     element, geometry = mounted_rods(design, mount)[0]
-    rods_mm = [other.length_mm for other, same in mounted_rods(design, mount) if same == geometry]
+    rods_mm = [free_length_mm(design, other) for other, same in mounted_rods(design, mount) if same == geometry]
     boom_mm = max(geometry.outside_mm, geometry.height_mm)
     piece_mm = 2.0 * math.ceil(good_coupon_boom_mm(boom_mm, design.frequency_mhz) / 2)
     plan = _plan(design, element, geometry, rods_mm, piece_mm)
@@ -121,7 +121,7 @@ def _plan(
 
     wl_mm, rod_mm = design.wavelength_mm, geometry.rod_diameter_mm
     middle_mm = sum(rods_mm) / len(rods_mm)
-    allowance_mm = _theory_mm(geometry, middle_mm)
+    allowance_mm = nearest_closed_form_mm(as_boom_mount(geometry), middle_mm, geometry.frequency_mhz)
     driven_mm = max(rod_mm, THINNEST_DRIVEN_MM)
     trims = coupon_array(
         rods_mm=rods_mm,
@@ -167,18 +167,6 @@ def _plan(
         holder=(),
         expected=expected,
     )
-
-
-def _theory_mm(geometry: MountGeometry, length_mm: float) -> float:
-    """What theory expects, whatever its range: of a flat boom the mean of the two square ones."""
-    mount, frequency_mhz = as_boom_mount(geometry), geometry.frequency_mhz
-    if mount.section is not Section.RECTANGULAR:
-        return nearest_closed_form_mm(mount, length_mm, frequency_mhz)
-    squares = (
-        replace(mount, section=Section.SQUARE, outside_mm=side_mm, height_mm=0.0)
-        for side_mm in (mount.outside_mm, mount.height_mm)
-    )
-    return sum(nearest_closed_form_mm(square, length_mm, frequency_mhz) for square in squares) / 2
 
 
 def _piece(design: Design, element: Element, plan: CouponPlan) -> Arranged:

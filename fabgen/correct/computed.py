@@ -1,13 +1,14 @@
 """Allowances computed from the drawn mount, by a stored full solution or by closed form: theory, unmeasured."""
 
-from fabgen.correct.case import as_boom_mount, boom_mount, surroundings
-from fabgen.correct.remarks import advice_remarks, missing_remarks
+from fabgen.correct.case import as_boom_mount, surroundings
+from fabgen.correct.remarks import advice_remarks, missing_remarks, touching_remarks
 from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
 from fabgen.design.mount_geometry import mount_geometry
 from fabgen.design.records import MountGeometry, SolvedRecord
 from fabgen.physics.boom_carried import solved_allowance
 from fabgen.physics.boom_closed_form import BoomAllowance, closed_form_allowance
+from fabgen.physics.boom_range import Reason
 
 CLOSED_FORM = "computed from the drawn mount by closed form; theory, unmeasured (own study 2026, computed, unpublished)"
 SOLVED = "computed from the drawn mount by the full solver, {file}; theory, unmeasured"
@@ -29,15 +30,19 @@ def computed(design: Design, element: Element, mount: Mount, values: tuple[Publi
         values: the published values to show beside it.
     """
     geometry = mount_geometry(design, element, mount)
-    stored = [record for record in design.records if isinstance(record, SolvedRecord) and record.mount == mount.name]
+    stored = [record for record in design.records if isinstance(record, SolvedRecord)]
     fresh = [record for record in stored if not _changes(record, geometry)]
     beyond_mm = BEYOND_WL * design.wavelength_mm
     for record in reversed(fresh):
         if record.covers(element.length_mm, beyond_mm):
             return _allowance(_solved(design, element, record), SOLVED.format(file=record.file), values)
-    near = surroundings(design, element)
-    result = closed_form_allowance(boom_mount(design, element, mount), element.length_mm, design.frequency_mhz, near)
-    return _allowance(result, CLOSED_FORM, values, _stale(stored, fresh, geometry, element.length_mm))
+    drawn, near = as_boom_mount(geometry), surroundings(design, element)
+    result = closed_form_allowance(drawn, element.length_mm, design.frequency_mhz, near)
+    stale = [record for record in stored if record.mount == mount.name]
+    remarks = _stale(stale, fresh, geometry, element.length_mm)
+    if any(miss.reason is Reason.GAP_TOO_SMALL for miss in result.misses):
+        remarks += touching_remarks(drawn.section)
+    return _allowance(result, CLOSED_FORM, values, remarks)
 
 
 def _solved(design: Design, element: Element, record: SolvedRecord) -> BoomAllowance:
@@ -64,8 +69,8 @@ def _changes(record: SolvedRecord, drawn: MountGeometry) -> list[str]:
 def _stale(
     stored: list[SolvedRecord], fresh: list[SolvedRecord], geometry: MountGeometry, length_mm: float
 ) -> tuple[Remark, ...]:
-    """Why no stored solution of this mount is used."""
-    if not stored:
+    """Why no stored solution is used: of this geometry, or else of the mount of this name."""
+    if not stored and not fresh:
         return ()
     if fresh:
         low, high = fresh[-1].rods[0].modelled_mm, fresh[-1].rods[-1].modelled_mm

@@ -2,7 +2,8 @@
 
 from fabgen.design.ledger import Remark
 from fabgen.physics.boom_closed_form import BoomAllowance
-from fabgen.physics.boom_range import Advice
+from fabgen.physics.boom_mount import Section
+from fabgen.physics.boom_range import Advice, touching_allowance_ratios
 
 _COMMANDS = {
     Advice.SOLVE: "`fabgen solve`",
@@ -36,4 +37,23 @@ def missing_remarks(result: BoomAllowance) -> tuple[Remark, ...]:
         if miss.required
         else Remark("L04", miss.reason.value)
         for miss in result.misses
+    )
+
+
+def touching_remarks(section: Section) -> tuple[Remark, ...]:
+    """L05: what is in print and what is computed for a rod that touches the boom's top, and that neither is to be used.
+
+    Args:
+        section: the boom's.
+    """
+    ratios = touching_allowance_ratios(section)
+    if ratios is None:
+        return ()
+    size = "diameter" if section is Section.ROUND else "side"
+    return (
+        Remark(
+            "L05",
+            f"a rod that touches the boom's top takes 0.06 of its {size} in print, {ratios[0]:g} to {ratios[1]:g} by "
+            f"computation for a long boom: raise the rod, or measure; {_COMMANDS[Advice.MEASURE]}",
+        ),
     )

@@ -51,3 +51,13 @@ def rod_change(design: Design, element: Element) -> RodChange:
         text = f"rods of 0.38 to 0.50 wavelengths and up to {DIAMETER_LIMIT_WL} wavelengths thick are in its range"
         remarks = (Remark("E06", text, thickest_wl, DIAMETER_LIMIT_WL, "wl"),)
     return RodChange(found.change_mm, U_SHARE * abs(found.change_mm), remarks)
+
+
+def free_length_mm(design: Design, element: Element) -> float:
+    """Length of a rod of the shop in free space, from which its allowance follows: modelled, and the rod's change.
+
+    Args:
+        design: for the frequency and the kind of feed.
+        element: as modelled, with the rod of the shop.
+    """
+    return element.length_mm + rod_change(design, element).value_mm

@@ -11,6 +11,7 @@ from typing import Any
 
 from fabgen.correct.case import as_boom_mount
 from fabgen.correct.computed import BEYOND_WL, NOT_SOLVED
+from fabgen.correct.rod_change import free_length_mm
 from fabgen.design.design import Design
 from fabgen.design.mount_geometry import mount_geometry
 from fabgen.design.records import MountGeometry, SolvedRecord
@@ -68,7 +69,7 @@ def solve_tasks(design: Design, mount: str = "") -> tuple[SolveTask, ...]:
         drawn = element.mount
         if drawn is not None and metal and drawn.style != "through-nonmetal" and mount in ("", drawn.name):
             key = (drawn.name, mount_geometry(design, element, drawn))
-            groups.setdefault(key, []).append((element.id, element.length_mm))
+            groups.setdefault(key, []).append((element.id, free_length_mm(design, element)))
     if not groups:
         known = sorted({element.mount.name for element in design.elements if element.mount is not None})
         what = f"no rod is carried by a mount {mount} on a metal boom" if mount else "no rod meets a metal boom"
@@ -79,7 +80,7 @@ def solve_tasks(design: Design, mount: str = "") -> tuple[SolveTask, ...]:
             geometry,
             tuple(id_ for id_, _ in rods),
             _lengths([length_mm for _, length_mm in rods], design.wavelength_mm),
-            _stored(design, name, geometry, [length_mm for _, length_mm in rods]),
+            _stored(design, geometry, [length_mm for _, length_mm in rods]),
         )
         for (name, geometry), rods in groups.items()
     )
@@ -95,9 +96,9 @@ def _lengths(rods_mm: list[float], wl_mm: float) -> tuple[float, ...]:
     return (shortest, middle, longest)
 
 
-def _stored(design: Design, mount: str, geometry: MountGeometry, rods_mm: list[float]) -> str:
+def _stored(design: Design, geometry: MountGeometry, rods_mm: list[float]) -> str:
     for record in design.records:
-        if isinstance(record, SolvedRecord) and record.mount == mount:
+        if isinstance(record, SolvedRecord):
             same = all(item in NOT_SOLVED for item, _, _ in record.geometry.differing(geometry))
             if same and all(record.covers(length_mm, BEYOND_WL * design.wavelength_mm) for length_mm in rods_mm):
                 return record.file

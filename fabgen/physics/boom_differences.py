@@ -8,17 +8,13 @@ from dataclasses import replace
 from enum import Enum
 
 from fabgen.frozen import frozen
-from fabgen.physics.boom_closed_form import (
-    bonded_reactance_factor,
-    bush_term_mm,
-    relative_allowance,
-    rod_slope_ohm_per_wl,
-)
+from fabgen.physics.boom_closed_form import bush_term_mm, relative_allowance
 from fabgen.physics.boom_coupon import reactance_factor_from_allowance
-from fabgen.physics.boom_mount import ETA_OHM, BoomMount, Section, Style, wavelength_mm
+from fabgen.physics.boom_mount import BoomMount, Section, Style, wavelength_mm
 
 _LARGEST_GROWTH = 0.10
 _LARGEST_CHANGE = 0.25
+"""What makes another mount: relative change of g, and of a size or the frequency; judgements."""
 
 
 def nearest_closed_form_mm(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) -> float:
@@ -30,18 +26,18 @@ def nearest_closed_form_mm(mount: BoomMount, rod_length_mm: float, frequency_mhz
         frequency_mhz: design frequency.
 
     Returns:
-        A rough allowance in mm; a rectangular boom counts as a round one of 1.1 times its mean side, and an
-        unbonded rod on or through it, or through a solid square bar, as half bonded.
+        A rough allowance in mm; a rectangular boom counts as the mean of the two square ones of its sides, a
+        solid square bar as a round one of its side.
     """
-    solid_flat = mount.style is Style.INSULATED_THROUGH and mount.solid and mount.section is not Section.ROUND
-    if mount.section is not Section.RECTANGULAR and not solid_flat:
-        return relative_allowance(mount, rod_length_mm, frequency_mhz) * mount.outside_mm
-    wl_mm = wavelength_mm(frequency_mhz)
-    round_mm = 1.1 * (mount.outside_mm + (mount.height_mm or mount.outside_mm)) / 2
-    rod_wl = mount.rod_diameter_mm / wl_mm
-    slope = rod_slope_ohm_per_wl(rod_wl, rod_length_mm / wl_mm)
-    bonded_mm = ETA_OHM * round_mm * bonded_reactance_factor(round_mm / wl_mm, rod_wl) / slope
-    return bonded_mm if mount.style is Style.BONDED_THROUGH else bonded_mm / 2
+    if mount.section is Section.RECTANGULAR:
+        squares = (
+            replace(mount, section=Section.SQUARE, outside_mm=side_mm, height_mm=0.0)
+            for side_mm in (mount.outside_mm, mount.height_mm)
+        )
+        return sum(nearest_closed_form_mm(square, rod_length_mm, frequency_mhz) for square in squares) / 2
+    if mount.style is Style.INSULATED_THROUGH and mount.solid:
+        mount = replace(mount, section=Section.ROUND)
+    return relative_allowance(mount, rod_length_mm, frequency_mhz) * mount.outside_mm
 
 
 class Item(Enum):

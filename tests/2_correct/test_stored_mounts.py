@@ -268,6 +268,33 @@ def test_the_lengths_to_solve_span_the_table(variant: Variant) -> None:
         solve_tasks(design, "other")
 
 
+def test_a_solution_is_found_by_its_geometry_whatever_the_mount_is_called(variant: Variant) -> None:
+    from fabgen.correct.solving import solve_tasks
+
+    design = variant(AUTO)
+    renamed = replace(design, records=(replace(solved(design), mount="tube"),))
+    assert allowance(renamed).value_mm == allowance(replace(design, records=(solved(design),))).value_mm
+    assert solve_tasks(renamed)[0].stored == "records/x/solved.yaml"
+
+
+def test_rods_of_another_diameter_are_solved_at_the_lengths_they_have_in_free_space(variant: Variant) -> None:
+    """3 mm rods built of 6 mm ones are up to 12 mm shorter; what `solve` asks for must cover what the ledger needs."""
+    from fabgen.correct.solving import solve_tasks
+
+    design = variant(
+        AUTO, ("diameter: 4 mm", "diameter: 6 mm, modelled_diameter: 3 mm"), ("hole: 8 mm", "hole: 9.5 mm")
+    )
+    (task,) = solve_tasks(design)
+    lines = [line for line in correct(design).lines if line.role != "driven"]
+    free = [line.modelled_mm + line.rod_change_mm for line in lines]
+    assert task.lengths_mm[0] == pytest.approx(min(free), abs=1e-3)
+    assert task.lengths_mm[-1] == pytest.approx(max(free), abs=1e-3)
+    rods = tuple(SolvedRod(length_mm, 5.0, 1.1) for length_mm in task.lengths_mm)
+    stored = replace(design, records=(SolvedRecord("solved.yaml", "line", task.geometry, rods, 0.004),))
+    assert all("full solver" in correct(stored).line(line.element).allowance.source for line in lines)
+    assert solve_tasks(stored)[0].stored == "solved.yaml"
+
+
 def test_a_screw_through_the_middle_is_said_to_bond_nothing(variant: Variant) -> None:
     """Electrically the rod is insulated in its holes: the same value as with keepers, and the reason beside it."""
     kept = variant(AUTO)

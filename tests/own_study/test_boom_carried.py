@@ -128,6 +128,22 @@ def test_a_small_difference_is_named_and_grows_u(change: dict[str, float], item:
     assert more.u_relative > found.u_relative
 
 
+@pytest.mark.parametrize(
+    ("mount", "change"),
+    [
+        (replace(TUBE, section=Section.RECTANGULAR, height_mm=30), {"hole_mm": 8.4}),
+        (replace(TUBE, section=Section.RECTANGULAR, height_mm=30), {"wall_mm": 1.7}),
+        (replace(TOP, section=Section.RECTANGULAR, height_mm=30), {"axis_height_mm": 6.3}),
+        (replace(TUBE, section=Section.SQUARE, wall_mm=0.0), {"hole_mm": 8.4}),
+    ],
+)
+def test_a_difference_counts_where_no_closed_form_covers_the_mount_too(
+    mount: BoomMount, change: dict[str, float]
+) -> None:
+    (found,) = differences(mount, MHZ, replace(mount, **change), MHZ)  # type: ignore[arg-type]
+    assert found.u_relative > 0.004
+
+
 def test_differences_come_item_by_item() -> None:
     drawn = replace(TUBE, hole_mm=8.1, rod_diameter_mm=4.05)
     assert {d.item for d in differences(TUBE, MHZ, drawn, 432.0)} == {Item.ROD, Item.HOLE, Item.FREQUENCY}
@@ -160,8 +176,13 @@ def test_another_band_is_another_mount() -> None:
 def test_nearest_closed_form_covers_what_closed_forms_do_not() -> None:
     rectangular = BoomMount(Style.BONDED_THROUGH, Section.RECTANGULAR, 30, 4, height_mm=20)
     bar = BoomMount(Style.INSULATED_THROUGH, Section.SQUARE, 20, 4, hole_mm=8)
-    assert 5 < nearest_closed_form_mm(rectangular, 300, MHZ) < 20
-    assert 2 < nearest_closed_form_mm(bar, 300, MHZ) < 10
+    low, high = (
+        nearest_closed_form_mm(replace(BONDED, section=Section.SQUARE, outside_mm=side_mm), 300, MHZ)
+        for side_mm in (20.0, 30.0)
+    )
+    assert nearest_closed_form_mm(rectangular, 300, MHZ) == pytest.approx((low + high) / 2)
+    round_bar = nearest_closed_form_mm(replace(bar, section=Section.ROUND), 300, MHZ)
+    assert nearest_closed_form_mm(bar, 300, MHZ) == round_bar > 2
     assert nearest_closed_form_mm(BONDED, 300, MHZ) == pytest.approx(
         closed_form_allowance(BONDED, 300, MHZ).allowance_mm
     )
