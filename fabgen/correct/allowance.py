@@ -52,7 +52,7 @@ def _of_mount(design: Design, element: Element, mount: Mount) -> Allowance:
     if choice.origin == "stated":
         return _stated(choice, values)
     if choice.origin == "published":
-        return published(design, mount, values)
+        return published(design, element, mount, values)
     if choice.origin in ("measured", "auto", "computed") and _metal_beside(design, mount):
         return _found_out(design, element, mount, values)
     if choice.origin in ("measured", "computed"):
@@ -81,6 +81,12 @@ def _metal_beside(design: Design, mount: Mount) -> bool:
 
 
 def _stated(choice: AllowanceChoice, values: tuple[PublishedValue, ...]) -> Allowance:
+    """One figure for all rods of the mount: whatever it is off, it is off for all of them together."""
     return Allowance(
-        choice.value_mm, "stated", u_mm=choice.uncertainty_mm, source=f"stated: {choice.source}", published=values
+        choice.value_mm,
+        "stated",
+        u_mm=choice.uncertainty_mm,
+        correlated_u_mm=choice.uncertainty_mm,
+        source=f"stated: {choice.source}",
+        published=values,
     )

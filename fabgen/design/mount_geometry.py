@@ -33,5 +33,8 @@ def mount_geometry(design: Design, element: Element, mount: Mount) -> MountGeome
 
 
 def film_insulated(element: Element, mount: Mount) -> bool:
-    """Whether nothing but an anodic film or paint stands between rod and boom."""
-    return mount.style == "insulated-through" and mount.bush is None and element.rod.finish != "bare"
+    """Whether an anodic film or paint stands between rod and boom: on a rod pressed into its holes.
+
+    A weld burns it off and a screw's thread cuts it.
+    """
+    return mount.bond == "press" and element.rod.finish != "bare"

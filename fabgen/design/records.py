@@ -28,7 +28,7 @@ class MountGeometry:
         bush_permittivity: relative permittivity of that material.
         bush_length_mm: length of the bush in each wall.
         keeper: kind and material of what holds the rod.
-        film_insulation: nothing but an anodic film or paint stands between rod and boom.
+        film_insulation: an anodic film or paint stands between rod and boom, and nothing else.
         frequency_mhz: design frequency.
     """
 

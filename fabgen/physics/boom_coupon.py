@@ -5,12 +5,11 @@ A record keeps reactance, not millimetres: the same mount takes more length from
 Source: own study 2026, computed, unpublished.
 """
 
-import math
-
 from fabgen.physics.boom_closed_form import rod_slope_ohm_per_wl
 from fabgen.physics.boom_mount import ETA_OHM, wavelength_mm
 
 TRANSFER_U_RELATIVE = 0.06
+"""Of the allowance, for carrying what three rods say to the full array."""
 
 
 def reactance_factor_from_allowance(
@@ -56,20 +55,6 @@ def allowance_from_reactance_factor_mm(
     wl_mm = wavelength_mm(frequency_mhz)
     slope = rod_slope_ohm_per_wl(rod_diameter_mm / wl_mm, rod_length_mm / wl_mm)
     return reactance_factor * ETA_OHM * boom_mm / slope
-
-
-def measured_u_mm(allowance_mm: float, coupon_u_relative: float, other_u_relative: tuple[float, ...] = ()) -> float:
-    """Standard uncertainty of an allowance that a coupon gave.
-
-    Args:
-        allowance_mm: the rod's allowance.
-        coupon_u_relative: u(A)/A of the coupon's fit.
-        other_u_relative: relative parts for geometry that differs from the record.
-
-    Returns:
-        All parts and 6 % for carrying three-rod results to the full array, in quadrature.
-    """
-    return abs(allowance_mm) * math.hypot(coupon_u_relative, TRANSFER_U_RELATIVE, *other_u_relative)
 
 
 def end_fall_factor(boom_mm: float, end_distance_mm: float) -> float:

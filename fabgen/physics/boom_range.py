@@ -118,7 +118,7 @@ def _shape_misses(mount: BoomMount) -> list[RangeMiss]:
         misses.append(RangeMiss(Reason.SOLID_SQUARE_INSULATED, 0.0, 0.0, ""))
     elif mount.section is Section.RECTANGULAR:
         misses.append(RangeMiss(Reason.RECTANGULAR, 0.0, 0.0, ""))
-    if insulated and mount.film_insulation:
+    if mount.film_insulation:
         misses.append(RangeMiss(Reason.FILM_INSULATION, 0.0, 0.0, ""))
     return misses
 

@@ -179,6 +179,7 @@ def solver_misses(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) 
         (rod_mm > 0.02 * wl_mm, miss(Reason.ROD_TOO_THICK, rod_mm / wl_mm, 0.02, "wl")),
         (rod_length_mm < 0.36 * wl_mm, miss(Reason.ROD_TOO_SHORT, rod_length_mm / wl_mm, 0.36, "wl")),
         (rod_length_mm > 0.5 * wl_mm, miss(Reason.ROD_TOO_LONG, rod_length_mm / wl_mm, 0.5, "wl")),
+        (mount.film_insulation, miss(Reason.FILM_INSULATION, 0.0, 0.0, "")),
     ]
     if mount.style is Style.ON_TOP:
         least_mm = 0.02 * rod_mm
@@ -187,7 +188,6 @@ def solver_misses(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) 
         checks.append((narrow_mm < 1.15 * rod_mm, miss(Reason.BOOM_TO_ROD, narrow_mm / rod_mm, 1.15, "")))
     if mount.style is Style.INSULATED_THROUGH:
         most_mm = 0.95 * (narrow_mm - 2 * mount.wall_mm)
-        checks.append((mount.film_insulation, miss(Reason.FILM_INSULATION, 0.0, 0.0, "")))
         checks.append((mount.hole_mm > most_mm, miss(Reason.HOLE_TOO_LARGE, mount.hole_mm, most_mm, "mm")))
     return tuple(found for missed, found in checks if missed)
 

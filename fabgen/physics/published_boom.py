@@ -23,6 +23,9 @@ DL6WU_LIMIT_WL = 0.055
 FISHENDEN_WIBLIN_LIMIT_WL = 0.05
 """Our reading of "small against the element": a tenth of a half wave."""
 
+LIMITS_WL: dict[Model, float] = {"dl6wu": DL6WU_LIMIT_WL, "fishenden-wiblin": FISHENDEN_WIBLIN_LIMIT_WL}
+"""Models whose range is a size of boom, and its end; what ends Lawson's is no size."""
+
 LO_SQUARE = 2 * math.gamma(0.25) ** 2 / (4 * math.pi**1.5)
 """Diameter of the round conductor equivalent to a square of side 1, 1.1803: Y. T. Lo, A Note on the Cylindrical
 Antenna of Noncircular Cross Section, J. Appl. Phys. 24 (1953) 1338; secondary source, recomputed."""
@@ -99,14 +102,6 @@ def dl6wu_bonded_mm(boom_mm: float, wavelength_mm: float) -> float:
     return dl6wu_fraction(boom_mm / wavelength_mm) * boom_mm
 
 
-def dl6wu_insulated_mm(boom_mm: float, wavelength_mm: float) -> float:
-    """Half of DL6WU's curve, for a rod insulated through a round boom; arguments as `dl6wu_bonded_mm`.
-
-    Source: I. White (ed.), The VHF/UHF DX Book, ch. 7, from memory.
-    """
-    return dl6wu_bonded_mm(boom_mm, wavelength_mm) / 2
-
-
 def lawson_bonded_mm(boom_mm: float) -> float:
     """Lawson's 0.7 D for a rod through the boom, his reading of the NBS measurements; he sets no range.
 
@@ -118,7 +113,7 @@ def lawson_bonded_mm(boom_mm: float) -> float:
 def lawson_touching_mm(boom_mm: float) -> float:
     """Lawson's 0.06 D for a rod that touches the boom from above; vanishes quickly with spacing.
 
-    Full-wave computation finds several times that value for a long boom, see `boom_mount`: measure it.
+    Full-wave computation finds several times that value for a long boom, see `touching_allowance_ratios`: measure it.
 
     Source: J. L. Lawson, Yagi Antenna Design, ARRL 1986, p. 7-12 (secondary source).
     """
@@ -212,13 +207,3 @@ def published_models(style: Style) -> tuple[Model, ...]:
         "on-top": ("lawson",),
     }
     return rules.get(style, ())
-
-
-def spread_mm(values: tuple[PrintedValue, ...]) -> float:
-    """Largest less smallest of the printed values for one case, bounds included; 0 when there are none."""
-    return max((v.value_mm for v in values), default=0.0) - min((v.value_mm for v in values), default=0.0)
-
-
-def standard_uncertainty_mm(values: tuple[PrintedValue, ...]) -> float:
-    """The spread as a standard uncertainty: spread/√12, a rectangular distribution (JCGM 100:2008, 4.3.7)."""
-    return spread_mm(values) / math.sqrt(12)

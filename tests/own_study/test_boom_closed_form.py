@@ -5,6 +5,7 @@ Source of every expected value: own study 2026, computed, unpublished. Theory, n
 
 import csv
 import math
+from dataclasses import replace
 from pathlib import Path
 
 import pytest
@@ -182,6 +183,7 @@ LIMITS = [
         Reason.SOLID_SQUARE_INSULATED,
     ),
     (tube(20, 1.5, 4, 4.1, film_insulation=True), 450, Reason.FILM_INSULATION),
+    (replace(bonded(20, 4), film_insulation=True), 450, Reason.FILM_INSULATION),
     (tube(20, 1.5, 4, 4.04, bush_permittivity=8, bush_length_mm=2.5), 450, Reason.BUSH_CAPACITANCE),
 ]
 

@@ -3,15 +3,12 @@
 Source: own study 2026, computed, unpublished.
 """
 
-import math
-
 import pytest
 
 from fabgen.physics.boom_closed_form import closed_form_allowance
 from fabgen.physics.boom_coupon import (
     allowance_from_reactance_factor_mm,
     good_coupon_boom_mm,
-    measured_u_mm,
     reactance_factor_from_allowance,
     shortest_coupon_boom_mm,
 )
@@ -38,11 +35,6 @@ def test_one_coupon_calibrates_the_whole_table() -> None:
         assert allowance_from_reactance_factor_mm(factor, rod_length_mm=length_mm, **case) == pytest.approx(
             expected.allowance_mm
         )
-
-
-def test_uncertainty_in_quadrature() -> None:
-    assert measured_u_mm(5.0, 0.03) == pytest.approx(5 * math.hypot(0.03, 0.06))
-    assert measured_u_mm(5.0, 0.03, (0.04,)) == pytest.approx(5 * math.sqrt(0.0009 + 0.0036 + 0.0016))
 
 
 def test_coupon_boom_lengths() -> None:

@@ -5,6 +5,7 @@ Source of every table: own study 2026, computed, unpublished; theory, no measure
 
 import csv
 import math
+from dataclasses import replace
 from functools import cache
 from pathlib import Path
 
@@ -249,6 +250,7 @@ def test_progress_is_told() -> None:
             450,
             Reason.FILM_INSULATION,
         ),
+        (replace(bonded(30, 6), film_insulation=True), 450, Reason.FILM_INSULATION),
         (BoomMount(Style.ON_TOP, Section.ROUND, 30, 6, axis_height_mm=3.1), 450, Reason.GAP_TOO_SMALL),
     ],
 )
