@@ -23,8 +23,11 @@ def clipped(item: Item, window: Box) -> list[Item]:
     Returns:
         No, one or several items of the same layer; a cut circle comes back as arcs.
     """
-    if contains(window, bounds(item)):
+    box = bounds(item)
+    if contains(window, box):
         return [item]
+    if box[0] > window[2] or box[2] < window[0] or box[1] > window[3] or box[3] < window[1]:
+        return []
     match item:
         case Line():
             ends = _segment((item.x0_mm, item.y0_mm), (item.x1_mm, item.y1_mm), window)
@@ -91,7 +94,10 @@ def _paths(item: Polyline, window: Box) -> list[tuple[Point, ...]]:
 
 
 def _arcs(arc: Arc, window: Box) -> list[Item]:
-    """The pieces of an arc in a window; pieces that meet where a full circle starts are joined."""
+    """The pieces of an arc in a window; pieces that meet where a full circle starts are joined.
+
+    Where the arc only touches an edge it is parted too, so that the middle of every piece is clear of the edges.
+    """
     left, bottom, right, top = window
     crossings = {arc.start_deg, arc.end_deg}
     for edge, centre, is_x in (
@@ -101,7 +107,7 @@ def _arcs(arc: Arc, window: Box) -> list[Item]:
         (top, arc.y_mm, False),
     ):
         share = (edge - centre) / arc.radius_mm
-        if abs(share) < 1:
+        if abs(share) <= 1:
             angle = math.degrees(math.acos(share) if is_x else math.asin(share))
             for crossing in (angle, -angle) if is_x else (angle, 180 - angle):
                 turned = arc.start_deg + (crossing - arc.start_deg) % 360

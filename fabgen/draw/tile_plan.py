@@ -5,10 +5,12 @@ Coordinates are the sheet's, in mm: origin lower left, x right, y up.
 
 import itertools
 import math
-from collections.abc import Sequence
+from bisect import bisect_left
+from collections.abc import Iterator, Sequence
 from dataclasses import replace
+from typing import NamedTuple
 
-from fabgen.design.drawing import Box, Item, Line, Sheet, Text
+from fabgen.design.drawing import Box, Item, Line, Sheet, Text, box_of
 from fabgen.design.overlaps import bounds
 from fabgen.frozen import frozen
 
@@ -19,7 +21,13 @@ STATION_STEP_MM = 10.0
 TARGET_MM = 2.0
 """Radius of a target mark on a join."""
 
-_DETOUR_MM = 40.0
+_REACH_MM = TARGET_MM + 1.0
+_LEAST_SHARE = 1 / 3
+"""Of a page's room, for what a page shows before the next begins."""
+_BESIDE_MM = 1.5
+"""Lettering no farther than this from a hole's edge belongs to the hole."""
+_CROSSED = 0.05
+"""What a join through lettering or a hole costs: as much as to move it by 40 mm on an A4 page lying across."""
 
 
 @frozen
@@ -50,6 +58,41 @@ class Plan:
         return (m + GUTTER_MM, m + FOOT_MM, width - m, height - m - HEAD_MM)
 
 
+class _Span(NamedTuple):
+    """From where to where something that should stay whole reaches along one axis."""
+
+    low_mm: float
+    high_mm: float
+    weight: int
+
+
+class _Way(NamedTuple):
+    """Pages up to some place; the smaller is the better.
+
+    Attributes:
+        cost: pages, and the weight of what is lost.
+        pages: how many.
+        uneven: sum of the squares of their share of the room, and what crossed lettering costs.
+        joins_mm: between them.
+    """
+
+    cost: float
+    pages: float
+    uneven: float
+    joins_mm: tuple[float, ...]
+
+    def page(
+        self, width_mm: float, room_mm: float, join_mm: float | None = None, lost: int = 0, crossed: bool = False
+    ) -> "_Way":
+        """One page more, up to a join or to the end."""
+        uneven = self.uneven + round((width_mm / room_mm) ** 2, 9) + _CROSSED * crossed
+        joins = self.joins_mm if join_mm is None else (*self.joins_mm, join_mm)
+        return _Way(self.cost + 1 + lost, self.pages + 1, uneven, joins)
+
+
+_NO_WAY = _Way(math.inf, math.inf, math.inf, ())
+
+
 def plan_pages(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, margin_mm: float) -> Plan:
     """Plan the pages of one orientation of the paper.
 
@@ -61,8 +104,9 @@ def plan_pages(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, m
     """
     empty = Plan(paper_mm, margin_mm, (), (), (), (), 0)
     left, bottom, right, top = empty.room
-    whole = [bounds(item) for item in sheet.items if stays_whole(item)]
-    along, across = [(box[0], box[2]) for box in whole], [(box[1], box[3]) for box in whole]
+    whole = list(_whole(sheet))
+    along = [_Span(box[0], box[2], weight) for box, weight in whole]
+    across = [_Span(box[1], box[3], weight) for box, weight in whole]
     station_mm = sheet.station_at_x0_mm or 0.0
     joins_x, lost_x = _joins(sheet.width_mm, right - left, overlap_mm, station_mm, STATION_STEP_MM, along)
     joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, across)
@@ -78,40 +122,79 @@ def stays_whole(item: Item) -> bool:
     return item.layer != "stamp" and (isinstance(item, Text) or (item.layer == "drill" and not isinstance(item, Line)))
 
 
+def _whole(sheet: Sheet) -> Iterator[tuple[Box, int]]:
+    """What should be whole on some page: lettering together with the hole that it stands beside, and holes.
+
+    Each with its weight: lettering that stands by itself counts half.
+    """
+    items = [item for item in sheet.items if stays_whole(item)]
+    holes = sorted(bounds(item) for item in items if item.layer == "drill")
+    yield from ((box, 2) for box in holes)
+    starts, widest_mm = [hole[0] for hole in holes], max((hole[2] - hole[0] for hole in holes), default=0.0)
+    for item in items:
+        if isinstance(item, Text):
+            box = bounds(item)
+            first = bisect_left(starts, box[0] - widest_mm - _BESIDE_MM)
+            last = bisect_left(starts, box[2] + _BESIDE_MM)
+            beside = [hole for hole in holes[first:last] if _is_beside(box, hole)][:1]
+            corners = tuple(corner for low in (box, *beside) for corner in (low[:2], low[2:]))
+            yield box_of(corners), 1 + len(beside)
+
+
+def _is_beside(box: Box, hole: Box) -> bool:
+    apart = max(box[0] - hole[2], hole[0] - box[2])
+    return 0 < apart < _BESIDE_MM and box[1] < hole[3] + _BESIDE_MM and hole[1] < box[3] + _BESIDE_MM
+
+
 def _joins(
     length_mm: float,
     room_mm: float,
     overlap_mm: float,
     origin_mm: float,
     step_mm: float,
-    whole: Sequence[tuple[float, float]],
+    whole: Sequence[_Span],
 ) -> tuple[tuple[float, ...], int]:
     """Places of the joins along one axis, each at a multiple of the step counted from the origin's value at 0.
 
-    As far apart as the room allows, then moved back, by half a page at most, to where the fewest whole items are lost
-    (those that start before the next page and end after this one), and by 40 mm at most to keep the join line off them.
+    Of all ways to cut the sheet the one with the fewest pages, an item that is on no page whole counted like a page
+    more; of those the one with the most equal pages, whose joins keep off lettering and holes. Returns the joins and
+    how many items are lost: those that start before the next page and end beyond this one.
     """
-    joins: list[float] = []
-    lost, start = 0, 0.0
-    while length_mm - start > room_mm:
-        end = start + room_mm
-        farthest = math.floor((end - overlap_mm / 2 + origin_mm) / step_mm) * step_mm - origin_mm
-        nearest = max(start + overlap_mm, end - room_mm / 2)
-        costs = []
-        for k in range(max(1, math.ceil((farthest - nearest) / step_mm))):
-            join = farthest - k * step_mm
-            cut = sum(1 for low, high in whole if start <= low < join - overlap_mm / 2 and high > end)
-            crossed = any(near(low, high, join) for low, high in whole)
-            costs.append((cut, crossed or farthest - join > _DETOUR_MM, -join))
-        cut, _, place = min(costs)
-        lost += cut
-        joins.append(-place)
-        start = joins[-1] - overlap_mm / 2
-    return tuple(joins), lost
+    half_mm = overlap_mm / 2
+    steps = range(math.ceil((origin_mm + overlap_mm) / step_mm), math.ceil((origin_mm + length_mm) / step_mm))
+    joins = [k * step_mm - origin_mm for k in steps]
+    crossed = _near_any(joins, whole)
+    ways = {0.0: _Way(0, 0, 0.0, ())}
+    for start in (0.0, *(join - half_mm for join in joins)):
+        way = ways.get(start)
+        if way is None:
+            continue
+        if length_mm - start <= room_mm:
+            ways[length_mm] = min(way.page(length_mm - start, room_mm), ways.get(length_mm, _NO_WAY))
+            continue
+        cut = [span for span in whole if start <= span.low_mm < start + room_mm < span.high_mm]
+        for join, is_crossed in zip(joins, crossed, strict=True):
+            advance_mm = join - half_mm - start
+            if _LEAST_SHARE * room_mm <= advance_mm <= room_mm - overlap_mm:
+                lost = sum(span.weight for span in cut if span.low_mm < join - half_mm)
+                longer = way.page(advance_mm + overlap_mm, room_mm, join, lost, is_crossed)
+                ways[join - half_mm] = min(longer, ways.get(join - half_mm, _NO_WAY))
+    best = ways[length_mm]
+    return best.joins_mm, round(best.cost - best.pages)
+
+
+def _near_any(joins_mm: Sequence[float], whole: Sequence[_Span]) -> list[bool]:
+    """For each join whether a target mark on it would touch anything that should stay whole."""
+    found, reach_mm, waiting = [], -math.inf, sorted(whole, reverse=True)
+    for join in joins_mm:
+        while waiting and waiting[-1].low_mm - _REACH_MM < join:
+            reach_mm = max(reach_mm, waiting.pop().high_mm + _REACH_MM)
+        found.append(join < reach_mm)
+    return found
 
 
 def _spans(
-    joins: tuple[float, ...], length_mm: float, room_mm: float, overlap_mm: float, whole: Sequence[tuple[float, float]]
+    joins: tuple[float, ...], length_mm: float, room_mm: float, overlap_mm: float, whole: Sequence[_Span]
 ) -> tuple[tuple[float, float], ...]:
     """From where to where each row or column of pages shows the sheet.
 
@@ -121,12 +204,11 @@ def _spans(
     spans = []
     for start, following in itertools.pairwise([*starts, length_mm]):
         end = min(start + room_mm, length_mm)
-        needed = [high for low, high in whole if start <= low < following and high <= end]
+        needed = [span.high_mm for span in whole if start <= span.low_mm < following and span.high_mm <= end]
         spans.append((start, min(end, max(following + overlap_mm, *needed, 0.0))))
     return tuple(spans)
 
 
 def near(low_mm: float, high_mm: float, place_mm: float) -> bool:
     """Whether a target mark at a place would touch what reaches from low to high."""
-    reach = TARGET_MM + 1
-    return low_mm - reach < place_mm < high_mm + reach
+    return low_mm - _REACH_MM < place_mm < high_mm + _REACH_MM

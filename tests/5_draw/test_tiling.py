@@ -107,6 +107,21 @@ def test_a_circle_cut_on_one_side_is_one_arc_and_in_a_corner_keeps_its_quarter()
     assert clipped(Circle("drill", 50, 30, 100), WINDOW) == []
 
 
+@pytest.mark.parametrize(("x", "y"), [(-10, 30), (110, 30), (50, -10), (50, 70)])
+def test_a_circle_that_only_touches_the_window_from_outside_is_left_out(x, y):
+    assert clipped(Circle("drill", x, y, 10), WINDOW) == []
+
+
+def test_an_arc_that_touches_an_edge_from_inside_stays_one_arc():
+    [arc] = clipped(Circle("drill", 10, 55, 10), WINDOW)
+    assert (arc.start_deg, arc.end_deg) == pytest.approx((150, 390))
+
+
+def test_an_arc_that_touches_an_edge_from_outside_is_left_out():
+    """Its middle lies on the edge, its ends beyond the upper and lower edge."""
+    assert clipped(Arc("drill", 150, 30, 50, 130, 230), WINDOW) == []
+
+
 def test_closed_lines_come_back_as_runs_without_new_edges():
     square = Polyline("outline", ((80, 20), (120, 20), (120, 40), (80, 40)), closed=True)
     [run] = clipped(square, WINDOW)
@@ -223,6 +238,35 @@ def test_pages_share_at_least_the_overlap_and_leave_nothing_out():
     assert all(left[1] - right[0] >= 10 - 1e-9 for left, right in itertools.pairwise(spans))
     both = [left[1] - right[0] for left, right in itertools.pairwise(spans)]
     assert max(both) < 60
+
+
+@pytest.mark.parametrize("length_mm", [260.0, 300.0, 530.0, 790.0, 1100.0, 1864.0, 5230.0])
+def test_a_bare_strip_takes_the_fewest_pages_and_all_are_about_as_long(length_mm):
+    """Joins stand at multiples of 10 mm, so two pages may differ by 10 mm and the ends by what is left of that."""
+    sheet = Sheet("s", "s", length_mm, 80, (Line("outline", 0, 40, length_mm, 40),), 0.0)
+    pages = cut(sheet).pages
+    room = 297 - 20 - 9
+    between = math.floor((room - 10) / 10) * 10
+    first = math.floor((room - 5) / 10) * 10
+    assert len(pages) == 1 + math.ceil(max(length_mm - first - (room - 5), 0) / between) + (length_mm > room)
+    widths = [right - left for left, right in map(shown, pages)]
+    assert max(widths) - min(widths) <= 25
+
+
+def test_a_page_that_letters_a_hole_shows_the_hole_whole():
+    pen = Pen()
+    stations = [30.0 + 61.0 * k for k in range(28)]
+    for k, station in enumerate(stations):
+        pen.circle("drill", station, 40, 4)
+        pen.text(station + 5.2, 40.6, f"D{k} {station:.3f} ±0.3")
+    for page in cut(pen.sheet("s", "s", 1750, 80, 0.0)).pages:
+        whole = {
+            round(item.x_mm + page.station_at_x0_mm, 6)
+            for item in page.items
+            if isinstance(item, Circle) and item.layer == "drill"
+        }
+        said = {float(item.text.split()[1]) for item in page.items if isinstance(item, Text) and "±" in item.text}
+        assert said <= whole
 
 
 def test_joins_keep_off_holes_and_lettering():

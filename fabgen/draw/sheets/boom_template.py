@@ -137,7 +137,7 @@ def _wall_names(pen: Pen, drawn: Drawn, laid: Development, paper: Box, base: flo
         levels = (base + middle - height / 2,) if half else (over, under)
         _along(pen, drawn, WALLS[face.wall], height, levels, (left, right))
     if laid.flap_mm:
-        seam = "Flap for tape: slide it under the opposite edge, which then lies on the thick line."
+        seam = "Flap for tape, goes under the opposite edge."
         _along(pen, drawn, seam, 2.0, (high - laid.flap_mm / 2 - 1.0,), (left, right), arrow=False)
 
 
@@ -213,9 +213,9 @@ def _heading(pen: Pen, arranged: Arranged, piece: Piece, laid: Development, from
     """What this is and how to use it; returns where it ends."""
     design, x = arranged.design, _LEFT_MM
     if laid.radius_mm:
-        how = "Cut out, wrap round the boom, TOP on the scribed TOP line; the seam runs along the bottom."
+        how = "Cut out, wrap round the boom, TOP on the scribed line; the edges meet on the thick line, at the bottom."
     elif laid.folds_mm:
-        how = "Cut out, fold on the dashed lines, wrap round the boom; the seam lies at the bottom right corner."
+        how = "Cut out, fold on the dashed lines, wrap round the boom; the edges meet on the thick line, bottom right."
     else:
         how = "Cut the strips apart; each lies on the face it names, its edges along the boom's edges."
     paper = f", paper {design.shop.paper_thickness_mm:g} mm thick" if laid.flap_mm else ""
