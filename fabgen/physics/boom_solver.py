@@ -35,7 +35,6 @@ from fabgen.physics.boom_range import RangeMiss, Reason
 _FREE_STEP_WL = 0.01
 _LENGTH_TOLERANCE_WL = 0.001
 _MOST_ROUNDS = 4
-_SLOPE_STEP_WL = 0.002
 
 
 @frozen
@@ -134,25 +133,6 @@ def free_rod_length_wl(
     lengths = (near_wl - _FREE_STEP_WL, near_wl, near_wl + _FREE_STEP_WL)
     values = [free_rod_mode(diameter_wl, length, segments, fineness).reactance_ratio for length in lengths]
     return float(np.polyval(np.polyfit(values, lengths, 2), reactance_ratio))
-
-
-def solved_slope_ohm_per_wl(diameter_wl: float, length_wl: float, fineness: Fineness = DEFAULT) -> float:
-    """Slope S of a free rod by full-wave solution: its resistance times the slope of its eigenvalue.
-
-    Args:
-        diameter_wl: rod diameter in wavelengths.
-        length_wl: rod length in wavelengths.
-        fineness: mesh fineness.
-
-    Returns:
-        S in ohm per wavelength.
-    """
-    segments = rod_segments(Style.BONDED_THROUGH, fineness)
-    low, middle, high = (
-        free_rod_mode(diameter_wl, length_wl + step, segments, fineness)
-        for step in (-_SLOPE_STEP_WL, 0.0, _SLOPE_STEP_WL)
-    )
-    return middle.resistance_ohm * (high.reactance_ratio - low.reactance_ratio) / (2 * _SLOPE_STEP_WL)
 
 
 def solver_misses(mount: BoomMount, rod_length_mm: float, frequency_mhz: float) -> tuple[RangeMiss, ...]:

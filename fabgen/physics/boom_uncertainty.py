@@ -86,7 +86,7 @@ def correlated_u_relative(mount: BoomMount, frequency_mhz: float, near: Surround
 
 
 def end_u_relative(mount: BoomMount, near: Surroundings) -> float:
-    """Relative u of a bonded rod for the boom's near end, which lowers g by twice that alone.
+    """Relative u of a bonded rod for the boom's near end, which lowers g by about as much.
 
     Args:
         mount: the mount.

@@ -13,14 +13,12 @@ reactance +305 kHz, the logarithmic formula -158 kHz.
 """
 
 import math
-from collections.abc import Sequence
-from dataclasses import replace
 
 import numpy as np
 from scipy.optimize import brentq
 
 from fabgen.frozen import frozen
-from fabgen.physics.array import LIGHT_MM_MHZ, RodArray
+from fabgen.physics.array import LIGHT_MM_MHZ
 from fabgen.physics.array_loss import impedance_matrix
 from fabgen.physics.array_matrix import bases, mutual_and_self
 
@@ -108,21 +106,3 @@ def equal_scattering_length(
         within_range=all(shortest_wl <= value * per_wavelength <= longest_wl for value in (length_mm, new_mm))
         and max(diameter_mm, new_diameter_mm) * per_wavelength <= DIAMETER_LIMIT_WL,
     )
-
-
-def with_rods_of(array: RodArray, new_diameter_mm: Sequence[float], frequency_mhz: float) -> RodArray:
-    """The array built from other rods, every rod cut for equal scattering reactance.
-
-    Args:
-        array: the modelled array.
-        new_diameter_mm: one diameter per rod.
-        frequency_mhz: design frequency.
-
-    Returns:
-        the array with new diameters and lengths.
-    """
-    lengths_mm = tuple(
-        equal_scattering_length(length_mm, diameter_mm, new_mm, frequency_mhz).length_mm
-        for length_mm, diameter_mm, new_mm in zip(array.length_mm, array.diameter_mm, new_diameter_mm, strict=True)
-    )
-    return replace(array, length_mm=lengths_mm, diameter_mm=tuple(new_diameter_mm))
