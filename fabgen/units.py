@@ -49,13 +49,14 @@ _VULGAR = {
     "⅘": "4/5", "⅙": "1/6", "⅚": "5/6", "⅛": "1/8", "⅜": "3/8", "⅝": "5/8", "⅞": "7/8",
 }  # fmt: skip
 _SAME_CHARACTERS = str.maketrans(
-    {"″": '"', "”": '"', "“": '"', "′": "'", "’": "'", "‘": "'", "−": "-", "⁄": "/"}
+    {"″": '"', "”": '"', "“": '"', "′": "'", "’": "'", "‘": "'", "−": "-", "–": "-", "‐": "-", "‑": "-", "⁄": "/"}
     | dict.fromkeys("\u00a0\u2007\u2009\u202f", " ")
 )
 
 _DECIMAL = r"(?:[0-9]+\.?[0-9]*|\.[0-9]+)"
 _QUANTITY = re.compile(rf"(?P<number>{_DECIMAL}(?:[eE][+-]?[0-9]+)?) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?")
 _FRACTION = re.compile(r"(?:(?P<whole>[0-9]+)[ -])?(?P<over>[0-9]+)/(?P<under>[0-9]+) ?(?P<unit>[^0-9\s.,/+-][^0-9]*)?")
+_WITH_COMMA = re.compile(r"(?P<sign>[+-]? ?)(?P<number>[0-9](?:[0-9.,]|(?<=[0-9]) (?=[0-9]))*)(?P<rest>[^0-9]*)")
 _FEET_INCHES = re.compile(r"(?P<feet>[0-9]+) ?(?:ft|foot|feet|'(?!'))[ -]?(?P<inches>[0-9.].*)")
 
 
@@ -100,11 +101,12 @@ def parse_length_mm(text: str, default_unit: str | None = None) -> float:
     return float(sign * value)
 
 
-def parse_frequency_mhz(text: str) -> float:
+def parse_frequency_mhz(text: str, example: str = "434.2 MHz") -> float:
     """Read one frequency: `434.2 MHz`, `1.2962 GHz`, `50100 kHz`, `144300000 Hz`; the unit is compulsory.
 
     Args:
         text: the frequency as written.
+        example: one as a user would write it, for messages; a number without a unit is proposed with its unit.
 
     Returns:
         The frequency in MHz, correctly rounded, above zero.
@@ -112,19 +114,19 @@ def parse_frequency_mhz(text: str) -> float:
     Raises:
         UnitError: the text is not exactly one frequency above zero.
     """
-    shown, plain = _prepare(text, "434.2 MHz")
+    shown, plain = _prepare(text, example)
     sign, plain = _split_sign(plain)
     match = _QUANTITY.fullmatch(plain)
     if not match:
-        raise UnitError(f"{shown} is not a frequency", "write a number and its unit, for example 434.2 MHz")
+        raise UnitError(f"{shown} is not a frequency", f"write a number and its unit, for example {example}")
     number, unit = match["number"], match["unit"]
     if unit is None:
-        raise UnitError(f"{shown} has no unit", f"write {number} MHz")
+        raise UnitError(f"{shown} has no unit", f"write {number} {example.partition(' ')[2]}")
     if unit not in _MHZ_PER_UNIT:
         raise _unknown_unit(unit, number, list(_MHZ_PER_UNIT), "MHz or GHz")
     value = _decimal(shown, number) * _MHZ_PER_UNIT[unit]
     if sign < 0 or value <= 0 or value > _LARGEST_MHZ:
-        raise UnitError(f"{shown} is not a frequency above zero and up to 1000 GHz", "for example 434.2 MHz")
+        raise UnitError(f"{shown} is not a frequency above zero and up to 1000 GHz", f"for example {example}")
     return float(value)
 
 
@@ -183,7 +185,7 @@ def _prepare(text: str, example: str) -> tuple[str, str]:
     shown = repr(text.strip())
     lower = plain.lower()
     if "," in plain:
-        raise _comma(shown, plain)
+        raise comma_error(text)
     if re.match(r"[+-]?\.?(nan|inf)", lower):
         raise UnitError(f"{shown} is not a finite number", f"write a number like {example}")
     if re.match(r"[+-]?0[xob]", lower):
@@ -198,16 +200,26 @@ def _prepare(text: str, example: str) -> tuple[str, str]:
     return shown, plain
 
 
-def _comma(shown: str, plain: str) -> UnitError:
-    """The refusal of a comma, which is a decimal mark for one reader and a thousands mark for the next."""
-    point = plain.replace(",", ".", 1)
-    if re.match(r"[+-]?[0-9]{1,3}(,[0-9]{3})+(?![0-9])", plain):
-        joined = plain.replace(",", "")
-        if plain.count(",") == 1:
+def comma_error(text: str) -> UnitError:
+    """The refusal of a comma, which is a decimal mark for one reader and a thousands mark for the next.
+
+    Args:
+        text: a value that holds one.
+    """
+    shown = repr(text.strip())
+    parts = _WITH_COMMA.fullmatch(" ".join(text.split()))
+    if parts:
+        number = parts["number"].replace(" ", "")
+        joined, point = (f"{parts['sign']}{number.replace(',', mark)}{parts['rest']}" for mark in ("", "."))
+        if re.fullmatch(r"[1-9][0-9]{0,2},[0-9]{3}", number):
             return UnitError(f"the comma in {shown} can be read in two ways", f"write {joined} or {point}")
-        return UnitError(f"{shown} has commas inside a number", f"write {joined}")
-    if plain.count(",") == 1 and re.search(r"[0-9],[0-9]", plain):
-        return UnitError(f"{shown} has a decimal comma", f"write {point}")
+        if re.fullmatch(r"[1-9][0-9]{0,2}(,[0-9]{3})+(\.[0-9]+)?", number):
+            return UnitError(f"{shown} has commas inside a number", f"write {joined}")
+        if re.fullmatch(r"[0-9]+,[0-9]+", number):
+            return UnitError(f"{shown} has a decimal comma", f"write {point}")
+        if re.fullmatch(r"[1-9][0-9]{0,2}(\.[0-9]{3})+,[0-9]+", number):
+            point = f"{parts['sign']}{number.replace('.', '').replace(',', '.')}{parts['rest']}"
+            return UnitError(f"{shown} has points inside a number and a decimal comma", f"write {point}")
     return UnitError(f"{shown} is not one value", "write one number with a decimal point, for example 4.5 mm")
 
 
@@ -223,11 +235,14 @@ def _feet_and_inches(shown: str, plain: str) -> Fraction | None:
         return None
     unit = re.search(r"[^0-9\s./-]+$", match["inches"])
     if unit is None or _LENGTH_NAMES.get(unit[0]) != "in":
-        fix = f"write {match['feet']} ft 2 in, or one unit"
+        whole = re.match(r"[0-9]{1,2}(?![0-9])", match["inches"])
+        fix = f"write {match['feet']} ft {whole[0] if whole else 2} in, or one unit"
         raise UnitError(f"{shown} has feet and then something else than inches", fix)
     feet, inches_mm = int(match["feet"]), _one_length(shown, match["inches"], None)
     if inches_mm >= _MM_PER_UNIT["ft"]:
-        raise UnitError(f"{shown} has 12 inches or more after the feet", "write 7 ft 2 in for 6 ft 14 in")
+        more, rest_mm = divmod(inches_mm, _MM_PER_UNIT["ft"])
+        fix = f"write {feet + more} ft {float(rest_mm / MM_PER_IN):g} in"
+        raise UnitError(f"{shown} has 12 inches or more after the feet", fix)
     return feet * _MM_PER_UNIT["ft"] + inches_mm
 
 

@@ -1,6 +1,7 @@
 """Values of a design file that are more than one scalar: a material, sizes with two or three numbers."""
 
 import functools
+import re
 from typing import Annotated, Any, cast
 
 from fabgen.design.design import Material
@@ -11,6 +12,8 @@ from fabgen.read.quantities import Length, Number
 from fabgen.read.words import Text, Word
 from fabgen.read.yaml_tree import Map, Scalar, Seq
 from fabgen.stock import tables
+
+_TIMES = re.compile(r"[0-9 ](mm|in|\")? ?[x×*] ?[0-9]")
 
 
 class Lengths(Kind):
@@ -29,6 +32,8 @@ class Lengths(Kind):
     def read(self, value: Any, info: ValidationInfo) -> tuple[float, ...]:
         """The lengths in mm."""
         if isinstance(value, Scalar) and self.single:
+            if _TIMES.search(value):
+                refuse("D08", f"'{value}' is more than one length", f"for example {self._list()}")
             return (self.each.read(value, info),)
         if not isinstance(value, Seq):
             scalar_of(value, self.example)

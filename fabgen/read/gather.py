@@ -17,6 +17,7 @@ _EXAMPLES = {
     "boom": "{section: square, outside: 20 mm, wall: 1.5 mm, material: EN AW-6060 T66, "
     "overhang: {rear: 70 mm, front: 70 mm}}",
     "overhang": "{rear: 70 mm, front: 70 mm}",
+    "mounts": "{line: {style: insulated-through}}",
     "elements": "and one row per rod, - {id: R, role: reflector, at: 0 mm, length: 340 mm}",
 }
 """What a whole section could look like."""
@@ -33,11 +34,10 @@ def gather(broken: Broken, root: Map, problems: Problems) -> None:
         problems: takes the reports.
     """
     info = FileKeys.model_fields[broken.field]
-    key = info.alias
-    name = _called(broken.node, root) or key
+    key, name = _called(broken.node, root, info.alias)
     model = keys_in(info.annotation)
     for reason in _reasons(broken.error, model):
-        _report(broken.node, root.key(key), name, model, reason, problems)
+        _report(broken.node, key, name, model, reason, problems)
 
 
 def gather_root(error: ValidationError, root: Map, problems: Problems) -> None:
@@ -57,14 +57,16 @@ def _reasons(error: ValidationError, model: type[Keys] | None) -> list[Any]:
     return [reason for reason in reasons if reason["type"] != "missing" or reason["loc"] not in meant]
 
 
-def _called(node: Node, root: Map) -> str:
-    """What messages call a row of `elements` or one of `mounts`."""
+def _called(node: Node, root: Map, section: str) -> tuple[Scalar | None, str]:
+    """The key before a section, a row of `elements` or one of `mounts`, and what messages call it."""
     id_ = node.get("id") if isinstance(node, Map) else None
-    if isinstance(id_, Scalar):
-        return f"row {id_}"
+    if section == "elements" and isinstance(id_, Scalar):
+        return root.key(section), f"row {id_}"
     mounts = root.get("mounts")
     names = [name for name, mount in mounts.items() if mount is node] if isinstance(mounts, Map) else []
-    return f"mount {names[0]}" if names else ""
+    if isinstance(mounts, Map) and names:
+        return mounts.key(names[0]), f"mount {names[0]}"
+    return root.key(section), section
 
 
 def _report(
@@ -77,7 +79,9 @@ def _report(
         loc = loc[:-1]
         bad = node.key(str(loc[-1])) if isinstance(node, Map) else None
         place = bad.place if bad is not None else node.place
-        problems.add(reason["ctx"]["code"], reason["ctx"]["message"], place, reason["ctx"]["fix"])
+        problems.add(
+            reason["ctx"]["code"], f"a name in {name}: {reason['ctx']['message']}", place, reason["ctx"]["fix"]
+        )
         return
     for depth, part in enumerate(loc):
         if isinstance(node, Map) and isinstance(part, str) and part in node:
@@ -124,6 +128,8 @@ def _report_shape(
     place = _value_place(node, key)
     if kind == "list_type":
         wanted, fix = "a list of rows", "begin every row with `- `, or write table: file.csv"
+    elif kind == "dict_type":
+        wanted, fix = "a name for each mount", f"for example {name}: {_EXAMPLES[name]}"
     else:
         wanted = "keys and values"
         fix = f"write {{key: value}} with the keys {', '.join(aliases(model))}" if model else "write key: value"

@@ -15,10 +15,15 @@ class OtherUnit(NamedTuple):
 
     key: str
     place: Place
-    written: str
+    number: str
     read_mm: float
     other_mm: float
     other_unit: str
+
+    @property
+    def meant(self) -> str:
+        """The number in the other unit, with its millimetres where that is inches."""
+        return f"{self.number} mm" if self.other_unit == "mm" else f"{self.number} in ({self.other_mm:.4g} mm)"
 
 
 class Broken(NamedTuple):

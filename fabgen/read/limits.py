@@ -11,11 +11,12 @@ from fabgen.read.places import value_place
 from fabgen.read.quantities import Frequency, Number
 from fabgen.read.source import Problems
 from fabgen.read.yaml_tree import Map, Scalar, Seq
+from fabgen.units import comma_error
 
 WIDEST_BAND = 0.15
 """Band over design frequency: wider ones are no band of an array of half-wave rods; common practice, wide."""
 
-_NUMBER_AND_UNIT = re.compile(r"([+-]?[0-9.,eE+-]*[0-9.])\s*([A-Za-z]*)")
+_NUMBER_AND_UNIT = re.compile(r"([+-]?[0-9.eE+-]*[0-9.])\s*([A-Za-z]*)")
 
 
 class Decibels(Kind):
@@ -27,6 +28,9 @@ class Decibels(Kind):
     def read(self, value: Any, info: ValidationInfo) -> float:
         """The number of dB."""
         scalar = scalar_of(value, self.example)
+        if "," in scalar:
+            error = comma_error(scalar)
+            refuse("D13", error.message, error.fix)
         match = _NUMBER_AND_UNIT.fullmatch(scalar.strip())
         if match is None:
             refuse("D10", f"'{scalar}' is not a number of decibels", f"write it as {self.example}")
@@ -56,7 +60,8 @@ class Band(Kind):
             scalar_of(value, self.example)
             refuse("D08", "takes a list of two frequencies", f"for example {self.example}")
         if len(value) != 2:
-            refuse("D08", f"takes two frequencies, not {len(value)}", f"for example {self.example}")
+            fix = f"the decimal mark is a point, a comma separates; for example {self.example}"
+            refuse("D08", f"takes two frequencies, not {len(value)}", fix)
         low_mhz, high_mhz = (self._each.read(item, info) for item in value)
         if low_mhz >= high_mhz:
             refuse("D19", "the second frequency is not above the first", f"for example {self.example}")

@@ -11,7 +11,7 @@ from typing import NamedTuple
 from fabgen.design.arranged import Arranged
 from fabgen.design.as_built import Measured
 from fabgen.errors import Place
-from fabgen.read.csv_table import Cell, cells_of
+from fabgen.read.csv_cells import Cell, cells_of, separated_by_commas
 from fabgen.read.nearest import suggestion
 from fabgen.read.source import Problems, Source, read_source
 from fabgen.units import UnitError, parse_length_mm
@@ -92,11 +92,8 @@ def _mentioned(source: Source, numbers: list[int], element: str) -> bool:
 def _header(source: Source, number: int, unit: str | None, problems: Problems) -> list[_Column]:
     columns: list[_Column] = []
     line = source.lines[number - 1]
-    for mark, called in ((";", "semicolons"), ("\t", "tabs")):
-        if mark in line and "," not in line:
-            place = source.place(number, line.index(mark) + 1)
-            problems.add("D22", f"the table is separated by {called}", place, f"separate cells with commas: {HEADER}")
-            return columns
+    if not separated_by_commas(source, number, HEADER, problems):
+        return columns
     for cell in cells_of(source, number, problems):
         plain = "_".join(cell.text.lower().replace("(", " ").replace(")", " ").split())
         own = next((each for each in ("mm", "in") if plain.endswith(f"_{each}")), None)

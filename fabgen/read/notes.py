@@ -8,7 +8,6 @@ from fabgen.design.design import Design, Element
 from fabgen.design.findings import Finding, Severity, in_order
 from fabgen.read.grammar import FileKeys
 from fabgen.read.kind import OtherUnit
-from fabgen.read.quantities import without_unit
 from fabgen.units import in_to_mm, mm_to_in
 
 USUAL_LENGTH_WL = (0.25, 0.7)
@@ -49,8 +48,7 @@ def _finding(
 
 def _other_unit(value: OtherUnit) -> Finding:
     where = f"{value.key}, {value.place.file} line {value.place.line}"
-    number = without_unit(value.written)
-    advice = f"if {number} {value.other_unit} was meant ({value.other_mm:.4g} mm), write `{number} {value.other_unit}`"
+    advice = f"if {value.meant} was meant, write `{value.number} {value.other_unit}`"
     return _finding("D30", "warn", where, advice, value.read_mm, "mm")
 
 

@@ -3,6 +3,7 @@
 A length that is readable but only likely in the other unit leaves a warning in the context.
 """
 
+import contextlib
 import re
 from typing import Any, NoReturn, cast
 
@@ -11,7 +12,7 @@ from pydantic_core.core_schema import ValidationInfo
 from fabgen.read.kind import Context, Kind, OtherUnit, refuse, scalar_of
 from fabgen.read.nearest import suggestion
 from fabgen.read.yaml_tree import Scalar
-from fabgen.units import UnitError, in_to_mm, mm_to_in, parse_frequency_mhz, parse_length_mm
+from fabgen.units import UnitError, comma_error, in_to_mm, mm_to_in, parse_frequency_mhz, parse_length_mm
 
 
 class Length(Kind):
@@ -38,15 +39,14 @@ class Length(Kind):
         except UnitError as error:
             self._refuse(scalar, error, context.unit)
         likely = self.likely_mm is None or self.likely_mm[0] <= length_mm <= self.likely_mm[1]
-        other = None if likely else self._other(scalar, length_mm, context.unit)
+        other = None if likely else self._other(scalar, length_mm, context.unit, info)
         if not self.low_mm <= length_mm <= self.high_mm:
             fix = f"allowed are {self._range(context.unit)}; for example {self.example}"
             if other is not None:
-                fix += f"; was {without_unit(scalar)} {other[1]} meant ({other[0]:.4g} mm)?"
+                fix += f"; was {other.meant} meant?"
             refuse("D12", f"'{scalar}' is out of range", fix)
         if other is not None:
-            key = (info.field_name or "").removesuffix("_mm")
-            context.other_unit.append(OtherUnit(key, scalar.place, str(scalar), length_mm, *other))
+            context.other_unit.append(other)
         return length_mm
 
     def _range(self, unit: str | None) -> str:
@@ -54,25 +54,28 @@ class Length(Kind):
         inches = f" ({mm_to_in(self.low_mm):.3g} in to {mm_to_in(self.high_mm):.4g} in)" if unit == "in" else ""
         return f"{self.low_mm:g} mm to {self.high_mm:g} mm{inches}"
 
-    def _other(self, scalar: Scalar, length_mm: float, unit: str | None) -> tuple[float, str] | None:
-        """The same number in the other unit, in mm, when that is likely."""
-        written = scalar.strip()[len(without_unit(scalar)) :].strip() or unit
+    def _other(self, scalar: Scalar, length_mm: float, unit: str | None, info: ValidationInfo) -> OtherUnit | None:
+        """The same number in the other unit, when that is likely."""
+        number = _without_unit(scalar)
+        written = scalar.strip()[len(number) :].strip() or unit
         if self.likely_mm is None or written not in ("mm", "in", '"', "″"):
             return None
-        other = (in_to_mm(length_mm), "in") if written == "mm" else (mm_to_in(length_mm), "mm")
-        return other if self.likely_mm[0] <= other[0] <= self.likely_mm[1] else None
+        other_mm, other = (in_to_mm(length_mm), "in") if written == "mm" else (mm_to_in(length_mm), "mm")
+        if not self.likely_mm[0] <= other_mm <= self.likely_mm[1]:
+            return None
+        return OtherUnit((info.field_name or "").removesuffix("_mm"), scalar.place, number, length_mm, other_mm, other)
 
     def _refuse(self, scalar: Scalar, error: UnitError, unit: str | None) -> NoReturn:
         """Refuse with the code that fits: a comma, a missing unit, or no length at all."""
         code, fix = "D13" if "," in scalar else "D10", error.fix
-        if code == "D10" and (bare := _bare_mm(scalar)) is not None:
-            code, in_inches = "D11", in_to_mm(bare)
+        if code == "D10" and (bare := _bare(scalar)):
+            code = "D11"
             low, high = self.likely_mm or (self.low_mm, self.high_mm)
-            if bare and low <= bare <= high and low <= in_inches <= high:
-                both = f"{scalar} mm and {scalar} in ({in_inches:.4g} mm) are both likely"
+            if len(bare) == 2 and bare["mm"] and all(low <= length_mm <= high for length_mm in bare.values()):
+                both = f"{scalar} mm and {scalar} in ({bare['in']:.4g} mm) are both likely"
                 fix = f"{both}: write the unit, or `units` for the whole file"
-            else:
-                fix += ", or `units: mm` or `units: in` for the whole file"
+            elif unit is None:
+                fix += f", or {' or '.join(f'`units: {name}`' for name in bare)} for the whole file"
         elif not any(given in fix for given in (self.example, "like", "example")):
             fix += f"; for example {self.example}"
         refuse(code, error.message, f"{fix}; allowed are {self._range(unit)}")
@@ -83,19 +86,18 @@ class Length(Kind):
         return {"type": ["string", "number"], "description": said, "examples": [self.example]}
 
 
-def without_unit(written: str) -> str:
+def _without_unit(written: str) -> str:
     """The number of a length as written, for a message that proposes another unit."""
     return written.strip().rstrip("\"″' abcdefghijklmnopqrstuvwxyz")
 
 
-def _bare_mm(scalar: Scalar) -> float | None:
-    """The number of a length without a unit, or None."""
+def _bare(scalar: Scalar) -> dict[str, float]:
+    """A length without a unit in mm, by the units that it could be read in; empty when it has one or is none."""
+    found = {}
     for unit in ("mm", "in"):
-        try:
-            return parse_length_mm(scalar, unit)
-        except UnitError:
-            continue
-    return None
+        with contextlib.suppress(UnitError):
+            found[unit] = parse_length_mm(scalar, unit)
+    return found
 
 
 class Frequency(Kind):
@@ -108,7 +110,7 @@ class Frequency(Kind):
         """The frequency in MHz."""
         scalar = scalar_of(value, self.example)
         try:
-            frequency_mhz = parse_frequency_mhz(scalar)
+            frequency_mhz = parse_frequency_mhz(scalar, self.example)
         except UnitError as error:
             code = "D13" if "," in scalar else "D11" if re.fullmatch(r"[0-9.]+", scalar) else "D10"
             refuse(code, error.message, error.fix)
@@ -134,9 +136,10 @@ class Number(Kind):
         scalar = scalar_of(value, self.example)
         text = scalar.strip()
         if not re.fullmatch(r"[+-]?(\.[0-9]+|[0-9]+(\.[0-9]*)?)([eE][+-]?[0-9]+)?", text):
-            code = "D13" if "," in text else "D10"
-            fix = f"write {text.replace(',', '.')}" if code == "D13" else f"{self.said}, for example {self.example}"
-            refuse(code, f"'{scalar}' is not a plain number", fix)
+            if "," in text:
+                error = comma_error(text)
+                refuse("D13", error.message, error.fix)
+            refuse("D10", f"'{scalar}' is not a plain number", f"{self.said}, for example {self.example}")
         number = float(text)
         if not self.low <= number <= self.high:
             limits = f"{self.said}, {self.low:g} to {self.high:g}"

@@ -11,9 +11,10 @@ from fabgen.design.findings import Finding
 from fabgen.frozen import frozen
 from fabgen.read.contradictions import find_contradictions
 from fabgen.read.csv_table import insert_table
-from fabgen.read.gather import gather, gather_root
+from fabgen.read.gather import aliases, gather, gather_root
 from fabgen.read.grammar import FileKeys
 from fabgen.read.kind import Context
+from fabgen.read.nearest import nearest
 from fabgen.read.notes import notes_on
 from fabgen.read.reasons import Reasons
 from fabgen.read.records import read_records
@@ -73,10 +74,10 @@ def read_design(path: Path, *, shown_as: str | None = None) -> Reading:
 
 
 def _unit(tree: Map) -> str | None:
-    """The unit of bare lengths; when `units` itself is wrong, one report of that is enough."""
-    if "units" not in tree:
-        return None
-    return "in" if str(tree["units"]) == "in" else "mm"
+    """The unit of bare lengths; when `units` itself is misspelt or wrong, one report of that is enough."""
+    known = aliases(FileKeys)
+    written = [value for key, value in tree.items() if (key if key in known else nearest(key, known)) == "units"]
+    return None if not written else "in" if str(written[0]) == "in" else "mm"
 
 
 def _validate(tree: Map, context: Context, problems: Problems) -> FileKeys:

@@ -10,6 +10,7 @@ import math
 from pathlib import Path
 
 from fabgen.design.readings import COLUMNS, REFLECTION_NOISE, SWR_NOISE, Reading, ReadingSheet, Setup
+from fabgen.read.csv_cells import Cell, cells_of, separated_by_commas
 from fabgen.read.nearest import suggestion
 from fabgen.read.source import Problems, Source, read_source
 
@@ -29,8 +30,8 @@ _RANGES = {
     "swr_noise": (1e-5, 1.0),
 }
 
-Row = dict[str, tuple[str, int]]
-"""Text and column of every cell that is not empty, by the name of its column."""
+Row = dict[str, Cell]
+"""Every cell that is not empty, by the name of its column."""
 
 
 def read_readings(path: Path) -> ReadingSheet:
@@ -53,11 +54,13 @@ def read_readings(path: Path) -> ReadingSheet:
         if line.startswith("#"):
             named.take(source, number, line, problems)
         elif line.strip(" ,\t") and not header:
-            header = _header(source, number, line, problems)
+            if not separated_by_commas(source, number, ",".join(COLUMNS), problems):
+                break
+            header = _header(source, number, problems)
         elif line.strip(" ,\t"):
-            reading = _reading(source, number, _row(source, number, line, header, problems), problems)
+            reading = _reading(source, number, _row(source, number, header, problems), problems)
             readings += [reading] if reading else []
-    if not header:
+    if not header and not problems.found:
         problems.add("D41", f"no line names the columns: {','.join(COLUMNS)}", source.place(1, 1))
     problems.stop()
     return ReadingSheet(
@@ -90,16 +93,16 @@ class _Named:
                 self.numbers[name] = value
 
 
-def _header(source: Source, number: int, line: str, problems: Problems) -> tuple[str, ...]:
+def _header(source: Source, number: int, problems: Problems) -> tuple[str, ...]:
     """The columns' names."""
-    names = tuple(cell.strip().strip('"').lower() for cell in line.split(","))
-    for name in names:
-        column = line.lower().find(name) + 1
+    cells = cells_of(source, number, problems)
+    names = tuple(cell.text.lower() for cell in cells)
+    for cell, name in zip(cells, names, strict=True):
+        place = source.place(number, cell.column, max(1, cell.width))
         if name and name not in COLUMNS:
-            problems.add("D41", f"column `{name}` is not known", source.place(number, column, len(name)),
-                         suggestion(name, COLUMNS))  # fmt: skip
+            problems.add("D41", f"column `{name}` is not known", place, suggestion(name, COLUMNS))
         if name and names.count(name) > 1:
-            problems.add("D41", f"column `{name}` stands there twice", source.place(number, column, len(name)))
+            problems.add("D41", f"column `{name}` stands there twice", place)
     for name in _NEEDED:
         if name not in names:
             problems.add("D41", f"column `{name}` is missing", source.place(number, 1), f"add {name} to this line")
@@ -109,21 +112,14 @@ def _header(source: Source, number: int, line: str, problems: Problems) -> tuple
     return names
 
 
-def _row(source: Source, number: int, line: str, header: tuple[str, ...], problems: Problems) -> Row:
-    cells = line.split(",")
+def _row(source: Source, number: int, header: tuple[str, ...], problems: Problems) -> Row:
+    cells = cells_of(source, number, problems)
     if len(cells) > len(header):
-        column = sum(len(cell) + 1 for cell in cells[: len(header)]) + 1
         fix = "write a point as decimal mark, 1.53 and not 1,53"
         problems.add("D41", f"row {number} has {len(cells)} cells, the header {len(header)}",
-                     source.place(number, column), fix)  # fmt: skip
+                     source.place(number, cells[len(header)].column), fix)  # fmt: skip
         return {}
-    row, column = {}, 1
-    for name, cell in zip(header, cells, strict=False):
-        text = cell.strip().strip('"').strip()
-        if text:
-            row[name] = (text, column + len(cell) - len(cell.lstrip()))
-        column += len(cell) + 1
-    return row
+    return {name: cell for name, cell in zip(header, cells, strict=False) if cell.text}
 
 
 def _reading(source: Source, number: int, row: Row, problems: Problems) -> Reading | None:
@@ -133,14 +129,16 @@ def _reading(source: Source, number: int, row: Row, problems: Problems) -> Readi
         return None
     if len(kinds) > 1:
         first = row[next(name for name in kinds[1] if name in row)]
-        problems.add("D41", f"row {number} holds two kinds of reading", source.place(number, first[1], len(first[0])),
+        problems.add("D41", f"row {number} holds two kinds of reading", source.place(number, first.column, first.width),
                      "keep re and im, or magnitude and phase_deg, or swr")  # fmt: skip
         return None
     wanted = ("length_mm", "frequency_mhz", *kinds[0])
     for name in ("setup", *wanted):
         if name not in row:
             problems.add("D41", f"row {number}: `{name}` is empty", source.place(number, 1), f"fill in {name}")
-    values = [_number(source, number, name, *row[name], problems) for name in wanted if name in row]
+    values = [
+        _number(source, number, name, row[name].text, row[name].column, problems) for name in wanted if name in row
+    ]
     setup = _setup(source, number, row, problems)
     if setup is None or len(values) < len(wanted) or None in values:
         return None
@@ -150,22 +148,22 @@ def _reading(source: Source, number: int, row: Row, problems: Problems) -> Readi
     reflection = complex(*found) if kinds[0] == ("re", "im") else cmath.rect(found[0], math.radians(found[1]))
     if abs(reflection) > 1.0:
         problems.add("D41", f"row {number}: a reflection of {abs(reflection):.3f} gives back more than came in",
-                     source.place(number, row[kinds[0][0]][1]), "check sign and decimal point")  # fmt: skip
+                     source.place(number, row[kinds[0][0]].column), "check sign and decimal point")  # fmt: skip
         return None
     return Reading(setup, length_mm, frequency_mhz, "reflection", reflection)
 
 
 def _setup(source: Source, number: int, row: Row, problems: Problems) -> Setup | None:
-    text, column = row.get("setup", ("", 1))
-    match text.lower():
+    cell = row.get("setup", Cell("", 1, 1))
+    match cell.text.lower():
         case "":
             return None
         case "free":
             return "free"
         case "mounted":
             return "mounted"
-    problems.add("D41", f"row {number}, setup: '{text}' is neither free nor mounted",
-                 source.place(number, column, len(text)), "write free or mounted")  # fmt: skip
+    problems.add("D41", f"row {number}, setup: '{cell.text}' is neither free nor mounted",
+                 source.place(number, cell.column, cell.width), "write free or mounted")  # fmt: skip
     return None
 
 

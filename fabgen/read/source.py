@@ -3,12 +3,15 @@
 Refused before anything is parsed: files over 1 MB, bytes that are not UTF-8, characters that cannot be printed.
 """
 
+import contextlib
+import errno
 import re
 from dataclasses import replace
 from pathlib import Path
 from typing import NamedTuple
 
 from fabgen.errors import DesignErrors, InputError, MachineError, Place, Problem
+from fabgen.read.nearest import nearest
 
 LARGEST_BYTES = 1_000_000
 """A design file of a thousand elements has about 100 kB."""
@@ -17,8 +20,12 @@ MOST_PROBLEMS = 500
 """A file with more problems than this is told the first of them and the number of the rest."""
 
 _UNPRINTABLE = re.compile(
-    "[\x00-\x08\x0b\x0c\x0e-\x1f\x7f-\x9f\u200e\u200f\u2028-\u202e\u2066-\u2069\ufeff\ufffe\uffff]"
+    "[\x00-\x08\x0b\x0c\x0e-\x1f\x7f-\x9f\xad\u200b\u200e\u200f\u2028-\u202e\u2060\u2066-\u2069\ufeff\ufffe\uffff]"
 )
+_ENDINGS = (".yaml", ".yml", ".csv")
+_ZIP = b"PK\x03\x04"
+"""First bytes of a zip archive, which a workbook of a spreadsheet is."""
+
 _LINE_END = re.compile(r"\r\n|\r|\n")
 
 
@@ -101,15 +108,31 @@ def read_source(path: Path, shown_as: str) -> Source:
         if path.is_dir():
             raise InputError(f"{shown_as} is a folder, not a file", "name the file in it")
         if not path.exists():
-            raise InputError(f"there is no file {shown_as}", "check the name and the folder")
+            raise _missing(path, shown_as)
         if not path.is_file():
             raise InputError(f"{shown_as} is not a regular file", "name a plain text file")
         with path.open("rb") as stream:
             data = stream.read(LARGEST_BYTES + 1)
     except OSError as error:
+        if error.errno == errno.ENAMETOOLONG:
+            raise _missing(path, shown_as) from error
         reason = error.strerror or type(error).__name__
-        raise MachineError(f"{shown_as} cannot be read: {reason}", "check the file's permissions") from error
+        fix = "check its permissions" if isinstance(error, PermissionError) else "check the disk, or copy the file"
+        raise MachineError(f"{shown_as} cannot be read: {reason}", fix) from error
     return as_source(data, shown_as)
+
+
+def _missing(path: Path, shown_as: str) -> InputError:
+    """The refusal of a file that is not there, with the nearest that is."""
+    endings = [path.suffix] if path.suffix in _ENDINGS else list(_ENDINGS)
+    beside: list[str] = []
+    with contextlib.suppress(OSError):
+        if path.is_symlink():
+            return InputError(f"{shown_as} is a link that leads nowhere", "name the file itself")
+        beside = sorted(each.name for each in path.parent.iterdir() if each.suffix in endings)
+    near = nearest(path.name, beside)
+    fix = f"did you mean {near}?" if near else "check the name and the folder"
+    return InputError(f"there is no file {shown_as}", fix)
 
 
 def as_source(data: bytes, shown_as: str) -> Source:
@@ -126,6 +149,10 @@ def as_source(data: bytes, shown_as: str) -> Source:
     if len(data) > LARGEST_BYTES:
         place = Place(shown_as, 1, 1)
         problems.add("D02", "the file is larger than 1 MB", place, "check that this is the right file")
+        problems.stop()
+    if data.startswith(_ZIP):
+        message, fix = "the file is a workbook or another archive, not text", "export it as plain text: CSV for a table"
+        problems.add("D01", message, Place(shown_as, 1, 1), fix)
         problems.stop()
     text, bad_byte = _decode(data)
     source = Source(shown_as, data, text, tuple(_LINE_END.split(text)))

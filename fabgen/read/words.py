@@ -105,7 +105,7 @@ class Date(Kind):
             return ""
         scalar = scalar_of(value, self.example)
         try:
-            if len(scalar) != len(self.example):
+            if not re.fullmatch("[0-9]{4}-[0-9]{2}-[0-9]{2}", scalar):
                 raise ValueError
             date.fromisoformat(scalar)
         except ValueError:

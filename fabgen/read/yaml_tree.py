@@ -12,6 +12,7 @@ import yaml
 
 from fabgen.errors import Place
 from fabgen.read.source import Problems, Source
+from fabgen.units import comma_error
 
 DEEPEST = 20
 """Levels of nesting; a design needs five."""
@@ -19,7 +20,8 @@ DEEPEST = 20
 _LOADER: Any = getattr(yaml, "CSafeLoader", yaml.SafeLoader)
 _NULL = {"", "~", "null", "Null", "NULL"}
 _WHOLE = re.compile(r"[+-]?[0-9]+")
-_COMMA_HALF = re.compile(r"[0-9]+ ?(mm|cm|m|in|\"|MHz|GHz|kHz)?")
+_COMMA_HALF = re.compile(r"[0-9]+ ?(mm|cm|m|in|ft|\"|'|Hz|kHz|MHz|GHz|dB)?")
+_INDENTED = re.compile(r"[ ]*([\t\u00a0\u2000-\u200a\u202f\u3000])")
 
 
 class Scalar(str):
@@ -123,6 +125,7 @@ def parse(source: Source, problems: Problems) -> Map:
     Raises:
         DesignErrors: the text is not YAML, too deep, or no mapping.
     """
+    _report_indentation(source, problems)
     builder = _Builder(source, problems)
     try:
         for event in _events(source):
@@ -257,9 +260,9 @@ class _Builder:
             message = "`<<` merges another mapping; a design file spells every value out"
             self.problems.add("D04", message, key.place, "write the keys themselves")
         elif mapping.flow and before is not None and _half_of_decimal(before, key, node):
-            message = f"'{before},{key}' has a decimal comma, which ends the value inside braces"
+            error = comma_error(f"{before},{key}")
             place = self.source.place(before.line, before.column, key.column + key.width - before.column)
-            self.problems.add("D13", message, place, f"write {before}.{key}")
+            self.problems.add("D13", f"{error.message}; inside braces a comma ends the value", place, error.fix)
             before.broken = True
         elif key in mapping:
             first = mapping.key(key)
@@ -277,11 +280,22 @@ def _half_of_decimal(before: Scalar, key: Scalar, node: Node) -> bool:
     return empty and bool(_WHOLE.fullmatch(before)) and before.line == key.line and bool(_COMMA_HALF.fullmatch(key))
 
 
+def _report_indentation(source: Source, problems: Problems) -> None:
+    """Refuse what looks like an indentation and is none: no-break and wide spaces, as web pages have them."""
+    for number, line in enumerate(source.lines, start=1):
+        if (found := _INDENTED.match(line)) and found[1] != "\t":
+            place = source.place(number, found.start(1) + 1)
+            problems.add("D03", f"U+{ord(found[1]):04X} in the indentation is no plain space", place, "type the spaces")
+    problems.stop()
+
+
 def _report_syntax(error: yaml.MarkedYAMLError, source: Source, problems: Problems) -> None:
     """Say in plain words what the parser tripped over."""
-    tabs = [(n, line) for n, line in enumerate(source.lines, start=1) if re.match(r"[ ]*\t", line) and line.strip()]
-    for number, text in tabs:
-        place = source.place(number, text.index("\t") + 1)
+    tabs = [
+        (n, found) for n, line in enumerate(source.lines, start=1) if line.strip() and (found := _INDENTED.match(line))
+    ]
+    for number, found in tabs:
+        place = source.place(number, found.start(1) + 1)
         problems.add("D03", "a tab in the indentation; YAML takes spaces only", place, "use two spaces per level")
     if tabs:
         return
@@ -296,8 +310,13 @@ def _report_syntax(error: yaml.MarkedYAMLError, source: Source, problems: Proble
     line, column = (mark.line + 1, mark.column + 1) if mark else (1, 1)
     if line > len(source.lines):
         line, column = len(source.lines), len(source.lines[-1]) + 1
+    if glued := _GLUED.match(source.lines[line - 1], column - 1):
+        message, fix = "no space after the `:`", f"write {glued[1]}: {glued[2].strip()}"
     problems.add("D03", message + noticed, source.place(line, column), fix)
 
+
+_GLUED = re.compile(r"([a-z_]+):([^\s:/].*)")
+"""A key with its value, as in `units:mm`."""
 
 _POINT_AT_OPENING = ("quoted scalar", "flow mapping", "flow sequence", "simple key")
 """Where the parser stops late, the place where the open bracket, quote or key begins is the better one to show."""
@@ -309,7 +328,11 @@ _SYNTAX = (
         "indent alike; quote texts with a colon",
     ),
     ("while scanning a quoted scalar", "a quote is not closed", "close it on the same line"),
-    ("did not find expected ',' or", "a comma or a closing bracket is missing", "separate values with commas"),
+    (
+        "did not find expected ',' or",
+        "a comma or a closing bracket is missing",
+        "separate values with commas and close every { with } and every [ with ]",
+    ),
     ("did not find expected key", "a key does not line up with its neighbours", "indent keys of one level alike"),
     ("did not find expected '-'", "a row does not line up with its neighbours", "begin every row with `- `"),
     ("could not find expected ':'", "a key without `:`", "write key: value"),

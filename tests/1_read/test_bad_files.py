@@ -75,6 +75,20 @@ def test_a_file_that_is_not_there(tmp_path: Path) -> None:
         read_design(tmp_path)
 
 
+def test_the_nearest_file_is_named_and_links_that_lead_nowhere(tmp_path: Path) -> None:
+    (tmp_path / "river.yaml").write_text(GOOD, encoding="utf-8")
+    for wrong in ("rivr.yaml", "river.yml.yaml", "river"):
+        with pytest.raises(InputError) as stopped:
+            read_design(tmp_path / wrong)
+        assert stopped.value.fix == "did you mean river.yaml?"
+    (tmp_path / "a.yaml").symlink_to("b.yaml")
+    (tmp_path / "b.yaml").symlink_to("a.yaml")
+    with pytest.raises(InputError, match="a link that leads nowhere"):
+        read_design(tmp_path / "a.yaml")
+    with pytest.raises(InputError, match="there is no file"):
+        read_design(tmp_path / ("x" * 300 + ".yaml"))
+
+
 def test_a_pipe_does_not_hang(tmp_path: Path) -> None:
     os.mkfifo(tmp_path / "pipe.yaml")
     with pytest.raises(InputError, match="not a regular file"):

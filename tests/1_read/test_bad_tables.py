@@ -55,6 +55,11 @@ CASES = [
     ("two at one station", "190", "138.0", "t.csv 4:13 D17"),
     ("same id", "D1", "de", "t.csv 4:1 D18"),
     ("semicolons", ",", ";", "t.csv 1:3 D22"),
+    ("bars", ",", "|", "t.csv 1:3 D22"),
+    ("no header", "id,role,at,length,mount,diameter,finish\n", "", "t.csv 1:1 D22"),
+    ("a title above the header", "id,role", "My array, 434 MHz\nid,role", "t.csv 1:1 D22"),
+    ("words of another table", "id,role,at", "element,role,station", "t.csv 1:1 D06; t.csv 1:14 D06"),
+    ("value in a column without a name", "finish\n", ",\n", "t.csv 4:30 D22"),
     ("tabs", ",", "\t", "t.csv 1:3 D22"),
     (
         "only a header",
@@ -95,8 +100,18 @@ def test_a_table_says_what_rows_say(tmp_path: Path) -> None:
         TABLE.replace("\n", "\n,,,,,,\n"),
         TABLE.replace("driven", '"driven"').replace("3/16 in", '"3/16"""'),
         TABLE.rstrip("\n"),
+        TABLE.replace("\n", ",,\n"),
     ],
-    ids=["byte order mark", "carriage returns", "spaces", "blank lines", "empty rows", "quotes", "no last line end"],
+    ids=[
+        "byte order mark",
+        "carriage returns",
+        "spaces",
+        "blank lines",
+        "empty rows",
+        "quotes",
+        "no last line end",
+        "empty columns",
+    ],
 )
 def test_spellings_of_one_table(tmp_path: Path, text: str) -> None:
     (tmp_path / "t.csv").write_bytes(text.encode())
@@ -156,6 +171,15 @@ def test_the_nearest_table_is_named(tmp_path: Path) -> None:
         read(tmp_path, "  table: element.csv\n")
 
 
+def test_nothing_is_concluded_from_a_row_that_was_refused(tmp_path: Path) -> None:
+    """Neither that there are no rows, nor that the boom ends before the clamp's station."""
+    text = "id,role,at,length\nDE,driven,0,322,5\nD1,director,190,309,5\n"
+    (tmp_path / "t.csv").write_text(text, encoding="utf-8")
+    assert told(tmp_path, "  table: t.csv\n") == "t.csv 2:17 D22; t.csv 3:21 D22"
+    (tmp_path / "t.csv").write_text(text.replace("322,5", "322"), encoding="utf-8")
+    assert told(tmp_path, "  table: t.csv\nclamp: {mast: 38, at: 250}\n") == "t.csv 3:21 D22"
+
+
 def test_an_empty_table(tmp_path: Path) -> None:
     (tmp_path / "t.csv").write_text("\n\n", encoding="utf-8")
     assert told(tmp_path, "  table: t.csv\n") == "t.csv 1:1 D22"
@@ -164,5 +188,8 @@ def test_an_empty_table(tmp_path: Path) -> None:
 def test_a_table_that_is_no_text(tmp_path: Path) -> None:
     (tmp_path / "t.csv").write_bytes(TABLE.encode() + b"\xe4\n")
     assert told(tmp_path, "  table: t.csv\n") == "t.csv 5:1 D01"
+    (tmp_path / "t.csv").write_bytes(b"PK\x03\x04\x14\x00\x06\x00")
+    with pytest.raises(DesignErrors, match="a workbook or another archive"):
+        read(tmp_path, "  table: t.csv\n")
     (tmp_path / "t.csv").write_bytes(b"x" * 1_000_001)
     assert told(tmp_path, "  table: t.csv\n") == "t.csv 1:1 D02"

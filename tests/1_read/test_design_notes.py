@@ -56,7 +56,7 @@ def test_what_deserves_a_second_look(tmp_path: Path, case: tuple[str, str, str, 
 def test_the_other_unit_is_named(tmp_path: Path) -> None:
     path = tmp_path / "d.yaml"
     path.write_text(GOOD.replace("outside: 20,", "outside: 20 in,"), encoding="utf-8")
-    assert [note.advice for note in read_design(path).notes] == ["if 20 mm was meant (20 mm), write `20 mm`"]
+    assert [note.advice for note in read_design(path).notes] == ["if 20 mm was meant, write `20 mm`"]
     path.write_text(GOOD.replace("units: mm", "units: in"), encoding="utf-8")
     with pytest.raises(DesignErrors, match=r"was 1\.5 mm meant"):
         read_design(path)

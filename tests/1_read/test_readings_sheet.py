@@ -70,6 +70,18 @@ def test_a_mistake_is_told_with_row_and_column(tmp_path: Path, row: str, said: s
     assert (problem.place.line, problem.place.column) == (2, column)
 
 
+def test_a_spreadsheet_may_quote_its_cells(tmp_path: Path) -> None:
+    sheet = read(tmp_path, '"setup","length_mm","frequency_mhz","swr"', '"free","300","434","1.8"')
+    assert sheet.readings[0].length_mm == 300.0
+
+
+def test_semicolons_are_told_once(tmp_path: Path) -> None:
+    with pytest.raises(DesignErrors) as stopped:
+        read(tmp_path, HEAD.replace(",", ";"), "free;1;305,0;434,0;0,3;-0,4;;;")
+    (problem,) = stopped.value.problems
+    assert (problem.code, problem.place.line, problem.place.column) == ("D22", 1, 6)
+
+
 def test_all_mistakes_come_in_one_run(tmp_path: Path) -> None:
     with pytest.raises(DesignErrors) as stopped:
         read(tmp_path, "setup,lenght_mm,frequency_mhz,re,im", "free,1,2,3,4")

@@ -20,6 +20,7 @@ from fabgen.units import (
 READ = {
     "5/8 in": 15.875,
     "1-1/2 in": 38.1,
+    "1–1/2 in": 38.1,
     '1 1/2"': 38.1,
     "1½ in": 38.1,
     "1 ½ in": 38.1,
@@ -82,7 +83,12 @@ REFUSED = {
     "4,5": ("decimal comma", "write 4.5"),
     "1,000 mm": ("two ways", "write 1000 mm or 1.000 mm"),
     "1,000,000 mm": ("commas inside", "write 1000000 mm"),
+    "1,234.5 mm": ("commas inside", "write 1234.5 mm"),
+    "1.234,5 mm": ("points inside a number and a decimal comma", "write 1234.5 mm"),
+    "1 234,5 mm": ("decimal comma", "write 1234.5 mm"),
+    "0,500 mm": ("decimal comma", "write 0.500 mm"),
     "4, 5 mm": ("not one value", "for example 4.5 mm"),
+    "1/2,5 in": ("not one value", "for example 4.5 mm"),
     "1 000 mm": ("space inside", "write 1000 mm"),
     "1_000 mm": ("underscore", "write 1000 mm"),
     "nan": ("not a finite number", "12.7 mm"),
@@ -194,6 +200,14 @@ def test_any_text_is_a_finite_length_or_a_unit_error(text):
         except UnitError as error:
             length_mm = 0.0 if error.message and error.fix else math.nan
         assert math.isfinite(length_mm)
+
+
+@given(st.from_regex(r"[+-]?[0-9]{1,3}([., ][0-9]{1,3})?,[0-9]{1,3}(\.[0-9]{1,3})?( mm)?", fullmatch=True))
+def test_what_is_proposed_for_a_comma_can_be_read(text):
+    with pytest.raises(UnitError) as caught:
+        parse_length_mm(text, "mm")
+    for proposed in caught.value.fix.removeprefix("write ").split(" or "):
+        parse_length_mm(proposed.partition("for example ")[2] or proposed, "mm")
 
 
 @given(st.integers(0, 200), st.integers(0, 63))
