@@ -42,7 +42,7 @@ def allowance(design: Design, element: Element) -> Allowance:
 def _of_feed(design: Design, element: Element) -> Allowance:
     feed = design.feed_of(element)
     if feed is not None and feed.allowance.origin == "stated":
-        return _stated(feed.allowance, ())
+        return replace(_stated(feed.allowance, ()), correlated_u_mm=0.0)
     return Allowance(0.0, "none", source="a driven rod's length is set by its match", needed=False)
 
 

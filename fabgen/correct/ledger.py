@@ -69,8 +69,9 @@ def _cut_um(design: Design, element: Element, ideal_um: int) -> int:
 
 
 def _nearest_step_um(length_um: Fraction | int, step_mm: float) -> int:
+    """Of two equally near the longer: a rod can be shortened."""
     step_um = Fraction(step_mm).limit_denominator(1_000_000) * 1000
-    return round(round(Fraction(length_um) / step_um) * step_um)
+    return round(math.floor(Fraction(length_um) / step_um + Fraction(1, 2)) * step_um)
 
 
 def _trim_mm(design: Design, element: Element, u_mm: float) -> float:

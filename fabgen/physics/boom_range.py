@@ -32,7 +32,9 @@ class Reason(Enum):
 
     RECTANGULAR = "no closed form covers a rectangular boom"
     SOLID_SQUARE_INSULATED = "no closed form covers an insulated rod through a solid square or rectangular bar"
-    FILM_INSULATION = "a film in a tight hole passes through resonance between 432 and 1296 MHz"
+    FILM_INSULATION = (
+        "an anodic film or paint in a tight hole is a capacitor, resonant somewhere between 432 and 1296 MHz"
+    )
     BUSH_CAPACITANCE = "the bush's capacitance is no longer a small correction"
     BOOM_TOO_SMALL = "boom below the range in wavelengths"
     BOOM_TOO_LARGE = "boom above the range in wavelengths"

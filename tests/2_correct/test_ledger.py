@@ -57,6 +57,12 @@ def test_a_cut_is_a_whole_number_of_the_shops_steps_and_the_nearest_one(variant:
         assert abs(found.rounding_mm) <= 0.25 + 1e-9
 
 
+@pytest.mark.parametrize(("length_mm", "cut_mm"), [(311.25, 311.5), (311.75, 312.0), (311.249, 311.0), (311.0, 311.0)])
+def test_of_two_steps_equally_near_the_longer_is_cut(variant: Variant, length_mm: float, cut_mm: float) -> None:
+    as_cut = variant(("length: 311.3", f"length: {length_mm}"), ("lengths_are: free-space", "lengths_are: as-cut"))
+    assert line(as_cut, "D1").cut_mm == cut_mm
+
+
 def test_each_half_of_a_split_dipole_is_a_whole_step(variant: Variant) -> None:
     found = line(variant(("cut_step: 0.5 mm", "cut_step: 1 mm")), "DE")
     assert (found.cut_mm - 10.0) / 2 == pytest.approx(160.0)  # (329.2 - 10) / 2 = 159.6
@@ -196,7 +202,8 @@ def test_a_driven_rod_gets_a_trim_margin_and_no_allowance(variant: Variant) -> N
 
 def test_a_driven_rods_allowance_may_be_stated(variant: Variant) -> None:
     stated = "cable: 5 mm, allowance: {origin: stated, value: -2 mm, uncertainty: 1 mm, source: last build}}"
-    assert line(variant(("cable: 5 mm}", stated)), "DE").allowance.value_mm == -2.0
+    found = line(variant(("cable: 5 mm}", stated)), "DE").allowance
+    assert (found.value_mm, found.u_mm, found.correlated_u_mm) == (-2.0, 1.0, 0.0)
 
 
 def test_a_wooden_boom_takes_nothing(variant: Variant) -> None:
