@@ -43,12 +43,6 @@ def nearest_drill(diameter_mm: float, series: DrillSeries) -> Drill:
     return min(drills(series), key=lambda drill: abs(drill.diameter_mm - diameter_mm))
 
 
-def drill_of_size(diameter_mm: float, series: DrillSeries, within_mm: float = 0.001) -> Drill | None:
-    """The drill of exactly this diameter, or None."""
-    drill = nearest_drill(diameter_mm, series)
-    return drill if abs(drill.diameter_mm - diameter_mm) <= within_mm else None
-
-
 def smallest_drill_at_least(diameter_mm: float, series: DrillSeries) -> Drill | None:
     """The smallest drill not below a diameter, or None above the largest of the series."""
     return next((drill for drill in drills(series) if drill.diameter_mm >= diameter_mm - _TINY_MM), None)

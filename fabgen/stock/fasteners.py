@@ -4,7 +4,7 @@ import functools
 from typing import Literal
 
 from fabgen.frozen import frozen
-from fabgen.stock.read_csv import UnknownStockError, index, row
+from fabgen.stock.read_csv import UnknownStockError, row
 
 HeadKind = Literal["socket", "hex", "button", "pan"]
 
@@ -17,11 +17,6 @@ class Thread:
     diameter_mm: float
     pitch_mm: float
     tap_drill_mm: float
-
-
-def thread_names() -> tuple[str, ...]:
-    """The threads of the tables, small to large."""
-    return tuple(index("iso261_threads"))
 
 
 @functools.cache

@@ -73,12 +73,6 @@ def material_names() -> tuple[str, ...]:
     return tuple(index("materials"))
 
 
-def galvanic_difference_cv(first: str, second: str) -> int | None:
-    """Difference of two metals' anodic indices in whole centivolts; None when one of them is no metal."""
-    a, b = material(first).anodic_index_cv, material(second).anodic_index_cv
-    return None if a is None or b is None else abs(a - b)
-
-
 def galvanic_limit_cv(environment: Literal["outdoor", "indoor", "controlled"] = "outdoor") -> int:
     """Largest allowed difference of anodic indices in whole centivolts; the limit itself is allowed."""
     return int(row("anodic_limits", environment, "environment")["limit_cv"])

@@ -1,4 +1,4 @@
-"""Paper and title block, and what a shop can do: hole distances, printed walls, saws, stock lengths."""
+"""Paper and title block, and what a shop can do: hole distances, printed walls, drilling."""
 
 import functools
 from typing import Literal
@@ -95,7 +95,7 @@ def edge_distance_factor(
 
 
 def print_practice(quantity: str) -> float:
-    """A value of printing practice by the name of its row, whose ending is the unit: `thinnest_wall_mm`.
+    """A value of printing practice by the name of its row, whose ending is the unit: `longest_bridge_mm`.
 
     Raises:
         UnknownStockError: the table has no such row.
@@ -104,15 +104,10 @@ def print_practice(quantity: str) -> float:
 
 
 def process_range(quantity: str) -> tuple[float, float]:
-    """Low and high of a shop process by the name of its row, whose ending is the unit: `kerf_hacksaw_mm`.
+    """Low and high of a shop process by the name of its row, whose ending is the unit: `pilot_drill_mm`.
 
     Raises:
         UnknownStockError: the table has no such row.
     """
     found = row("process", quantity, "process value")
     return float(found["low"]), float(found["high"])
-
-
-def stock_lengths_mm(market: Literal["metric", "inch"]) -> tuple[float, ...]:
-    """Usual lengths of bars and tubes, short to long (common practice)."""
-    return tuple(float(found["length_mm"]) for found in rows("stock_lengths") if found["market"] == market)

@@ -4,7 +4,7 @@ Each table is a CSV file in `data/`, read when it is first asked for; the last c
 `SOURCES.md` lists the standards and the traps in copies of them.
 """
 
-from fabgen.stock.drills import Drill, DrillSeries, drill_of_size, drills, nearest_drill, smallest_drill_at_least
+from fabgen.stock.drills import Drill, DrillSeries, drills, nearest_drill, smallest_drill_at_least
 from fabgen.stock.fasteners import (
     HeadKind,
     Nut,
@@ -16,10 +16,9 @@ from fabgen.stock.fasteners import (
     screw_head,
     tap_drill_mm,
     thread,
-    thread_names,
     washer,
 )
-from fabgen.stock.materials import Material, galvanic_difference_cv, galvanic_limit_cv, material, material_names
+from fabgen.stock.materials import Material, galvanic_limit_cv, material, material_names
 from fabgen.stock.practice import (
     Paper,
     TitleField,
@@ -28,7 +27,6 @@ from fabgen.stock.practice import (
     paper_size_mm,
     print_practice,
     process_range,
-    stock_lengths_mm,
     title_fields,
 )
 from fabgen.stock.read_csv import UnknownStockError
@@ -49,10 +47,8 @@ __all__ = [
     "UnknownStockError",
     "Washer",
     "clearance_hole_mm",
-    "drill_of_size",
     "drills",
     "edge_distance_factor",
-    "galvanic_difference_cv",
     "galvanic_limit_cv",
     "it_grade_mm",
     "linear_tolerance_mm",
@@ -66,10 +62,8 @@ __all__ = [
     "process_range",
     "screw_head",
     "smallest_drill_at_least",
-    "stock_lengths_mm",
     "tap_drill_mm",
     "thread",
-    "thread_names",
     "title_fields",
     "washer",
 ]

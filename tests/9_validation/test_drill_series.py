@@ -8,7 +8,6 @@ from hypothesis import strategies as st
 
 from fabgen.stock.tables import (
     UnknownStockError,
-    drill_of_size,
     drills,
     nearest_drill,
     smallest_drill_at_least,
@@ -78,8 +77,6 @@ def test_the_hole_for_a_bush_takes_the_next_drill_up():
 
 
 def test_named_drills_and_their_neighbours():
-    assert drill_of_size(8, "metric").name == "8 mm"
-    assert drill_of_size(8.05, "metric") is None
     assert nearest_drill(8.04, "metric").name == "8 mm"
     assert nearest_drill(6.35, "inch").name == "1/4 in"
     assert nearest_drill(0.001, "both").name == "0.2 mm"

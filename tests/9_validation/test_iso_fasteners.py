@@ -7,12 +7,11 @@ import pytest
 from fabgen.stock.tables import (
     UnknownStockError,
     clearance_hole_mm,
-    drill_of_size,
+    nearest_drill,
     nut,
     screw_head,
     tap_drill_mm,
     thread,
-    thread_names,
     washer,
 )
 
@@ -53,11 +52,7 @@ def test_iso_261_coarse_threads(name, diameter_mm, pitch_mm, tap_mm, minor_mm):
     assert (found.diameter_mm, found.pitch_mm, tap_drill_mm(name)) == (diameter_mm, pitch_mm, tap_mm)
     assert found.diameter_mm - 1.082532 * found.pitch_mm == pytest.approx(minor_mm, abs=6e-4)
     assert minor_mm < found.tap_drill_mm <= found.diameter_mm - found.pitch_mm + 0.051
-    assert drill_of_size(found.tap_drill_mm, "metric") is not None
-
-
-def test_threads_are_listed_small_to_large():
-    assert thread_names() == THREADS
+    assert nearest_drill(found.tap_drill_mm, "metric").diameter_mm == found.tap_drill_mm
 
 
 def test_iso_4762_socket_heads():

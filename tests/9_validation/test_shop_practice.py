@@ -1,4 +1,4 @@
-"""Hole distances, printing practice, saws and stock lengths."""
+"""Hole distances, printing practice, drilling."""
 
 import pytest
 
@@ -7,9 +7,7 @@ from fabgen.stock.tables import (
     edge_distance_factor,
     print_practice,
     process_range,
-    stock_lengths_mm,
 )
-from fabgen.units import in_to_mm
 
 
 def test_distances_between_holes_and_edges():
@@ -34,14 +32,12 @@ def test_distances_between_holes_and_edges():
     ("quantity", "value"),
     [
         ("lines_in_thinnest_wall", 2),
-        ("thinnest_wall_mm", 0.8),
         ("recommended_wall_mm", 1.2),
         ("structural_wall_mm", 2.4),
         ("overhang_from_vertical_deg", 45),
         ("longest_bridge_mm", 20),
         ("diametral_undersize_press_mm", 0.1),
         ("diametral_undersize_slip_mm", 0.2),
-        ("diametral_undersize_loose_mm", 0.3),
         ("bush_bore_clearance_mm", 0.2),
         ("spigot_clearance_mm", 0.2),
         ("saddle_bore_clearance_mm", 0.3),
@@ -58,18 +54,14 @@ def test_printing_practice(quantity, value):
     assert print_practice(quantity) == value
 
 
-def test_saws_and_stock():
-    """Common practice, from memory: kerfs, and bars of 1, 2, 3, 5, 6 m or 6, 8, 12 ft."""
-    assert process_range("kerf_hacksaw_mm") == (0.8, 1.2)
-    assert process_range("kerf_bandsaw_mm") == (0.9, 1.3)
-    assert process_range("kerf_chop_saw_mm") == (2.0, 3.5)
+def test_drilling():
+    """Common practice, from memory: pilot 2 to 2.5 mm, a step drill or reamer above 6 mm."""
     assert process_range("pilot_drill_mm") == (2.0, 2.5)
-    assert stock_lengths_mm("metric") == (1000, 2000, 3000, 5000, 6000)
-    assert stock_lengths_mm("inch") == pytest.approx([in_to_mm(12 * feet) for feet in (6, 8, 12)])
+    assert process_range("step_drill_above_mm") == (6.0, 6.0)
 
 
 def test_unknown_practice_is_refused():
-    with pytest.raises(UnknownStockError, match="thinnest_wall_mm"):
-        print_practice("thinnest_wall")
-    with pytest.raises(UnknownStockError, match="kerf"):
-        process_range("kerf")
+    with pytest.raises(UnknownStockError, match="longest_bridge_mm"):
+        print_practice("longest_bridge")
+    with pytest.raises(UnknownStockError, match="pilot_drill_mm"):
+        process_range("pilot_drill")
