@@ -8,7 +8,6 @@ from typing import Any, cast
 import click
 
 from fabgen import __version__, registry
-from fabgen.errors import FabgenError
 
 _FOLDER = "cli/commands"
 
@@ -85,21 +84,12 @@ def _run(arguments: list[str] | None) -> int:
     except (click.Abort, KeyboardInterrupt):
         click.echo("fabgen: stopped; no file is half written", err=True)
         return 3
-    except FabgenError as error:
-        from fabgen.cli.report import tell
+    except Exception as caught:  # noqa: BLE001 - told, with its exit code
+        from fabgen.cli.report import expected, tell
 
-        tell(error)
-        return error.exit_code
-    except OSError as error:
-        reason = error.strerror or type(error).__name__
-        click.echo(f"fabgen: {error.filename or 'the output'}: {reason}; no file is half written", err=True)
-        return 3
-    except Exception as error:
-        click.echo(f"fabgen: a bug: {type(error).__name__}: {error}", err=True)
-        click.echo("  set FABGEN_DEBUG=1 to see where; no file is half written", err=True)
-        if os.environ.get("FABGEN_DEBUG"):
-            raise
-        return 3
+        failure = expected(caught)
+        tell(failure)
+        return failure.exit_code
     return result if isinstance(result, int) else 0
 
 

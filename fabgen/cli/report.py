@@ -1,13 +1,14 @@
 """Findings and verdicts as text and as JSON."""
 
 import json
+import os
 from pathlib import Path
 from typing import Any
 
 import click
 
 from fabgen.design.findings import Finding
-from fabgen.errors import DesignErrors, FabgenError
+from fabgen.errors import DesignErrors, FabgenError, MachineError, ProgramError
 from fabgen.pipeline import Judged
 
 _COLOURS = {"fail": "red", "warn": "yellow", "note": "cyan"}
@@ -85,9 +86,26 @@ def _limits(judged: Judged) -> str:
 
 
 def _colour() -> bool:
-    import os
-
     return not os.environ.get("NO_COLOR")
+
+
+def expected(error: Exception) -> FabgenError:
+    """What stopped a command, as a failure with an exit code; with FABGEN_DEBUG set, a bug is raised as it is.
+
+    Args:
+        error: any; a broken pipe is raised again, for it ends the process.
+    """
+    if isinstance(error, FabgenError):
+        return error
+    if isinstance(error, BrokenPipeError):
+        raise error
+    if isinstance(error, OSError):
+        reason = error.strerror or type(error).__name__
+        return MachineError(f"{error.filename or 'the output'}: {reason}; no file is half written")
+    if os.environ.get("FABGEN_DEBUG"):
+        raise error
+    fix = "set FABGEN_DEBUG=1 to see where; no file is half written"
+    return ProgramError(f"a bug: {type(error).__name__}: {error}", fix)
 
 
 def tell(error: FabgenError) -> None:

@@ -165,6 +165,28 @@ def test_a_bug_ends_with_3_and_one_message(
     assert "Traceback" not in err
 
 
+def test_a_bug_in_one_design_does_not_stop_the_others(
+    design: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str], light_package: None
+) -> None:
+    monkeypatch.delenv("FABGEN_DEBUG", raising=False)
+    other = design.with_name("other.yaml")
+    other.write_text(
+        design.read_text(encoding="utf-8").replace("number: RGL-434-06", "number: RGL-434-07"), encoding="utf-8"
+    )
+    plain = contents.package_files
+
+    def faulty(arranged: Any, *args: Any, **keywords: Any) -> Any:
+        return 1 // 0 if arranged.design.number == "RGL-434-06" else plain(arranged, *args, **keywords)
+
+    monkeypatch.setattr(contents, "package_files", faulty)
+    assert run("build", "--json", str(design), str(other)) == 3
+    first, second = json.loads(capsys.readouterr().out)["designs"]
+    assert (first["number"], first["exit"]) == ("RGL-434-06", 3)
+    assert "a bug: ZeroDivisionError" in first["error"]
+    assert second["package"] == "output/RGL-434-07_A"
+    assert [path.name for path in Path("output").iterdir() if not path.name.startswith(".")] == ["RGL-434-07_A"]
+
+
 def test_explain_prints_a_page_and_guesses(capsys: pytest.CaptureFixture[str], design: Path) -> None:
     assert run("explain", "c10") == 0
     assert capsys.readouterr().out.startswith("C10  Two parts collide")

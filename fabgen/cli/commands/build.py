@@ -7,7 +7,7 @@ import click
 from fabgen.cli import report
 from fabgen.cli.commands.check import DESIGNS
 from fabgen.contents import GROUPS
-from fabgen.errors import FabgenError, InputError, MachineError
+from fabgen.errors import InputError, MachineError
 from fabgen.pipeline import Judged
 from fabgen.pipeline import build as build_package
 from fabgen.pipeline import check as judge_file
@@ -24,10 +24,11 @@ def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stampe
     """Judge designs and write a fabrication package for each one that is clear."""
     judged, records, code = _judge_all(designs, quiet=as_json)
     for path, one in judged:
+        record: dict[str, object] = {}
+        records.append(record)
         try:
             seen = draw_sheets(one)
-            record = report.judged_record(path, seen)
-            records.append(record)
+            record |= report.judged_record(path, seen)
             if not as_json:
                 report.print_judged(seen)
             code = max(code, 0 if seen.clear else 1)
@@ -38,9 +39,10 @@ def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stampe
             record["package"] = str(folder)
             if not as_json:
                 click.echo(str(folder))
-        except FabgenError as error:
+        except Exception as caught:  # noqa: BLE001 - told; the other designs are built all the same
+            error = report.expected(caught)
             code = max(code, error.exit_code)
-            records.append(report.error_record(path, error))
+            record |= report.error_record(path, error)
             if not as_json:
                 report.tell(error)
     if as_json:
@@ -60,7 +62,8 @@ def _judge_all(
         try:
             one = judge_file(path, solve=True, say=_say)
             _keep(path, one)
-        except FabgenError as error:
+        except Exception as caught:  # noqa: BLE001 - told; the other designs are judged all the same
+            error = report.expected(caught)
             code = max(code, error.exit_code)
             records.append(report.error_record(path, error))
             if not quiet:
