@@ -1,5 +1,6 @@
 """One line of a CSV table as cells with their places, and what shows that a table is separated by something else."""
 
+from collections.abc import Sequence
 from typing import NamedTuple
 
 from fabgen.read.source import Problems, Source
@@ -29,6 +30,31 @@ def separated_by_commas(source: Source, number: int, example: str, problems: Pro
             problems.add("D22", f"the table is separated by {called}", source.place(number, line.index(mark) + 1), fix)
             return False
     return True
+
+
+def all_named(
+    source: Source, number: int, names: Sequence[str], cells: Sequence[Cell], problems: Problems, code: str = "D22"
+) -> bool:
+    """Whether every value of a row stands under a column's name; reported when one does not.
+
+    Args:
+        source: the table.
+        number: the row's line, from 1.
+        names: the columns' names; an unnamed column may only hold empty cells.
+        cells: the row.
+        problems: takes the report.
+        code: of the report.
+    """
+    nameless = [cell for name, cell in zip(names, cells, strict=False) if cell.text and not name]
+    beyond = [*nameless, *cells[len(names) :]]
+    if not beyond:
+        return True
+    message = f"this row has {len(cells)} cells, the header has {len(names)} columns"
+    if nameless:
+        message = f"'{nameless[0].text}' stands in a column without a name"
+    fix = "write decimals with a point, 1.53 and not 1,53; a text with a comma goes in quotes"
+    problems.add(code, message, source.place(number, beyond[0].column, max(1, beyond[0].width)), fix)
+    return False
 
 
 def cells_of(source: Source, number: int, problems: Problems) -> list[Cell]:

@@ -7,7 +7,7 @@ cell keeps its own line and column, so messages point into the table.
 from pathlib import Path
 
 from fabgen.errors import DesignErrors, InputError
-from fabgen.read.csv_cells import cells_of, separated_by_commas
+from fabgen.read.csv_cells import all_named, cells_of, separated_by_commas
 from fabgen.read.gather import aliases, required
 from fabgen.read.grammar import ElementKeys
 from fabgen.read.nearest import nearest, suggestion
@@ -129,16 +129,7 @@ def _row(source: Source, number: int, header: list[Scalar], problems: Problems) 
     row = Map(source, number, 1, flow=True)
     before = len(problems.found)
     cells = cells_of(source, number, problems)
-    if len(problems.found) > before:
-        return Scalar.absent(row)
-    nameless = [cell for name, cell in zip(header, cells, strict=False) if cell.text and not name]
-    if beyond := [*nameless, *cells[len(header) :]]:
-        place = source.place(number, beyond[0].column, max(1, beyond[0].width))
-        message = f"this row has {len(cells)} cells, the header has {len(header)} columns"
-        if nameless:
-            message = f"'{nameless[0].text}' stands in a column without a name"
-        fix = "write decimals with a point, not a comma; a text with a comma goes in quotes"
-        problems.add("D22", message, place, fix)
+    if len(problems.found) > before or not all_named(source, number, header, cells, problems):
         return Scalar.absent(row)
     needed = required(ElementKeys)
     for name, cell in zip(header, cells, strict=False):

@@ -11,7 +11,7 @@ from typing import NamedTuple
 from fabgen.design.arranged import Arranged
 from fabgen.design.as_built import Measured
 from fabgen.errors import Place
-from fabgen.read.csv_cells import Cell, cells_of, separated_by_commas
+from fabgen.read.csv_cells import Cell, all_named, cells_of, separated_by_commas
 from fabgen.read.nearest import suggestion
 from fabgen.read.source import Problems, Source, read_source
 from fabgen.units import UnitError, parse_length_mm
@@ -90,25 +90,34 @@ def _mentioned(source: Source, numbers: list[int], element: str) -> bool:
 
 
 def _header(source: Source, number: int, unit: str | None, problems: Problems) -> list[_Column]:
-    columns: list[_Column] = []
-    line = source.lines[number - 1]
+    """The columns in order; one without a name is there too."""
     if not separated_by_commas(source, number, HEADER, problems):
-        return columns
-    for cell in cells_of(source, number, problems):
-        plain = "_".join(cell.text.lower().replace("(", " ").replace(")", " ").split())
-        own = next((each for each in ("mm", "in") if plain.endswith(f"_{each}")), None)
-        name = COLUMNS.get(plain.removesuffix(f"_{own}") if own else plain, "")
+        return []
+    cells = cells_of(source, number, problems)
+    columns = [_column(cell.text, unit) for cell in cells]
+    names = [column.name for column in columns]
+    whole = source.place(number, 1, max(1, len(source.lines[number - 1])))
+    if not any(names):
+        problems.add("D22", "the first line does not name the columns", whole, f"begin with the header {HEADER}")
+        return []
+    for position, (cell, name) in enumerate(zip(cells, names, strict=True)):
         place = source.place(number, cell.column, max(1, cell.width))
-        if not name:
-            problems.add("D06", f"`{cell.text}` is not a column", place, suggestion(cell.text, list(COLUMNS)))
-        elif name in (column.name for column in columns):
+        if cell.text and not name:
+            known = list(dict.fromkeys(COLUMNS.values()))
+            problems.add("D06", f"`{cell.text}` is not a column", place, suggestion(cell.text, known))
+        elif name and name in names[:position]:
             problems.add("D05", f"the column `{name}` stands twice", place, "keep one of the two")
-        columns.append(_Column(name, own or unit))
     for needed in NEEDED:
-        if not problems.found and needed not in (column.name for column in columns):
-            place = source.place(number, 1, max(1, len(line)))
-            problems.add("D07", f"the column `{needed}` is missing", place, f"the header needs {HEADER}")
+        if not problems.found and needed not in names:
+            problems.add("D07", f"the column `{needed}` is missing", whole, f"the header needs {HEADER}")
     return columns
+
+
+def _column(written: str, unit: str | None) -> _Column:
+    """What a heading means, with its own unit or the file's; without a name where it means nothing known."""
+    plain = "_".join(written.lower().replace("(", " ").replace(")", " ").split())
+    own = next((each for each in ("mm", "in") if plain.endswith(f"_{each}")), None)
+    return _Column(COLUMNS.get(plain.removesuffix(f"_{own}") if own else plain, ""), own or unit)
 
 
 class _Row:
@@ -121,11 +130,7 @@ class _Row:
         found = cells_of(source, number, problems)
         self.sound = len(problems.found) == before
         self.cells = {column.name: cell for column, cell in zip(header, found, strict=False)}
-        if self.sound and len(found) > len(header):
-            message = f"this row has {len(found)} cells, the header has {len(header)} columns"
-            place = source.place(number, found[len(header)].column, max(1, found[len(header)].width))
-            problems.add("D22", message, place, "write decimals with a point, not a comma")
-            self.sound = False
+        self.sound = self.sound and all_named(source, number, [column.name for column in header], found, problems)
 
     def place(self, name: str) -> Place:
         """Where a cell stands; the row's end where it is left out."""

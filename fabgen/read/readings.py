@@ -10,7 +10,7 @@ import math
 from pathlib import Path
 
 from fabgen.design.readings import COLUMNS, REFLECTION_NOISE, SWR_NOISE, Reading, ReadingSheet, Setup
-from fabgen.read.csv_cells import Cell, cells_of, separated_by_commas
+from fabgen.read.csv_cells import Cell, all_named, cells_of, separated_by_commas
 from fabgen.read.nearest import suggestion
 from fabgen.read.source import Problems, Source, read_source
 
@@ -114,10 +114,7 @@ def _header(source: Source, number: int, problems: Problems) -> tuple[str, ...]:
 
 def _row(source: Source, number: int, header: tuple[str, ...], problems: Problems) -> Row:
     cells = cells_of(source, number, problems)
-    if len(cells) > len(header):
-        fix = "write a point as decimal mark, 1.53 and not 1,53"
-        problems.add("D41", f"row {number} has {len(cells)} cells, the header {len(header)}",
-                     source.place(number, cells[len(header)].column), fix)  # fmt: skip
+    if not all_named(source, number, header, cells, problems, "D41"):
         return {}
     return {name: cell for name, cell in zip(header, cells, strict=False) if cell.text}
 

@@ -55,7 +55,7 @@ def test_columns_may_be_left_out_and_stand_in_any_order(tmp_path: Path) -> None:
         ("free,1,305.0,434.0,0.8,-0.8,,,", "gives back more than came in", 20),
         ("free,1,305.0,434.0,0.3,,,,", "row 2: `im` is empty", 1),
         ("open,1,305.0,434.0,0.3,-0.4,,,", "neither free nor mounted", 1),
-        ("free,1,305,0,434,0,0.3,-0.4,,,", "row 2 has 11 cells, the header 9", 30),
+        ("free,1,305,0,434,0,0.3,-0.4,,,", "this row has 11 cells, the header has 9 columns", 30),
         ("free,1,nan,434.0,0.3,-0.4,,,", "row 2, length_mm: 'nan' is no number", 8),
         ("free,1,305.0,434.0,,,,,0.9", "row 2, swr: 0.9 is out of range", 24),
     ],
