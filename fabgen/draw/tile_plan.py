@@ -24,6 +24,7 @@ TARGET_MM = 2.0
 _REACH_MM = TARGET_MM + 1.0
 _LEAST_SHARE = 1 / 3
 """Of a page's room, for what a page shows before the next begins."""
+_AIR_MM = 0.5
 _BESIDE_MM = 1.5
 """Lettering no farther than this from a hole's edge belongs to the hole."""
 _CROSSED = 0.05
@@ -66,6 +67,11 @@ class _Span(NamedTuple):
     weight: int
 
 
+def _span(low_mm: float, high_mm: float, length_mm: float, weight: int) -> _Span:
+    """With a little air, so that no page's frame runs along lettering."""
+    return _Span(max(0.0, low_mm - _AIR_MM), min(length_mm, high_mm + _AIR_MM), weight)
+
+
 class _Way(NamedTuple):
     """Pages up to some place; the smaller is the better.
 
@@ -105,8 +111,8 @@ def plan_pages(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, m
     empty = Plan(paper_mm, margin_mm, (), (), (), (), 0)
     left, bottom, right, top = empty.room
     whole = list(_whole(sheet))
-    along = [_Span(box[0], box[2], weight) for box, weight in whole]
-    across = [_Span(box[1], box[3], weight) for box, weight in whole]
+    along = [_span(box[0], box[2], sheet.width_mm, weight) for box, weight in whole]
+    across = [_span(box[1], box[3], sheet.height_mm, weight) for box, weight in whole]
     station_mm = sheet.station_at_x0_mm or 0.0
     joins_x, lost_x = _joins(sheet.width_mm, right - left, overlap_mm, station_mm, STATION_STEP_MM, along)
     joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, across)

@@ -185,7 +185,12 @@ def _page(sheet: Sheet, plan: Plan, index: int, window: Box, kept: list[Item], m
     pen.bar_100(left - 4, (bottom + top) / 2 - 50, up=True, label="100 mm across")
     _foot(pen, plan, f"{mark}   {sheet.title}", f"sheet {index + 1} of {count}, row {row + 1}, column {column + 1}")
     if station is not None:
-        pen.text(width - plan.margin_mm, plan.margin_mm + 10.6, "Stations in mm from the datum face.", anchor="end")
+        pen.text(
+            width - plan.margin_mm,
+            plan.margin_mm + 10.6,
+            "Stations in mm from the datum face, arrows forward.",
+            anchor="end",
+        )
     return pen.sheet(f"{sheet.name}-{index + 1:02d}", f"{sheet.title} ({index + 1}/{count})", width, height, station)
 
 

@@ -74,6 +74,35 @@ def test_all_walls_are_kept_with_centre_line_and_arrow(shape):
     assert len(long) == (3 if arranged.design.boom.section == "round" else 4)
 
 
+def test_a_cut_out_template_still_tells_its_ends_and_stations(arranged_as):
+    """Nothing outside the paper's outline is left: on every wall both ends are named, ticks stand at round stations."""
+    for name in ("square", "rectangular", "round", "solid"):
+        arranged, plan = arranged_as(name)
+        [sheet, *_] = sheets_of("templates", arranged, plan)
+        edges = [item.points_mm for item in sheet.on("outline") if hasattr(item, "points_mm") and item.closed]
+        boxes = [(*min(points), *max(points)) for points in edges]
+        low = min(box[1] for box in boxes)
+
+        def inside(x, y, boxes=boxes):
+            return any(box[0] < x < box[2] and box[1] - 1e-9 <= y <= box[3] + 1e-9 for box in boxes)
+
+        here = [item for item in sheet.items if isinstance(item, Text) and inside(item.x_mm, item.y_mm)]
+        walls = 5 if name == "round" else 4
+        for words, most_mm in (("DATUM END", 5.0), ("FRONT END", arranged.design.boom.length_mm)):
+            xs = [item.x_mm + sheet.station_at_x0_mm for item in here if item.text == words]
+            assert len(xs) == walls
+            assert all(most_mm - 25.0 < x <= most_mm for x in xs)
+        ticks = {
+            round(line.x0_mm + sheet.station_at_x0_mm, 6)
+            for line in sheet.on("dim")
+            if isinstance(line, Line) and line.y0_mm == low < line.y1_mm
+        }
+        assert ticks == {50.0 * k for k in range(1, math.ceil(arranged.design.boom.length_mm / 50))}
+        for item in here:
+            if item.layer == "dim" and item.text.isdigit():
+                assert abs(item.x_mm + sheet.station_at_x0_mm - int(item.text)) < 10.0
+
+
 def test_every_sheet_of_a_design_that_is_not_clear_is_stamped(shape):
     for sheet in every_sheet(shape, stamp=True):
         assert any("NOT CLEARED" in item.text for item in sheet.on("stamp")), sheet.name

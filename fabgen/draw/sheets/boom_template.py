@@ -4,12 +4,12 @@ import math
 from collections import defaultdict
 from collections.abc import Iterable
 
-from fabgen.design.arranged import Arranged, CutPlan, Hole, Piece, Wall
+from fabgen.design.arranged import Arranged, CutPlan, Hole, Piece
 from fabgen.design.drawing import Box, Item, Sheet
 from fabgen.design.lettering import shortened, text_width_mm
 from fabgen.design.pen import Pen, spread
 from fabgen.draw.clipping import clipped
-from fabgen.draw.development import Development, development
+from fabgen.draw.development import Development, Face, development
 from fabgen.draw.lettering_place import SMALLEST_MM, Drawn, Spot, free_place, letter_hole, mark_hole, usual_height_mm
 from fabgen.draw.words import ABOUT_BARS, WALLS, allowance_words, boom_size, drill_words, wall_of
 from fabgen.units import format_mm
@@ -19,7 +19,8 @@ PLACE = "templates"
 _LEFT_MM, _RIGHT_MM, _FOOT_MM = 20.0, 10.0, 16.5
 _BAR_X_MM, _BAR_Y_MM = 8.0, 6.0
 _CROSS_MM, _DOT_MM = 3.0, 0.8
-_STATION_STEP_MM, _TICK_MM = 50.0, 1.5
+_STATION_STEP_MM, _TICK_MM, _INNER_TICK_MM = 50.0, 1.5, 1.0
+_END_NAME_MM = 1.5
 _LINE_MM = 165.0
 """Longest line of lettering: it stays whole on a page of the shop's paper, upright or across."""
 _NAME_PITCH_MM = 110.0
@@ -42,10 +43,13 @@ def _template(arranged: Arranged, piece: Piece) -> Sheet:
     _surface(pen, laid, paper, base)
     for hole in holes:
         _hole(pen, laid, hole, shift, base, paper)
-    _stations(pen, piece, paper)
+    edges = _edges(laid, base)
+    _stations(pen, piece, paper, edges)
     drawn = Drawn(pen.items)
     crowded = [hole for hole in holes if not _lettered(pen, drawn, _spot(laid, hole, shift, base, paper), hole)]
+    _end_names(pen, drawn, laid, paper, base)
     _wall_names(pen, drawn, laid, paper, base)
+    _inner_stations(pen, drawn, piece, left, edges[0][0])
     head_mm = _crowded(pen, crowded, shift, paper[3] + 7.0)
     _ends(pen, paper, left, right)
     top_mm = _heading(pen, arranged, piece, laid, head_mm)
@@ -90,18 +94,39 @@ def _hole(pen: Pen, laid: Development, hole: Hole, shift: float, base: float, pa
         pen.add(part for item in mark.items for part in clipped(item, paper))
 
 
-def _stations(pen: Pen, piece: Piece, paper: Box) -> None:
-    """Ticks outside both edges with their station, to place the paper by tape."""
+def _edges(laid: Development, base: float) -> list[tuple[float, float]]:
+    """Lower and upper edge of each part of the paper that stays in sight on the boom, from below."""
+    if laid.folds_mm or laid.radius_mm:
+        return [(base + laid.low_mm, base + laid.high_mm)]
+    return [(base + face.low_mm, base + face.high_mm) for face in reversed(laid.faces)]
+
+
+def _stations(pen: Pen, piece: Piece, paper: Box, edges: Iterable[tuple[float, float]]) -> None:
+    """Ticks to place the paper by tape: outside with their station, inside for when it is cut out."""
     left, low, right, high = paper
     first = math.ceil(piece.start_mm / _STATION_STEP_MM)
     for k in range(first, math.floor(piece.end_mm / _STATION_STEP_MM) + 1):
         x = left + k * _STATION_STEP_MM - piece.start_mm
         pen.line("dim", x, low, x, low - _TICK_MM)
         pen.line("dim", x, high, x, high + _TICK_MM)
+        for lower, upper in edges if left < x < right else ():
+            pen.line("dim", x, lower, x, lower + _INNER_TICK_MM)
+            pen.line("dim", x, upper, x, upper - _INNER_TICK_MM)
         if k % 2 == 0 and right - x > 6.0:
             label = f"{k * _STATION_STEP_MM:.0f}"
             pen.text(x, low - _TICK_MM - 0.8, label, 2.0, anchor="middle", level="top", layer="dim")
             pen.text(x, high + _TICK_MM + 0.8, label, 2.0, anchor="middle", layer="dim")
+
+
+def _inner_stations(pen: Pen, drawn: Drawn, piece: Piece, left: float, low: float) -> None:
+    """The number of every second tick along the paper's lower edge, inside, where there is a free place."""
+    step_mm = 2 * _STATION_STEP_MM
+    for k in range(math.ceil((piece.start_mm + 1.0) / step_mm), math.floor((piece.end_mm - 8.0) / step_mm) + 1):
+        x, label = left + k * step_mm - piece.start_mm, f"{k * step_mm:.0f}"
+        width = text_width_mm(label, SMALLEST_MM)
+        found = free_place(drawn, width, SMALLEST_MM, [(x + 0.8, low + 0.8), (x - 0.8 - width, low + 0.8)])
+        if found:
+            drawn.add([pen.text(found[0], found[1], label, SMALLEST_MM, layer="dim")])
 
 
 def _spot(laid: Development, hole: Hole, shift: float, base: float, paper: Box) -> Spot:
@@ -125,16 +150,33 @@ def _tolerance(hole: Hole) -> str:
     return f"±{hole.tolerance_mm:g}"
 
 
+def _levels_mm(laid: Development, face: Face, base: float) -> tuple[float, tuple[float, ...]]:
+    """Height of a wall's name, and on which baselines it may stand: over and under the centre line."""
+    half = laid.radius_mm and face.wall == "-z"
+    middle = face.middle_mm if half else dict(laid.centre_lines_mm)[face.wall]
+    height = usual_height_mm((face.high_mm - face.low_mm) / 2)
+    over, under = base + middle + 0.75, base + middle - 0.75 - 1.06 * height
+    return height, (base + middle - height / 2,) if half else (over, under)
+
+
+def _end_names(pen: Pen, drawn: Drawn, laid: Development, paper: Box, base: float) -> None:
+    """Which end is which on every wall of the paper, so that it is still told when the paper is cut out."""
+    left, _, right, _ = paper
+    for face in laid.faces:
+        _, levels = _levels_mm(laid, face, base)
+        for words, at_end in (("DATUM END", False), ("FRONT END", True)):
+            width = text_width_mm(words, SMALLEST_MM)
+            x = right - _END_NAME_MM - width if at_end else left + _END_NAME_MM
+            found = free_place(drawn, width, 1.06 * SMALLEST_MM, [(x, y) for y in reversed(levels)])
+            if found:
+                drawn.add([pen.text(found[0], found[1], words, SMALLEST_MM)])
+
+
 def _wall_names(pen: Pen, drawn: Drawn, laid: Development, paper: Box, base: float) -> None:
     """Each wall's name with an arrow forward, again and again along it, and what to do with the flap."""
     left, _, right, high = paper
-    centres: dict[Wall, float] = dict(laid.centre_lines_mm)
     for face in laid.faces:
-        half = laid.radius_mm and face.wall == "-z"
-        middle = face.middle_mm if half else centres[face.wall]
-        height = usual_height_mm((face.high_mm - face.low_mm) / 2)
-        over, under = base + middle + 0.75, base + middle - 0.75 - 1.06 * height
-        levels = (base + middle - height / 2,) if half else (over, under)
+        height, levels = _levels_mm(laid, face, base)
         _along(pen, drawn, WALLS[face.wall], height, levels, (left, right))
     if laid.flap_mm:
         seam = "Flap for tape, goes under the opposite edge."
