@@ -172,6 +172,21 @@ def test_a_computed_value_depends_on_the_rods_own_length(variant: Variant) -> No
     assert "theory, unmeasured" in ledger.line("D1").allowance.source
 
 
+def test_only_interior_rods_share_a_part_of_u_and_each_end_counts_from_its_own_side(variant: Variant) -> None:
+    """3 % of a boom of 0.029 wavelengths; 60 mm is 3 sides: 15 % at either end (own study 2026, unpublished)."""
+    ledger = correct(variant())
+    shares = {
+        row.element: row.allowance.correlated_u_mm / row.allowance.value_mm
+        for row in ledger.lines
+        if row.allowance.needed
+    }
+    assert shares.pop("R") == shares.pop("D10") == 0.0
+    assert list(shares.values()) == pytest.approx([0.03] * 9)
+    for end, other in (("R", "D1"), ("D10", "D9")):
+        far, near = ledger.line(other).allowance, ledger.line(end).allowance
+        assert near.u_mm / near.value_mm > 0.149 > far.u_mm / far.value_mm
+
+
 def test_outside_the_computed_range_there_is_no_number_but_reasons(variant: Variant) -> None:
     design = variant(("overhang: {rear: 60 mm", "overhang: {rear: 25 mm"), ("clamp: {at: balance, mast: 38 mm}\n", ""))
     found = line(design, "R").allowance

@@ -122,6 +122,16 @@ def test_a_measurement_keeps_reactance_not_millimetres(variant: Variant, element
     assert correct(replace(design, records=(measured(design),))).status == "allowances: measured"
 
 
+def test_what_the_pieces_sawn_ends_may_hide_is_common_to_all_rods(variant: Variant) -> None:
+    """The coupon may read up to 9 % low for its two ends: 0 to 9 %, uncorrected, is 9 %/√3 about the reading."""
+    design = variant(MEASURED)
+    record = replace(measured(design), boom_end_relative=0.09)
+    found, endless = (allowance(replace(design, records=(r,))) for r in (record, measured(design)))
+    assert found.value_mm == endless.value_mm
+    assert found.correlated_u_mm == pytest.approx(found.value_mm * math.hypot(0.02, 0.09 / math.sqrt(3)), rel=1e-9)
+    assert found.u_mm == pytest.approx(math.hypot(endless.u_mm, found.value_mm * 0.09 / math.sqrt(3)), rel=1e-9)
+
+
 def test_what_differs_from_the_coupon_is_named_with_what_it_adds(variant: Variant) -> None:
     design = variant(MEASURED)
     record = measured(design, hole_mm=8.2, keeper="snap ASA", bush_material="PETG")
