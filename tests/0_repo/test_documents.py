@@ -11,6 +11,7 @@ import pytest
 
 pytestmark = pytest.mark.house
 
+STAGES = {"read", "correct", "arrange", "check", "draw", "model", "export", "book", "design", "physics", "stock"}
 SPINE = {"cadquery", "numpy", "pyyaml", "trimesh", "svgwrite"}
 
 
@@ -70,7 +71,9 @@ def test_files_that_the_documents_name_exist(root: Path, readme: str, developers
     assert len(pictures) >= 2
     links = re.findall(r"\]\(([\w./-]+)\)", readme + developers)
     named = re.findall(r"`((?:fabgen|tests|designs)/[\w./-]+\.\w+)`", readme + developers)
-    assert [path for path in {*links, *named} if not (root / path).is_file()] == []
+    short = [f"fabgen/{path}" for path in re.findall(r"`(\w+/[\w/]+\.py)`", developers) if path.split("/")[0] in STAGES]
+    assert len(short) >= 8
+    assert [path for path in {*links, *named, *short} if not (root / path).is_file()] == []
 
 
 def test_the_design_in_the_readme_is_clear(root: Path, tmp_path: Path, readme: str) -> None:

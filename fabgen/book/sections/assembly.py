@@ -8,6 +8,7 @@ from fabgen.design.arranged import Placed
 from fabgen.design.assembly_order import Step, assembly_order
 
 PLACE = 100
+NEW_PAGE = True
 
 
 def content(book: Book) -> Content:
