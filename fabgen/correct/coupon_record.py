@@ -17,7 +17,6 @@ from fabgen.errors import FabgenError, InputError
 from fabgen.frozen import frozen
 from fabgen.physics.boom_coupon import (
     end_fall_factor,
-    good_coupon_boom_mm,
     reactance_factor_from_allowance,
     shortest_coupon_boom_mm,
 )
@@ -101,7 +100,7 @@ def record_coupon(design: Design, mount: str, sheet: ReadingSheet, date: str) ->
     Args:
         design: as read.
         mount: which mount was measured.
-        sheet: the readings.
+        sheet: the readings; where it does not say how long the piece of boom is, the shortest that serves counts.
         date: when, YYYY-MM-DD.
 
     Raises:
@@ -112,8 +111,8 @@ def record_coupon(design: Design, mount: str, sheet: ReadingSheet, date: str) ->
     geometry = _geometry(design, mount, sheet)
     drawn, frequency_mhz = as_boom_mount(geometry), geometry.frequency_mhz
     boom_mm = max(drawn.outside_mm, drawn.height_mm)
-    piece_mm = sheet.piece_mm if sheet.piece_mm is not None else good_coupon_boom_mm(boom_mm, frequency_mhz)
     shortest_mm = shortest_coupon_boom_mm(boom_mm)
+    piece_mm = shortest_mm if sheet.piece_mm is None else sheet.piece_mm
     if piece_mm < shortest_mm - 0.5:
         raise ReadingsRefusedError(
             f"the piece of boom is {piece_mm:g} mm long; under {shortest_mm:g} mm it reads 5 to 60 % low",

@@ -190,7 +190,10 @@ def test_a_short_piece_of_boom_is_refused(variant: Variant, plan: CouponArray) -
     sheet = Bench(plan, 4.7, (MHZ,)).sheet("re and im", random(), 0.005, piece_mm=least - 10)
     assert "the piece of boom is 150 mm long" in refused(variant(), sheet)
     long_enough = replace(sheet, piece_mm=least)
-    assert record_coupon(variant(), "line", long_enough, "2026-11-30").fit.allowance_mm > 0
+    shortest = record_coupon(variant(), "line", long_enough, "2026-11-30")
+    assert shortest.fit.allowance_mm > 0
+    unsaid = record_coupon(variant(), "line", replace(sheet, piece_mm=None), "2026-11-30")
+    assert unsaid.boom_end_relative == shortest.boom_end_relative > 0
 
 
 def test_nothing_to_find_is_refused(variant: Variant, plan: CouponArray) -> None:
