@@ -1,5 +1,6 @@
 """Another rod than the modelled one: the ledger's column, its u, exact sums, and that nothing heavy loads otherwise."""
 
+import math
 import subprocess
 import sys
 from collections.abc import Callable
@@ -57,6 +58,14 @@ def test_u_of_the_change_counts_in_the_cut_length(thicker: Design) -> None:
     parts = (line.allowance.u_mm, line.rod_change_u_mm, line.tolerance_mm / 3**0.5)
     assert line.rod_change_u_mm > 0.2
     assert line.u_mm == pytest.approx(sum(part**2 for part in parts) ** 0.5)
+
+
+def test_u_of_the_change_counts_in_the_trim(variant: Callable[..., Design]) -> None:
+    """From 3 to 6 mm: twice the u of allowance and change in quadrature, up to the next half millimetre."""
+    design = variant((RODS, "rods: {diameter: 6 mm, modelled_diameter: 3 mm,"), ("hole: 8 mm", "hole: 9.5 mm"))
+    line = correct(design).line("D7")
+    both_mm = 2 * math.hypot(line.allowance.u_mm, line.rod_change_u_mm)
+    assert 2 * line.allowance.u_mm + 0.5 < both_mm <= line.trim_mm < both_mm + 0.5
 
 
 def test_the_allowance_is_that_of_the_rod_that_is_cut(thicker: Design, variant: Callable[..., Design]) -> None:
