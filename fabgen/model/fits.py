@@ -22,8 +22,8 @@ class Fit:
 
     Attributes:
         fit_mm: diametral clearance, negative for a grip.
-        ring_mm3: volume of the full ring that a grip's solids share over the length they have in common; 0 with
-            clearance.
+        ring_mm3: volume of the full ring that a grip's solids share over the length they have in common, a bore's
+            45° lead-ins counted at both ends as far as they grip; 0 with clearance.
     """
 
     fit_mm: float
@@ -64,7 +64,7 @@ def fits(first: Body, second: Body, frame: Frame) -> tuple[Fit, ...]:
             bore, pin = (a, b) if a.hollow else (b, a)
             fit_mm = round(bore.diameter_mm - pin.diameter_mm, 9)
             ring_mm2 = max(0.0, math.pi / 4 * (pin.diameter_mm**2 - bore.diameter_mm**2))
-            found[fit_mm] = found.get(fit_mm, 0.0) + ring_mm2 * common_mm
+            found[fit_mm] = found.get(fit_mm, 0.0) + ring_mm2 * (common_mm + abs(fit_mm))
     return tuple(Fit(fit_mm, ring_mm3) for fit_mm, ring_mm3 in sorted(found.items()))
 
 

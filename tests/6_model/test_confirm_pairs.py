@@ -132,6 +132,14 @@ def test_overlap_of_a_grip_is_the_ring_without_slit_and_lead_ins():
     assert 0.6 * 9.071 < overlap < 9.071
 
 
+def test_a_thick_rods_keeper_grips_by_more_than_its_slit_takes():
+    """Rod 10, bore 9.7, 5 mm long: the 1 mm slit takes 3 % of the ring, the lead-ins grip 0.15 mm deep at both ends."""
+    shape = Cylinder("y", (100, 15.65, 0), 17.0, 5.0)
+    numbers = {"rod_diameter_mm": 10.0, "bore_mm": 9.7, "outside_diameter_mm": 17.0}
+    ring = placed("K", "push_ring", Frame((100, 13.15, 0), z=LEFT), [shape], **numbers)
+    assert confirm([meet(ring, rod("R", 100, diameter=10.0), "keeper on rod", 0.0, -0.3)]) == 1
+
+
 def test_equal_placements_are_measured_once():
     """Forty elements with rods of forty lengths in one boom: no more to measure than one element."""
     stations = [100.0 + 37.3 * i for i in range(40)]
