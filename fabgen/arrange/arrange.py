@@ -13,6 +13,7 @@ from fabgen.arrange.drilling import PIECE, hole_rows
 from fabgen.arrange.layout import Layout, sorted_parameters
 from fabgen.design.arranged import Arranged, Box, Cut, Cylinder, Frame, Hole, Piece, Placed
 from fabgen.design.design import Design, Element
+from fabgen.design.distances import bounding_box
 from fabgen.design.ledger import Ledger, Remark
 from fabgen.physics.sections import boom_section
 
@@ -56,7 +57,7 @@ def arrange(design: Design, ledger: Ledger) -> Arranged:
         balance_mm=balance_mm,
         clamp_mm=station_mm,
         clamp_width_mm=clamp.clamp_size(design, design.clamp).width_mm if design.clamp else 0.0,
-        turning_radius_mm=_turning_radius_mm(design, ledger, balance_mm if station_mm is None else station_mm),
+        turning_radius_mm=_turning_radius_mm(design, placed, mast, balance_mm),
     )
 
 
@@ -159,11 +160,16 @@ def _clamp(layout: Layout, design: Design, balance_mm: float) -> tuple[float | N
     return station_mm, mast
 
 
-def _turning_radius_mm(design: Design, ledger: Ledger, pivot_mm: float) -> float:
-    """From the mast's axis to the farthest point that swings round it, seen from above."""
-    reaches = [pivot_mm, design.boom.length_mm - pivot_mm]
-    for line in ledger.lines:
-        along = line.station_mm - pivot_mm
-        across = line.cut_mm / 2 if design.polarisation == "horizontal" else line.rod_mm / 2
-        reaches.append(math.hypot(along, across))
-    return round(max(map(abs, reaches)), 3)
+def _turning_radius_mm(design: Design, placed: tuple[Placed, ...], mast: Cylinder | None, balance_mm: float) -> float:
+    """From the mast's axis (without one: the balance point) to the farthest point of boom and rods, seen from above.
+
+    The mast stands beside the boom, or with upright rods below it, so its axis is not the boom's.
+    """
+    across = 1 if design.polarisation == "horizontal" else 2
+    pivot = mast.centre if mast else (balance_mm, 0.0, 0.0)
+    boxes = [bounding_box(part.shapes) for part in placed if part.part in ("boom", "rod", "folded_rod")]
+    reaches = [
+        math.hypot(*(max(abs(box.low[axis] - pivot[axis]), abs(box.high[axis] - pivot[axis])) for axis in (0, across)))
+        for box in boxes
+    ]
+    return round(max(reaches), 3)

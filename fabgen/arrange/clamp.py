@@ -25,7 +25,9 @@ ROOM_MM = 2.0
 """Between a washer and whatever stands beside it."""
 SLEEVE_OUTSIDE_MM, SLEEVE_BORE_MM = 10.0, 6.4
 SLEEVE_MATERIAL = "EN AW-6060 T66"
-TUBE_SLEEVE_WALL_MM, TUBE_SLEEVE_PLAY_MM = 2.0, 0.2
+SLEEVE_PLAY_MM = 0.2
+"""Diametral play of what is pushed into the boom from its end. Source: common practice."""
+TUBE_SLEEVE_WALL_MM = 2.0
 
 
 @frozen
@@ -155,11 +157,11 @@ def _boom_u_bolts(layout: Layout, design: Design, size: ClampSize, station_mm: f
         )
         layout.meet(f"boom U-bolt {count}", "boom", "bow on boom", 0.0)
     if boom.hollow:
-        outside_mm = boom.inside_width_mm - TUBE_SLEEVE_PLAY_MM
+        outside_mm = boom.inside_width_mm - SLEEVE_PLAY_MM
         frame = Frame((station_mm - size.width_mm / 2, 0.0, 0.0), z=(1.0, 0.0, 0.0), x=(0.0, 1.0, 0.0))
         bore_mm = outside_mm - 2 * TUBE_SLEEVE_WALL_MM
         _sleeve(layout, "clamp tube sleeve", frame, size.width_mm, bore_mm, outside_mm)
-        layout.meet("clamp tube sleeve", "boom", "sleeve in tube", TUBE_SLEEVE_PLAY_MM / 2, TUBE_SLEEVE_PLAY_MM)
+        layout.meet("clamp tube sleeve", "boom", "sleeve in tube", SLEEVE_PLAY_MM / 2, SLEEVE_PLAY_MM)
 
 
 def _u_bolt(
@@ -213,7 +215,13 @@ def _washer_and_nut(layout: Layout, name: str, seat: Vector, up: Vector, bolt: s
 def _through_bolts(layout: Layout, design: Design, size: ClampSize, station_mm: float, away: Vector) -> None:
     """Two bolts through boom and plate, a crush sleeve round each inside a tube."""
     boom = design.boom
-    depth_mm, _ = _extents(design)
+    depth_mm, across_mm = _extents(design)
+    bore_mm = across_mm - 2 * boom.wall_mm
+    if boom.hollow and bore_mm < SLEEVE_OUTSIDE_MM + SLEEVE_PLAY_MM:
+        raise ValueError(
+            f"a crush sleeve of {SLEEVE_OUTSIDE_MM:g} mm does not go into a boom of {bore_mm:g} mm inside; take a "
+            f"larger boom, a solid one, or leave the clamp out"
+        )
     hole_mm = fastener(BOLT).clearance_mm
     horizontal = design.polarisation == "horizontal"
     thickness_mm, nut_mm = tables.washer(BOLT).thickness_mm, tables.nut(BOLT).height_mm

@@ -4,13 +4,17 @@ import math
 from collections.abc import Sequence
 
 from fabgen.arrange.clamp import clamp_size
-from fabgen.design.arranged import Box, Placed, Shape
+from fabgen.design.arranged import Placed
 from fabgen.design.design import Clamp, Design
+from fabgen.design.spans import span_mm
 
-FREE_MM = 5.0
-"""Kept free between the plate and whatever else is on the boom. Source: common practice."""
+FREE_MM = 6.0
+"""Kept free between the plate and whatever else is on the boom, for a spanner and for stations that are off.
+
+Source: our own choice."""
 
 END_MM = 2.0
+"""From the plate to the boom's end, more than a saw is off. Source: our own choice."""
 
 
 def clamp_station_mm(design: Design, clamp: Clamp, placed: Sequence[Placed], balance_mm: float) -> float | None:
@@ -34,28 +38,21 @@ def clamp_station_mm(design: Design, clamp: Clamp, placed: Sequence[Placed], bal
         high = min(high, min(element.station_mm for element in design.elements) - half_mm - FREE_MM)
     taken = sorted(
         (start - half_mm - FREE_MM, end + half_mm + FREE_MM)
-        for start, end in (extent_x_mm(shape) for part in placed for shape in part.shapes)
+        for start, end in (span_mm(shape, 0) for part in placed for shape in part.shapes)
     )
     free = _gaps(low, high, taken)
     places = [_nearest_whole(start, end, balance_mm) for start, end in free]
     return min((p for p in places if p is not None), key=lambda p: (abs(p - balance_mm), p), default=None)
 
 
-def extent_x_mm(shape: Shape) -> tuple[float, float]:
-    """From where to where along the boom a shape reaches."""
-    box = shape if isinstance(shape, Box) else shape.box
-    return box.low[0], box.high[0]
-
-
 def _gaps(low: float, high: float, taken: Sequence[tuple[float, float]]) -> list[tuple[float, float]]:
+    """What is left free of a stretch; `taken` in order of its starts."""
     gaps = []
-    for start, end in taken:
-        if start >= low and start <= high:
-            gaps.append((low, start))
+    for start, end in (*taken, (math.inf, math.inf)):
+        if low <= min(start, high):
+            gaps.append((low, min(start, high)))
         low = max(low, end)
-    if low <= high:
-        gaps.append((low, high))
-    return [(start, end) for start, end in gaps if start <= end]
+    return gaps
 
 
 def _nearest_whole(start: float, end: float, wanted: float) -> float | None:

@@ -8,7 +8,7 @@ from fabgen.design.shop_tolerance import shop_tolerance_mm
 
 
 def rod_cut(design: Design, element: Element, line: LedgerLine) -> Cut:
-    """A straight rod; it stands out equally on both sides of the boom or the saddle."""
+    """A straight rod; it stands out equally on both sides of the boom."""
     return Cut(
         piece=element.id,
         element=element.id,

@@ -149,7 +149,7 @@ def _cut(design: Design, feed: Feed, line: LedgerLine, bent: FoldedRodSize, size
         cut_mm=round(bent.developed_mm, 3),
         trim_mm=2 * line.trim_mm,
         half_mm=round(bent.developed_mm / 2, 3),
-        projection_mm=line.cut_mm / 2 - size.y_mm[1],
+        projection_mm=(line.cut_mm - design.boom.width_mm) / 2,
         tolerance_mm=line.tolerance_mm,
         note=(
             f"bend both ends round {bent.bend_radius_mm:g} to the centre line, {line.cut_mm:g} over the bends; "

@@ -3,7 +3,7 @@
 from fabgen.arrange.drilling import Opening
 from fabgen.arrange.fasteners import middle_screw, middle_screw_thread
 from fabgen.arrange.layout import SIDES, Layout, Side, Value, outward, side_name
-from fabgen.arrange.rods import drilled_rod, keeper_pair, straight_rod
+from fabgen.arrange.rods import Seat, drilled_rod, keeper_pair, straight_rod
 from fabgen.design.arranged import Frame
 from fabgen.design.design import Bush, Design, Element, Mount
 from fabgen.design.ledger import LedgerLine
@@ -30,7 +30,7 @@ def lay_out(design: Design, element: Element, mount: Mount, line: LedgerLine) ->
         straight_rod(layout, element, line.cut_mm, 0.0)
     fit_mm = mount.hole_mm - element.rod.diameter_mm
     layout.meet(element.id, "boom", "rod in clearance hole", fit_mm / 2, fit_mm)
-    seats: dict[Side, tuple[str, float]] = dict.fromkeys(SIDES, ("boom", half_mm))
+    seats: dict[Side, Seat] = dict.fromkeys(SIDES, Seat("boom", half_mm, mount.hole_mm))
     if mount.bush:
         seats |= _bushes(layout, design, element, mount, mount.bush)
     if mount.hold == "middle-screw":
@@ -40,9 +40,7 @@ def lay_out(design: Design, element: Element, mount: Mount, line: LedgerLine) ->
     return layout
 
 
-def _bushes(
-    layout: Layout, design: Design, element: Element, mount: Mount, bush: Bush
-) -> dict[Side, tuple[str, float]]:
+def _bushes(layout: Layout, design: Design, element: Element, mount: Mount, bush: Bush) -> dict[Side, Seat]:
     """Place the bush pair, or the sleeve from the left; return what the keepers on those sides stop on."""
     boom = design.boom
     half_mm = boom.width_mm / 2
@@ -63,7 +61,7 @@ def _bushes(
     else:
         part, what = "bush", "shoulder bush"
         numbers |= {"wall_mm": boom.wall_mm, "spigot_length_mm": bush.spigot_length_mm}
-    seats: dict[Side, tuple[str, float]] = {}
+    seats: dict[Side, Seat] = {}
     for side in sides:
         placed = layout.put(
             part,
@@ -77,5 +75,5 @@ def _bushes(
         bore_mm, spigot_mm = bush.bore_mm - element.rod.diameter_mm, mount.hole_mm - bush.spigot_mm
         layout.meet(placed.name, element.id, "bore on rod", bore_mm / 2, bore_mm)
         layout.meet(placed.name, "boom", "spigot in hole", 0.0, spigot_mm)
-        seats[side] = (placed.name, half_mm + bush.flange_height_mm)
+        seats[side] = Seat(placed.name, half_mm + bush.flange_height_mm, bush.bore_mm)
     return seats

@@ -1,8 +1,8 @@
 """A rod in an insulating saddle above the boom, held by keepers against the saddle's sides."""
 
 from fabgen.arrange.fasteners import hold_down
-from fabgen.arrange.layout import Layout
-from fabgen.arrange.rods import keeper_pair, straight_rod
+from fabgen.arrange.layout import SIDES, Layout
+from fabgen.arrange.rods import Seat, keeper_pair, straight_rod
 from fabgen.design.arranged import Frame
 from fabgen.design.design import Design, Element, Mount, Saddle
 from fabgen.design.ledger import LedgerLine
@@ -18,8 +18,8 @@ def lay_out(design: Design, element: Element, mount: Mount, line: LedgerLine) ->
     straight_rod(layout, element, line.cut_mm, z_mm)
     size = _saddle(layout, design, element, mount.saddle)
     if mount.keeper:
-        seat = (f"{element.id} saddle", size.width_mm / 2)
-        keeper_pair(layout, design, element, mount.keeper, {1: seat, -1: seat}, z_mm)
+        seat = Seat(f"{element.id} saddle", size.width_mm / 2, size.bore_mm)
+        keeper_pair(layout, design, element, mount.keeper, dict.fromkeys(SIDES, seat), z_mm)
     return layout
 
 

@@ -3,6 +3,7 @@
 from fabgen.arrange.layout import Layout, Side, outward, side_name
 from fabgen.design.arranged import Frame, Vector
 from fabgen.design.design import Design, Element, Keeper
+from fabgen.frozen import frozen
 
 KEEPER_PLAY_MM = 0.3
 """Play of a rod along itself between its two keepers, both sides together. Source: common practice."""
@@ -53,8 +54,23 @@ def drilled_rod(
     )
 
 
+@frozen
+class Seat:
+    """What a keeper stops on.
+
+    Attributes:
+        part: occurrence name.
+        distance_mm: of its face from the boom's middle.
+        opening_mm: diameter of the opening in that face; a keeper that is no larger slips into it.
+    """
+
+    part: str
+    distance_mm: float
+    opening_mm: float
+
+
 def keeper_pair(
-    layout: Layout, design: Design, element: Element, keeper: Keeper, seats: dict[Side, tuple[str, float]], z_mm: float
+    layout: Layout, design: Design, element: Element, keeper: Keeper, seats: dict[Side, Seat], z_mm: float
 ) -> None:
     """Put one keeper on each side, half the play off its seat.
 
@@ -63,10 +79,10 @@ def keeper_pair(
         design: for the printer.
         element: the rod's element.
         keeper: its fits.
-        seats: per side what the keeper stops on, and how far that seat is from the boom's middle in mm.
+        seats: per side what the keeper stops on.
         z_mm: height of the rod's axis.
     """
-    for side, (seat, distance_mm) in seats.items():
+    for side, seat in seats.items():
         part = layout.put(
             "push_ring" if keeper.kind == "push-ring" else "snap_keeper",
             f"{element.id} keeper {side_name(side)}",
@@ -80,7 +96,8 @@ def keeper_pair(
             owner=element.id,
             label=f"{keeper.kind} keeper rod {element.rod.diameter_mm:g}",
             material=keeper.material,
-            frame=Frame((element.station_mm, side * (distance_mm + KEEPER_PLAY_MM / 2), z_mm), z=outward(side)),
+            frame=Frame((element.station_mm, side * (seat.distance_mm + KEEPER_PLAY_MM / 2), z_mm), z=outward(side)),
         )
         layout.meet(part.name, element.id, "keeper on rod", 0.0, keeper.bore_mm - element.rod.diameter_mm)
-        layout.meet(part.name, seat, "keeper on seat", KEEPER_PLAY_MM / 2)
+        if keeper.outside_mm > seat.opening_mm:
+            layout.meet(part.name, seat.part, "keeper on seat", KEEPER_PLAY_MM / 2)

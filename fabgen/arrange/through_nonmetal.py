@@ -1,8 +1,8 @@
 """A rod straight through wood or glass-fibre, held by keepers against the boom's sides."""
 
 from fabgen.arrange.drilling import Opening
-from fabgen.arrange.layout import Layout
-from fabgen.arrange.rods import keeper_pair, straight_rod
+from fabgen.arrange.layout import SIDES, Layout
+from fabgen.arrange.rods import Seat, keeper_pair, straight_rod
 from fabgen.design.design import Design, Element, Mount
 from fabgen.design.ledger import LedgerLine
 
@@ -15,6 +15,6 @@ def lay_out(design: Design, element: Element, mount: Mount, line: LedgerLine) ->
     fit_mm = mount.hole_mm - element.rod.diameter_mm
     layout.meet(element.id, "boom", "rod in hole", fit_mm / 2, fit_mm)
     if mount.keeper:
-        half_mm = design.boom.width_mm / 2
-        keeper_pair(layout, design, element, mount.keeper, {1: ("boom", half_mm), -1: ("boom", half_mm)}, 0.0)
+        seat = Seat("boom", design.boom.width_mm / 2, mount.hole_mm)
+        keeper_pair(layout, design, element, mount.keeper, dict.fromkeys(SIDES, seat), 0.0)
     return layout

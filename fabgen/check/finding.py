@@ -2,6 +2,7 @@
 
 from fabgen import registry
 from fabgen.design.findings import Finding, Severity, decimals
+from fabgen.design.ledger import Remark
 
 _ROUNDING_MM = 1e-9
 
@@ -29,6 +30,27 @@ def finding(
     """
     numbers = [None if value is None else round(value, decimals(unit)) + 0.0 for value in (measured, required)]
     return Finding(code, severity, where, numbers[0], numbers[1], unit, advice, registry.code_title(code))
+
+
+def remarked(remark: Remark, severity: Severity, where: str, way_out: str = "") -> Finding:
+    """What an earlier stage remarked, as a finding.
+
+    Args:
+        remark: code, words and numbers.
+        severity: fail, warn or note.
+        where: element or part.
+        way_out: what to do, where the words do not say it.
+    """
+    advice = f"{remark.text}; {way_out}" if way_out else remark.text
+    return finding(
+        remark.code,
+        severity,
+        where,
+        advice,
+        measured=remark.measured,
+        required=remark.required,
+        unit=remark.unit,
+    )
 
 
 def too_small(value_mm: float, *, fail_mm: float, warn_mm: float) -> tuple[Severity, float] | None:

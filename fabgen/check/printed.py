@@ -9,15 +9,17 @@ from fabgen.design.arranged import Arranged, Parameters, Placed
 from fabgen.design.bush_sizes import BushSize, bush_size, sleeve_size
 from fabgen.design.feed_layout import RIM_MM
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
+from fabgen.design.folded_saddle_sizes import RETAINER_WALL_MM, FoldedSaddleSize, folded_saddle_size
 from fabgen.design.keeper_sizes import PushRingSize, SnapKeeperSize, push_ring_size, snap_keeper_size
 from fabgen.design.saddle_sizes import EAR_WALL_MM, SaddleSize, saddle_size
 from fabgen.frozen import frozen
 
-Size = BushSize | FeedBlockSize | PushRingSize | SaddleSize | SnapKeeperSize
+Size = BushSize | FeedBlockSize | FoldedSaddleSize | PushRingSize | SaddleSize | SnapKeeperSize
 
 _SIZES: dict[str, Callable[..., Size]] = {
     "bush": bush_size,
     "feed_block": feed_block_size,
+    "folded_saddle": folded_saddle_size,
     "push_ring": push_ring_size,
     "saddle": saddle_size,
     "sleeve": sleeve_size,
@@ -42,16 +44,13 @@ class Overhang:
     bridge_mm: float = 0.0
 
 
-def distinct_prints(arranged: Arranged) -> Iterator[tuple[Placed, Size | None]]:
-    """One placed part of each kind that is printed, with its sizes; a lid goes with its block.
-
-    A folded dipole's saddle has None: its walls and overhangs do not depend on the design.
-    """
+def distinct_prints(arranged: Arranged) -> Iterator[tuple[Placed, Size]]:
+    """One placed part of each kind that is printed, with its sizes; a lid goes with its block."""
     seen = set()
     for part in arranged.placed:
         if part.source == "printed" and part.part != "feed_lid" and part.key not in seen:
             seen.add(part.key)
-            yield part, _size(part.part, part.parameters) if part.part in _SIZES else None
+            yield part, _size(part.part, part.parameters)
 
 
 def owners(arranged: Arranged, part: Placed) -> list[str]:
@@ -65,32 +64,33 @@ def _size(part: str, parameters: Parameters) -> Size:
     return _SIZES[part](**numbers)
 
 
-def thinnest_wall_mm(size: Size | None) -> tuple[str, float]:
-    """The thinnest standing wall of a part as drawn, with its name."""
+def thinnest_wall_mm(size: Size) -> tuple[str, float]:
+    """The thinnest standing wall of a part as drawn, bores widened by the printer's growth, with its name."""
     match size:
         case BushSize():
             rim_mm = (size.flange_mm - size.spigot_mm) / 2
-            walls = [("spigot wall", size.spigot_wall_mm), ("flange rim", rim_mm)]
+            walls = [("spigot wall", (size.spigot_mm - size.drawn_bore_mm) / 2), ("flange rim", rim_mm)]
         case PushRingSize():
-            walls = [("ring wall", size.wall_mm)]
+            walls = [("ring wall", (size.outside_mm - size.drawn_bore_mm) / 2)]
         case SnapKeeperSize():
             walls = [("clip wall", (size.outside_mm - size.drawn_bore_mm) / 2)]
         case SaddleSize():
             under_mm = size.height_mm - size.drawn_bore_mm / 2
-            walls = [("wall round the bore", size.wall_mm), ("ear wall", EAR_WALL_MM), ("floor", under_mm)]
+            round_mm = size.column_half_mm - size.drawn_bore_mm / 2
+            walls = [("wall round the bore", round_mm), ("ear wall", EAR_WALL_MM), ("floor", under_mm)]
         case FeedBlockSize():
             walls = [("rim", RIM_MM)]
-        case None:
-            walls = [("ear wall", EAR_WALL_MM)]
+        case FoldedSaddleSize():
+            walls = [("wall over the upper slot", RETAINER_WALL_MM - size.hole_growth_mm), ("ear wall", EAR_WALL_MM)]
     return min(walls, key=lambda wall: wall[1])
 
 
-def rod_bore_mm(size: Size | None) -> float | None:
+def rod_bore_mm(size: Size) -> float | None:
     """The closed bore that a rod slides through, as it shall come out; None where there is none."""
     return size.bore_mm if isinstance(size, BushSize | SaddleSize) else None
 
 
-def overhangs(size: Size | None) -> Iterator[Overhang]:
+def overhangs(size: Size) -> Iterator[Overhang]:
     """Surfaces over air in print orientation; chamfers and teardrops are at 45° by their construction."""
     if isinstance(size, SaddleSize) and size.boom_diameter_mm:
         slope_deg = math.degrees(math.asin(min(1.0, size.foot_width_mm / size.boom_diameter_mm)))

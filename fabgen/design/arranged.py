@@ -198,7 +198,7 @@ class Cut:
         rod_mm: diameter; for the boom its width.
         cut_mm: sawn length (folded rods: developed length).
         half_mm: half of it, where the centre mark goes; 0 where there is none.
-        projection_mm: how far the rod stands out of the boom or block on each side; 0 where it has no meaning.
+        projection_mm: how far the rod stands out beyond the boom's sides, a split rod beyond its block's; 0 for the boom.
         note: what else is done to the piece, for example a hole across it; empty for most.
     """
 
@@ -258,7 +258,7 @@ class Arranged:
         balance_mm: station of the centre of mass, clamp not counted.
         clamp_mm: station of the clamp's middle; None without a clamp or where no place is free.
         clamp_width_mm: along the boom.
-        turning_radius_mm: from the clamp (or the balance point) to the farthest tip.
+        turning_radius_mm: from the mast's axis (or the balance point) to the farthest point of boom and rods.
     """
 
     design: Design

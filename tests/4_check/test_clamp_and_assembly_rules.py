@@ -17,8 +17,11 @@ def test_no_free_place_for_the_clamp(found):
 
 
 def test_a_mast_among_vertical_rods(found):
-    """A mast of 38 mm at 200 reaches to 219; the rearmost rod of 4 mm stands at 80."""
-    assert found("mast_among_rods", {"polarisation": "vertical", "clamp.at": 200}) == [("C02", "fail", "mast", 219, 80)]
+    """A mast of 38 mm at 200 reaches to 219; the rearmost rod of 4 mm at 80 begins at 78."""
+    vertical = {"polarisation": "vertical"}
+    assert found("mast_among_rods", vertical | {"clamp.at": 200}) == [("C02", "fail", "mast", 219, 78)]
+    assert found("mast_among_rods", vertical | {"clamp.at": 59}) == [("C02", "fail", "mast", 78, 78)]
+    assert found("mast_among_rods", vertical | {"clamp.at": 58.9}) == []
     assert found("mast_among_rods", {"polarisation": "vertical", "boom.overhang.rear": 150}) == []
     assert found("mast_among_rods", {"clamp.at": 200}) == []
 

@@ -64,6 +64,8 @@ def test_length_of_a_spigot(found):
     [
         # 20 mm less two spigots, less two times the 0.3 mm that a print may be off
         (10.1, [("F06", "fail", "R, D1, D2", -0.8, 0)]),
+        (10, [("F06", "fail", "R, D1, D2", -0.6, 0)]),
+        (9.9, [("F06", "warn", "R, D1, D2", -0.4, 0)]),
         (9.8, [("F06", "warn", "R, D1, D2", -0.2, 0)]),
         (9.7, []),
         (None, []),
@@ -132,6 +134,21 @@ def test_a_keeper_that_slips_through(found):
     assert found("keeper_stop", WOOD | {"mounts.line.keeper": {"outside": 6.3}}) == []
     assert found("keeper_stop", {"mounts.line.keeper": {"outside": 4.25}}) == [("F08", "fail", "R, D1, D2", 4.25, 4.3)]
     assert found("keeper_stop") == []
+
+
+def test_a_sleeves_right_hand_keeper_stops_on_the_boom(made, found, advice):
+    """Its only flange is on the left. Hole 8 drilled up to IT12 = 0.15 too large: a keeper of 8.2 may slip in."""
+    sleeve = {"mounts.line.bush.kind": "sleeve"}
+    assert found("keeper_stop", sleeve | {"mounts.line.keeper.outside": 8.2}) == [
+        ("F08", "fail", "R, D1, D2", 8.2, 8.25)
+    ]
+    assert found("keeper_stop", sleeve | {"mounts.line.keeper.outside": 10.1}) == [
+        ("F08", "warn", "R, D1, D2", 10.1, 10.15)
+    ]
+    assert found("keeper_stop", sleeve | {"mounts.line.keeper.outside": 10.2}) == []
+    assert "no flange stands on the right" in advice("keeper_stop", sleeve)
+    seats = {meeting.second for meeting in made(sleeve).interfaces if meeting.first == "D1 keeper right"}
+    assert seats == {"D1"}
 
 
 def test_a_keeper_over_the_tip(found):

@@ -62,6 +62,13 @@ def test_metal_near_a_tip_is_named_with_its_distance(variant: Variant) -> None:
     assert all(f.measured is not None and f.measured < 200.0 for f in seen)
 
 
+def test_a_bent_rod_is_no_foreign_metal_at_a_directors_tip(variant: Variant) -> None:
+    """It is a rod of the model, like a straight one: with a clearance of 80 mm D1's tips, 59 mm off, are let be."""
+    folded = ("kind: straight-dipole", "kind: folded-dipole, spacing: 30 mm")
+    wide = ("clamp: {at: balance", "clearance: {tip: 80 mm}\nclamp: {at: balance")
+    assert [f for f in findings(arranged(variant(folded, wide))) if f.code == "C12"] == []
+
+
 def test_a_pair_that_nobody_declared_is_an_error_of_the_program(variant: Variant) -> None:
     found = arranged(variant())
     plate = found.part("clamp plate")

@@ -4,12 +4,19 @@ from fabgen.check.printed import distinct_prints, overhangs
 
 
 def test_walls_under_two_lines(found):
-    """The feed block's rim of 1.2 mm is the thinnest wall of all; a spigot of 5.7 round a bore of 4.2 leaves 0.75."""
+    """The feed block's rim of 1.2 mm is the thinnest wall of all.
+
+    A spigot of 5.7 round a bore of 4.2, drawn 0.2 larger, leaves 0.65. A folded dipole's saddle has 1.2 mm between the
+    slot of its upper limb and the retainer's hole, both drawn 0.2 larger: 1.0.
+    """
     assert found("printed_walls", {"printer.nozzle": 0.6}) == []
     coarse = found("printed_walls", {"printer.nozzle": 0.65})
     assert ("P01", "fail", "DE", 1.2, 1.3) in coarse
+    folded = {"feed": {"kind": "folded-dipole", "spacing": 30, "gap": 10, "height": 18, "cable": 5}}
+    assert found("printed_walls", folded | {"printer.nozzle": 0.5}) == []
+    assert ("P01", "fail", "DE", 1.0, 1.1) in found("printed_walls", folded | {"printer.nozzle": 0.55})
     thin = {"mounts.line.hole": 6.0, "mounts.line.bush.spigot": 5.7}
-    assert found("printed_walls", thin) == [("P01", "fail", "R, D1, D2", 0.75, 0.8)]
+    assert found("printed_walls", thin) == [("P01", "fail", "R, D1, D2", 0.65, 0.8)]
 
 
 def test_parts_larger_than_the_bed(found, made):

@@ -22,5 +22,5 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
                 f"between the spigots: {between_mm:.3f} mm on the drawing, the figure is the worst case of two prints; "
                 f"make spigot_length at most {width_mm / 2 - 0.5:g} mm, or use bush: {{kind: sleeve}}"
             )
-            severity: Severity = "fail" if between_mm < 0 else "warn"
+            severity: Severity = "fail" if between_mm <= 1e-9 else "warn"
             yield finding("F06", severity, element.id, advice, measured=worst_mm, required=0.0, unit="mm")

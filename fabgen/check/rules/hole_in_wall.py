@@ -4,6 +4,7 @@ from collections.abc import Iterator
 
 from fabgen.check.finding import finding
 from fabgen.check.holes import drillings, place, wall_width_mm
+from fabgen.check.tolerances import drilled_over_mm
 from fabgen.design.arranged import Arranged, Hole
 from fabgen.design.design import Boom
 from fabgen.design.findings import Finding
@@ -21,18 +22,17 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
         half_mm = wall_width_mm(arranged, hole) / 2
         slack_mm = shop_tolerance_mm(design.shop, half_mm)
         flat_mm = flat_beside_mm(boom, half_mm, hole)
+        left_mm = flat_mm - slack_mm - drilled_over_mm(hole.diameter_mm) / 2
         edge_mm = half_mm - abs(hole.across_mm)
         if flat_mm < 0:
             advice = "make the hole smaller or the boom larger: the drill wanders off a corner and cuts the next wall"
             yield finding("H04", "fail", place(hole), advice, measured=flat_mm, required=0.0, unit="mm")
-        elif flat_mm - slack_mm < boom.wall_mm:
+        elif left_mm < boom.wall_mm:
             advice = (
                 f"flat beside the hole: {flat_mm:.3f} mm on the drawing, the figure is the worst case; leave at least "
                 "one wall thickness: a smaller hole, a thinner bush or a larger boom"
             )
-            yield finding(
-                "H03", "fail", place(hole), advice, measured=flat_mm - slack_mm, required=boom.wall_mm, unit="mm"
-            )
+            yield finding("H03", "fail", place(hole), advice, measured=left_mm, required=boom.wall_mm, unit="mm")
         elif edge_mm - slack_mm < factor * hole.diameter_mm:
             advice = (
                 f"centre to the wall's edge: {edge_mm:.3f} mm on the drawing, the figure is the worst case; "

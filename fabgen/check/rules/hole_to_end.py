@@ -19,16 +19,20 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
         nominal_mm, worst_mm = to_end_mm(arranged, hole)
         d_mm = hole.diameter_mm
         if nominal_mm < d_mm / 2:
-            advice = f"lengthen the boom's overhang by {wanted * d_mm - nominal_mm:.0f} mm"
+            advice = f"{_way_out(hole)} by {wanted * d_mm - nominal_mm:.0f} mm"
             yield finding("H08", "fail", place(hole), advice, measured=nominal_mm, required=d_mm / 2, unit="mm")
         elif missed := too_small(worst_mm, fail_mm=least * d_mm, warn_mm=wanted * d_mm):
             severity, limit_mm = missed
             source = SOURCE if severity == "fail" else "the shop rule of two diameters"
             advice = (
                 f"centre to end: {nominal_mm:.3f} mm on the drawing, the figure is the worst case; "
-                f"{limit_mm / d_mm:g} d is {source}; lengthen the overhang"
+                f"{limit_mm / d_mm:g} d is {source}; {_way_out(hole)}"
             )
             yield finding("H01", severity, place(hole), advice, measured=worst_mm, required=limit_mm, unit="mm")
+
+
+def _way_out(hole: Hole) -> str:
+    return "move the clamp inwards" if hole.element == "clamp" else "lengthen the overhang"
 
 
 def to_end_mm(arranged: Arranged, hole: Hole) -> tuple[float, float]:

@@ -28,8 +28,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
 
 
 def _pair(arranged: Arranged, first: Hole, second: Hole) -> Iterator[Finding]:
-    apart_mm = _apart_mm(arranged, first, second)
-    worst_mm = apart_mm - shop_tolerance_mm(arranged.design.shop, apart_mm)
+    apart_mm, worst_mm = _apart_mm(arranged, first, second)
     d_mm = (first.diameter_mm + second.diameter_mm) / 2
     least = tables.edge_distance_factor("pitch along")
     if missed := too_small(worst_mm, fail_mm=least * d_mm, warn_mm=WANTED * d_mm):
@@ -46,7 +45,7 @@ def _pair(arranged: Arranged, first: Hole, second: Hole) -> Iterator[Finding]:
 def _near_pairs(wall: list[Hole]) -> Iterator[tuple[Hole, Hole]]:
     """Pairs of different holes of one wall whose stations could bring them too near."""
     ordered = sorted(wall, key=lambda hole: (hole.station_mm, hole.number))
-    reach_mm = WANTED * max(hole.diameter_mm for hole in ordered) + 10.0
+    reach_mm = WANTED * max(hole.diameter_mm for hole in ordered) + 2 * max(hole.tolerance_mm for hole in ordered)
     for i, first in enumerate(ordered):
         for second in ordered[i + 1 :]:
             if second.station_mm - first.station_mm > reach_mm:
@@ -55,10 +54,19 @@ def _near_pairs(wall: list[Hole]) -> Iterator[tuple[Hole, Hole]]:
                 yield first, second
 
 
-def _apart_mm(arranged: Arranged, first: Hole, second: Hole) -> float:
-    """Distance of two centres on the boom's surface; round the boom along the arc."""
-    across_mm = second.across_mm - first.across_mm
+def _apart_mm(arranged: Arranged, first: Hole, second: Hole) -> tuple[float, float]:
+    """Distance of two centres on the boom's surface, round the boom along the arc: on the drawing, and at the worst.
+
+    Stations are marked one by one from the datum face; the holes of one block are marked from each other.
+    """
+    shop = arranged.design.shop
+    along_mm, across_mm = abs(second.station_mm - first.station_mm), second.across_mm - first.across_mm
     if first.wall == "round":
         turn_deg = (second.angle_deg - first.angle_deg + 180) % 360 - 180
         across_mm += math.radians(turn_deg) * arranged.design.boom.width_mm / 2
-    return math.hypot(second.station_mm - first.station_mm, across_mm)
+    across_mm = abs(across_mm)
+    one_block = first.element == second.element
+    along_off_mm = shop_tolerance_mm(shop, along_mm) if one_block else first.tolerance_mm + second.tolerance_mm
+    least_along_mm = max(0.0, along_mm - along_off_mm)
+    least_across_mm = max(0.0, across_mm - shop_tolerance_mm(shop, across_mm))
+    return math.hypot(along_mm, across_mm), math.hypot(least_along_mm, least_across_mm)

@@ -23,6 +23,8 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
             if missed := too_small(mount.keeper.outside_mm, fail_mm=opening_mm + 0.1, warn_mm=opening_mm + 2 * RIM_MM):
                 severity, limit_mm = missed
                 advice = f"it rests on the rim of {what}, {opening_mm:.3f} mm at its largest: make it wider"
+                if mount.bush and mount.bush.kind == "sleeve":
+                    advice += ", drill a smaller hole, or use bush: {kind: shoulder}: no flange stands on the right"
                 yield finding(
                     "F08", severity, element.id, advice, measured=mount.keeper.outside_mm, required=limit_mm, unit="mm"
                 )
@@ -33,7 +35,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
 
 def opening(mount: Mount) -> tuple[float, str]:
     """Largest diameter of what the keeper could slip into, and what it is."""
-    if mount.bush:
+    if mount.bush and mount.bush.kind == "shoulder":
         return mount.bush.bore_mm, "the bush's bore"
     if mount.saddle:
         return mount.saddle.bore_mm, "the saddle's bore"

@@ -14,9 +14,10 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
         return
     front_mm = arranged.clamp_mm + design.clamp.mast_mm / 2
     rearmost = design.elements[0]
-    if front_mm >= rearmost.station_mm - rearmost.rod.diameter_mm / 2:
+    rear_mm = rearmost.station_mm - rearmost.rod.diameter_mm / 2
+    if front_mm >= rear_mm:
         advice = (
             f"a metal mast parallel to the rods is one more rod; clamp the boom behind {rearmost.id}: lengthen the "
             "rear overhang and write clamp: {at: balance}"
         )
-        yield finding("C02", "fail", "mast", advice, measured=front_mm, required=rearmost.station_mm, unit="mm")
+        yield finding("C02", "fail", "mast", advice, measured=front_mm, required=rear_mm, unit="mm")

@@ -2,7 +2,7 @@
 
 from collections.abc import Iterator
 
-from fabgen.check.finding import finding
+from fabgen.check.finding import remarked
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding, Severity
 from fabgen.design.ledger import Allowance, Remark
@@ -13,15 +13,8 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     for line in arranged.ledger.lines:
         for remark in line.allowance.remarks:
             severity = _severity(line.allowance, remark)
-            yield finding(
-                remark.code,
-                severity,
-                line.element,
-                remark.text + ("; state a value or choose another origin" if severity == "fail" else ""),
-                measured=remark.measured,
-                required=remark.required,
-                unit=remark.unit,
-            )
+            way_out = "state a value or choose another origin" if severity == "fail" else ""
+            yield remarked(remark, severity, line.element, way_out)
 
 
 def _severity(allowance: Allowance, remark: Remark) -> Severity:

@@ -2,7 +2,7 @@
 
 from collections.abc import Iterator
 
-from fabgen.check.finding import finding
+from fabgen.check.finding import remarked
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding, Severity
 
@@ -14,12 +14,4 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     """E05 no length makes good for the diameter, E06 outside the range of the method."""
     for line in arranged.ledger.lines:
         for remark in line.rod_change_remarks:
-            yield finding(
-                remark.code,
-                SEVERITY[remark.code],
-                line.element,
-                f"{remark.text}; {WAY_OUT[remark.code]}",
-                measured=remark.measured,
-                required=remark.required,
-                unit=remark.unit,
-            )
+            yield remarked(remark, SEVERITY[remark.code], line.element, WAY_OUT[remark.code])

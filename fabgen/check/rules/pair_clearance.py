@@ -8,7 +8,11 @@ from fabgen.design.arranged import Arranged, Box, Placed, Vector
 from fabgen.design.distances import bounding_box, parts_distance_mm, point_distance_mm
 from fabgen.design.findings import Finding
 
-_MAST_MM = 5.0
+MAST_MM = 5.0
+"""Mast to everything but clamp and boom: both sway, and the clamp is set by eye. Source: common practice."""
+
+RODS = ("rod", "folded_rod")
+MODELLED = (*RODS, "boom")
 _ADVICE = "move one of them along the boom, or choose a smaller part"
 
 
@@ -29,20 +33,20 @@ def _mast(arranged: Arranged) -> Iterator[Finding]:
         if part.owner in ("clamp", "boom"):
             continue
         distance_mm = parts_distance_mm((arranged.mast,), part.shapes)
-        if distance_mm < _MAST_MM - 1e-9:
+        if distance_mm < MAST_MM - 1e-9:
             advice = "move the clamp along the boom"
-            yield finding("C11", "fail", part.name, advice, measured=distance_mm, required=_MAST_MM, unit="mm")
+            yield finding("C11", "fail", part.name, advice, measured=distance_mm, required=MAST_MM, unit="mm")
 
 
 def _tips(arranged: Arranged) -> Iterator[Finding]:
-    """Metal of the clamp, the mast and the feeds near the tip of another element's rod."""
+    """Metal that the model does not know near the tip of another element's rod: clamp, mast and every screw."""
     limit_mm = arranged.design.tip_clearance_mm
-    metals = [(p.name, p.owner, p.shapes) for p in arranged.placed if p.metal and p.part not in ("rod", "boom")]
+    metals = [(p.name, p.owner, p.shapes) for p in arranged.placed if p.metal and p.part not in MODELLED]
     if arranged.mast is not None:
         metals.append(("mast", "clamp", (arranged.mast,)))
     bodies = [(name, owner, shapes, bounding_box(shapes)) for name, owner, shapes in metals]
     for rod in arranged.placed:
-        if rod.part not in ("rod", "folded_rod"):
+        if rod.part not in RODS:
             continue
         x_mm = rod.frame.origin[0]
         beside = [body for body in bodies if body[3].low[0] - limit_mm < x_mm < body[3].high[0] + limit_mm]

@@ -2,7 +2,7 @@
 
 from collections.abc import Iterator
 
-from fabgen.check.finding import finding
+from fabgen.check.finding import remarked
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding
 
@@ -10,12 +10,4 @@ from fabgen.design.findings import Finding
 def findings(arranged: Arranged) -> Iterator[Finding]:
     """F01 a part that no numbers can make, C01 no place for the clamp: what stage `arrange` remarked."""
     for where, remark in arranged.remarks:
-        yield finding(
-            remark.code,
-            "fail",
-            where,
-            remark.text,
-            measured=remark.measured,
-            required=remark.required,
-            unit=remark.unit,
-        )
+        yield remarked(remark, "fail", where)
