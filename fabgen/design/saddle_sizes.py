@@ -151,15 +151,19 @@ class SaddleSize:
         return profile * self.width_mm + foot * self.length_mm - 2 * screw
 
     @property
-    def shapes(self) -> tuple[Box, Box, Box]:
-        """Base, fillets and column in the local frame: an envelope, the bore not taken out."""
+    def shapes(self) -> tuple[Box, ...]:
+        """Base, fillets and column in the local frame: an envelope, the bore not taken out.
+
+        A low saddle has no fillets, and no column where its ears reach over the rod's bore.
+        """
         x, y, low = self.length_mm / 2, self.width_mm / 2, 0.0 - self.foot_drop_mm
         column, rounded = self.column_half_mm, self.column_half_mm + self.fillet_mm
-        return (
+        boxes = (
             Box((-x, -y, low), (x, y, self.ear_mm)),
             Box((-rounded, -y, self.ear_mm), (rounded, y, self.ear_mm + self.fillet_mm)),
             Box((-column, -y, self.ear_mm), (column, y, self.top_mm)),
         )
+        return tuple(box for box in boxes if box.low[2] < box.high[2])
 
 
 def saddle_size(

@@ -78,3 +78,12 @@ def test_every_part_lies_in_the_shapes_that_it_is_arranged_by(part):
 def test_parts_for_a_round_boom_lie_in_their_shapes(part):
     size = getattr(part_sizes, f"{part}_size")(boom_diameter_mm=25.0)
     assert outside_envelope(placed(part, size.shapes, boom_diameter_mm=25.0)) == ""
+
+
+@pytest.mark.parametrize(("height_mm", "boxes"), [(7.6, 3), (7.5, 2), (6.0, 2), (2.4, 1)])
+def test_a_low_saddle_has_no_empty_shape(height_mm, boxes):
+    """Ears of 7.5 mm: at that height the fillets end, and under a bore with little plastic over it the column too."""
+    numbers = {"rod_diameter_mm": 2.0, "height_mm": height_mm, "wall_mm": 3.0}
+    shapes = part_sizes.saddle_size(**numbers).shapes
+    assert len(shapes) == boxes
+    assert outside_envelope(placed("saddle", shapes, **numbers)) == ""
