@@ -5,9 +5,10 @@ from pathlib import Path
 import click
 
 from fabgen.cli import report
+from fabgen.cli.call import Call
 from fabgen.cli.commands.check import DESIGNS
 from fabgen.contents import GROUPS
-from fabgen.errors import InputError, MachineError
+from fabgen.errors import MachineError
 from fabgen.pipeline import Judged
 from fabgen.pipeline import build as build_package
 from fabgen.pipeline import check as judge_file
@@ -22,16 +23,23 @@ from fabgen.pipeline import drawn as draw_sheets
 @click.option("--json", "as_json", is_flag=True, help="Print one JSON document.")
 def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stamped: bool, as_json: bool) -> int:
     """Judge designs and write a fabrication package for each one that is clear."""
-    judged, records, code = _judge_all(designs, quiet=as_json)
-    for path, one in judged:
-        record: dict[str, object] = {}
-        records.append(record)
-        try:
+    call = Call(designs, as_json=as_json)
+    judged: dict[int, Judged] = {}
+    for number, path in enumerate(designs):
+        with call.telling(number) as record:
+            one = judge_file(path, solve=True, say=_say)
+            record.update(report.judged_record(path, one))
+            _keep(path, one)
+            judged[number] = one
+    if call.has_twins({number: one.name for number, one in judged.items()}):
+        return call.end()
+    for number, one in judged.items():
+        with call.telling(number) as record:
             seen = draw_sheets(one)
-            record |= report.judged_record(path, seen)
+            record.update(report.judged_record(designs[number], seen))
+            call.judged(seen.clear)
             if not as_json:
                 report.print_judged(seen)
-            code = max(code, 0 if seen.clear else 1)
             if not seen.clear and not stamped:
                 _tell_kept(output / seen.name)
                 continue
@@ -39,44 +47,7 @@ def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stampe
             record["package"] = str(folder)
             if not as_json:
                 click.echo(str(folder))
-        except Exception as caught:  # noqa: BLE001 - told; the other designs are built all the same
-            error = report.expected(caught)
-            code = max(code, error.exit_code)
-            record |= report.error_record(path, error)
-            if not as_json:
-                report.tell(error)
-    if as_json:
-        report.print_json({"designs": records})
-    return code
-
-
-def _judge_all(
-    designs: tuple[Path, ...], *, quiet: bool
-) -> tuple[list[tuple[Path, Judged]], list[dict[str, object]], int]:
-    """Judge every design before the first is written; two of one name stop the whole call."""
-    judged: list[tuple[Path, Judged]] = []
-    records: list[dict[str, object]] = []
-    code = 0
-    owners: dict[str, Path] = {}
-    for path in designs:
-        try:
-            one = judge_file(path, solve=True, say=_say)
-            _keep(path, one)
-        except Exception as caught:  # noqa: BLE001 - told; the other designs are judged all the same
-            error = report.expected(caught)
-            code = max(code, error.exit_code)
-            records.append(report.error_record(path, error))
-            if not quiet:
-                report.tell(error)
-            continue
-        key = one.name.casefold()
-        if key in owners:
-            raise InputError(
-                f"{owners[key]} and {path} both are {one.name}", "give one of them another number or revision"
-            )
-        owners[key] = path
-        judged.append((path, one))
-    return judged, records, code
+    return call.end()
 
 
 def _keep(path: Path, judged: Judged) -> None:

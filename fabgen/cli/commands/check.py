@@ -5,7 +5,8 @@ from pathlib import Path
 import click
 
 from fabgen.cli import report
-from fabgen.errors import FabgenError, InputError
+from fabgen.cli.call import Call
+from fabgen.errors import InputError
 from fabgen.pipeline import check as judge_file
 
 DESIGNS = click.argument("designs", nargs=-1, required=True, type=click.Path(path_type=Path, readable=False))
@@ -21,24 +22,19 @@ def check(designs: tuple[Path, ...], show: bool, response: bool, as_json: bool) 
     """Judge one or more design files: read, correct, arrange, check. Nothing is written."""
     if show and (as_json or len(designs) > 1):
         raise InputError("--show prints one design as YAML", "name one design, without --json")
-    records, code = [], 0
-    for path in designs:
-        try:
+    call = Call(designs, as_json=as_json)
+    names: dict[int, str] = {}
+    for number, path in enumerate(designs):
+        with call.telling(number) as record:
             judged = judge_file(path, solve=response, say=lambda line: click.echo(line, err=True))
-        except FabgenError as error:
-            code = max(code, error.exit_code)
-            records.append(report.error_record(path, error))
-            if not as_json:
-                report.tell(error)
-            continue
-        code = max(code, 0 if judged.clear else 1)
-        records.append(report.judged_record(path, judged))
-        if show:
-            from fabgen.read.show import show as shown
+            names[number] = judged.name
+            call.judged(judged.clear)
+            record.update(report.judged_record(path, judged))
+            if show:
+                from fabgen.read.show import show as shown
 
-            click.echo(shown(judged.reading), nl=False)
-        elif not as_json:
-            report.print_judged(judged)
-    if as_json:
-        report.print_json({"designs": records})
-    return code
+                click.echo(shown(judged.reading), nl=False)
+            elif not as_json:
+                report.print_judged(judged)
+    call.has_twins(names)
+    return call.end()

@@ -1,5 +1,8 @@
 """`fabgen explain`: the page of a code."""
 
+import difflib
+import re
+
 import click
 
 from fabgen import registry
@@ -14,11 +17,12 @@ def explain(code: str | None) -> None:
         for known in registry.codes():
             click.echo(f"{known}  {registry.code_title(known)}")
         return
-    page = registry.code_page(code.upper())
+    written = code.upper()
+    if short := re.fullmatch("([A-Z])([0-9])", written):
+        written = f"{short[1]}0{short[2]}"
+    page = registry.code_page(written)
     if page is None:
-        import difflib
-
-        near = difflib.get_close_matches(code.upper(), registry.codes(), n=1, cutoff=0.5)
+        near = difflib.get_close_matches(written, registry.codes(), n=1)
         hint = f"did you mean {near[0]}?" if near else "`fabgen explain` lists all codes"
         raise InputError(f"there is no code {code}", hint)
-    click.echo(f"{code.upper()}  {page}", nl=False)
+    click.echo(f"{written}  {page}", nl=False)

@@ -5,9 +5,9 @@ from pathlib import Path
 
 import click
 
-from fabgen.cli.report import print_json
+from fabgen.cli.report import error_record, print_json
 from fabgen.design.as_built import AsBuilt, State
-from fabgen.errors import InputError
+from fabgen.errors import FabgenError, InputError
 from fabgen.pipeline import check as judge_file
 
 
@@ -20,6 +20,22 @@ def inspect(design: Path, measured: Path, as_json: bool) -> int:
 
     Ends with 0 when everything is within tolerance and limits, with 1 when not.
     """
+    try:
+        name, found = _inspected(design, measured)
+    except FabgenError as error:
+        if not as_json:
+            raise
+        print_json(error_record(design, error))
+        return error.exit_code
+    if as_json:
+        print_json({"name": name, "good": found.good, **asdict(found)})
+    else:
+        _print(name, found)
+    return 0 if found.good else 1
+
+
+def _inspected(design: Path, measured: Path) -> tuple[str, AsBuilt]:
+    """The design's name, and what was built against it."""
     from fabgen.check.response.as_built import as_built
     from fabgen.design.electrical_case import electrical_case, no_case
     from fabgen.read.measured_csv import read_measured
@@ -29,19 +45,14 @@ def inspect(design: Path, measured: Path, as_json: bool) -> int:
     unit = str(tree["units"]) if "units" in tree else None
     rows = read_measured(measured, judged.arranged, unit)
     if judged.response is None:
-        judged = judge_file(design, solve=True)
+        judged = judge_file(design, solve=True, say=lambda line: click.echo(line, err=True))
     case = electrical_case(judged.arranged)
     if case is None:
         raise InputError(f"{design}: {no_case(judged.arranged.design)}", "inspect needs an array that can be modelled")
     try:
-        found = as_built(case, judged.arranged, rows)
+        return judged.name, as_built(case, judged.arranged, rows)
     except ValueError as error:
         raise InputError(f"{measured}: the solver refuses this array: {error}", "check the stations") from error
-    if as_json:
-        print_json({"name": judged.name, "good": found.good, **asdict(found)})
-    else:
-        _print(judged.name, found)
-    return 0 if found.good else 1
 
 
 def _print(name: str, found: AsBuilt) -> None:

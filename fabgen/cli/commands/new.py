@@ -1,5 +1,6 @@
 """`fabgen new`: start a design file."""
 
+import errno
 from pathlib import Path
 
 import click
@@ -30,5 +31,8 @@ def new(name: str) -> None:
     except OSError as error:
         if made:
             path.unlink(missing_ok=True)
-        raise MachineError(f"cannot write {path}: {error.strerror}", "change to a folder with room for it") from error
+        if error.errno == errno.ENAMETOOLONG:
+            raise InputError("the name is too long for this disk", "choose a shorter one") from error
+        fix = "change to a folder that you may write to" if isinstance(error, PermissionError) else "free some space"
+        raise MachineError(f"cannot write {path}: {error.strerror}", fix) from error
     click.echo(str(path))
