@@ -10,6 +10,7 @@ from fabgen.correct.measured import measured
 from fabgen.correct.published import published, published_values
 from fabgen.design.design import AllowanceChoice, Design, Element, Mount
 from fabgen.design.ledger import Allowance, PublishedValue, Remark
+from fabgen.design.mount_geometry import beside_metal
 
 MIDDLE_SCREW = (
     "the screw through a rod's middle holds it and bonds nothing: the middle is at the boom's potential anyway, so the "
@@ -31,7 +32,7 @@ def allowance(design: Design, element: Element) -> Allowance:
         return _of_feed(design, element)
     if design.lengths_are == "as-cut":
         return Allowance(0.0, "none", source="lengths are as cut: nothing is added", needed=False)
-    if not _metal_beside(design, element.mount) and element.mount.allowance.origin in ("none", "auto"):
+    if not beside_metal(design, element.mount) and element.mount.allowance.origin in ("none", "auto"):
         return Allowance(0.0, "none", source="no metal boom", needed=False)
     found = _of_mount(design, element, element.mount)
     if element.mount.hold == "middle-screw" and found.needed:
@@ -48,12 +49,12 @@ def _of_feed(design: Design, element: Element) -> Allowance:
 
 def _of_mount(design: Design, element: Element, mount: Mount) -> Allowance:
     choice = mount.allowance
-    values = published_values(design, element, mount) if _metal_beside(design, mount) else ()
+    values = published_values(design, element, mount) if beside_metal(design, mount) else ()
     if choice.origin == "stated":
         return _stated(choice, values)
     if choice.origin == "published":
         return published(design, element, mount, values)
-    if choice.origin in ("measured", "auto", "computed") and _metal_beside(design, mount):
+    if choice.origin in ("measured", "auto", "computed") and beside_metal(design, mount):
         return _found_out(design, element, mount, values)
     if choice.origin in ("measured", "computed"):
         return Allowance(0.0, "none", source="no metal boom", needed=False)
@@ -72,12 +73,6 @@ def _found_out(design: Design, element: Element, mount: Mount, values: tuple[Pub
         return Allowance(0.0, "none", published=values, missing=True, remarks=remarks)
     found = computed(design, element, mount, values)
     return replace(found, remarks=found.remarks + remarks)
-
-
-def _metal_beside(design: Design, mount: Mount) -> bool:
-    """Whether a boom that conducts stands beside the rod."""
-    material = design.boom.material
-    return mount.style != "through-nonmetal" and (material.kind == "metal" or material.conductive)
 
 
 def _stated(choice: AllowanceChoice, values: tuple[PublishedValue, ...]) -> Allowance:

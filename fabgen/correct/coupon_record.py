@@ -10,7 +10,7 @@ from typing import Any
 
 from fabgen.correct.case import as_boom_mount
 from fabgen.design.design import Design, Element
-from fabgen.design.mount_geometry import mount_geometry
+from fabgen.design.mount_geometry import beside_metal, mount_geometry
 from fabgen.design.readings import Reading, ReadingSheet
 from fabgen.design.records import MountGeometry
 from fabgen.errors import FabgenError, InputError
@@ -71,16 +71,15 @@ def mounted_rods(design: Design, mount: str) -> tuple[tuple[Element, MountGeomet
     Raises:
         InputError: there is none.
     """
-    metal = design.boom.material.kind == "metal"
+    carried = [(element, element.mount) for element in design.elements if element.mount is not None]
+    named = [(element, drawn) for element, drawn in carried if drawn.name == mount]
     found = tuple(
-        (element, mount_geometry(design, element, element.mount))
-        for element in design.elements
-        if element.mount is not None and element.mount.name == mount and element.mount.style != "through-nonmetal"
+        (element, mount_geometry(design, element, drawn)) for element, drawn in named if beside_metal(design, drawn)
     )
-    if found and metal:
+    if found:
         return found
-    known = sorted({element.mount.name for element in design.elements if element.mount is not None})
-    what = f"no rod is carried by a mount {mount}" if not found else "nothing is to be measured on a boom of no metal"
+    known = sorted({drawn.name for _, drawn in carried})
+    what = f"no rod is carried by a mount {mount}" if not named else "nothing is to be measured on a boom of no metal"
     raise InputError(what, f"the mounts are {', '.join(known)}")
 
 

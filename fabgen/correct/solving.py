@@ -13,7 +13,7 @@ from fabgen.correct.case import as_boom_mount
 from fabgen.correct.computed import BEYOND_WL, NOT_SOLVED
 from fabgen.correct.rod_change import free_length_mm
 from fabgen.design.design import Design
-from fabgen.design.mount_geometry import mount_geometry
+from fabgen.design.mount_geometry import beside_metal, mount_geometry
 from fabgen.design.records import MountGeometry, SolvedRecord
 from fabgen.errors import InputError
 from fabgen.frozen import frozen
@@ -64,10 +64,9 @@ def solve_tasks(design: Design, mount: str = "") -> tuple[SolveTask, ...]:
         InputError: no rod has a mount of that name on metal.
     """
     groups: dict[tuple[str, MountGeometry], list[tuple[str, float]]] = {}
-    metal = design.boom.material.kind == "metal"
     for element in design.elements:
         drawn = element.mount
-        if drawn is not None and metal and drawn.style != "through-nonmetal" and mount in ("", drawn.name):
+        if drawn is not None and beside_metal(design, drawn) and mount in ("", drawn.name):
             key = (drawn.name, mount_geometry(design, element, drawn))
             groups.setdefault(key, []).append((element.id, free_length_mm(design, element)))
     if not groups:

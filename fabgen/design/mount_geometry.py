@@ -38,3 +38,9 @@ def film_insulated(element: Element, mount: Mount) -> bool:
     A weld burns it off and a screw's thread cuts it.
     """
     return mount.bond == "press" and element.rod.finish != "bare"
+
+
+def beside_metal(design: Design, mount: Mount) -> bool:
+    """Whether a boom that conducts stands beside the rods of a mount."""
+    material = design.boom.material
+    return mount.style != "through-nonmetal" and (material.kind == "metal" or material.conductive)

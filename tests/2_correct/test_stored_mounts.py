@@ -193,6 +193,22 @@ def test_a_raised_rod_on_wood_needs_nothing(variant: Variant) -> None:
     assert not allowance(design).needed
 
 
+def test_a_boom_that_conducts_is_metal_to_every_stage(variant: Variant) -> None:
+    """A carbon tube below raised rods takes length as metal does: computed, solved and measured alike."""
+    from fabgen.correct.coupon_record import mounted_rods
+    from fabgen.correct.metal_mounts import metal_mounts
+    from fabgen.correct.solving import solve_tasks
+
+    carbon = "material: {name: carbon tube, kind: grp, density: 1600, conductive: true}"
+    raised = (
+        "style: insulated-through\n    hole: 8 mm\n    bush: {kind: shoulder, material: ASA}\n",
+        "style: on-top\n",
+    )
+    design = variant(("material: EN AW-6060 T66\n  overhang", f"{carbon}\n  overhang"), raised, AUTO)
+    assert allowance(design).origin == "computed"
+    assert len(solve_tasks(design)[0].elements) == len(mounted_rods(design, "line")) == len(metal_mounts(design)) == 11
+
+
 def written(design: Design) -> dict[str, object]:
     record = solved(design)
     return {
