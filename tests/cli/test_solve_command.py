@@ -13,6 +13,7 @@ from fabgen.cli.main import main
 from fabgen.physics import boom_solver
 from fabgen.physics.boom_closed_form import relative_allowance
 from fabgen.physics.boom_coupon import reactance_factor_from_allowance
+from fabgen.physics.boom_mount import BoomMount, Section, Style
 from fabgen.pipeline import check
 
 Ran = Callable[..., tuple[int, str, str]]
@@ -78,6 +79,10 @@ def test_solve_once_then_use_it(folder: Path, ran: Ran, quick: list[float]) -> N
     assert parts == sorted(parts)
     record = yaml.safe_load((folder / "records/gauge/solved-line.yaml").read_text(encoding="utf-8"))
     assert [rod["modelled_mm"] for rod in record["rods"]] == quick
+    mount = BoomMount(Style.INSULATED_THROUGH, Section.SQUARE, 20.0, 4.0, wall_mm=1.5, hole_mm=8.0)
+    expected_mm = [1.1 * relative_allowance(mount, length_mm, 434.0) * 20.0 for length_mm in quick]
+    assert [rod["allowance_mm"] for rod in record["rods"]] == pytest.approx(expected_mm, abs=1e-5)
+    assert record["finer_mesh"]["allowance_mm"] == pytest.approx(1.002 * expected_mm[1], abs=1e-5)
     assert record["mesh_difference_relative"] == 0.002
     before = (folder / "records/gauge/solved-line.yaml").read_bytes()
     code, out, _ = ran("solve", "gauge.yaml", "--mount", "line")
