@@ -13,7 +13,7 @@ from fabgen.check.rules.other_rod import findings as other_rod
 from fabgen.correct.ledger import correct
 from fabgen.design.allotted import with_tolerances
 from fabgen.design.arranged import Arranged
-from fabgen.design.electrical_case import ElectricalCase, electrical_case
+from fabgen.design.electrical_case import METHOD, ElectricalCase, electrical_case
 from fabgen.design.findings import Finding
 from fabgen.design.limits import Limits
 from fabgen.design.response import STORED_NAME, Response
@@ -23,6 +23,8 @@ from fabgen.read.records import records_folder
 from fabgen.read.stored_response import stored_response
 
 BAND = (430.0, 438.0)
+SET = {"rounding_mm": (0.2,) * 12, "allowance_u_mm": (0.5,) * 12, "common_u_mm": (0.1,) * 12}
+"""What other stages may come to say otherwise about the demo design, held still."""
 
 
 def arranged_with(root: Path, limits: Limits, stem: str = "river-gauge-434") -> Arranged:
@@ -141,6 +143,26 @@ def test_a_stored_response_answers_without_the_solver(sound: Arranged, monkeypat
     for solve in (False, True):
         assert rules.electrical(sound, case, found_anew[0], solve=solve, say=said.append) == found_anew
     assert len(said) == 1
+
+
+def test_a_computation_that_changes_changes_its_name(sound: Arranged) -> None:
+    """A stored response answers as long as the name stays: where these figures move, METHOD must change with them."""
+    response = respond(case_with(sound, **SET))
+    assert response.allotment is not None
+    assert response.common is not None
+    outcomes = (response.modelled, response.drawn, response.spread.at_95, response.common.twice)
+    figures = [[f"{getattr(each, field.name):.3g}" for field in fields(each)] for each in outcomes]
+    tolerances_mm = [(row.length_mm, row.station_mm) for row in response.allotment.rows]
+    assert (METHOD, figures, tolerances_mm[:3]) == (
+        "thin-rod array, response 5",
+        [
+            ["0", "0", "22.5", "1.26"],
+            ["-208", "0.0083", "22.1", "1.26"],
+            ["393", "0.0197", "21.7", "1.3"],
+            ["1.05e+03", "0.05", "20.6", "1.28"],
+        ],
+        [(0.5, 1.0), (0.5, 1.0), (0.2, 0.5)],
+    )
 
 
 def test_a_rod_that_no_length_makes_good(root: Path, variant: Any) -> None:
