@@ -76,19 +76,20 @@ class ShiftGauge:
         log_f = np.log(self.frequency_mhz)
         trials = np.linspace(-REACH, REACH, 41)
         at_trial = self.spline(log_f - trials[:, None])
-        cost = np.array([np.mean((found - design) ** 2, axis=(1, 2)) for design in at_trial])
+        weight = _weights(log_f.size)
+        cost = np.array([((found - design) ** 2).sum(axis=2) @ weight for design in at_trial])
         delta = trials[np.argmin(cost, axis=0)]
         slope = self.spline.derivative()
         for _ in range(12):
             place = log_f - delta[:, None]
             miss = found - self.spline(place)
             rate = -slope(place)
-            step = np.sum(rate * miss, axis=(1, 2)) / np.sum(rate * rate, axis=(1, 2))
+            step = ((rate * miss).sum(axis=2) @ weight) / ((rate * rate).sum(axis=2) @ weight)
             delta = np.clip(delta + step, -REACH, REACH)
             if np.max(np.abs(step)) < 1e-12:
                 break
         miss = found - self.spline(log_f - delta[:, None])
-        square = np.mean(miss**2, axis=1)
+        square = np.einsum("bfq,f->bq", miss**2, weight)
         return Shift(
             shift_khz=1e3 * self.centre_mhz * np.expm1(delta),
             residual=np.sqrt(square.sum(axis=1)),
@@ -109,8 +110,9 @@ class ShiftGauge:
         """
         change = _in_units(np.atleast_2d(gain_db_per_mm), np.atleast_2d(back_front_per_mm))
         rate = -self.spline.derivative()(np.log(self.frequency_mhz))
-        delta = np.sum(rate * change, axis=(1, 2)) / np.sum(rate * rate)
-        square = np.mean((change - delta[:, None, None] * rate) ** 2, axis=1)
+        weight = _weights(self.frequency_mhz.size)
+        delta = ((rate * change).sum(axis=2) @ weight) / ((rate * rate).sum(axis=1) @ weight)
+        square = np.einsum("bfq,f->bq", (change - delta[:, None, None] * rate) ** 2, weight)
         return Shift(
             shift_khz=1e3 * self.centre_mhz * delta,
             residual=np.sqrt(square.sum(axis=1)),
@@ -118,6 +120,13 @@ class ShiftGauge:
             residual_back_front=BACK_FRONT_UNIT * np.sqrt(square[:, 1] + square[:, 2]),
             at_limit=np.zeros(delta.shape, dtype=np.bool_),
         )
+
+
+def _weights(points: int) -> FloatArray:
+    """Weights of a mean over evenly spaced frequencies, both ends counted half: more points give the same mean."""
+    weight = np.full(points, 1 / (points - 1))
+    weight[[0, -1]] /= 2
+    return weight
 
 
 def _in_units(gain_db: FloatArray, back_front: ComplexArray) -> FloatArray:

@@ -157,3 +157,14 @@ def test_a_folded_rod_has_four_times_the_impedance(case: ElectricalCase) -> None
     diameters_mm[case.fed] = (2 * 4 * 24) ** 0.5
     plain = solve_band(replace(modelled_array(case), diameter_mm=tuple(diameters_mm)), [434.0])
     assert complex(at.r_ohm, at.x_ohm) == pytest.approx(4 * complex(plain.feed_impedance_ohm[0]), abs=1e-3)
+
+
+def test_a_wide_band_is_judged_at_more_frequencies(case: ElectricalCase) -> None:
+    """The loss at the worst frequency of 415 to 455 MHz, between whose ends 13 frequencies leave gaps of 4 MHz."""
+    wide = replace(case, limits=Limits((415.0, 455.0), 400.0))
+    measure = gauge(wide)
+    assert np.diff(np.log(measure.shift.frequency_mhz)).max() <= 0.0045
+    build = replace(drawn_array(wide), length_mm=tuple(length + 0.5 for length in drawn_array(wide).length_mm))
+    fine_mhz = np.linspace(415.0, 455.0, 201)
+    lost_db = solve_band(modelled_array(wide), fine_mhz).gain_dbi - solve_band(build, fine_mhz).gain_dbi
+    assert measure.outcome(build).gain_loss_db == pytest.approx(lost_db.max(), abs=0.02)

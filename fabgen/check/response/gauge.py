@@ -1,5 +1,7 @@
 """What limits are held against: shift, gain lost, front-to-back ratio and mismatch of many builds at once."""
 
+import math
+
 import numpy as np
 from numpy.typing import NDArray
 
@@ -10,12 +12,13 @@ from fabgen.design.response import SHARE_INSIDE, Outcome
 from fabgen.frozen import frozen
 from fabgen.physics.array import RodArray, mismatch, solve_band
 from fabgen.physics.array_sampling import BuildChanges, sample_band
-from fabgen.physics.array_shift import ShiftGauge, shift_gauge
+from fabgen.physics.array_shift import HALF_BAND, ShiftGauge, shift_gauge
 from fabgen.physics.thin_rod_kernel import ComplexArray, FloatArray
 
-POINTS = 13
-"""Frequencies of the shift measure; its sums over a smooth response need no more."""
-
+FEWEST_POINTS = 13
+LARGEST_STEP = 0.0045
+"""Between frequencies of the shift measure and the band, as a fraction: half of it moves the shifts of 12 and 17 rods
+by less than 3 %, losses in the band by less than 0.002 dB."""
 
 HIGHEST_MISMATCH = 999.0
 NO_GAIN_DBI = -99.0
@@ -150,7 +153,9 @@ def gauge(case: ElectricalCase) -> Gauge:
     """The gauge of a case: its modelled array over its band."""
     array = modelled_array(case)
     low_mhz, high_mhz = case.band_mhz
-    shift = shift_gauge(array, case.frequency_mhz, low_mhz=low_mhz, high_mhz=high_mhz, points=POINTS)
+    whole = math.log(high_mhz / low_mhz) + 2 * HALF_BAND
+    points = max(FEWEST_POINTS, 1 + math.ceil(whole / LARGEST_STEP))
+    shift = shift_gauge(array, case.frequency_mhz, low_mhz=low_mhz, high_mhz=high_mhz, points=points)
     marks = sorted({low_mhz, case.frequency_mhz, high_mhz})
     frequency_mhz = np.concatenate([shift.frequency_mhz, marks])
     return Gauge(
