@@ -2,7 +2,6 @@
 
 import math
 import tempfile
-from collections.abc import Callable
 from dataclasses import replace
 from pathlib import Path
 
@@ -15,7 +14,7 @@ from fabgen.design.arranged import Arranged, Box, Shape
 from fabgen.design.coupon import CouponPlan, Expected
 from fabgen.design.coupon_holder_sizes import least_height_mm
 from fabgen.design.design import AllowanceChoice, Design, Element
-from fabgen.design.package import PackageFile
+from fabgen.design.package import PackageFile, Say
 from fabgen.design.readings import Setup
 from fabgen.design.records import MountGeometry
 from fabgen.errors import InputError
@@ -24,7 +23,6 @@ from fabgen.physics.boom_differences import nearest_closed_form_mm
 from fabgen.pipeline import Judged, check
 from fabgen.stock.tables import material_names
 
-Say = Callable[[str], None]
 THINNEST_DRIVEN_MM = 4.0
 """A driven rod must take a terminal screw."""
 

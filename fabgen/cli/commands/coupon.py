@@ -20,7 +20,7 @@ def coupon(design: Path, mount: str, output: Path) -> int:
     from fabgen.read.reader import read_design
 
     read = read_design(design).design
-    plan, files = coupon_files(read, mount, lambda line: click.echo(line, err=True))
+    plan, files = coupon_files(read, mount, _say)
     manifest = package.manifest(
         files,
         number=read.number,
@@ -29,7 +29,7 @@ def coupon(design: Path, mount: str, output: Path) -> int:
         verdict="clear",
         versions=versions(),
     )
-    folder = package.write([*files, manifest], output=output, name=f"{read.name}_coupon-{mount}")
+    folder = package.write([*files, manifest], output=output, name=f"{read.name}_coupon-{mount}", say=_say)
     click.echo(f"mount {mount}: expected allowance {plan.allowance_mm:.2f} mm (theory, unmeasured)")
     for rod_mm in other_rods_mm(read, mount):
         click.echo(
@@ -37,3 +37,7 @@ def coupon(design: Path, mount: str, output: Path) -> int:
         )
     click.echo(str(folder))
     return 0
+
+
+def _say(line: str) -> None:
+    click.echo(line, err=True)
