@@ -110,6 +110,7 @@ def test_readings_without_noise_are_not_refused_for_it(plan: CouponArray, kind: 
     fit = fit_trim_series(channels_of(sheet))
     assert fit.allowance_mm == pytest.approx(4.7, abs=2 * fit.u_mm)
     assert fit.u_mm < 0.12
+    assert fit.u_mm == pytest.approx(math.hypot(fit.readings_u_mm, 0.05, 0.05), rel=0.01)  # rod and station by hand
 
 
 def test_the_readings_alone_explain_their_part_of_u(plan: CouponArray) -> None:

@@ -16,6 +16,8 @@ from fabgen.design.design import Design
 from fabgen.design.ledger import Allowance, Ledger, LedgerLine, Remark
 from fabgen.export.tables import lengths_csv
 from fabgen.physics import published_boom
+from fabgen.physics.boom_closed_form import closed_form_allowance
+from fabgen.physics.boom_mount import BoomMount, Section, Style
 from fabgen.read.reader import read_design
 
 Variant = Callable[..., Design]
@@ -170,6 +172,27 @@ def test_a_computed_value_depends_on_the_rods_own_length(variant: Variant) -> No
     assert ledger.line("R").allowance.value_mm > ledger.line("D1").allowance.value_mm
     assert ledger.line("D1").allowance.value_mm > ledger.line("D7").allowance.value_mm
     assert "theory, unmeasured" in ledger.line("D1").allowance.source
+
+
+@pytest.mark.parametrize(("material", "permittivity"), [("ASA", 2.7), ("PTFE", 2.05)])
+def test_the_bush_enters_with_its_own_permittivity_and_length(
+    variant: Variant, material: str, permittivity: float
+) -> None:
+    """Dielectric values: Riddle, Baker-Jarvis, Krupka, IEEE Trans. MTT 51 (2003) 727, secondary source."""
+    design = variant(("kind: shoulder, material: ASA", f"kind: shoulder, material: {material}"))
+    mount = BoomMount(
+        Style.INSULATED_THROUGH,
+        Section.SQUARE,
+        20.0,
+        4.0,
+        wall_mm=1.5,
+        hole_mm=8.0,
+        bush_permittivity=permittivity,
+        bush_length_mm=2.5,
+    )
+    expected = closed_form_allowance(mount, 311.3, 434.0)
+    assert expected.bush_term_mm < -0.01
+    assert line(design, "D1").allowance.value_mm == pytest.approx(expected.allowance_mm, rel=1e-9)
 
 
 def test_only_interior_rods_share_a_part_of_u_and_each_end_counts_from_its_own_side(variant: Variant) -> None:
