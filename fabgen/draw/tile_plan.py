@@ -24,7 +24,7 @@ TARGET_MM = 2.0
 _REACH_MM = TARGET_MM + 1.0
 _LEAST_SHARE = 1 / 3
 """Of a page's room, for what a page shows before the next begins."""
-_AIR_MM = 0.5
+_AIR_MM, _EDGE_MM = 0.5, 1.0
 _BESIDE_MM = 1.5
 """Lettering no farther than this from a hole's edge belongs to the hole."""
 _CROSSED = 0.05
@@ -40,7 +40,7 @@ class Plan:
         margin_mm: edge of the paper that stays empty.
         joins_x_mm, joins_y_mm: places of the joins on the sheet.
         columns_mm, rows_mm: from where to where each column and row of pages shows the sheet; rows from below.
-        lost: how many items that should stay whole are on no page whole.
+        lost: weight of what should stay whole and is on no page whole: 3 for a hole, 1 for lettering by itself.
     """
 
     paper_mm: tuple[float, float]
@@ -76,7 +76,7 @@ class _Way(NamedTuple):
     """Pages up to some place; the smaller is the better.
 
     Attributes:
-        cost: pages, and the weight of what is lost.
+        cost: two for every page, and the weight of what is lost.
         pages: how many.
         uneven: sum of the squares of their share of the room, and what crossed lettering costs.
         joins_mm: between them.
@@ -93,7 +93,7 @@ class _Way(NamedTuple):
         """One page more, up to a join or to the end."""
         uneven = self.uneven + round((width_mm / room_mm) ** 2, 9) + _CROSSED * crossed
         joins = self.joins_mm if join_mm is None else (*self.joins_mm, join_mm)
-        return _Way(self.cost + 1 + lost, self.pages + 1, uneven, joins)
+        return _Way(self.cost + 2 + lost, self.pages + 1, uneven, joins)
 
 
 _NO_WAY = _Way(math.inf, math.inf, math.inf, ())
@@ -112,30 +112,48 @@ def plan_pages(sheet: Sheet, paper_mm: tuple[float, float], overlap_mm: float, m
     left, bottom, right, top = empty.room
     whole = list(_whole(sheet))
     along = [_span(box[0], box[2], sheet.width_mm, weight) for box, weight in whole]
-    across = [_span(box[1], box[3], sheet.height_mm, weight) for box, weight in whole]
+    low, high = _reach_across(sheet)
+    across = [_span(box[1] - low, box[3] - low, high - low, weight) for box, weight in whole]
     station_mm = sheet.station_at_x0_mm or 0.0
     joins_x, lost_x = _joins(sheet.width_mm, right - left, overlap_mm, station_mm, STATION_STEP_MM, along)
-    joins_y, lost_y = _joins(sheet.height_mm, top - bottom, overlap_mm, 0.0, 1.0, across)
+    joins_y, lost_y = _joins(high - low, top - bottom, overlap_mm, low, 1.0, across)
     columns = _spans(joins_x, sheet.width_mm, right - left, overlap_mm, along)
-    rows = _spans(joins_y, sheet.height_mm, top - bottom, overlap_mm, across)
+    rows = _spans(joins_y, high - low, top - bottom, overlap_mm, across)
     return replace(
-        empty, joins_x_mm=joins_x, joins_y_mm=joins_y, columns_mm=columns, rows_mm=rows, lost=lost_x + lost_y
+        empty,
+        joins_x_mm=joins_x,
+        joins_y_mm=tuple(low + join for join in joins_y),
+        columns_mm=columns,
+        rows_mm=tuple((low + first, low + last) for first, last in rows),
+        lost=lost_x + lost_y,
     )
+
+
+def _reach_across(sheet: Sheet) -> tuple[float, float]:
+    """From where to where pages must show the sheet across: pages have bars of their own in place of the sheet's."""
+    boxes = [bounds(item) for item in sheet.items if is_tiled(item)]
+    low, high = min(box[1] for box in boxes), max(box[3] for box in boxes)
+    return max(0.0, low - _EDGE_MM), min(sheet.height_mm, high + _EDGE_MM)
+
+
+def is_tiled(item: Item) -> bool:
+    """Whether pages show an item of the sheet: its bars and its stamp they have of their own."""
+    return item.layer not in ("stamp", "scale")
 
 
 def stays_whole(item: Item) -> bool:
     """Whether joins look for a place where no page cuts this item: lettering and holes."""
-    return item.layer != "stamp" and (isinstance(item, Text) or (item.layer == "drill" and not isinstance(item, Line)))
+    return is_tiled(item) and (isinstance(item, Text) or (item.layer == "drill" and not isinstance(item, Line)))
 
 
 def _whole(sheet: Sheet) -> Iterator[tuple[Box, int]]:
     """What should be whole on some page: lettering together with the hole that it stands beside, and holes.
 
-    Each with its weight: lettering that stands by itself counts half.
+    Each with its weight, a page being 2: a hole and its lettering are worth more than a page, lettering alone less.
     """
     items = [item for item in sheet.items if stays_whole(item)]
     holes = sorted(bounds(item) for item in items if item.layer == "drill")
-    yield from ((box, 2) for box in holes)
+    yield from ((box, 3) for box in holes)
     starts, widest_mm = [hole[0] for hole in holes], max((hole[2] - hole[0] for hole in holes), default=0.0)
     for item in items:
         if isinstance(item, Text):
@@ -144,7 +162,7 @@ def _whole(sheet: Sheet) -> Iterator[tuple[Box, int]]:
             last = bisect_left(starts, box[2] + _BESIDE_MM)
             beside = [hole for hole in holes[first:last] if _is_beside(box, hole)][:1]
             corners = tuple(corner for low in (box, *beside) for corner in (low[:2], low[2:]))
-            yield box_of(corners), 1 + len(beside)
+            yield box_of(corners), 1 + 2 * len(beside)
 
 
 def _is_beside(box: Box, hole: Box) -> bool:
@@ -162,9 +180,10 @@ def _joins(
 ) -> tuple[tuple[float, ...], int]:
     """Places of the joins along one axis, each at a multiple of the step counted from the origin's value at 0.
 
-    Of all ways to cut the sheet the one with the fewest pages, an item that is on no page whole counted like a page
-    more; of those the one with the most equal pages, whose joins keep off lettering and holes. Returns the joins and
-    how many items are lost: those that start before the next page and end beyond this one.
+    Of all ways to cut the sheet the one with the fewest pages, where a hole or its lettering that is on no page whole
+    counts like one page and a half, other lettering like half a page; of those the one with the most equal pages, whose
+    joins keep off lettering and holes. Returns the joins and the weight of what is lost: what starts before the next
+    page and ends beyond this one.
     """
     half_mm = overlap_mm / 2
     steps = range(math.ceil((origin_mm + overlap_mm) / step_mm), math.ceil((origin_mm + length_mm) / step_mm))
@@ -186,7 +205,7 @@ def _joins(
                 longer = way.page(advance_mm + overlap_mm, room_mm, join, lost, is_crossed)
                 ways[join - half_mm] = min(longer, ways.get(join - half_mm, _NO_WAY))
     best = ways[length_mm]
-    return best.joins_mm, round(best.cost - best.pages)
+    return best.joins_mm, round(best.cost - 2 * best.pages)
 
 
 def _near_any(joins_mm: Sequence[float], whole: Sequence[_Span]) -> list[bool]:

@@ -13,7 +13,7 @@ from fabgen.design.overlaps import bounds, hits
 from fabgen.design.pen import LETTERING_MM, Pen
 from fabgen.draw.clipping import clipped, contains
 from fabgen.draw.stamp import stamped
-from fabgen.draw.tile_plan import STATION_STEP_MM, TARGET_MM, Plan, near, plan_pages, stays_whole
+from fabgen.draw.tile_plan import STATION_STEP_MM, TARGET_MM, Plan, is_tiled, near, plan_pages, stays_whole
 from fabgen.frozen import frozen
 
 _LABEL_STEP = 5
@@ -68,7 +68,7 @@ def tile(
         plans, key=lambda p: (len(p.columns_mm) * len(p.rows_mm), p.lost, (p.paper_mm[0] > p.paper_mm[1]) == tall)
     )
     windows = [(x0, y0, x1, y1) for y0, y1 in reversed(plan.rows_mm) for x0, x1 in plan.columns_mm]
-    items = [item for item in sheet.items if item.layer not in ("stamp", "scale")]
+    items = [item for item in sheet.items if is_tiled(item)]
     texts, dropped = _placed_texts(items, windows)
     shapes = [item for item in items if not isinstance(item, Text)] + _join_marks(plan, items)
     pages = []

@@ -340,6 +340,21 @@ def test_lettering_that_fits_nowhere_is_reported_and_not_cut():
     assert not any(item.text == title.text for page in tiling.pages for item in page.items if isinstance(item, Text))
 
 
+def test_pages_spend_no_room_on_the_sheet_s_own_bars_and_empty_edges():
+    pen = Pen()
+    pen.rectangle("outline", 20, 12, 500, 172)
+    pen.bar_100(20, 6, label="100 mm along")
+    sheet = pen.sheet("s", "s", 520, 180, -20.0)
+    tiling = cut(sheet)
+    assert (tiling.rows, tiling.columns) == (1, 2)
+    for page in tiling.pages:
+        assert page.width_mm == 297
+        assert bars(page) == [(0, 100), (100, 0)]
+        [frame] = [item for item in page.on("frame") if isinstance(item, Polyline) and item.closed]
+        box = bounds(frame)
+        assert box[3] - box[1] == pytest.approx(162)
+
+
 def test_without_stations_pages_carry_none():
     sheet = Sheet("plate", "plate", 400, 100, (Line("outline", 0, 50, 400, 50),))
     for page in cut(sheet).pages:
