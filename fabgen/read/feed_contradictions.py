@@ -34,8 +34,9 @@ def check_feed(keys: FileKeys, rows: list[Row], tree: Map, problems: Problems) -
         rod = resolve_rod(row, keys.rods, feed)
         rod_mm = rod.diameter_mm if rod is not None else 0.0
         if feed.height_mm is not None and feed.height_mm < rod_mm / 2:
+            fix = f"more than {rod_mm / 2:g} mm, or leave it out"
             message = f"height: at {feed.height_mm:g} mm the {rod_mm:g} mm rod {row.id} sinks into the boom"
-            problems.add("D19", message, value_place(tree, "feed", "height"), "for example 18 mm")
+            problems.add("D19", message, value_place(tree, "feed", "height"), fix)
         if feed.spacing_mm is not None and feed.spacing_mm <= rod_mm:
             message = f"spacing: two limbs of {rod_mm:g} mm do not fit into {feed.spacing_mm:g} mm centre to centre"
             problems.add("D19", message, value_place(tree, "feed", "spacing"), "for example 30 mm")

@@ -37,6 +37,9 @@ LESSER_GRIPS_MM = (0.25, 0.2, 0.15, 0.1)
 THINNEST_RING_MM = 2.4
 """What a split ring is wider than its rod by: a wall of three printed lines each side; common practice."""
 
+SADDLE_OVER_ROD_MM = 8
+"""From the boom's top to the lowest line of a rod above it; common practice."""
+
 PRINTED = "ASA"
 """What small outdoor parts are printed in by default: it keeps its strength in sunlight (common practice)."""
 
@@ -237,9 +240,10 @@ def _limit_percent() -> float:
 
 def _saddle(path: str, keys: SaddleKeys, rod_mm: float, reasons: Reasons) -> Saddle:
     clearance = tables.print_practice("saddle_bore_clearance_mm")
-    height_mm = max(12.0, _tidy(rod_mm / 2 + 8))
+    height_mm = max(12.0, _tidy(rod_mm / 2 + SADDLE_OVER_ROD_MM))
+    why = f"computed, rod/2 + {SADDLE_OVER_ROD_MM:g} mm, at least 12 mm"
     return Saddle(
-        height_mm=reasons.pick(f"{path}.height", keys.height_mm, height_mm, "computed, rod/2 + 8 mm, at least 12 mm"),
+        height_mm=reasons.pick(f"{path}.height", keys.height_mm, height_mm, why),
         bore_mm=reasons.pick(
             f"{path}.bore", keys.bore_mm, _tidy(rod_mm + clearance), f"computed, rod + {clearance:g} mm"
         ),

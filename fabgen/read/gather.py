@@ -96,7 +96,7 @@ def _report(
     if kind == "extra_forbidden":
         known = aliases(_model_at(model, loc[:-1]) or FileKeys)
         place = key.place if key is not None else node.place
-        home = _homes(name)
+        home = _homes(name) if len(loc) == 1 else []
         fix = f"it belongs in {' or '.join(home)}" if 0 < len(home) <= 2 else suggestion(name, known)
         problems.add("D06", f"`{name}` is not a key here", place, fix)
     elif kind == "fabgen":

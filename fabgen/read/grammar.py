@@ -28,8 +28,8 @@ _NUMBER = Name(
     "[A-Za-z0-9][A-Za-z0-9._-]{0,39}", "a letter or digit, then at most 39 of A-Z a-z 0-9 . _ -", "RGL-434-06"
 )
 _ROD = Length(0.1, 60, "4 mm", (1, 26))
-_BORE = Length(0.1, 80, "4.2 mm", (1, 40))
-_HOLE = Length(0.3, 120, "8 mm", (1, 60))
+_BORE = Length(0.05, 80, "4.2 mm", (1, 40))
+_HOLE = Length(0.2, 120, "8 mm", (1, 60))
 _WALL = Length(0.2, 30, "1.5 mm", (0.5, 8))
 _SMALL = Length(0.1, 200, "3 mm")
 _HEIGHT = Length(1, 500, "18 mm", (2, 150))
@@ -95,7 +95,7 @@ class BushKeys(Keys):
     material: Annotated[Material | None, MaterialValue("ASA")] = None
     bore_mm: Annotated[float | None, _BORE] = Field(default=None, alias="bore")
     spigot_mm: Annotated[float | None, _HOLE] = Field(default=None, alias="spigot")
-    spigot_length_mm: Annotated[float | None, _SMALL] = Field(default=None, alias="spigot_length")
+    spigot_length_mm: Annotated[float | None, Length(0.1, 300, "3 mm")] = Field(default=None, alias="spigot_length")
     flange_mm: Annotated[float | None, _HOLE] = Field(default=None, alias="flange")
     flange_height_mm: Annotated[float | None, _SMALL] = Field(default=None, alias="flange_height")
 

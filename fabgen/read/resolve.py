@@ -16,7 +16,7 @@ from fabgen.design.design import (
     Shop,
 )
 from fabgen.read.compound import table_material
-from fabgen.read.fits import allowance_choice, mount_for_rod, printed_material
+from fabgen.read.fits import SADDLE_OVER_ROD_MM, allowance_choice, mount_for_rod, printed_material
 from fabgen.read.grammar import (
     BoomKeys,
     ClampKeys,
@@ -36,6 +36,8 @@ from fabgen.stock.tables import ToleranceClass
 AS_CUT = "lengths_are: as-cut, nothing is added"
 MATCH = "the match sets the driven rod's length"
 CLAMP_MATERIAL = "EN AW-6061 T6"
+FEED_HEIGHT_MM = 18.0
+"""From the boom's top to the axis of a driven rod; common practice."""
 
 
 def resolve(keys: FileKeys, stem: str, sha256: str, reasons: Reasons) -> Design:
@@ -70,7 +72,7 @@ def resolve(keys: FileKeys, stem: str, sha256: str, reasons: Reasons) -> Design:
         boom=boom,
         elements=_elements(keys, rows, boom, shop, reasons),
         lengths_are=pick("lengths_are", keys.lengths_are, "free-space", "default"),
-        feeds=_feeds(keys.feed, rows, as_cut, reasons),
+        feeds=_feeds(keys.feed, keys.rods, rows, as_cut, reasons),
         clamp=_clamp(keys.clamp, reasons) if keys.clamp is not None else None,
         tip_clearance_mm=pick("clearance.tip", keys.clearance.tip_mm if keys.clearance else None, 25.0),
         shop=shop,
@@ -146,11 +148,15 @@ def _elements(keys: FileKeys, rows: list[ElementKeys], boom: Boom, shop: Shop, r
     return tuple(sorted(elements, key=lambda element: element.station_mm))
 
 
-def _feeds(keys: FeedKeys | None, rows: list[ElementKeys], as_cut: bool, reasons: Reasons) -> tuple[Feed, ...]:
+def _feeds(
+    keys: FeedKeys | None, rods: RodKeys | None, rows: list[ElementKeys], as_cut: bool, reasons: Reasons
+) -> tuple[Feed, ...]:
     driven = [row for row in rows if row.role == "driven"]
     if keys is None or not driven:
         return ()
     first = min(driven, key=lambda row: row.at_mm)
+    rod = resolve_rod(first, rods, keys)
+    assert rod is not None
     pick = reasons.pick
     allowance = allowance_choice("feed.allowance", keys.allowance, "none", MATCH, reasons)
     if as_cut:
@@ -161,7 +167,7 @@ def _feeds(keys: FeedKeys | None, rows: list[ElementKeys], as_cut: bool, reasons
             kind=keys.kind,
             element=first.id,
             gap_mm=pick("feed.gap", keys.gap_mm, 10.0),
-            height_mm=pick("feed.height", keys.height_mm, 18.0),
+            height_mm=_feed_height_mm(keys, rod.diameter_mm, reasons),
             cable_mm=pick("feed.cable", keys.cable_mm, 5.0),
             spacing_mm=keys.spacing_mm or 0.0,
             material=printed_material("feed.material", keys.material, reasons),
@@ -169,6 +175,14 @@ def _feeds(keys: FeedKeys | None, rows: list[ElementKeys], as_cut: bool, reasons
             reference_ohm=pick("feed.reference", keys.reference_ohm, 50.0),
         ),
     )
+
+
+def _feed_height_mm(keys: FeedKeys, rod_mm: float, reasons: Reasons) -> float:
+    """Stated, else the usual one, or more where a thick rod would not clear the boom as a saddle clears it."""
+    clear_mm = rod_mm / 2 + SADDLE_OVER_ROD_MM
+    if clear_mm > FEED_HEIGHT_MM:
+        return reasons.pick("feed.height", keys.height_mm, clear_mm, f"computed, rod/2 + {SADDLE_OVER_ROD_MM:g} mm")
+    return reasons.pick("feed.height", keys.height_mm, FEED_HEIGHT_MM)
 
 
 def _clamp(keys: ClampKeys, reasons: Reasons) -> Clamp:

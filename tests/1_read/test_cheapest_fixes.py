@@ -15,6 +15,8 @@ FIXES = [
     ("role: driven", "role: Driven", "did you mean `driven`? Known here: reflector, driven, director"),
     ("units: mm", "units: mm\nwall: 1.5", "it belongs in boom"),
     ("units: mm", "units: mm\nmast: 38", "it belongs in clamp"),
+    ("hole: 8}", "hole: 8, bush: {outside: 8}}", "known here: kind, material, bore"),
+    ("kind: straight-dipole", "kind: straight-dipole, height: 1", "more than 2 mm, or leave it out"),
     ("material: EN AW-6060 T66, over", "material: EN AW 6060 T66, over", "did you mean `EN AW-6060 T66`?"),
     ("hole: 8}", "hole: 8}\n  top: {style: on-top}", "one of line, top"),
     ("clamp:", "rod: {diameter: 4}\nclamp:", "it belongs in feed"),

@@ -206,3 +206,24 @@ def test_a_shown_word_is_the_same_text(text: str) -> None:
     inner = parse(source, Problems("d.yaml"))["a"]
     assert isinstance(inner, dict)
     assert inner["b"] == text
+
+
+def read(folder: Path, text: str) -> Reading:
+    path = folder / "d.yaml"
+    path.write_text(text, encoding="utf-8")
+    return read_design(path)
+
+
+@pytest.mark.parametrize("keeper", ["push-ring", "snap"])
+@pytest.mark.parametrize(("rod", "boom"), [("0.1", "20, wall: 1.5"), ("39.4", "80, wall: 2"), ("8", "600")])
+def test_defaults_of_extreme_sizes_are_allowed_values(tmp_path: Path, rod: str, boom: str, keeper: str) -> None:
+    text = starter("trial").replace("diameter: 4", f"diameter: {rod}").replace("20, wall: 1.5", boom)
+    text = text.replace("hole: 8", f"keeper: {{kind: {keeper}}}, hole: {float(rod) + 4}")
+    first = read(tmp_path, text)
+    assert replace(read(tmp_path, show(first)).design, sha256=first.design.sha256) == first.design
+
+
+@pytest.mark.parametrize(("rod", "height_mm"), [("4", 18.0), ("20", 18.0), ("30", 23.0)])
+def test_a_thick_driven_rod_stands_clear_of_the_boom_by_default(tmp_path: Path, rod: str, height_mm: float) -> None:
+    text = starter("trial").replace("role: driven,", f"role: driven, diameter: {rod},")
+    assert read(tmp_path, text).design.feeds[0].height_mm == height_mm
