@@ -2,6 +2,8 @@
 
 Frame: 20 mm from the left edge for binding, 10 mm from the others, centring marks (ISO 5457). Title block: 180 mm wide
 in the lower right corner with the fields of ISO 7200; a field the design leaves out is a blank for the pen.
+The sheet leaves ISO 5457 where a shop's printer asks for it: A4 and Letter lie across, as an array does, the frame is
+as wide as outlines, centring marks end at it, and there is no grid of references (the standard's side from memory).
 """
 
 from fabgen.design.arranged import Arranged
