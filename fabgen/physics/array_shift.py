@@ -18,7 +18,6 @@ from scipy.interpolate import CubicSpline
 
 from fabgen.frozen import frozen
 from fabgen.physics.array import RodArray, solve_band
-from fabgen.physics.array_gradient import ArrayGradient
 from fabgen.physics.thin_rod_kernel import ComplexArray, FloatArray
 
 HALF_BAND = 0.015
@@ -181,38 +180,3 @@ def build_shift(gauge: ShiftGauge, build: RodArray) -> Shift:
     """
     response = solve_band(build, gauge.frequency_mhz)
     return gauge.measure(response.gain_dbi, response.back_front)
-
-
-@frozen
-class ShiftPerMm:
-    """What a millimetre at each rod does to the tuning.
-
-    Args:
-        length: per mm of length, one entry per rod.
-        station: per mm of station.
-        diameter: per mm of diameter.
-    """
-
-    length: Shift
-    station: Shift
-    diameter: Shift
-
-
-def shift_per_mm(gauge: ShiftGauge, gradients: tuple[ArrayGradient, ...]) -> ShiftPerMm:
-    """Shift per millimetre of every length, station and diameter.
-
-    Args:
-        gauge: of the design.
-        gradients: of the design at the gauge's frequencies.
-
-    Returns:
-        first-order shifts and residuals.
-    """
-    kinds = ("length", "station", "diameter")
-    shifts = {}
-    for kind in kinds:
-        rows = [getattr(gradient, kind) for gradient in gradients]
-        shifts[kind] = gauge.per_mm(
-            np.array([row.gain_db_per_mm for row in rows]).T, np.array([row.back_front_per_mm for row in rows]).T
-        )
-    return ShiftPerMm(**shifts)

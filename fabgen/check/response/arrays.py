@@ -1,7 +1,10 @@
 """The rods of a case as arrays for the solver: as modelled, as changed for the shop's rods, as drawn.
 
 A folded driven rod is modelled as one straight rod of its tip-to-tip length and of diameter sqrt(2 d s), d the rod and
-s the spacing of the limbs, its impedance four times as high; the line between its limbs is not modelled.
+s the spacing of the limbs, its impedance four times as high. The line between the limbs, shorted at the bends, lies
+across that: about a half wave long, it takes 6 kilohm or more and is not modelled. Against bent rods in a general
+moment-method library, 21 segments: single rods of 0.43-0.48 wavelengths, spacing 0.015-0.05, within 9 % of the size of
+the impedance; driving 17 rods of 0.0085 wavelengths, within 9 % and 0.15 dB of gain. Its finer meshes move by as much.
 """
 
 import math
