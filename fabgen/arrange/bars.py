@@ -65,8 +65,16 @@ def _best_fit(sizes: Sequence[float], room: float) -> list[list[int]]:
 
 
 def _lower_bound(sizes: Sequence[float], room: float) -> int:
-    """No plan needs fewer: total length over room, or the pieces longer than half a bar (Martello & Toth 1990)."""
-    if not sizes:
-        return 0
-    halves = sum(1 for size in sizes if size > room / 2 + _PLAY_MM)
-    return max(math.ceil(sum(sizes) / room - 1e-9), halves, 1)
+    """No plan needs fewer: bound L2 of Martello & Toth, Knapsack Problems, 1990, 8.3.2, from memory.
+
+    For every least size: pieces longer than half a bar need one each, and the shorter ones, down to that size, what
+    those leave and as much more as they are longer in all.
+    """
+    long = [size for size in sizes if size > room / 2 + _PLAY_MM]
+    best = max(len(long), math.ceil(sum(sizes) / room - 1e-9))
+    for least in {size for size in sizes if size <= room / 2 + _PLAY_MM}:
+        shared = [size for size in long if size <= room - least + _PLAY_MM]
+        short = sum(size for size in sizes if least <= size <= room / 2 + _PLAY_MM)
+        over = short - (len(shared) * room - sum(shared))
+        best = max(best, len(long) + max(0, math.ceil(over / room - 1e-9)))
+    return best

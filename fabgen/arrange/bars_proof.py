@@ -5,7 +5,11 @@ from collections.abc import Sequence
 import numpy as np
 from scipy.optimize import Bounds, LinearConstraint, milp
 
-_SECONDS = 20.0
+_EFFORT = 80_000
+"""Nodes of the search tree times places to choose from; beyond it the plan counts as unproven.
+
+A limit in seconds would make other files on another machine. Some ten seconds, measured on one core.
+"""
 
 
 def fewest_bars(sizes_mm: Sequence[float], room_mm: float, known: list[list[int]]) -> tuple[list[list[int]], bool]:
@@ -46,7 +50,7 @@ def fewest_bars(sizes_mm: Sequence[float], room_mm: float, known: list[list[int]
         ],
         integrality=np.ones(pieces + bars),
         bounds=Bounds(0.0, upper),
-        options={"time_limit": _SECONDS},
+        options={"node_limit": max(1, _EFFORT // pieces)},
     )
     if result.x is None:
         return known, bool(result.status == 2)

@@ -1,6 +1,7 @@
 """Pieces on bars: everything fits, and `proven` is only said when it is true."""
 
 import itertools
+import sys
 
 import pytest
 from hypothesis import given, settings
@@ -71,3 +72,11 @@ def test_many_pieces_are_nested_to_the_bound(pieces: int) -> None:
     cuts = [cut(f"p{k}", 270.0 + k) for k in range(pieces)]
     found = plan(cuts, shop(3000.0))
     assert sum(len(bar.pieces) for bar in found.bars) == pieces
+
+
+def test_long_pieces_are_proven_by_counting_what_fits_beside_them(monkeypatch: pytest.MonkeyPatch) -> None:
+    """Beside 700 no 400 fits into 1000: three bars and one more, though 2900 mm of metal would go into three."""
+    monkeypatch.setitem(sys.modules, "fabgen.arrange.bars_proof", None)
+    cuts = [cut(f"p{k}", length) for k, length in enumerate([700.0] * 3 + [400.0] * 2)]
+    found = plan(cuts, shop(1000.0))
+    assert (len(found.bars), found.proven) == (4, True)
