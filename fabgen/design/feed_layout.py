@@ -15,24 +15,26 @@ from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, ENGAGEMENT_MM
 from fabgen.frozen import frozen
 from fabgen.stock.fasteners import tap_drill_mm
 
+# Walls, plays and reaches are our own choice, made for lines of 0.4 mm and for M2 to M5; none is
+# measured. What a standard sets (threads, heads, nuts, holes) comes from the stock tables.
 TERMINALS = ("M2", "M2.5", "M3", "M4", "M5")
-BESIDE_HOLE_MM = 0.35
+BESIDE_HOLE_MM = 0.35  # metal left beside a terminal's hole in the thinnest rod
 WALL_X_MM = 2.4
 WALL_Y_MM = 3.0
-RIM_MM = 1.2
+RIM_MM = 1.2  # outside the lid: the block's thinnest wall
 LID_MM = 3.0
 LID_PLAY_MM = 0.3
 POST_MM = 7.0
 LID_SCREW_IN_MM = 4.4
 PILOT_DEPTH_MM = 11.0
 LID_SCREW_LENGTH_MM = 12.0
-TAG_MM = 0.8
+TAG_MM = 0.8  # a solder tag under the terminal's head
 NUT_PLAY_MM = 0.25
 BEYOND_NUT_MM = 0.4
-LEAST_UNDER_ROD_MM = 2.5
+LEAST_UNDER_ROD_MM = 2.5  # plastic between rod and nut
 STEP_MM = 0.4
 LAND_MM = 1.4
-GRIP = 0.85
+GRIP = 0.85  # of the cable's diameter, what the wedge leaves
 TONGUE_MM = 3.0
 TONGUE_PLAY_MM = 0.2
 TONGUE_REACH_MM = 10.0
@@ -42,7 +44,7 @@ TOOTH_MM = 0.5
 TIP_MM = (1.2, 4.0)
 DRAIN_MM = 4.0
 BESIDE_BOOM_MM = 0.8
-CRADLE_DEG = 60.0
+CRADLE_DEG = 60.0  # from the crown, how far down a round boom the foot reaches
 
 
 @frozen
