@@ -5,6 +5,7 @@ import hashlib
 import io
 import json
 import os
+import shutil
 import subprocess
 import sys
 import xml.etree.ElementTree as ET
@@ -23,11 +24,22 @@ FILES = {
 }  # fmt: skip
 
 
-def build(design: Path, output: Path, seed: str) -> None:
-    environment = os.environ | {"PYTHONHASHSEED": seed, "PYTHONPATH": str(DESIGNS.parent)}
+SURROUNDINGS = (
+    {"PYTHONHASHSEED": "1", "TZ": "UTC", "LC_ALL": "C.UTF-8", "HOME": "/"},
+    {"PYTHONHASHSEED": "2", "TZ": "Pacific/Auckland", "LC_ALL": "C", "PYTHONUTF8": "0", "HOME": "/nowhere"},
+)
+"""Hash seed, clock's zone, language and home: none of them a package's business."""
+
+
+def build(design: Path, output: Path, surroundings: dict[str, str], umask: int) -> str:
+    """Build in a process of its own, in the design's folder; what it said."""
+    environment = os.environ | surroundings | {"PYTHONPATH": str(DESIGNS.parent)}
     command = [sys.executable, "-m", "fabgen", "build", str(design), "--output", str(output)]
-    run = subprocess.run(command, env=environment, capture_output=True, text=True, check=False)
+    run = subprocess.run(
+        command, env=environment, cwd=design.parent, umask=umask, capture_output=True, encoding="utf-8", check=False
+    )
     assert run.returncode == 0, run.stderr
+    return run.stderr
 
 
 def hashes(folder: Path) -> dict[str, str]:
@@ -40,24 +52,32 @@ def hashes(folder: Path) -> dict[str, str]:
 
 @pytest.fixture(scope="module")
 def twice(tmp_path_factory: pytest.TempPathFactory) -> tuple[Path, Path]:
-    """The river gauge built by two processes with different hash seeds; the tests' own process has a third."""
+    """The river gauge built by two processes, under two file names in two folders, each solved anew."""
     folder = tmp_path_factory.mktemp("twice")
-    for seed in ("1", "2"):
-        build(DESIGNS / "river-gauge-434.yaml", folder / seed, seed)
-    return folder / "1" / "RGL-434-06_A", folder / "2" / "RGL-434-06_A"
+    for place, surroundings, umask in zip(("1", "an other/é"), SURROUNDINGS, (0o022, 0o077), strict=True):
+        design = folder / place / f"gauge-{umask}.yaml"
+        design.parent.mkdir(parents=True)
+        shutil.copy(DESIGNS / "river-gauge-434.yaml", design)
+        assert "array response" in build(design, folder / place / "output", surroundings, umask)
+    return folder / "1/output/RGL-434-06_A", folder / "an other/é/output/RGL-434-06_A"
 
 
 @pytest.mark.slow
-def test_every_file_has_the_same_bytes_under_two_hash_seeds(twice: tuple[Path, Path]) -> None:
+def test_every_file_has_the_same_bytes_whatever_surrounds_the_run(twice: tuple[Path, Path]) -> None:
     assert hashes(twice[0]) == hashes(twice[1])
 
 
 @pytest.mark.slow
 def test_every_file_has_the_same_bytes_twice_in_one_process(twice: tuple[Path, Path], tmp_path: Path) -> None:
-    for name in ("first", "second"):
-        judged = pipeline.drawn(pipeline.check(DESIGNS / "river-gauge-434.yaml"))
-        pipeline.build(judged, output=tmp_path / name, say=lambda line: None)
-        assert hashes(tmp_path / name / "RGL-434-06_A") == hashes(twice[0])
+    """The first time with the response that a build stored, the second time with one solved anew."""
+    design = twice[0].parent.with_name("gauge-18.yaml")
+    fresh = shutil.copy(design, tmp_path / "fresh.yaml")
+    for path, solved in ((design, False), (fresh, True)):
+        said: list[str] = []
+        judged = pipeline.drawn(pipeline.check(path, solve=True, say=said.append))
+        assert bool(said) is solved
+        folder = pipeline.build(judged, output=tmp_path / str(solved), say=lambda _: None)
+        assert hashes(folder) == hashes(twice[0])
 
 
 @pytest.mark.slow
@@ -74,7 +94,8 @@ def test_the_package_holds_what_the_contract_lists(twice: tuple[Path, Path]) -> 
         assert entry["sha256"] == hashlib.sha256((folder / entry["path"]).read_bytes()).hexdigest()
         assert entry["purpose"]
     text = (folder / "manifest.json").read_text(encoding="utf-8") + (folder / "book.html").read_text(encoding="utf-8")
-    assert str(DESIGNS.parent) not in text
+    assert str(folder.parent.parent) not in text
+    assert "gauge-18" not in text
 
 
 @pytest.mark.slow
