@@ -2,7 +2,8 @@
 
 Formulae come first and decide. Parts that meet, or whose shapes do, are measured solid against solid, once per distinct
 relative placement. For parts meant to stay apart the formula is a lower bound because simple shapes hold the solids;
-that they do is confirmed once per distinct part. A disagreement is a mistake of the program, never of the design.
+that they do is confirmed of every part, once per distinct one. A disagreement is a mistake of the program, never of the
+design.
 """
 
 import functools
@@ -60,16 +61,22 @@ def confirm(pairs: Iterable[Near]) -> int:
         How many pairs were confirmed.
 
     Raises:
-        ProgramError: solids and numbers contradict each other; the message names the pair.
+        ProgramError: solids and numbers contradict each other; the message names the pair, or the part that its shapes
+            do not hold.
     """
     count = 0
+    parts: dict[str, Placed] = {}
     for pair in pairs:
+        parts |= {pair.first.name: pair.first, pair.second.name: pair.second}
         if pair.interface is None and pair.distance_mm < pair.limit_mm:
             continue
         wrong = _contradiction(pair)
         if wrong:
             raise ProgramError(f"{pair.first.name} and {pair.second.name}: {wrong}")
         count += 1
+    for part in parts.values():
+        if wrong := outside_envelope(part):
+            raise ProgramError(f"{part.name}: {wrong}")
     return count
 
 
@@ -84,7 +91,7 @@ def _contradiction(pair: Near) -> str:
         overlap_mm3 = _overlap_mm3(first, second, frame)
         return f"the solids overlap by {overlap_mm3:.6f} mm³" if overlap_mm3 > OVERLAP_TOLERANCE_MM3 else ""
     if not _formula_is_exact(pair.first, pair.second):
-        return outside_envelope(pair.first) or outside_envelope(pair.second)
+        return ""
     apart_mm = _apart_mm(first, second, frame, pair.distance_mm)
     if abs(apart_mm - pair.distance_mm) > DISTANCE_TOLERANCE_MM:
         return f"the solids are {apart_mm:.6f} mm apart, by formula {pair.distance_mm:.6f} mm"

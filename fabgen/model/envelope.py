@@ -6,7 +6,7 @@ from typing import Any
 
 from fabgen.design.arranged import Axis, Box, Cylinder, Frame, Parameters, Placed, Shape, Vector
 from fabgen.design.distances import bounding_box
-from fabgen.model.kernel import bounds_mm, cq, cut
+from fabgen.model.kernel import bounds_of, cq, cut
 from fabgen.model.solids import location, solid_of, without_growth
 
 _DECIMALS = 7
@@ -36,7 +36,7 @@ def _outside(part: str, parameters: Parameters, frame: Frame, shapes: tuple[Shap
         if not math.isclose(solid.Volume(), simple_mm3, rel_tol=_VOLUME_REL):
             return f"{part} has {solid.Volume():.6f} mm³, the shapes that should be it {simple_mm3:.6f} mm³"
     if exact or (len(shapes) == 1 and isinstance(shapes[0], Box)):
-        (low, high), box = bounds_mm(cq.Workplane(solid)), bounding_box(shapes)
+        (low, high), box = bounds_of(solid), bounding_box(shapes)
         below = [b - s for s, b in zip(low, box.low, strict=True)]
         above = [s - b for s, b in zip(high, box.high, strict=True)]
         over_mm = max(*below, *above)

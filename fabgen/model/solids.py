@@ -47,4 +47,4 @@ def without_growth(parameters: Parameters) -> Parameters:
 
 def location(frame: Frame) -> cq.Location:
     """Where a part's frame stands, as the kernel says it."""
-    return cq.Location(cq.Plane(origin=frame.origin, xDir=frame.x, normal=frame.z))
+    return kernel.location_of(frame)
