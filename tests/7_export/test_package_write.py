@@ -142,13 +142,14 @@ def test_a_rename_that_fails_puts_the_old_package_back(tmp_path: Path, monkeypat
 
 
 def test_what_a_killed_run_left_goes_with_the_next_of_any_name(tmp_path: Path) -> None:
-    for place in (".fabgen.new/tables/a.csv", ".fabgen.old/X-1_A/manifest.json", ".fabgen.old/X-2_A/manifest.json"):
+    for place in (".fabgen.new/tables/stale.csv", ".fabgen.old/X-1_A/manifest.json", ".fabgen.old/X-2_A/manifest.json"):
         (tmp_path / place).parent.mkdir(parents=True)
         (tmp_path / place).write_bytes(b"{}")
     (tmp_path / "X-1_A").mkdir()
     package.write(NEW, output=tmp_path, name="X-3_A")
     assert sorted(path.name for path in tmp_path.iterdir()) == [".fabgen.lock", "X-1_A", "X-2_A", "X-3_A"]
     assert contents(tmp_path / "X-1_A") == {}
+    assert contents(tmp_path / "X-3_A") == expected(NEW)
     assert contents(tmp_path / "X-2_A") == {"manifest.json": b"{}"}
 
 
@@ -156,7 +157,9 @@ def test_a_write_protected_package_is_not_replaced(tmp_path: Path, monkeypatch: 
     """Asked, not tried: a folder whose files cannot go would stand in the way of every later run."""
     package.write(OLD, output=tmp_path, name="X-1_A")
     allowed = os.access
-    monkeypatch.setattr(os, "access", lambda path, mode: Path(path).name != "tables" and allowed(path, mode))
+    monkeypatch.setattr(
+        os, "access", lambda path, mode: allowed(path, mode) and not (Path(path).name == "tables" and mode & os.W_OK)
+    )
     with pytest.raises(MachineError, match="tables: no permission to write there"):
         package.write(NEW, output=tmp_path, name="X-1_A")
     assert contents(tmp_path / "X-1_A") == expected(OLD)
