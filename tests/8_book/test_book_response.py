@@ -57,7 +57,7 @@ def test_every_page_says_what_is_modelled(limited: Book) -> None:
         assert "free space" in body
         for missing in ("mast", "ground", "feed line"):
             assert missing in body
-    assert "±0.3 %" in text_of(limited, "response")
+    assert "±0.3 % (1.3 MHz)" in text_of(limited, "response")  # of 434 MHz, 1.302
 
 
 def test_the_tolerances_of_the_limits_stand_in_every_table(limited: Book) -> None:
@@ -67,6 +67,10 @@ def test_the_tolerances_of_the_limits_stand_in_every_table(limited: Book) -> Non
     rows = {row.element: row for row in response_of(limited).allotment.rows}  # type: ignore[union-attr]
     assert len({row.length_mm for row in rows.values()}) > 1
     for element, row in rows.items():
+        allotted = (
+            f'{element}</th><td class="n strong">{row.length_mm:g}</td><td class="n strong">{row.station_mm:g}</td>'
+        )
+        assert allotted in text_of(limited, "millimetre")
         cells = re.search(rf'<th scope="row">{element}</th>(.*?)</tr>', text_of(limited, "lengths"))
         assert cells
         assert cells[1].endswith(f'<td class="n">{row.length_mm:g}</td>')
@@ -130,6 +134,7 @@ def test_bars_are_as_long_as_their_numbers(limited: Book) -> None:
 def test_the_range_page_says_rise_or_fall_for_every_element(limited: Book) -> None:
     body = text_of(limited, "range_page")
     assert "Receive only" in body
+    assert "Never a hand, and never the stick, near a driven rod under power" in body
     assert "wooden stick" in body
     for row in response_of(limited).sensitivities:
         if row.quantity == "length":

@@ -3,6 +3,7 @@
 import csv
 import io
 from collections.abc import Callable
+from dataclasses import replace
 from html.parser import HTMLParser
 
 import pytest
@@ -107,7 +108,8 @@ def test_holes_are_those_of_the_drilling_table(book_of: Callable[..., Book], ste
             same([row[2], row[3], row[6], row[8]], record, ["station_mm", "tolerance_mm", "across_mm", "diameter_mm"])
             assert number(row[7]) in (0.0, float(record["pilot_mm"]))
             assert (row[1], row[9]) == (record["element"], record["drill"])
-        assert {WALLS[wall] for wall in row[4].split(", ")} == {record["wall"] for record in of_hole}
+        walls = dict.fromkeys(record["wall"] for record in of_hole)
+        assert [WALLS[wall] for wall in row[4].split(", ")] == list(walls)
         assert [number(angle) for angle in row[5].split(", ")] == [float(record["angle_deg"]) for record in of_hole]
     assert seen == len(openings)
 
@@ -118,3 +120,13 @@ def test_parts_are_counted_as_in_the_bill(book_of: Callable[..., Book], stem: st
     bill = {(r["size"], r["material"]): int(r["quantity"]) for r in records(tables.parts_csv(book.arranged))}
     found = {(row[1], row[2]): int(row[0]) for row in rows(book, "parts", "Mass of all") if row[0]}
     assert found == bill
+
+
+def test_what_is_zero_in_every_demo_design_has_its_sign_and_its_column(book_of: Callable[..., Book]) -> None:
+    book = book_of("river-gauge-434")
+    arranged = book.arranged
+    holes = tuple(replace(hole, across_mm=-1.25) for hole in arranged.holes)
+    lines = tuple(replace(line, rod_change_mm=-0.75) for line in arranged.ledger.lines)
+    book = replace(book, arranged=replace(arranged, holes=holes, ledger=replace(arranged.ledger, lines=lines)))
+    assert {row[6] for row in rows(book, "drilling", "Station")} == {"−1.250"}
+    assert {row[6] for row in rows(book, "lengths", "Modelled")} == {"−0.750"}
