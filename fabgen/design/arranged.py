@@ -198,7 +198,7 @@ class Cut:
         rod_mm: diameter; for the boom its width.
         cut_mm: sawn length (folded rods: developed length).
         half_mm: half of it, where the centre mark goes; 0 where there is none.
-        projection_mm: how far the rod stands out beyond the boom's sides, a split rod beyond its block's; 0 for the boom.
+        projection_mm: how far the rod stands out beyond the sides of the boom or a split rod's block; 0 for the boom.
         note: what else is done to the piece, for example a hole across it; empty for most.
     """
 
