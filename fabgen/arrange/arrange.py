@@ -115,7 +115,7 @@ def _boom(design: Design, holes: tuple[Hole, ...], mass_g: float) -> Placed:
         material=boom.material.name,
         metal=boom.material.conductive,
         mass_g=mass_g,
-        size=f"boom {boom.section} {boom.width_mm:g} x {boom.height_mm:g} x {boom.length_mm:.8g}",
+        size=f"boom {boom.section} {boom.width_mm:g} x {boom.height_mm:g} x {round(boom.length_mm, 3):.8g}",
     )
 
 
