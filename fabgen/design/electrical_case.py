@@ -7,6 +7,7 @@ from dataclasses import asdict
 from fabgen.design.arranged import Arranged
 from fabgen.design.design import Design, Feed
 from fabgen.design.limits import Limits
+from fabgen.design.mount_geometry import conducting_boom
 from fabgen.frozen import frozen
 from fabgen.stock.electrical import conductivity_s_per_m, tolerance_classes
 
@@ -84,7 +85,7 @@ def no_case(design: Design) -> str:
     """
     if sum(element.role == "driven" for element in design.elements) != 1:
         return "the array solver needs one driven rod"
-    on_metal = any(element.mount and element.mount.style != "through-nonmetal" for element in design.elements)
+    on_metal = conducting_boom(design) and any(element.mount for element in design.elements)
     if design.lengths_are == "as-cut" and on_metal:
         return (
             "lengths are as cut, with what the boom takes in them: their free lengths, which the solver needs, are lost"

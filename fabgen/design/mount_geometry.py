@@ -40,7 +40,12 @@ def film_insulated(element: Element, mount: Mount) -> bool:
     return mount.bond == "press" and element.rod.finish != "bare"
 
 
-def beside_metal(design: Design, mount: Mount) -> bool:
-    """Whether a boom that conducts stands beside the rods of a mount."""
+def conducting_boom(design: Design) -> bool:
+    """Whether the boom takes length from rods near it."""
     material = design.boom.material
-    return mount.style != "through-nonmetal" and (material.kind == "metal" or material.conductive)
+    return material.kind == "metal" or material.conductive
+
+
+def beside_metal(design: Design, mount: Mount) -> bool:
+    """Whether a mount's effect is that of a metal boom: never known for a rod through a non-metal that conducts."""
+    return mount.style != "through-nonmetal" and conducting_boom(design)

@@ -26,6 +26,11 @@ _WHY = {
     "hole": "nothing is drilled through for a rod on top",
 }
 
+_OUT_OF_CONDUCTING = (
+    "write style: on-top, or style: through-nonmetal with what was measured on this boom, for example "
+    "allowance: {origin: stated, value: 4.6 mm, uncertainty: 0.4 mm, source: own readings 2026-03}"
+)
+
 
 def check_mounts(keys: FileKeys, tree: Map, problems: Problems) -> None:
     """Report mounts that cannot be made and allowances that say too little or too much."""
@@ -94,13 +99,22 @@ def _check_boom(mount: MountKeys, keys: FileKeys, path: tuple[str, ...], tree: M
     if boom is None:
         return
     place = value_place(tree, *path, "style")
-    metal = boom.material.kind == "metal"
+    metal, conducts = boom.material.kind == "metal", boom.material.conductive
     if not metal and mount.style in ("bonded-through", "insulated-through"):
         message = f"style: {mount.style} needs a metal boom, and {boom.material.name} is none"
-        problems.add("D20", message, place, "write style: through-nonmetal")
+        problems.add("D20", message, place, _OUT_OF_CONDUCTING if conducts else "write style: through-nonmetal")
     if metal and mount.style == "through-nonmetal":
         message = f"style: through-nonmetal needs a boom of wood or plastic, and {boom.material.name} is a metal"
         problems.add("D20", message, place, "write style: insulated-through or bonded-through")
+    elif conducts and mount.style == "through-nonmetal" and not _lengths_known(mount, keys):
+        message = f"style: through-nonmetal adds no length, and a boom of {boom.material.name} conducts: it takes some"
+        problems.add("D20", message, place, _OUT_OF_CONDUCTING)
     if mount.bond == "wall-screws" and boom.section == "round":
         message = "bond: wall-screws need a flat wall, and the boom is round"
         problems.add("D20", message, value_place(tree, *path, "bond"), "write bond: weld or bond: press")
+
+
+def _lengths_known(mount: MountKeys, keys: FileKeys) -> bool:
+    """Whether the user says what a boom takes from its rods, or gives lengths that hold it already."""
+    stated = mount.allowance is not None and mount.allowance.origin == "stated"
+    return stated or keys.lengths_are == "as-cut"

@@ -36,6 +36,11 @@ clamp: {mast: 38 mm}
 ELEMENTS = BASE[BASE.index("  - {id: R") : BASE.index("feed:")]
 BOOM = BASE[BASE.index("boom:") : BASE.index("mounts:")]
 
+CARBON = (
+    "material: EN AW-6060 T66\n",
+    "material: {name: carbon tube, kind: grp, density: 1600, conductive: true}\n",
+)
+
 # Each case: name, pieces of the sound design and what stands in their places, and where which problem is told.
 TEXT = [
     ("tab in the indentation", "  section: square", "\tsection: square", "7:1 D03"),
@@ -144,6 +149,10 @@ VALUES = [
     ("frequency without a unit", "434.2 MHz", "434.2", "4:12 D11"),
     ("no units, bare lengths", "units: mm\n", "", "15:34 D11; 15:45 D11; 16:32 D11; 16:45 D11; 17:34 D11; 17:47 D11"),
     ("truth value for a length", "wall: 1.5 mm", "wall: yes", "9:9 D10"),
+    ("reference in another unit", "gap: 10 mm", "reference: 200 kohm", "19:42 D10"),
+    ("reference in megahertz", "gap: 10 mm", "reference: 200 MHz", "19:42 D10"),
+    ("reference with a comma", "gap: 10 mm", "reference: '37,5 ohm'", "19:42 D13"),
+    ("reference too large", "gap: 10 mm", "reference: 2000 ohm", "19:42 D12"),
     ("negative wall", "wall: 1.5 mm", "wall: -1.5 mm", "9:9 D12"),
     ("zero length", "length: 340", "length: 0", "16:45 D12"),
     ("rod of 40 m", "diameter: 4 mm", "diameter: 40 m", "14:18 D12"),
@@ -223,6 +232,15 @@ CONTRADICTIONS = [
     ("middle screw on top", "style: insulated-through, hole: 8 mm", "style: on-top, hold: middle-screw", "13:31 D19"),
     ("metal mount on wood", "  material: EN AW-6060 T66\n", "  material: oak\n", "13:17 D20"),
     ("wooden mount on metal", "style: insulated-through", "style: through-nonmetal", "13:17 D20"),
+    ("through a boom that conducts", *CARBON, "style: insulated-through", "style: through-nonmetal", "13:17 D20"),
+    (
+        "no allowance asked for in a boom that conducts",
+        *CARBON,
+        "style: insulated-through, hole: 8 mm",
+        "style: through-nonmetal, hole: 8 mm, allowance: none",
+        "13:17 D20",
+    ),
+    ("metal mount on a boom that conducts", *CARBON, "13:17 D20"),
     (
         "wall screws in a round boom",
         "section: square",

@@ -10,6 +10,7 @@ import pytest
 from fabgen.check.rules.missing_allowance import findings
 from fabgen.correct.ledger import correct
 from fabgen.design.design import Design
+from fabgen.design.electrical_case import no_case
 from fabgen.design.ledger import Allowance
 from fabgen.design.mount_geometry import mount_geometry
 from fabgen.design.records import MeasuredRecord, MountGeometry, SolvedRecord, SolvedRod
@@ -19,6 +20,7 @@ from fabgen.physics.boom_closed_form import rod_slope_ohm_per_wl
 from fabgen.physics.boom_mount import ETA_OHM, BoomMount, Section, Style
 from fabgen.physics.boom_uncertainty import carrying_u_relative
 from fabgen.pipeline import check
+from fabgen.read.compound import table_material
 from fabgen.read.reader import read_design
 
 Variant = Callable[..., Design]
@@ -207,6 +209,21 @@ def test_a_boom_that_conducts_is_metal_to_every_stage(variant: Variant) -> None:
     design = variant(("material: EN AW-6060 T66\n  overhang", f"{carbon}\n  overhang"), raised, AUTO)
     assert allowance(design).origin == "computed"
     assert len(solve_tasks(design)[0].elements) == len(mounted_rods(design, "line")) == len(metal_mounts(design)) == 11
+
+
+def test_through_a_boom_that_conducts_the_stated_value_counts(variant: Variant) -> None:
+    """Without one the design file is refused; see the bad designs. As-cut lengths hold the boom's effect already."""
+    carbon = "material: {name: carbon tube, kind: grp, density: 1600, conductive: true}"
+    through = "style: through-nonmetal\n    hole: 4.1 mm\n"
+    old = "style: insulated-through\n    hole: 8 mm\n    bush: {kind: shoulder, material: ASA}\n"
+    stated = "allowance: {origin: stated, value: 5.2 mm, uncertainty: 0.4 mm, source: own readings}"
+    boom, mount = ("material: EN AW-6060 T66\n  overhang", f"{carbon}\n  overhang"), (old, through)
+    design = variant(boom, mount, (AUTO[0], stated))
+    found = allowance(design)
+    assert (found.value_mm, found.u_mm, found.origin, found.missing) == (5.2, 0.4, "stated", False)
+    as_cut = variant(boom, mount, (AUTO[0], ""), ("lengths_are: free-space", "lengths_are: as-cut"))
+    assert "as cut" in no_case(as_cut)
+    assert no_case(replace(as_cut, boom=replace(as_cut.boom, material=table_material("oak")))) == ""
 
 
 def written(design: Design) -> dict[str, object]:
