@@ -169,9 +169,9 @@ class FeedKeys(Keys):
     rod_mm: Annotated[float | None, _ROD] = Field(default=None, alias="rod")
     material: Annotated[Material | None, MaterialValue("ASA")] = None
     allowance: AllowanceKeys | None = None
-    reference_ohm: Annotated[float | None, Number(1, 1000, "50", "reference impedance in ohm")] = Field(
-        default=None, alias="reference"
-    )
+    reference_ohm: Annotated[
+        float | None, Number(1, 1000, "200 ohm", "reference impedance in ohm", ("ohm", "ohms", "Ω", "\u2126"))
+    ] = Field(default=None, alias="reference")
 
 
 class ClampKeys(Keys):

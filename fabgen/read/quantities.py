@@ -126,29 +126,47 @@ class Frequency(Kind):
 
 
 class Number(Kind):
-    """A plain number; `said` is its meaning and unit."""
+    """A number.
 
-    def __init__(self, low: float, high: float, example: str, said: str) -> None:
-        self.low, self.high, self.example, self.said = low, high, example, said
+    Args:
+        low: smallest allowed.
+        high: largest allowed.
+        example: as a user would write it.
+        said: its meaning and unit.
+        units: spellings of its unit that may follow it; without them only a plain number is read.
+    """
+
+    def __init__(self, low: float, high: float, example: str, said: str, units: tuple[str, ...] = ()) -> None:
+        self.low, self.high, self.example, self.said, self.units = low, high, example, said, units
 
     def read(self, value: Any, _info: ValidationInfo) -> float:
         """The number, by the rules of YAML 1.2's core schema for floats, without infinities."""
         scalar = scalar_of(value, self.example)
-        text = scalar.strip()
+        text = self._without_unit(scalar.strip())
         if not re.fullmatch(r"[+-]?(\.[0-9]+|[0-9]+(\.[0-9]*)?)([eE][+-]?[0-9]+)?", text):
             if "," in text:
                 error = comma_error(text)
                 refuse("D13", error.message, error.fix)
-            refuse("D10", f"'{scalar}' is not a plain number", f"{self.said}, for example {self.example}")
+            kind = f"a number of {self.units[0]}" if self.units else "a plain number"
+            refuse("D10", f"'{scalar}' is not {kind}", f"{self.said}, for example {self.example}")
         number = float(text)
         if not self.low <= number <= self.high:
             limits = f"{self.said}, {self.low:g} to {self.high:g}"
             refuse("D12", f"'{scalar}' is out of range", f"{limits}; for example {self.example}")
         return number
 
+    def _without_unit(self, text: str) -> str:
+        unit = next((unit for unit in self.units if text.endswith(unit)), "")
+        return text.removesuffix(unit).rstrip()
+
     def schema(self) -> dict[str, Any]:
-        """A number within its limits."""
-        return {"type": "number", "minimum": self.low, "maximum": self.high, "description": self.said}
+        """A number within its limits, or a text with its unit."""
+        number = {"type": "number", "minimum": self.low, "maximum": self.high}
+        if not self.units:
+            return number | {"description": self.said}
+        said = f"{self.said}, {self.low:g} to {self.high:g} {self.units[0]}"
+        text = {"type": "string", "pattern": rf"^\s*[0-9.eE+-]+\s*({'|'.join(self.units)})?\s*$"}
+        return {"anyOf": [number, text], "description": said, "examples": [self.example]}
 
 
 class WordOrLength(Kind):

@@ -260,7 +260,7 @@ class _Shown:
         if feed.kind == "folded-dipole":
             yield self._line("feed.spacing", mm(feed.spacing_mm))
         yield from self._material("feed.material", feed.material)
-        yield self._line("feed.reference", repr(feed.reference_ohm))
+        yield self._line("feed.reference", f"{feed.reference_ohm!r} ohm")
         yield from self._allowance("feed.allowance", feed.allowance)
 
     def _clamp(self) -> Iterator[str]:

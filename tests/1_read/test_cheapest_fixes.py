@@ -30,6 +30,16 @@ FIXES = [
     ("at: 138, ", "", "add at: 138 mm"),
     ("length: 340", "length: 1,340", "write 1340 or 1.340"),
     ("length: 340", "length: '1.340,5 mm'", "write 1340.5 mm"),
+    (
+        "kind: straight-dipole",
+        "kind: straight-dipole, reference: 200 kohm",
+        "reference impedance in ohm, for example 200 ohm",
+    ),
+    (
+        "kind: straight-dipole",
+        "kind: straight-dipole, reference: 0.2",
+        "reference impedance in ohm, 1 to 1000; for example 200 ohm",
+    ),
     ("mast: 38", "mast: 1-1/2", "write 1-1/2 in; allowed are 8 mm to 300 mm"),
     (
         "units: mm\n",

@@ -161,6 +161,13 @@ def test_the_feed_carries_the_driven_rod(tmp_path: Path) -> None:
     assert feed.reference_ohm == 50
 
 
+@pytest.mark.parametrize("written", ["200", "200.0", "2e2", "200 ohm", "200ohm", "200 ohms", "200 Ω", "200 \u2126"])
+def test_a_reference_impedance_may_carry_its_unit(tmp_path: Path, written: str) -> None:
+    text = BASE.replace("BOOM", METAL).replace("MOUNT", "{style: insulated-through}")
+    (feed,) = read(tmp_path, text.replace("straight-dipole", f"straight-dipole, reference: {written}")).feeds
+    assert feed.reference_ohm == 200
+
+
 def test_an_array_without_a_driven_rod_is_read(tmp_path: Path) -> None:
     text = BASE.replace("BOOM", METAL).replace("MOUNT", "{style: insulated-through}").replace("driven", "director")
     assert read(tmp_path, text).feeds == ()

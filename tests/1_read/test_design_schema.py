@@ -97,6 +97,9 @@ def test_it_accepts_the_demo_designs(path: Path) -> None:
         ),
         ("style: insulated-through, hole: 8", "style: on-top, saddle: {height: 12, screw: M4}"),
         ("outside: 20", "outside: [20, 30]"),
+        ("kind: straight-dipole", "kind: straight-dipole, reference: 75"),
+        ("kind: straight-dipole", "kind: straight-dipole, reference: 200 ohm"),
+        ("kind: straight-dipole", "kind: straight-dipole, reference: 300Ω"),
         ("clamp:", "shop: {tolerance: 0.3 mm}\nprinter: {bed: [180, 180, 180]}\nclamp:"),
     ],
 )
@@ -127,6 +130,7 @@ def test_what_is_read_is_accepted(tmp_path: Path, old: str, new: str) -> None:
         ("clamp:", "printer: {bed: [180, 180]}\nclamp:"),
         ("mast: 38", "at: balance"),
         ("kind: straight-dipole", "kind: straight-dipole, reference: 0"),
+        ("kind: straight-dipole", "kind: straight-dipole, reference: 200 kohm"),
     ],
 )
 def test_what_is_refused_is_refused(tmp_path: Path, old: str, new: str) -> None:
