@@ -65,6 +65,17 @@ def test_cautions_apply_only_where_they_apply(book_of: Callable[..., Book]) -> N
     assert everything - {c.name for c in cautions.applying(unfed)} == {"60-exposure"}
 
 
+def test_the_turning_radius_says_what_it_is_counted_from(book_of: Callable[..., Book]) -> None:
+    """The mast stands beside the boom: its axis, not the clamp, is what the array turns about."""
+    told = {}
+    for clamp in (True, False):
+        book = book_of("river-gauge-434") if clamp else book_of("river-gauge-434", clamp=None)
+        body = next(str(section.body) for section in sections(book) if section.name == "summary")
+        told[clamp] = body.partition("Turning radius")[2].partition("</tr>")[0]
+    assert "from the mast’s axis to the farthest point of boom and rods" in told[True]
+    assert "from the balance point to the farthest point" in told[False]
+
+
 def test_sections_with_nothing_to_say_are_left_out(book_of: Callable[..., Book]) -> None:
     book = book_of("sonde-finder-401")
     assert "mounts" not in names(book)

@@ -102,6 +102,12 @@ def test_metals_conduct_and_unfilled_plastics_do_not():
     assert {name for name in material_names() if material(name).printable} >= {"PETG", "ASA", "PA12"}
 
 
+def test_a_source_lists_what_it_covers_with_commas():
+    """A cell of several quantities is a list, not `density E expansion`."""
+    for name in material_names():
+        assert "density E" not in material(name).source
+
+
 def test_an_unknown_material_names_its_neighbour():
     with pytest.raises(UnknownStockError) as caught:
         material("PET-G")
