@@ -10,7 +10,6 @@ from fabgen.design.part_fasteners import fastener, sold_length_mm
 from fabgen.stock import tables
 
 UP: Vector = (0.0, 0.0, 1.0)
-DOWN: Vector = (0.0, 0.0, -1.0)
 
 
 def bought_material(name: str = "stainless 1.4301") -> Material:

@@ -1,64 +1,41 @@
 """A folded dipole: one rod bent to a flat loop, pushed into a saddle on the boom's top and screwed to it."""
 
-from fabgen.arrange.fasteners import hold_down, nut, screw, washer
-from fabgen.arrange.layout import SIDES, Layout, side_name
+from typing import Any
+
+from fabgen.arrange.fasteners import screw, washer
+from fabgen.arrange.fed_block import numbers_of, screwed_down, terminal
+from fabgen.arrange.layout import SIDES, Layout
 from fabgen.design.arranged import Cut, Frame, Vector
 from fabgen.design.design import Design, Feed
-from fabgen.design.feed_layout import TAG_MM
 from fabgen.design.folded_rod_sizes import FoldedRodSize, folded_rod_size
 from fabgen.design.folded_saddle_sizes import FoldedSaddleSize, folded_saddle_size
 from fabgen.design.ledger import LedgerLine
 from fabgen.design.part_fasteners import fastener
+from fabgen.design.top_block import TAG_MM
 from fabgen.stock import tables
 
 _FRONT: Vector = (1.0, 0.0, 0.0)
-_BACK: Vector = (-1.0, 0.0, 0.0)
 
 
 def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[Cut]]:
     """Bent rod, saddle, screws, holes and the one piece to saw and bend."""
-    element, boom = design.element(feed.element), design.boom
-    diameter_mm = element.rod.diameter_mm
-    saddle_numbers = {
-        "rod_diameter_mm": diameter_mm,
+    element, boom, numbers = design.element(feed.element), design.boom, numbers_of(design, feed)
+    diameter_mm, saddle_numbers = element.rod.diameter_mm, numbers | {"spacing_mm": feed.spacing_mm}
+    size = folded_saddle_size(**saddle_numbers)
+    rod_numbers: dict[str, Any] = {
+        "length_mm": line.cut_mm,
         "spacing_mm": feed.spacing_mm,
+        "diameter_mm": diameter_mm,
         "gap_mm": feed.gap_mm,
-        "height_mm": feed.height_mm,
-        "cable_mm": feed.cable_mm,
-        "boom_width_mm": boom.width_mm,
-        "boom_diameter_mm": boom.diameter_mm,
-        "hole_growth_mm": design.printer.hole_growth_mm,
+        "cross_hole_mm": size.rod_hole_mm,
+        "cross_hole_from_end_mm": size.rod_hole_from_end_mm,
     }
-    size = folded_saddle_size(
-        rod_diameter_mm=diameter_mm,
-        spacing_mm=feed.spacing_mm,
-        gap_mm=feed.gap_mm,
-        height_mm=feed.height_mm,
-        cable_mm=feed.cable_mm,
-        boom_width_mm=boom.width_mm,
-        boom_diameter_mm=boom.diameter_mm,
-        hole_growth_mm=design.printer.hole_growth_mm,
-    )
-    bent = folded_rod_size(
-        length_mm=line.cut_mm,
-        spacing_mm=feed.spacing_mm,
-        diameter_mm=diameter_mm,
-        gap_mm=feed.gap_mm,
-        cross_hole_mm=size.rod_hole_mm,
-        cross_hole_from_end_mm=size.rod_hole_from_end_mm,
-    )
+    bent = folded_rod_size(**rod_numbers)
     layout, saddle = Layout(), f"{element.id} folded saddle"
     layout.put(
         "folded_rod",
         element.id,
-        {
-            "length_mm": line.cut_mm,
-            "spacing_mm": feed.spacing_mm,
-            "diameter_mm": diameter_mm,
-            "gap_mm": feed.gap_mm,
-            "cross_hole_mm": size.rod_hole_mm,
-            "cross_hole_from_end_mm": size.rod_hole_from_end_mm,
-        },
+        rod_numbers,
         owner=element.id,
         label=f"folded rod {diameter_mm:g} x {line.cut_mm:.3f}",
         material=element.rod.material,
@@ -76,18 +53,7 @@ def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[
     fit_mm = size.bore_mm - diameter_mm
     layout.meet(element.id, saddle, "limbs in slots", 0.0, fit_mm)
     layout.meet(saddle, "boom", "saddle on boom", 0.0)
-    hold_down(
-        layout,
-        design,
-        owner=element.id,
-        block=saddle,
-        station_mm=element.station_mm,
-        offsets_mm=size.screw_x_mm,
-        seat_mm=size.seat_mm,
-        length_mm=size.screw_length_mm,
-        thread=size.screw,
-        purpose="feed screw",
-    )
+    screwed_down(layout, design, feed, saddle, size)
     _terminals(layout, design, feed, size)
     _retainer(layout, design, feed, size)
     return layout, [_cut(design, feed, line, bent, size)]
@@ -95,20 +61,13 @@ def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[
 
 def _terminals(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSize) -> None:
     """A screw along the boom through each fed end, its nut in the saddle's back."""
-    element, bolt = design.element(feed.element), size.terminal_fastener
-    z_mm, saddle = design.boom.top_mm + feed.height_mm, f"{element.id} folded saddle"
+    element, saddle = design.element(feed.element), f"{feed.element} folded saddle"
+    z_mm = design.boom.top_mm + feed.height_mm
     head_mm = element.station_mm + element.rod.diameter_mm / 2 + TAG_MM
     for side in SIDES:
         y_mm = side * size.terminal_y_mm
-        bolt_name, nut_name = (f"{element.id} terminal {what} {side_name(side)}" for what in ("screw", "nut"))
-        seat = (head_mm, y_mm, z_mm)
-        screw(layout, bolt_name, size.terminal, size.terminal_length_mm, owner=element.id, seat=seat, up=_FRONT)
-        trap = (element.station_mm + size.trap_front_mm, y_mm, z_mm)
-        nut(layout, nut_name, size.terminal, owner=element.id, seat=trap, up=_BACK)
-        layout.meet(bolt_name, element.id, "screw across rod", size.rod_gap_mm, 2 * size.rod_gap_mm)
-        layout.meet(bolt_name, saddle, "screw in block", size.terminal_gap_mm, bolt.clearance_mm - bolt.diameter_mm)
-        layout.meet(nut_name, saddle, "nut in trap", 0.0)
-        layout.meet(nut_name, bolt_name, "thread in nut", 0.0, 0.0)
+        seat, trap = (head_mm, y_mm, z_mm), (element.station_mm + size.trap_front_mm, y_mm, z_mm)
+        terminal(layout, element.id, side, size, block=saddle, rod=element.id, seat=seat, trap=trap, up=_FRONT)
 
 
 def _retainer(layout: Layout, design: Design, feed: Feed, size: FoldedSaddleSize) -> None:

@@ -1,7 +1,8 @@
 """A split straight dipole: two half rods in a block on the boom's top, a terminal screw through each."""
 
-from fabgen.arrange.fasteners import DOWN, hold_down, nut, screw
-from fabgen.arrange.layout import SIDES, Layout, Value, outward, side_name
+from fabgen.arrange.fasteners import UP, screw
+from fabgen.arrange.fed_block import numbers_of, screwed_down, terminal
+from fabgen.arrange.layout import SIDES, Layout, outward, side_name
 from fabgen.arrange.rods import drilled_rod
 from fabgen.design.arranged import Cut, Frame
 from fabgen.design.design import Design, Feed
@@ -13,25 +14,8 @@ from fabgen.design.part_fasteners import fastener
 
 def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[Cut]]:
     """Half rods, block, lid, screws, holes and the two sawn pieces."""
-    element, boom = design.element(feed.element), design.boom
-    numbers: dict[str, Value] = {
-        "rod_diameter_mm": element.rod.diameter_mm,
-        "gap_mm": feed.gap_mm,
-        "height_mm": feed.height_mm,
-        "cable_mm": feed.cable_mm,
-        "boom_width_mm": boom.width_mm,
-        "boom_diameter_mm": boom.diameter_mm,
-        "hole_growth_mm": design.printer.hole_growth_mm,
-    }
-    size = feed_block_size(
-        rod_diameter_mm=element.rod.diameter_mm,
-        gap_mm=feed.gap_mm,
-        height_mm=feed.height_mm,
-        cable_mm=feed.cable_mm,
-        boom_width_mm=boom.width_mm,
-        boom_diameter_mm=boom.diameter_mm,
-        hole_growth_mm=design.printer.hole_growth_mm,
-    )
+    element, boom, numbers = design.element(feed.element), design.boom, numbers_of(design, feed)
+    size = feed_block_size(**numbers)
     layout = Layout()
     block, lid = f"{element.id} feed block", f"{element.id} feed lid"
     for part, name in (("feed_block", block), ("feed_lid", lid)):
@@ -46,18 +30,7 @@ def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[
         )
     layout.meet(block, "boom", "block on boom", 0.0)
     layout.meet(lid, block, "lid in rabbet", 0.0)
-    hold_down(
-        layout,
-        design,
-        owner=element.id,
-        block=block,
-        station_mm=element.station_mm,
-        offsets_mm=size.screw_x_mm,
-        seat_mm=size.seat_mm,
-        length_mm=size.screw_length_mm,
-        thread=size.screw,
-        purpose="feed screw",
-    )
+    screwed_down(layout, design, feed, block, size)
     _lid_screws(layout, design, feed, size)
     return layout, _halves(layout, design, feed, line, size)
 
@@ -65,7 +38,7 @@ def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[
 def _halves(layout: Layout, design: Design, feed: Feed, line: LedgerLine, size: FeedBlockSize) -> list[Cut]:
     element, top_mm = design.element(feed.element), design.boom.top_mm
     half_mm = (line.cut_mm - feed.gap_mm) / 2
-    block, bolt = f"{element.id} feed block", size.terminal_fastener
+    block = f"{element.id} feed block"
     cuts = []
     for side in SIDES:
         piece = f"{element.id}-{side_name(side)}"
@@ -80,16 +53,10 @@ def _halves(layout: Layout, design: Design, feed: Feed, line: LedgerLine, size: 
             hole_z_mm=size.rod_hole_from_end_mm - half_mm / 2,
         )
         layout.meet(piece, block, "bore on rod", 0.0, size.bore_mm - element.rod.diameter_mm)
-        name, y_mm = f"{element.id} terminal {{}} {side_name(side)}", side * size.terminal_y_mm
-        bolt_name, nut_name = name.format("screw"), name.format("nut")
-        head = (element.station_mm, y_mm, top_mm + size.terminal_head_mm)
+        y_mm = side * size.terminal_y_mm
+        seat = (element.station_mm, y_mm, top_mm + size.terminal_head_mm)
         trap = (element.station_mm, y_mm, top_mm + size.trap_top_mm)
-        screw(layout, bolt_name, size.terminal, size.terminal_length_mm, owner=element.id, seat=head)
-        nut(layout, nut_name, size.terminal, owner=element.id, seat=trap, up=DOWN)
-        layout.meet(bolt_name, piece, "screw across rod", size.rod_gap_mm, 2 * size.rod_gap_mm)
-        layout.meet(bolt_name, block, "screw in block", size.terminal_gap_mm, bolt.clearance_mm - bolt.diameter_mm)
-        layout.meet(nut_name, block, "nut in trap", 0.0)
-        layout.meet(nut_name, bolt_name, "thread in nut", 0.0, 0.0)
+        terminal(layout, element.id, side, size, block=block, rod=piece, seat=seat, trap=trap, up=UP)
         cuts.append(
             Cut(
                 piece=piece,

@@ -7,7 +7,8 @@ piece of boom; the rod lies in a slot in each, which fixes its station; the piec
 from fabgen.design.arranged import Box
 from fabgen.design.part_fasteners import Fastener, fastener, sold_length_mm
 from fabgen.design.part_geometry import disc_mm2
-from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, EAR_WALL_MM, ENGAGEMENT_MM, saddle_size
+from fabgen.design.saddle_sizes import EAR_WALL_MM, saddle_size
+from fabgen.design.top_block import COUNTERBORE_PLAY_MM, ENGAGEMENT_MM
 from fabgen.frozen import frozen
 
 CHEEK_MM = 8.0

@@ -9,16 +9,14 @@ top.
 
 import math
 
-from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, Fastener, fastener, sold_length_mm
+from fabgen.design.part_fasteners import SCREW_LENGTHS_MM
 from fabgen.design.part_geometry import hexagon_corners_mm
-from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, ENGAGEMENT_MM
+from fabgen.design.top_block import BESIDE_BOOM_MM, BEYOND_NUT_MM, ENGAGEMENT_MM, TAG_MM, FedBlock
 from fabgen.frozen import frozen
 from fabgen.stock.fasteners import tap_drill_mm
 
-# Walls, plays and reaches are our own choice, made for lines of 0.4 mm and for M2 to M5; none is
-# measured. What a standard sets (threads, heads, nuts, holes) comes from the stock tables.
-TERMINALS = ("M2", "M2.5", "M3", "M4", "M5")
-BESIDE_HOLE_MM = 0.35  # metal left beside a terminal's hole in the thinnest rod
+# Walls, plays and reaches are our own choice, made for lines of 0.4 mm; none is measured. What a standard sets
+# (threads, heads, nuts, holes) comes from the stock tables.
 WALL_X_MM = 2.4
 WALL_Y_MM = 3.0
 RIM_MM = 1.2  # outside the lid: the block's thinnest wall
@@ -28,10 +26,6 @@ POST_MM = 7.0
 LID_SCREW_IN_MM = 4.4
 PILOT_DEPTH_MM = 11.0
 LID_SCREW_LENGTH_MM = 12.0
-TAG_MM = 0.8  # a solder tag under the terminal's head
-NUT_PLAY_MM = 0.25
-BEYOND_NUT_MM = 0.4
-LEAST_UNDER_ROD_MM = 2.5  # plastic between rod and nut
 STEP_MM = 0.4
 LAND_MM = 1.4
 GRIP = 0.85  # of the cable's diameter, what the wedge leaves
@@ -43,71 +37,20 @@ LEAST_GRIP_MM = 5.0
 TOOTH_MM = 0.5
 TIP_MM = (1.2, 4.0)
 DRAIN_MM = 4.0
-BESIDE_BOOM_MM = 0.8
 CRADLE_DEG = 60.0  # from the crown, how far down a round boom the foot reaches
 
 
 @frozen
-class FeedBlockLayout:
-    """One feed block with its lid.
+class FeedBlockLayout(FedBlock):
+    """One feed block with its lid; its height is also the level of the chamber's floor, the gap the rib's width.
 
     Attributes:
-        gap_mm: between the half rods' ends; the rib's width.
-        height_mm: from the boom's top to the rods' axis, also the chamber's floor.
-        cable_mm: outside diameter of the cable.
-        screw: thread of the two hold-down screws.
-        terminal: thread of the two terminal screws.
         lid_screw: thread of the four lid screws, formed in the plastic.
-        hole_growth_mm: added to the drawn bores.
     """
 
-    rod_diameter_mm: float
-    gap_mm: float
-    height_mm: float
-    cable_mm: float
-    boom_width_mm: float
-    boom_diameter_mm: float
-    bore_mm: float
-    screw: str
-    terminal: str
     lid_screw: str
-    hole_growth_mm: float
-
-    @property
-    def drawn_bore_mm(self) -> float:
-        """Rod bore of the solid."""
-        return self.bore_mm + self.hole_growth_mm
-
-    def drawn_mm(self, hole_mm: float) -> float:
-        """What a printed hole is drawn as."""
-        return hole_mm + self.hole_growth_mm
 
     # Terminals.
-
-    @property
-    def terminal_fastener(self) -> Fastener:
-        """The terminal screw's sizes."""
-        return fastener(self.terminal)
-
-    @property
-    def rod_hole_mm(self) -> float:
-        """Hole drilled across each half rod: ISO 273 fine."""
-        return self.terminal_fastener.clearance_fine_mm
-
-    @property
-    def rod_hole_from_end_mm(self) -> float:
-        """From a half rod's inner end to the middle of that hole."""
-        return max(2 * self.rod_hole_mm, 3.5)
-
-    @property
-    def rod_gap_mm(self) -> float:
-        """Distance between a terminal screw and its hole in the rod, all round."""
-        return (self.rod_hole_mm - self.terminal_fastener.diameter_mm) / 2
-
-    @property
-    def terminal_y_mm(self) -> float:
-        """±y of the terminal screws."""
-        return self.gap_mm / 2 + self.rod_hole_from_end_mm
 
     @property
     def terminal_head_mm(self) -> float:
@@ -115,22 +58,10 @@ class FeedBlockLayout:
         return self.height_mm + self.rod_diameter_mm / 2 + TAG_MM
 
     @property
-    def terminal_length_mm(self) -> float:
-        """Screw length to buy: the shortest that leaves enough plastic between rod and nut."""
-        bolt = self.terminal_fastener
-        least = self.rod_diameter_mm + TAG_MM + LEAST_UNDER_ROD_MM + bolt.nut_height_mm + BEYOND_NUT_MM
-        return sold_length_mm(least)
-
-    @property
     def trap_top_mm(self) -> float:
         """Level of the nut's seat: the trap is open below it."""
         tip = self.terminal_head_mm - self.terminal_length_mm
         return tip + BEYOND_NUT_MM + self.terminal_fastener.nut_height_mm
-
-    @property
-    def trap_flats_mm(self) -> float:
-        """Nut trap across flats, flats towards ±y."""
-        return self.terminal_fastener.nut_across_flats_mm + NUT_PLAY_MM
 
     @property
     def step_mm(self) -> float:
@@ -159,16 +90,6 @@ class FeedBlockLayout:
         return self.height_mm + self.rod_diameter_mm / 2 + 1.0
 
     @property
-    def fastener(self) -> Fastener:
-        """The hold-down screw's sizes."""
-        return fastener(self.screw)
-
-    @property
-    def counterbore_mm(self) -> float:
-        """Diameter of the hole for a hold-down head."""
-        return self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM
-
-    @property
     def screw_x_mm(self) -> tuple[float, float]:
         """Where along x the two hold-down screws stand, on the centre line of the boom's top."""
         offset = self.rib_half_mm + 0.6 + self.counterbore_mm / 2
@@ -179,11 +100,6 @@ class FeedBlockLayout:
         """Hold-down length to buy: the longest whose head stays below the floor."""
         most = self.height_mm - self.fastener.head_height_mm + ENGAGEMENT_MM
         return max((length for length in SCREW_LENGTHS_MM if length <= most), default=0.0)
-
-    @property
-    def seat_mm(self) -> float:
-        """Level of a hold-down head's seat."""
-        return self.screw_length_mm - ENGAGEMENT_MM
 
     # Cable.
 

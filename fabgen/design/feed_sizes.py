@@ -8,7 +8,7 @@ from fabgen.design.arranged import Box
 from fabgen.design.feed_layout import FeedBlockLayout
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, fastener
 from fabgen.design.part_geometry import disc_mm2, hexagon_corners_mm, integral, teardrop_mm2, under_disc_mm3
-from fabgen.design.saddle_sizes import ENGAGEMENT_MM
+from fabgen.design.top_block import BEYOND_NUT_MM, ENGAGEMENT_MM, terminal_for
 from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
 
@@ -138,27 +138,10 @@ def feed_block_size(
     return size
 
 
-def terminal_for(rod_diameter_mm: float, wanted: str | None = None) -> str:
-    """The terminal thread for a rod: the wanted one, else the largest whose hole takes at most 0.6 of the rod.
-
-    Raises:
-        ValueError: the rod is too thin to be drilled for it.
-    """
-    holes = {name: fastener(name).clearance_fine_mm for name in layout.TERMINALS}
-    fitting = [name for name, hole_mm in holes.items() if hole_mm <= 0.6 * rod_diameter_mm]
-    thread = wanted or (fitting[-1] if fitting else layout.TERMINALS[0])
-    hole_mm = fastener(thread).clearance_fine_mm
-    if rod_diameter_mm < hole_mm + 2 * layout.BESIDE_HOLE_MM:
-        raise ValueError(
-            f"a rod of {rod_diameter_mm:g} mm is too thin for a terminal screw {thread} in a hole of {hole_mm:g} mm"
-        )
-    return thread
-
-
 def least_height_mm(size: FeedBlockLayout) -> float:
     """Lowest rod axis over the boom's top: a whole nut above it, hold-down heads below the floor, the cable gripped."""
     # Head, tag and screw move with the rod, so the seat of the nut keeps its distance to the rod's axis.
-    nut = size.height_mm - size.trap_top_mm + size.terminal_fastener.nut_height_mm + layout.BEYOND_NUT_MM
+    nut = size.height_mm - size.trap_top_mm + size.terminal_fastener.nut_height_mm + BEYOND_NUT_MM
     shortest = next(length for length in SCREW_LENGTHS_MM if length - ENGAGEMENT_MM >= 4.0)
     head = shortest - ENGAGEMENT_MM + size.fastener.head_height_mm
     grip = size.bottom_mm + layout.TONGUE_OVER_FOOT_MM + layout.TIP_MM[1] + layout.LEAST_GRIP_MM

@@ -8,10 +8,7 @@ profile is constant along y, so that the saddle prints lying on its −y side.
 
 import math
 
-from fabgen.design import feed_layout as layout
 from fabgen.design.arranged import Box
-from fabgen.design.feed_sizes import terminal_for
-from fabgen.design.part_fasteners import Fastener, fastener, sold_length_mm
 from fabgen.design.part_geometry import (
     PI,
     disc_mm2,
@@ -24,7 +21,8 @@ from fabgen.design.part_geometry import (
     under_strip_mm2,
     under_teardrop_mm3,
 )
-from fabgen.design.saddle_sizes import COUNTERBORE_PLAY_MM, EAR_WALL_MM, ENGAGEMENT_MM, FOOT_SHARE
+from fabgen.design.saddle_sizes import EAR_WALL_MM, FOOT_SHARE
+from fabgen.design.top_block import BESIDE_BOOM_MM, BEYOND_NUT_MM, TAG_MM, FedBlock, terminal_for
 from fabgen.frozen import frozen
 from fabgen.stock.fasteners import tap_drill_mm, washer
 from fabgen.stock.practice import print_practice
@@ -38,36 +36,16 @@ FILLET_MM = 1.0
 
 
 @frozen
-class FoldedSaddleSize:
-    """One saddle for a folded dipole.
+class FoldedSaddleSize(FedBlock):
+    """One saddle for a folded dipole; its bore is the width of both slots.
+
+    The nut traps' flats face ±y: printed lying, a trap's roof is a short bridge.
 
     Attributes:
-        bore_mm: width of both slots as they shall come out of the printer.
-        terminal: thread of the two terminal screws.
-        screw: thread of the two hold-down screws.
-        hole_growth_mm: added to the drawn bores and slots.
+        spacing_mm: centre to centre of the limbs.
     """
 
-    rod_diameter_mm: float
     spacing_mm: float
-    gap_mm: float
-    height_mm: float
-    cable_mm: float
-    boom_width_mm: float
-    boom_diameter_mm: float
-    bore_mm: float
-    screw: str
-    terminal: str
-    hole_growth_mm: float
-
-    def drawn_mm(self, hole_mm: float) -> float:
-        """What a printed hole is drawn as."""
-        return hole_mm + self.hole_growth_mm
-
-    @property
-    def drawn_bore_mm(self) -> float:
-        """Slot width of the solid."""
-        return self.drawn_mm(self.bore_mm)
 
     @property
     def front_mm(self) -> float:
@@ -75,57 +53,19 @@ class FoldedSaddleSize:
         return self.rod_diameter_mm / 2 - PROUD_MM
 
     @property
-    def terminal_fastener(self) -> Fastener:
-        """The terminal screw's sizes."""
-        return fastener(self.terminal)
-
-    @property
-    def rod_hole_mm(self) -> float:
-        """Hole drilled along x through each fed end: ISO 273 fine."""
-        return self.terminal_fastener.clearance_fine_mm
-
-    @property
-    def rod_hole_from_end_mm(self) -> float:
-        """From a fed end to the middle of that hole."""
-        return max(2 * self.rod_hole_mm, 3.5)
-
-    @property
-    def rod_gap_mm(self) -> float:
-        """Distance between a terminal screw and its hole in the rod, all round."""
-        return (self.rod_hole_mm - self.terminal_fastener.diameter_mm) / 2
-
-    @property
-    def terminal_y_mm(self) -> float:
-        """±y of the terminal screws."""
-        return self.gap_mm / 2 + self.rod_hole_from_end_mm
-
-    @property
-    def terminal_length_mm(self) -> float:
-        """Screw length to buy: the shortest that leaves enough plastic between rod and nut."""
-        bolt = self.terminal_fastener
-        least = self.rod_diameter_mm + layout.TAG_MM + layout.LEAST_UNDER_ROD_MM
-        least += bolt.nut_height_mm + layout.BEYOND_NUT_MM
-        return sold_length_mm(least)
-
-    @property
     def tip_mm(self) -> float:
         """Where along x a terminal screw ends."""
-        return self.rod_diameter_mm / 2 + layout.TAG_MM - self.terminal_length_mm
+        return self.rod_diameter_mm / 2 + TAG_MM - self.terminal_length_mm
 
     @property
     def trap_front_mm(self) -> float:
         """Where along x a terminal nut has its seat; the trap is open behind it."""
-        return self.tip_mm + layout.BEYOND_NUT_MM + self.terminal_fastener.nut_height_mm
+        return self.tip_mm + BEYOND_NUT_MM + self.terminal_fastener.nut_height_mm
 
     @property
     def terminal_gap_mm(self) -> float:
         """Smallest distance between a terminal screw and the saddle."""
         return (self.terminal_fastener.clearance_mm - self.terminal_fastener.diameter_mm) / 2
-
-    @property
-    def trap_flats_mm(self) -> float:
-        """Nut trap across flats, flats towards ±y: printed lying, its roof is a short bridge."""
-        return self.terminal_fastener.nut_across_flats_mm + layout.NUT_PLAY_MM
 
     @property
     def tallest_mm(self) -> float:
@@ -136,32 +76,6 @@ class FoldedSaddleSize:
     def back_mm(self) -> float:
         """Where along x the column ends behind: the terminal screws' tips stay inside."""
         return self.tip_mm - 0.2
-
-    @property
-    def fastener(self) -> Fastener:
-        """The hold-down screw's sizes."""
-        return fastener(self.screw)
-
-    @property
-    def counterbore_mm(self) -> float:
-        """Diameter of the hole for a hold-down head."""
-        return self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM
-
-    @property
-    def screw_length_mm(self) -> float:
-        """Hold-down length to buy: the shortest with enough plastic under its head."""
-        least = max(4.0, 1.2 * self.fastener.diameter_mm) + ENGAGEMENT_MM
-        return sold_length_mm(least)
-
-    @property
-    def seat_mm(self) -> float:
-        """Level of a hold-down head's seat."""
-        return self.screw_length_mm - ENGAGEMENT_MM
-
-    @property
-    def ear_mm(self) -> float:
-        """Height of the ears."""
-        return self.seat_mm + self.fastener.head_height_mm
 
     @property
     def screw_x_mm(self) -> tuple[float, float]:
@@ -223,7 +137,7 @@ class FoldedSaddleSize:
     @property
     def cable_at_mm(self) -> tuple[float, float]:
         """x, y of the cable's axis, going down beside the boom in front of the column."""
-        beside = self.boom_width_mm / 2 + layout.BESIDE_BOOM_MM
+        beside = self.boom_width_mm / 2 + BESIDE_BOOM_MM
         clear_of_ear = self.ear_y_mm + TIE_PLAY_MM + TIE_MM[0] + 0.4
         return self.front_mm + self.cable_mm / 2, max(beside, clear_of_ear) + self.cable_mm / 2
 

@@ -8,7 +8,7 @@ prints lying on its −y side, the rod's bore upright.
 import math
 
 from fabgen.design.arranged import Box
-from fabgen.design.part_fasteners import Fastener, fastener, sold_length_mm
+from fabgen.design.part_fasteners import fastener
 from fabgen.design.part_geometry import (
     PI,
     disc_mm2,
@@ -18,75 +18,26 @@ from fabgen.design.part_geometry import (
     under_strip_mm2,
     under_teardrop_mm3,
 )
+from fabgen.design.top_block import COUNTERBORE_PLAY_MM, TopBlock
 from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
 
-ENGAGEMENT_MM = 3.5
-"""Screw length below its part: through a tapped boom wall of 1.5 mm and two threads beyond (common practice)."""
-
-COUNTERBORE_PLAY_MM = 0.8
 EAR_WALL_MM = 1.6
 FOOT_SHARE = 0.7
 """Width of a concave foot over the boom's diameter: inside 45° on both sides, so that it prints without support."""
 
 
 @frozen
-class SaddleSize:
+class SaddleSize(TopBlock):
     """One saddle.
 
     Attributes:
-        height_mm: from the boom's top to the rod's axis.
-        bore_mm: as it shall come out of the printer.
         width_mm: along the rod.
         wall_mm: plastic round the bore.
-        boom_diameter_mm: round boom; 0 for a flat top.
-        screw: thread of the two hold-down screws.
-        hole_growth_mm: added to the drawn bores.
     """
 
-    rod_diameter_mm: float
-    height_mm: float
-    bore_mm: float
     width_mm: float
     wall_mm: float
-    boom_diameter_mm: float
-    screw: str
-    hole_growth_mm: float
-
-    @property
-    def fastener(self) -> Fastener:
-        """The hold-down screw's sizes."""
-        return fastener(self.screw)
-
-    def drawn_mm(self, hole_mm: float) -> float:
-        """What a printed hole is drawn as."""
-        return hole_mm + self.hole_growth_mm
-
-    @property
-    def drawn_bore_mm(self) -> float:
-        """Bore of the solid."""
-        return self.drawn_mm(self.bore_mm)
-
-    @property
-    def screw_length_mm(self) -> float:
-        """Length to buy: the shortest with enough plastic under its head."""
-        least = max(4.0, 1.2 * self.fastener.diameter_mm) + ENGAGEMENT_MM
-        return sold_length_mm(least)
-
-    @property
-    def seat_mm(self) -> float:
-        """Level of the screw head's seat."""
-        return self.screw_length_mm - ENGAGEMENT_MM
-
-    @property
-    def ear_mm(self) -> float:
-        """Height of the ears: seat and countersunk head."""
-        return self.seat_mm + self.fastener.head_height_mm
-
-    @property
-    def counterbore_mm(self) -> float:
-        """Diameter of the hole for the head."""
-        return self.fastener.head_diameter_mm + COUNTERBORE_PLAY_MM
 
     @property
     def clearance_mm(self) -> float:

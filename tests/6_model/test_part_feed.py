@@ -11,6 +11,7 @@ from fabgen.design import folded_saddle_sizes as sizes
 from fabgen.design.part_fasteners import fastener
 from fabgen.design.part_geometry import hexagon_corners_mm
 from fabgen.design.part_sizes import feed_block_size, folded_saddle_size, nut_size
+from fabgen.design.top_block import TAG_MM
 from fabgen.model.kernel import cq, solid_of
 from fabgen.model.parts.feed_block import feed_block
 from fabgen.model.parts.feed_lid import feed_lid
@@ -219,7 +220,7 @@ def folded_parts(case):
     for side, name in ((1, "left"), (-1, "right")):
         y = side * size.terminal_y_mm
         bolt = screw(thread=size.terminal, length_mm=size.terminal_length_mm)
-        under_head = size.rod_diameter_mm / 2 + layout.TAG_MM
+        under_head = size.rod_diameter_mm / 2 + TAG_MM
         found[f"terminal {name}"] = at(bolt, under_head, y, size.height_mm, FORWARD)
         back = size.trap_front_mm - nut_size(thread=size.terminal).height_mm
         found[f"nut {name}"] = at(nut(thread=size.terminal), back, y, size.height_mm, FORWARD)
