@@ -119,15 +119,33 @@ def test_drills(found, advice):
     odd = {"boom.outside": 40, "mounts.line.hole": 14.1, "clamp": None}
     assert found("drill_sizes", odd) == [("H05", "warn", "R, D1, D2", 14.1, 14)]
     assert "14 mm" in advice("drill_sizes", odd)
-    assert found("drill_sizes", odd | {"mounts.line.hole": 14.08}) == []
+    near = odd | {"mounts.line.hole": 14.08}
+    assert found("drill_sizes", near) == [("H05", "note", "R, D1, D2", 14.08, 14)]
+    assert found("drill_sizes", odd | {"mounts.line.hole": 14.2}) == []
     large = {"boom.outside": 60, "mounts.line.hole": 30, "clamp": None}
     assert found("drill_sizes", large) == [("H05", "warn", "R, D1, D2", 30, 25)]
     assert "hole saw" in advice("drill_sizes", large)
 
 
-def test_inch_drills(found):
-    """5/16 in is 7.9375 mm and the letter O 8.026: near enough to 8; 7.5 mm lies between M 7.493 and 19/64 7.541."""
-    assert found("drill_sizes", {"shop.drills": "inch"}) == []
+def test_inch_drills(found, advice):
+    """5/16 in is 7.9375 mm and the letter O 8.026: near enough to 8, and larger. M3 is tapped 2.5, No. 40 is 2.489."""
+    screws = ("H05", "note", "DE feed screw H04, DE feed screw H05", 2.5, 2.489)
+    assert found("drill_sizes", {"shop.drills": "inch"}) == [screws]
+    assert "No. 40 (2.489 mm), 0.011 mm smaller than the hole" in advice("drill_sizes", {"shop.drills": "inch"})
+
+
+def test_a_drill_smaller_than_its_hole_is_told_and_a_larger_one_is_not(found):
+    """Letter N is 7.671 mm, IT12 of 7.7 mm is 0.150: 0.029 mm too small is a note, 0.006 mm too large is none.
+
+    From 7.671, the nearest three decimals to 0.302 in (7.6708 mm), nothing is told: the rounding is not the shop's.
+    """
+    for hole_mm, told in (
+        (7.7, [("H05", "note", "R, D1, D2", 7.7, 7.671)]),
+        (7.665, []),
+        (7.671, []),
+    ):
+        rods = found("drill_sizes", {"shop.drills": "inch", "mounts.line.hole": hole_mm})
+        assert [each for each in rods if each[2] == "R, D1, D2"] == told
 
 
 def test_a_hole_under_the_clamp(found):
