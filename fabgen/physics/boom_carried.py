@@ -17,6 +17,7 @@ from fabgen.physics.boom_uncertainty import (
     correlated_u_relative,
     end_u_relative,
     method_u_relative,
+    widening_u_relative,
 )
 
 
@@ -84,13 +85,13 @@ def measured_allowance(
 
     Returns:
         The allowance; u is the 6 % for carrying three-rod results to the full array, what g is off by at another
-        length, and the growth; the coupon's own u is common to all rods. Rods near the boom's end keep what the
-        end adds.
+        length, and the growth; the coupon's own u is common to all rods. Rods near the boom's end, a splice or a
+        clamp keep what those add: the coupon's rod stood free of them.
     """
     near = near or Surroundings()
     known_mm = rod_length_mm if coupon_length_mm is None else coupon_length_mm
     off = carrying_u_relative(mount, frequency_mhz, known_mm, rod_length_mm)
-    u_relative = math.hypot(TRANSFER_U_RELATIVE, off, difference_u_relative)
+    u_relative = math.hypot(TRANSFER_U_RELATIVE, off, difference_u_relative, widening_u_relative(mount, near))
     unbonded = mount.style is not Style.BONDED_THROUGH
     if unbonded and near.end_distance_mm is not None and near.end_distance_mm < 3.3 * mount.outside_mm:
         u_relative = math.hypot(u_relative, 0.15)

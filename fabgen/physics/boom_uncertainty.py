@@ -62,9 +62,23 @@ def method_u_relative(mount: BoomMount, rod_length_mm: float, frequency_mhz: flo
         u = max(u, 0.15)
     if not 0.42 <= length_wl <= 0.48:
         u += 0.02
-    if near.widening_distance_mm is not None and near.widening_distance_mm < 2 * mount.outside_mm:
-        u = math.hypot(u, 0.10)
-    return u
+    return math.hypot(u, widening_u_relative(mount, near))
+
+
+def widening_u_relative(mount: BoomMount, near: Surroundings) -> float:
+    """Relative u for a splice or clamp near the rod, which acts as a wider boom.
+
+    Args:
+        mount: the mount.
+        near: how far the splice or clamp is.
+
+    Returns:
+        10 % within 2 boom widths, else 0.
+
+    Source: own study 2026, a judgement, unpublished.
+    """
+    near_mm = near.widening_distance_mm
+    return 0.10 if near_mm is not None and near_mm < 2 * mount.outside_mm else 0.0
 
 
 def correlated_u_relative(mount: BoomMount, frequency_mhz: float, near: Surroundings) -> float:

@@ -1,7 +1,10 @@
 """L: the driven element, lengths against each other and the wavelength, contacts, couples of metals."""
 
+from dataclasses import replace
+
 import pytest
 
+from fabgen.correct.ledger import correct
 from fabgen.physics.boom_closed_form import relative_allowance
 from fabgen.physics.boom_mount import BoomMount, Section, Style
 
@@ -71,6 +74,30 @@ def test_a_joint_that_drifts(found, advice, bond, joint):
     assert joint in text
 
 
+@pytest.mark.parametrize("finish", ["anodised", "painted"])
+def test_a_pressed_rod_with_a_film_is_no_contact_of_metal(found, advice, finish):
+    """A film parts the rod from the boom: its joint changes by gaining contact, and by the same figure."""
+    pressed = {
+        **BONDED,
+        "bond": "press",
+        "allowance": {"origin": "stated", "value": 2, "uncertainty": 1, "source": "x"},
+    }
+    changes = {"mounts.line": pressed, "rods.finish": finish}
+    bare = found("contact_that_drifts", {"mounts.line": pressed})
+    assert found("contact_that_drifts", changes) == bare
+    text = advice("contact_that_drifts", changes)
+    assert "metal on metal" not in text
+    assert "film or paint parts" in text
+    assert "shorter with contact" in text
+    both = changes | {"elements.D1.finish": "bare"}
+    assert [each[2] for each in found("contact_that_drifts", both)] == ["D1", "R, D2"]
+
+
+def test_a_film_under_a_screw_is_cut_through(advice):
+    changes = {"mounts.line": {**BONDED, "bond": "wall-screws"}, "rods.finish": "anodised"}
+    assert "screwed contact of metal on metal" in advice("contact_that_drifts", changes)
+
+
 def drift_by_factor_mm(length_mm):
     """Difference of the two closed forms without their range checks."""
     tube = {"section": Section.SQUARE, "outside_mm": 20, "rod_diameter_mm": 4, "wall_mm": 1.5, "hole_mm": 4.05}
@@ -119,6 +146,63 @@ def test_a_clamp_near_a_rod(found, made, advice):
     near = far | {"clamp.at": 387 + 39 + half_mm}
     assert found("clamp_near_rod", near) == [("L18", "note", "D2", 39, 40)]
     allowance_mm = made(near).ledger.line("D2").allowance.value_mm
-    assert f"adds up to {0.1 * allowance_mm:.2f} mm" in advice("clamp_near_rod", near)
+    said = f"up to {0.1 * allowance_mm:.2f} mm, which u of the computed or measured allowances counts"
+    assert said in advice("clamp_near_rod", near)
     assert found("clamp_near_rod", near | {"clamp": None}) == []
     assert found("clamp_near_rod", near | {"lengths_are": "as-cut"}) == []
+
+
+PUBLISHED = {"origin": "published", "model": "dl6wu"}
+STATED = {"origin": "stated", "value": 6.1, "uncertainty": 0.5, "source": "own readings"}
+
+
+def settled(arranged):
+    """The ledger that knows where the clamp stands, as the pipeline asks for it."""
+    clamp, half_mm = arranged.design.clamp, arranged.clamp_width_mm / 2
+    placed = replace(clamp, span_mm=(arranged.clamp_mm - half_mm, arranged.clamp_mm + half_mm))
+    return correct(replace(arranged.design, clamp=placed))
+
+
+@pytest.mark.parametrize(
+    ("allowance", "said"),
+    [
+        (PUBLISHED, "{tenth} mm, which u of the published allowances does not count"),
+        (STATED, "up to 0.61 mm, which u of the stated allowances does not count"),
+        ({"origin": "none"}, "no figure can be given, and the ledger counts nothing"),
+        ({"origin": "measured"}, "no figure can be given, and the ledger counts nothing"),
+    ],
+)
+def test_what_a_clamp_adds_is_told_by_origin(made, advice, allowance, said):
+    """The ledger's u holds the clamp's tenth for computed and measured allowances only."""
+    far = {"boom.overhang.front": 300, "mounts.line.allowance": allowance}
+    near = far | {"clamp.at": 387 + 39 + made().clamp_width_mm / 2}
+    beside = settled(made(near)).line("D2").allowance
+    assert beside == made(near).ledger.line("D2").allowance
+    text = advice("clamp_near_rod", near)
+    assert said.format(tenth=f"{0.1 * beside.value_mm:.2f}") in text
+    assert "0.00 mm" not in text
+    assert "computed" not in text.replace("own study 2026, a judgement, unpublished", "")
+
+
+def test_the_ledger_counts_the_clamp_in_a_computed_allowance(made):
+    far = {"boom.overhang.front": 300}
+    half_mm = made().clamp_width_mm / 2
+    away, beside = (
+        settled(made(far | {"clamp.at": 387 + gap_mm + half_mm})).line("D2").allowance for gap_mm in (60, 39)
+    )
+    assert beside.value_mm == away.value_mm
+    assert beside.u_mm == pytest.approx((away.u_mm**2 + (0.1 * away.value_mm) ** 2) ** 0.5)
+
+
+def test_two_origins_beside_one_clamp_are_told_apart(advice):
+    """D1 at station 270 has a computed allowance, D2 at 370 a stated one; the clamp between reaches both."""
+    changes = {
+        "mounts.other": {"style": "insulated-through", "hole": 8, "allowance": STATED},
+        "elements.D1.mount": "line",
+        "elements.D2.mount": "other",
+        "elements.R.mount": "line",
+        "elements.D2.at": 290,
+        "clamp.at": 80 + 240,
+    }
+    text = advice("clamp_near_rod", changes)
+    assert "computed or measured allowances counts; up to 0.61 mm, which u of the stated" in text

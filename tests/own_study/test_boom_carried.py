@@ -92,6 +92,15 @@ def test_unbonded_end_rods_keep_their_extra_u(end_mm: float, u_relative: float) 
     assert result.u_relative == pytest.approx(u_relative)
 
 
+@pytest.mark.parametrize(("widening_mm", "u_relative"), [(39.0, 0.10), (40.0, 0.0), (None, 0.0)])
+def test_a_clamp_near_a_measured_rod_widens_u(widening_mm: float | None, u_relative: float) -> None:
+    """The coupon's rod stood free: a clamp within two widths of the 20 mm boom adds its tenth (a judgement)."""
+    free = measured_allowance(TOP, 0.06, 0.02, 300, MHZ)
+    near = measured_allowance(TOP, 0.06, 0.02, 300, MHZ, Surroundings(widening_distance_mm=widening_mm))
+    assert near.allowance_mm == free.allowance_mm
+    assert near.u_relative == pytest.approx(math.hypot(free.u_relative, u_relative))
+
+
 def test_unbonded_rod_too_near_the_end_has_no_value_by_any_origin() -> None:
     near = Surroundings(end_distance_mm=39)
     for result in (

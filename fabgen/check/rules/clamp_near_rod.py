@@ -6,6 +6,7 @@ from fabgen.check.finding import finding
 from fabgen.check.where import names
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding
+from fabgen.design.ledger import Allowance
 
 NEAR_IN_BOOMS = 2.0
 """Plate to rod, in boom widths. Source: own study 2026, a judgement, unpublished."""
@@ -27,11 +28,27 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     ]
     if near:
         nearest_mm = max(0.0, min(mm for mm, _ in near))
-        worst_mm = max(U_SHARE * abs(line.allowance.value_mm) for _, line in near)
         where = names([element.id for element in design.elements], [line.element for _, line in near])
+        parts = "; ".join(_by_origin([line.allowance for _, line in near]))
         advice = (
-            f"it adds up to {worst_mm:.2f} mm of uncertainty in quadrature, counted in the ledger of computed and "
-            "measured allowances (own study 2026, a judgement, unpublished); move the clamp to a longer gap, or leave "
-            "it"
+            "it changes what the boom takes by up to a tenth (own study 2026, a judgement, unpublished): "
+            f"{parts}; move the clamp to a longer gap, or leave it"
         )
         yield finding("L18", "note", where, advice, measured=nearest_mm, required=limit_mm, unit="mm")
+
+
+def _by_origin(allowances: list[Allowance]) -> Iterator[str]:
+    """What a tenth is, and whether the ledger's u holds it, for each kind of allowance near the clamp."""
+    counted = [each.value_mm for each in allowances if each.origin in ("computed", "measured")]
+    if counted:
+        yield f"up to {_tenth_mm(counted)} mm, which u of the computed or measured allowances counts"
+    for origin in ("published", "stated"):
+        values_mm = [each.value_mm for each in allowances if each.origin == origin]
+        if values_mm:
+            yield f"up to {_tenth_mm(values_mm)} mm, which u of the {origin} allowances does not count"
+    if any(each.origin == "none" for each in allowances):
+        yield "of a rod without an allowance no figure can be given, and the ledger counts nothing for it"
+
+
+def _tenth_mm(values_mm: list[float]) -> str:
+    return f"{max(U_SHARE * abs(value_mm) for value_mm in values_mm):.2f}"
