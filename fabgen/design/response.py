@@ -152,14 +152,18 @@ class LeftOver:
 
     Attributes:
         uncorrected_khz: the shift that the new rods alone would have made.
+        uncorrected_cut: whether that lies at the end of the range searched: the shift is larger than said.
         outcome: of the changed array.
+        shift_cut: the same of the outcome's shift.
         residual_gain_db: root mean square of gain that no shift explains.
         residual_back_front_ratio: the same of the back/front field ratio.
         outside: elements whose length or diameter lies outside the range of the method.
     """
 
     uncorrected_khz: float
+    uncorrected_cut: bool
     outcome: Outcome
+    shift_cut: bool
     residual_gain_db: float
     residual_back_front_ratio: float
     outside: tuple[str, ...]

@@ -93,6 +93,18 @@ def test_what_is_left_for_the_whole_array(thicker: Design) -> None:
     assert left.outcome.shift_khz == pytest.approx(-17, abs=15)
     assert left.residual_back_front_ratio < 0.01
     assert left.outside == ()
+    assert (left.uncorrected_cut, left.shift_cut) == (False, False)
+
+
+def test_a_shift_beyond_what_is_looked_for_is_marked(variant: Callable[..., Design]) -> None:
+    """From 3 to 10 mm the rods alone shift the array by more than the 3 % searched: 434 MHz × (1 − e^−0.03) = 12.8."""
+    design = variant((RODS, "rods: {diameter: 10 mm, modelled_diameter: 3 mm,"), ("hole: 8 mm", "hole: 13.5 mm"))
+    case = electrical_case(arrange(replace(design, limits=NO_LIMITS), correct(design)))
+    assert case is not None
+    left = respond(case).left_over
+    assert left is not None
+    assert left.uncorrected_cut
+    assert left.uncorrected_khz == pytest.approx(434_000 * math.expm1(-0.03), abs=0.1)
 
 
 def test_a_folded_driven_rod_is_left_to_its_match(variant: Callable[..., Design]) -> None:

@@ -11,7 +11,7 @@ from fabgen.check.response.respond import respond
 from fabgen.design.allotted import with_tolerances
 from fabgen.design.electrical_case import electrical_case
 from fabgen.design.limits import Limits
-from fabgen.design.response import Response
+from fabgen.design.response import LeftOver, Response
 
 PAGES = ("millimetre", "response", "range_page")
 
@@ -90,6 +90,23 @@ def test_the_common_error_stands_apart(limited: Book) -> None:
     assert common is not None
     assert f"±{common.twice.shift_khz:.0f}" in body
     assert "outweighs" in body
+
+
+@pytest.mark.parametrize(
+    ("khz", "cut", "said"),
+    [
+        (-2841.0, False, "would move the array down by 2841 kHz. "),
+        (310.0, False, "would move the array up by 310 kHz. "),
+        (-12826.6, True, "would move the array down by more than 12827 kHz, the largest shift looked for. "),
+    ],
+)
+def test_a_search_limit_is_never_printed_as_the_shift(general: Book, khz: float, cut: bool, said: str) -> None:
+    found = response_of(general)
+    for left_cut, told in ((False, "whole array: "), (True, "whole array: more than ")):
+        left = LeftOver(khz, cut, found.drawn, left_cut, 0.01, 0.001, ())
+        body = text_of(replace(general, response=replace(found, left_over=left)), "millimetre")
+        assert said in body
+        assert told + f"{-found.drawn.shift_khz:.0f} kHz down" in body
 
 
 def test_three_panels_two_patterns_and_a_bar_for_each_quantity(limited: Book) -> None:

@@ -60,7 +60,9 @@ def left_over(gauge: Gauge) -> LeftOver | None:
     )
     return LeftOver(
         uncorrected_khz=round(float(alone.shift_khz[0]), 1),
+        uncorrected_cut=bool(alone.at_limit[0]),
         outcome=gauge.outcome(changed),
+        shift_cut=bool(shift.at_limit[0]),
         residual_gain_db=round(float(shift.residual_gain_db[0]), 4),
         residual_back_front_ratio=round(float(shift.residual_back_front[0]), 5),
         outside=outside,
