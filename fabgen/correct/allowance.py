@@ -32,7 +32,7 @@ def allowance(design: Design, element: Element) -> Allowance:
         return _of_feed(design, element)
     if design.lengths_are == "as-cut":
         return Allowance(0.0, "none", source="lengths are as cut: nothing is added", needed=False)
-    if not beside_metal(design, element.mount) and element.mount.allowance.origin in ("none", "auto"):
+    if not beside_metal(design, element.mount) and element.mount.allowance.origin != "stated":
         return Allowance(0.0, "none", source="no metal boom", needed=False)
     found = _of_mount(design, element, element.mount)
     if element.mount.hold == "middle-screw" and found.needed:
@@ -54,10 +54,8 @@ def _of_mount(design: Design, element: Element, mount: Mount) -> Allowance:
         return _stated(choice, values)
     if choice.origin == "published":
         return published(design, element, mount, values)
-    if choice.origin in ("measured", "auto", "computed") and beside_metal(design, mount):
+    if choice.origin in ("measured", "auto", "computed"):
         return _found_out(design, element, mount, values)
-    if choice.origin in ("measured", "computed"):
-        return Allowance(0.0, "none", source="no metal boom", needed=False)
     return Allowance(0.0, "none", source="asked for", published=values)
 
 

@@ -26,6 +26,7 @@ from fabgen.read.reader import read_design
 Variant = Callable[..., Design]
 AUTO = ("allowance: {origin: computed}", "allowance: auto")
 MEASURED = ("allowance: {origin: computed}", "allowance: {origin: measured}")
+WITHOUT_FIGURE = ("none", "computed", "measured", "published", "published, model: lawson")
 
 
 def geometry(design: Design, element: str = "D1") -> MountGeometry:
@@ -186,13 +187,15 @@ def test_the_nearer_record_is_taken_and_of_two_alike_the_later(variant: Variant)
     assert allowance(replace(design, records=records)).source.endswith(", c")
 
 
-def test_a_raised_rod_on_wood_needs_nothing(variant: Variant) -> None:
+@pytest.mark.parametrize("origin", [AUTO[1], *(f"allowance: {{origin: {word}}}" for word in WITHOUT_FIGURE)])
+def test_a_raised_rod_on_wood_needs_nothing(variant: Variant, origin: str) -> None:
     design = variant(
         ("  wall: 1.5 mm\n  corner_radius: 1 mm\n  material: EN AW-6060 T66", "  material: spruce"),
         ("style: insulated-through\n    hole: 8 mm\n    bush: {kind: shoulder, material: ASA}\n", "style: on-top\n"),
-        AUTO,
+        (AUTO[0], origin),
     )
-    assert not allowance(design).needed
+    found = allowance(design)
+    assert (found.value_mm, found.needed, found.missing, found.remarks) == (0.0, False, False, ())
 
 
 def test_a_boom_that_conducts_is_metal_to_every_stage(variant: Variant) -> None:
