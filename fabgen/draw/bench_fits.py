@@ -3,9 +3,10 @@
 from collections import defaultdict
 
 from fabgen.design.arranged import Arranged
-from fabgen.design.design import Element, Mount
+from fabgen.design.design import Boom, Bush, Element, Mount
 from fabgen.draw.flow import Column, Flow
 from fabgen.draw.words import ids
+from fabgen.stock.tables import print_practice
 from fabgen.units import format_mm
 
 _COLUMNS = (
@@ -32,10 +33,11 @@ def fits(flow: Flow, arranged: Arranged) -> None:
     groups: dict[tuple[str, ...], list[str]] = defaultdict(list)
     for element in design.elements:
         if element.mount is not None and design.feed_of(element) is None:
-            groups[tuple(_cells(element, element.mount))].append(element.id)
-    flow.table(_COLUMNS, [[*cells, f"for {ids(names, 8)}"] for cells, names in groups.items()])
+            groups[tuple(_cells(design.boom, element, element.mount))].append(element.id)
+    if groups:
+        flow.table(_COLUMNS, [[*cells, f"for {ids(names, 8)}"] for cells, names in groups.items()])
     growth_mm = design.printer.hole_growth_mm
-    if growth_mm > 0:
+    if groups and growth_mm > 0:
         flow.paragraph(
             f"Printed bores are drawn {growth_mm:g} mm larger than this table says, because the printer makes them "
             "that much smaller. Try one print on a rod and in a drilled offcut first; drill a tight bore out."
@@ -48,7 +50,7 @@ def fits(flow: Flow, arranged: Arranged) -> None:
         )
 
 
-def _cells(element: Element, mount: Mount) -> list[str]:
+def _cells(boom: Boom, element: Element, mount: Mount) -> list[str]:
     bush, keeper, saddle = mount.bush, mount.keeper, mount.saddle
     bore = bush.bore_mm if bush else saddle.bore_mm if saddle else 0.0
     held = keeper.kind if keeper and mount.hold == "keepers" else mount.bond or mount.hold
@@ -57,11 +59,18 @@ def _cells(element: Element, mount: Mount) -> list[str]:
         _size(element.rod.diameter_mm),
         _size(mount.hole_mm),
         _size(bore),
-        f"{_size(bush.spigot_mm)} × {bush.spigot_length_mm:g}" if bush else "–",
+        f"{_size(bush.spigot_mm)} × {_spigot_length_mm(boom, bush):g}" if bush else "–",
         _size(bush.flange_mm if bush else 0.0),
         _size(keeper.bore_mm if keeper else 0.0),
         held.replace("-", " "),
     ]
+
+
+def _spigot_length_mm(boom: Boom, bush: Bush) -> float:
+    """In one wall; of a sleeve through both, to where it ends inside the far one."""
+    if bush.kind == "shoulder":
+        return bush.spigot_length_mm
+    return boom.width_mm - print_practice("keeper_play_mm")
 
 
 def _size(diameter_mm: float) -> str:

@@ -43,10 +43,14 @@ def test_spigot_in_hole(found, spigot_mm, expected):
     assert found("spigot_in_hole", {"mounts.line.bush.spigot": spigot_mm}) == expected
 
 
-def test_wall_of_a_spigot(found):
-    """Hole 6.6, spigot 6.4, bore 4.2: 1.1 mm; the fits ask for 1.2."""
+def test_wall_of_a_spigot(found, advice):
+    """Hole 6.6, spigot 6.4, bore 4.2: 1.1 mm; the fits ask for 1.2. What is advised is never too small a hole."""
     assert found("spigot_in_hole", {"mounts.line.hole": 6.6}) == [("F04", "warn", "R, D1, D2", 1.1, 1.2)]
     assert found("spigot_in_hole", {"mounts.line.hole": 6.8}) == []
+    assert "drill the hole 6.8 mm or more" in advice("spigot_in_hole", {"mounts.line.hole": 6.6})
+    assert "drill the hole 6.9 mm or more" in advice(
+        "spigot_in_hole", {"mounts.line.hole": 6.6, "mounts.line.bush.bore": 4.22}
+    )
 
 
 def test_length_of_a_spigot(found):

@@ -48,6 +48,12 @@ CHANGES = {
     ),
     "small": (("outside: 20 mm", "outside: 10 mm"), ("hole: 8 mm", "hole: 6 mm"), ("diameter: 4 mm", "diameter: 2 mm")),
     "long-title": (("title: River gauge link", f"title: {'<b>' + 'Längste ' * 60}"),),
+    "deep-and-tall": (
+        ("number: RGL-434-06", "number: JQ_g.7_"),
+        ("revision: A", "revision: Q"),
+        ("title: River gauge link", "title: Größe Ägyptens"),
+    ),
+    "sleeve": (("kind: shoulder", "kind: sleeve"),),
     "blank": (("sheet: {owner: Weir and sluice workshop, creator: K. M., date: 2026-11-20}\n", ""),),
 }
 ALL = (*CHANGES, "dense")

@@ -31,6 +31,12 @@ def test_lettering_covers_nothing_and_nothing_runs_through_it(shape):
         assert [str(found) for found in overlaps(sheet, lines=True)] == [], sheet.name
 
 
+def test_letters_that_reach_deep_and_high_keep_apart(arranged_as):
+    """A number with J, Q or _ stands over a title with Ä: neither may cost a design its verdict."""
+    for sheet in every_sheet(arranged_as("deep-and-tall")):
+        assert [str(found) for found in overlaps(sheet)] == [], sheet.name
+
+
 def test_pages_of_the_templates_lose_no_lettering(shape):
     arranged, plan = shape
     design = arranged.design
@@ -274,6 +280,12 @@ def test_bench_names_the_checks_and_fits(arranged_as):
         assert wanted in said
     for fit in ("4.000", "8.000", "4.200", "7.800 × 2.5", "12.000", "3.700"):
         assert fit in said
+
+
+def test_bench_names_the_length_of_a_sleeve_through_both_walls(arranged_as):
+    """Boom 20 mm, the far end 0.3 mm inside: no spigot in one wall is bought or measured."""
+    said = [text for sheet in sheets_of("bench", *arranged_as("sleeve")) for text in words(sheet)]
+    assert "7.800 × 19.7" in said
 
 
 def view_of(arranged_as, name):

@@ -1,5 +1,6 @@
 """Does every bush go into its hole, with plastic enough round the rod and through the wall?"""
 
+import math
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding
@@ -48,7 +49,8 @@ def _wall(element: Element, bush: Bush) -> Iterator[Finding]:
     wall_mm = (bush.spigot_mm - bush.bore_mm) / 2
     least_mm = tables.print_practice("thinnest_spigot_wall_mm")
     if wall_mm < least_mm - 1e-9:
-        advice = f"drill the hole {bush.bore_mm + 2 * least_mm + 0.2:.1f} mm or more; thinner plastic cracks on the rod"
+        hole_mm = bush.bore_mm + 2 * least_mm + tables.print_practice("spigot_clearance_mm")
+        advice = f"drill the hole {math.ceil(10 * hole_mm - 1e-6) / 10:g} mm or more; thinner plastic cracks on the rod"
         yield finding("F04", "warn", element.id, advice, measured=wall_mm, required=least_mm, unit="mm")
 
 

@@ -58,10 +58,10 @@ def sheets(arranged: Arranged, plan: CutPlan) -> list[Sheet]:
 
 def _head(flow: Flow, arranged: Arranged) -> None:
     design = arranged.design
-    top = flow.need(12.0)
+    top = flow.need(12.5)
     name = f"{design.number} {design.revision}   bench"
     flow.pen.text(LEFT_MM, top - 5.0, shortened(name, 5.0, flow.width_mm), 5.0)
-    flow.pen.text(LEFT_MM, top - 10.0, shortened(design.title, LETTERING_MM, flow.width_mm))
+    flow.pen.text(LEFT_MM, top - 10.5, shortened(design.title, LETTERING_MM, flow.width_mm))
     flow.paragraph(
         f"Boom: {boom_size(design.boom)}, {design.boom.material.name}, {format_mm(design.boom.length_mm)} mm. "
         f"Status: {allowance_words(arranged.ledger)}."
