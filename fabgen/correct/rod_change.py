@@ -39,18 +39,33 @@ def rod_change(design: Design, element: Element) -> RodChange:
     rod, feed = element.rod, design.feed_of(element)
     if rod.replaces_mm == rod.diameter_mm or (feed is not None and feed.kind == "folded-dipole"):
         return RodChange()
-    from fabgen.physics.scattering_reactance import DIAMETER_LIMIT_WL, equal_scattering_length
+    from fabgen.physics.scattering_reactance import equal_scattering_length
 
-    thickest_wl = max(rod.diameter_mm, rod.replaces_mm) / design.wavelength_mm
     try:
         found = equal_scattering_length(element.length_mm, rod.replaces_mm, rod.diameter_mm, design.frequency_mhz)
     except ValueError as error:
         return RodChange(remarks=(Remark("E05", str(error), rod.diameter_mm, rod.replaces_mm, "mm"),))
-    remarks: tuple[Remark, ...] = ()
-    if not found.within_range:
-        text = f"rods of 0.38 to 0.50 wavelengths and up to {DIAMETER_LIMIT_WL} wavelengths thick are in its range"
-        remarks = (Remark("E06", text, thickest_wl, DIAMETER_LIMIT_WL, "wl"),)
+    thickest_mm, wl_mm = max(rod.diameter_mm, rod.replaces_mm), design.wavelength_mm
+    remarks = () if found.within_range else (_outside(element.length_mm, found.length_mm, thickest_mm, wl_mm),)
     return RodChange(found.change_mm, U_SHARE * abs(found.change_mm), remarks)
+
+
+def _outside(modelled_mm: float, new_mm: float, thickest_mm: float, wl_mm: float) -> Remark:
+    """E06 with the figure that lies outside: the thicker diameter, else one of the two lengths."""
+    from fabgen.physics.scattering_reactance import DIAMETER_LIMIT_WL, LENGTH_RANGE_WL
+
+    shortest_wl, longest_wl = LENGTH_RANGE_WL
+    if thickest_mm / wl_mm > DIAMETER_LIMIT_WL:
+        what, measured_wl, limit_wl = "diameter", thickest_mm / wl_mm, DIAMETER_LIMIT_WL
+    elif max(modelled_mm, new_mm) / wl_mm > longest_wl:
+        what, measured_wl, limit_wl = "length", max(modelled_mm, new_mm) / wl_mm, longest_wl
+    else:
+        what, measured_wl, limit_wl = "length", min(modelled_mm, new_mm) / wl_mm, shortest_wl
+    text = (
+        f"its {what} is outside: rods of {shortest_wl:.2f} to {longest_wl:.2f} wavelengths and up to "
+        f"{DIAMETER_LIMIT_WL} wavelengths thick are in the method's range"
+    )
+    return Remark("E06", text, measured_wl, limit_wl, "wl")
 
 
 def free_length_mm(design: Design, element: Element) -> float:

@@ -96,6 +96,27 @@ def test_what_is_left_for_the_whole_array(thicker: Design) -> None:
     assert (left.uncorrected_cut, left.shift_cut) == (False, False)
 
 
+@pytest.mark.parametrize(
+    ("rods", "length_mm", "what", "limit_wl"),
+    [
+        ("rods: {diameter: 6.5 mm, modelled_diameter: 4 mm,", 338.1, "diameter", 0.0085),
+        ("rods: {diameter: 5 mm, modelled_diameter: 4 mm,", 350.0, "length", 0.50),
+        ("rods: {diameter: 5 mm, modelled_diameter: 4 mm,", 250.0, "length", 0.38),
+    ],
+)
+def test_what_is_outside_the_range_is_the_figure_told(
+    variant: Callable[..., Design], rods: str, length_mm: float, what: str, limit_wl: float
+) -> None:
+    """At 434 MHz: 6.5 mm are 0.0094 wavelengths, 350 mm are 0.507, 250 mm are 0.362."""
+    design = variant((RODS, rods), ("hole: 8 mm", "hole: 9.5 mm"))
+    element = replace(design.element("R"), length_mm=length_mm)
+    (remark,) = rod_change(design, element).remarks
+    assert (remark.code, remark.required) == ("E06", limit_wl)
+    assert remark.text.startswith(f"its {what} is outside")
+    assert remark.measured is not None
+    assert remark.measured < limit_wl if limit_wl == 0.38 else remark.measured > limit_wl
+
+
 def test_a_shift_beyond_what_is_looked_for_is_marked(variant: Callable[..., Design]) -> None:
     """From 3 to 10 mm the rods alone shift the array by more than the 3 % searched: 434 MHz × (1 − e^−0.03) = 12.8."""
     design = variant((RODS, "rods: {diameter: 10 mm, modelled_diameter: 3 mm,"), ("hole: 8 mm", "hole: 13.5 mm"))
