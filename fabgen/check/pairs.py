@@ -100,15 +100,30 @@ class NearPair:
 
 
 def near_pairs(arranged: Arranged) -> Iterator[NearPair]:
-    """Every pair nearer than `REACH_MM` with its class.
+    """Every pair nearer than `REACH_MM` and every declared one, with its class.
+
+    Left out: the boom with a part whose middle lies beyond its end and which so cannot meet it. That is the design's
+    mistake, judged by the rules of the boom's ends and holes.
 
     Raises:
-        ProgramError: a pair that nobody declared.
+        ProgramError: a pair that nobody declared, or a declared one that does not stand near.
     """
+    seen: set[Interface] = set()
     for first, second, interface in _classed(arranged):
         distance_mm = parts_distance_mm(first.shapes, second.shapes)
-        if distance_mm <= REACH_MM:
-            yield NearPair(first, second, interface, 0.0 if interface else _limit_mm(first, second), distance_mm)
+        if interface:
+            seen.add(interface)
+            if not _parted_by_the_end(arranged, first, second):
+                yield NearPair(first, second, interface, 0.0, distance_mm)
+        elif distance_mm <= REACH_MM:
+            yield NearPair(first, second, None, _limit_mm(first, second), distance_mm)
+    for interface in arranged.interfaces:
+        if interface not in seen:
+            first, second = arranged.part(interface.first), arranged.part(interface.second)
+            if not _parted_by_the_end(arranged, first, second):
+                raise ProgramError(
+                    f"{first.name} and {second.name} are to meet by '{interface.kind}', and are far apart"
+                )
 
 
 def too_near(arranged: Arranged) -> Iterator[NearPair]:
@@ -130,6 +145,14 @@ def _classed(arranged: Arranged) -> Iterator[tuple[Placed, Placed, Interface | N
     declared = {(i.first, i.second): i for i in arranged.interfaces}
     for first, second in _sweep(arranged):
         yield first, second, declared.get((first.name, second.name)) or declared.get((second.name, first.name))
+
+
+def _parted_by_the_end(arranged: Arranged, first: Placed, second: Placed) -> bool:
+    """Whether one of the two is the boom and the other's middle lies beyond its end."""
+    if "boom" not in (first.part, second.part):
+        return False
+    box = bounding_box((second if first.part == "boom" else first).shapes)
+    return not 0 <= (box.low[0] + box.high[0]) / 2 <= arranged.design.boom.length_mm
 
 
 def _limit_mm(first: Placed, second: Placed) -> float:

@@ -10,6 +10,7 @@ from hypothesis import strategies as st
 
 from fabgen.arrange.arrange import arrange
 from fabgen.check.pairs import near_pairs, too_near
+from fabgen.check.rules.over_the_end import findings as over_the_end
 from fabgen.check.rules.pair_clearance import findings
 from fabgen.correct.ledger import correct
 from fabgen.design.arranged import Arranged, Box, Cylinder, Shape
@@ -128,3 +129,40 @@ def test_a_distance_is_symmetric_and_never_more_than_between_two_points(first: S
     apart = distance_mm(first, second)
     assert apart == distance_mm(second, first)
     assert apart <= min(math.dist(p, q) for p in points(first)[::3] for q in points(second)[::3]) + 1e-9
+
+
+@pytest.mark.parametrize("far", [(0.0, 13.0, 0.0), (9.0, 9.0, 9.0), (500.0, 0.0, 0.0)])
+def test_parts_that_are_to_meet_are_never_left_out(variant: Variant, far: tuple[float, float, float]) -> None:
+    """A keeper away from its place: its pairs are given to the kernel, or are an error of the program at once.
+
+    13 mm beside it and 9 mm along each axis, 15.6 mm, are both beyond the search range of 12 mm.
+    """
+    found = arranged(variant())
+    pushed = _pushed(found, "D1 keeper left", far)
+    if max(far) == 9.0:
+        given = {pair.interface: pair.distance_mm for pair in near_pairs(pushed) if pair.interface}
+        assert set(given) == set(found.interfaces)
+    else:
+        with pytest.raises(
+            ProgramError, match=r"D1 keeper left and D1.* are to meet by 'keeper on .*', and are far apart"
+        ):
+            list(near_pairs(pushed))
+
+
+@pytest.mark.parametrize("at_mm", [10.0, 22.0, 34.0])
+def test_a_bow_beyond_the_booms_end_is_the_designs_mistake(variant: Variant, at_mm: float) -> None:
+    """The clamp has its finding; a stamped package is made all the same, so no error of the program."""
+    design = variant(("clamp: {at: 55 mm", f"clamp: {{at: {at_mm} mm"), base="valley-television-637.yaml")
+    found = arranged(design)
+    assert [f.code for f in over_the_end(found) if f.severity == "fail"] == ["F14"]
+    left = set(found.interfaces) - {pair.interface for pair in near_pairs(found)}
+    assert {(i.first, i.kind) for i in left} == {("boom U-bolt 1", "bow on boom")}
+
+
+def _pushed(found: Arranged, name: str, far: tuple[float, float, float]) -> Arranged:
+    part = found.part(name)
+    (ring,) = part.shapes
+    assert isinstance(ring, Cylinder)
+    x, y, z = (c + f for c, f in zip(ring.centre, far, strict=True))
+    moved = dataclasses.replace(part, shapes=(dataclasses.replace(ring, centre=(x, y, z)),))
+    return dataclasses.replace(found, placed=tuple(moved if p is part else p for p in found.placed))

@@ -72,3 +72,15 @@ def test_a_part_whose_pairs_are_right_is_still_held_to_its_shapes(pair, message)
     """The distance of parallel rods and a bore's fit are the same; the sizes are off by 0.01 mm."""
     with pytest.raises(ProgramError, match=f"^{message}"):
         confirm([pair])
+
+
+@pytest.mark.parametrize("along", [0, 1, 2])
+@pytest.mark.parametrize("part", [rod("R", 100.0), bush("R", 100.0)], ids=["rod", "bush"])
+def test_a_part_a_micrometre_off_its_shapes_is_noticed(part, along):
+    """Along the rod's own axis too, where no gap and no fit changes; shapes and interfaces stay where they were."""
+    origin = list(part.frame.origin)
+    origin[along] += 0.001
+    off = dataclasses.replace(part, frame=dataclasses.replace(part.frame, origin=tuple(origin)))
+    passed_by = dataclasses.replace(parallel(off), limit_mm=7.0)  # has its finding: only the part itself is confirmed
+    with pytest.raises(ProgramError, match=f"^R: {part.part} stands out of its shapes"):
+        confirm([passed_by])
