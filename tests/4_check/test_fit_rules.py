@@ -151,6 +151,8 @@ def test_a_sleeves_right_hand_keeper_stops_on_the_boom(made, found, advice):
     ]
     assert found("keeper_stop", sleeve | {"mounts.line.keeper.outside": 10.2}) == []
     assert "no flange stands on the right" in advice("keeper_stop", sleeve)
+    advised = sleeve | {"mounts.line.keeper.outside": 10.2, "mounts.line.keeper.bore": 3.9}
+    assert found("keeper_stop", advised) == found("keeper_grip", advised) == []
     seats = {meeting.second for meeting in made(sleeve).interfaces if meeting.first == "D1 keeper right"}
     assert seats == {"D1"}
 

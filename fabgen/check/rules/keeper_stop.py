@@ -24,7 +24,10 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
                 severity, limit_mm = missed
                 advice = f"it rests on the rim of {what}, {opening_mm:.3f} mm at its largest: make it wider"
                 if mount.bush and mount.bush.kind == "sleeve":
-                    advice += ", drill a smaller hole, or use bush: {kind: shoulder}: no flange stands on the right"
+                    advice += (
+                        ", as a push-ring whose bore is nearer to the rod so that it is not strained too far, or use "
+                        "bush: {kind: shoulder}: no flange stands on the right"
+                    )
                 yield finding(
                     "F08", severity, element.id, advice, measured=mount.keeper.outside_mm, required=limit_mm, unit="mm"
                 )
