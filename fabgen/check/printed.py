@@ -7,11 +7,10 @@ from typing import Any
 
 from fabgen.design.arranged import Arranged, Parameters, Placed
 from fabgen.design.bush_sizes import BushSize, bush_size, sleeve_size
-from fabgen.design.feed_layout import RIM_MM
 from fabgen.design.feed_sizes import FeedBlockSize, feed_block_size
-from fabgen.design.folded_saddle_sizes import RETAINER_WALL_MM, FoldedSaddleSize, folded_saddle_size
+from fabgen.design.folded_saddle_sizes import FoldedSaddleSize, folded_saddle_size
 from fabgen.design.keeper_sizes import PushRingSize, SnapKeeperSize, push_ring_size, snap_keeper_size
-from fabgen.design.saddle_sizes import EAR_WALL_MM, SaddleSize, saddle_size
+from fabgen.design.saddle_sizes import SaddleSize, saddle_size
 from fabgen.frozen import frozen
 
 Size = BushSize | FeedBlockSize | FoldedSaddleSize | PushRingSize | SaddleSize | SnapKeeperSize
@@ -65,7 +64,7 @@ def _size(part: str, parameters: Parameters) -> Size:
 
 
 def thinnest_wall_mm(size: Size) -> tuple[str, float]:
-    """The thinnest standing wall of a part as drawn, bores widened by the printer's growth, with its name."""
+    """The thinnest wall of a part as drawn, bores widened by the printer's growth, with its name."""
     match size:
         case BushSize():
             rim_mm = (size.flange_mm - size.spigot_mm) / 2
@@ -74,14 +73,8 @@ def thinnest_wall_mm(size: Size) -> tuple[str, float]:
             walls = [("ring wall", (size.outside_mm - size.drawn_bore_mm) / 2)]
         case SnapKeeperSize():
             walls = [("clip wall", (size.outside_mm - size.drawn_bore_mm) / 2)]
-        case SaddleSize():
-            under_mm = size.height_mm - size.drawn_bore_mm / 2
-            round_mm = size.column_half_mm - size.drawn_bore_mm / 2
-            walls = [("wall round the bore", round_mm), ("ear wall", EAR_WALL_MM), ("floor", under_mm)]
-        case FeedBlockSize():
-            walls = [("rim", RIM_MM)]
-        case FoldedSaddleSize():
-            walls = [("wall over the upper slot", RETAINER_WALL_MM - size.hole_growth_mm), ("ear wall", EAR_WALL_MM)]
+        case SaddleSize() | FeedBlockSize() | FoldedSaddleSize():
+            walls = list(size.walls_mm.items())
     return min(walls, key=lambda wall: wall[1])
 
 

@@ -11,7 +11,7 @@ import math
 
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM
 from fabgen.design.part_geometry import hexagon_corners_mm
-from fabgen.design.top_block import BESIDE_BOOM_MM, BEYOND_NUT_MM, ENGAGEMENT_MM, TAG_MM, FedBlock
+from fabgen.design.top_block import BESIDE_BOOM_MM, BEYOND_NUT_MM, ENGAGEMENT_MM, LEAST_UNDER_ROD_MM, TAG_MM, FedBlock
 from fabgen.frozen import frozen
 from fabgen.stock.fasteners import tap_drill_mm
 
@@ -128,8 +128,8 @@ class FeedBlockLayout(FedBlock):
 
     @property
     def drain_at_mm(self) -> tuple[float, float]:
-        """x, y of the drain."""
-        return -self.cable_at_mm[0], -(self.slot_y_mm[0] + DRAIN_MM / 2)
+        """x, y of the drain: opposite the cable, or as far from the trap as its slot where the cable is thinner."""
+        return -max(self.cable_at_mm[0], self.slot_x_mm[0] + DRAIN_MM / 2), -(self.slot_y_mm[0] + DRAIN_MM / 2)
 
     @property
     def tongue_y_mm(self) -> tuple[float, float]:
@@ -152,7 +152,8 @@ class FeedBlockLayout(FedBlock):
     @property
     def half_x_mm(self) -> float:
         """Half the block's length along the boom."""
-        return max(self.slot_x_mm[1] + POST_MM, self.screw_x_mm[1] + self.counterbore_mm / 2 + 0.5 + WALL_X_MM)
+        openings = max(self.slot_x_mm[1], DRAIN_MM / 2 - self.drain_at_mm[0])
+        return max(openings + POST_MM, self.screw_x_mm[1] + self.counterbore_mm / 2 + 0.5 + WALL_X_MM)
 
     @property
     def half_y_mm(self) -> float:
@@ -214,9 +215,13 @@ class FeedBlockLayout(FedBlock):
 
     @property
     def roof_mm(self) -> float:
-        """Level of the cradle's roof over a round boom: the boom's circle closed by tangents at 45°, or cut flat."""
+        """Level of the cradle's roof over a round boom: the boom's circle closed by tangents at 45°, or cut flat.
+
+        Cut where plastic under a hold-down head or a rod asks for it.
+        """
         apex = (math.sqrt(2) - 1) * self.boom_diameter_mm / 2
-        return min(apex, self.seat_mm - 3.0) if self.boom_diameter_mm else 0.0
+        under_rod = self.height_mm - self.bore_mm / 2 - LEAST_UNDER_ROD_MM
+        return min(apex, self.seat_mm - 3.0, under_rod) if self.boom_diameter_mm else 0.0
 
     def underside_mm(self, y_mm: float) -> float:
         """Level of the underside at a distance y across: the cradle carries the boom between 45° and 60°."""

@@ -1,16 +1,21 @@
 """Sizes of the straight dipole's feed block and its lid: envelope and volume on top of the layout."""
 
+import itertools
 import math
 from collections.abc import Callable
 
 from fabgen.design import feed_layout as layout
 from fabgen.design.arranged import Box
 from fabgen.design.feed_layout import FeedBlockLayout
+from fabgen.design.openings import Opening, box_opening, hexagon_opening, round_opening, wall_between_mm
 from fabgen.design.part_fasteners import SCREW_LENGTHS_MM, fastener
 from fabgen.design.part_geometry import disc_mm2, hexagon_corners_mm, integral, teardrop_mm2, under_disc_mm3
 from fabgen.design.top_block import BEYOND_NUT_MM, ENGAGEMENT_MM, terminal_for
 from fabgen.frozen import frozen
 from fabgen.stock.practice import print_practice
+
+NO_WALL = (("rod", "nut"), ("cable slot", "drain"))
+"""An opening over the other, and two on opposite sides of the block."""
 
 
 @frozen
@@ -22,6 +27,26 @@ class FeedBlockSize(FeedBlockLayout):
         """The closed block in the local frame: an envelope that holds the lid too."""
         x, y = self.half_x_mm, self.half_y_mm
         return (Box((-x, -y, self.bottom_mm), (x, y, self.top_mm)),)
+
+    @property
+    def walls_mm(self) -> dict[str, float]:
+        """Walls of block and lid as drawn that other numbers can make thinner than the rim; the rest never are."""
+        at_lid_screws = layout.LID_SCREW_IN_MM - layout.RIM_MM - layout.LID_PLAY_MM / 2
+        lid_hole, pilot = (self.drawn_mm(hole) for hole in (fastener(self.lid_screw).clearance_mm, self.pilot_mm))
+        walls = {
+            "rim": layout.RIM_MM,
+            "rib between the rods": self.gap_mm,
+            "lid's wedge": min(self.cable_mm, layout.TONGUE_MM),
+            "lid's edge": at_lid_screws - lid_hole / 2,
+            "wall round a lid screw": layout.POST_MM - layout.LID_SCREW_IN_MM - pilot / 2,
+            "floor between rod and nut": self.height_mm - self.drawn_bore_mm / 2 - self.trap_top_mm - layout.STEP_MM,
+            **self._between_openings_mm(),
+        }
+        if self.boom_diameter_mm:
+            beside = self.slot_y_mm[0] - self.boom_diameter_mm / 2 * math.sin(math.radians(layout.CRADLE_DEG))
+            walls["floor between rod and cradle"] = self._rod_to_cradle_mm()
+            walls["wall between drain and cradle"] = beside - self.hole_growth_mm / 2
+        return walls
 
     @property
     def volume_mm3(self) -> float:
@@ -39,6 +64,37 @@ class FeedBlockSize(FeedBlockLayout):
         tongue = layout.TONGUE_MM * (self.lid_seat_mm - self.tongue_low_mm) - across * along / 2
         teeth = len(self.tooth_z_mm) * layout.TOOTH_MM**2
         return plate + (tongue + teeth) * self.cable_mm
+
+    def _between_openings_mm(self) -> dict[str, float]:
+        """Walls between upright openings, all looked at in the quarter +x, +y: the drain's place is turned into it.
+
+        A hold-down screw's own hole lies inside its head's.
+        """
+        low, floor, y = self.bottom_mm, self.height_mm, self.terminal_y_mm
+        half_bore, (drain_x, drain_y) = self.drawn_bore_mm / 2, self.drain_at_mm
+        hold_x = self.screw_x_mm[1]
+        openings = {
+            "rod": box_opening((-half_bore, half_bore), (self.gap_mm / 2, self.half_y_mm), floor - half_bore, floor),
+            "nut": hexagon_opening(self.trap_flats_mm, (0.0, y), low, self.trap_top_mm),
+            "hold-down head": round_opening(self.drawn_mm(self.counterbore_mm), (hold_x, 0.0), self.seat_mm, floor),
+            "cable slot": box_opening(self.slot_x_mm, self.slot_y_mm, low, floor),
+            "drain": round_opening(self.drawn_mm(layout.DRAIN_MM), (-drain_x, -drain_y), low, floor),
+            "lid screw": round_opening(
+                self.drawn_mm(self.pilot_mm), self.lid_screw_mm, self.lid_seat_mm - layout.PILOT_DEPTH_MM, floor
+            ),
+        }
+        pairs = (pair for pair in itertools.combinations(openings, 2) if pair not in NO_WALL)
+        return {f"wall between {a} and {b}": wall_between_mm(openings[a], openings[b]) for a, b in pairs}
+
+    def _rod_to_cradle_mm(self) -> float:
+        """From the inner end of a rod's trough to a round boom's cradle, both cut across the boom."""
+        radius, y, z = self.boom_diameter_mm / 2, self.gap_mm / 2, self.height_mm - self.drawn_bore_mm / 2
+        if z <= self.underside_mm(y):
+            return 0.0
+        flat, side = (math.sqrt(2) - 1) * radius - self.roof_mm, math.sqrt(0.5) * radius
+        roof = Opening(((-flat, self.roof_mm), (flat, self.roof_mm), (side, side - radius), (-side, side - radius)))
+        end, boom = Opening(((y, z),)), Opening(((0.0, -radius),), radius)
+        return min(wall_between_mm(end, roof), wall_between_mm(end, boom))
 
     def _open_above_mm3(self) -> float:
         """Rabbet, chamber less posts and rib, and the holes for the lid's screws."""

@@ -171,6 +171,15 @@ class FoldedSaddleSize(FedBlock):
         return drop_mm(self.boom_diameter_mm, self.foot_width_mm / 2)
 
     @property
+    def walls_mm(self) -> dict[str, float]:
+        """Walls as drawn; all others are thicker than the first of these or the second."""
+        return {
+            "wall over the upper slot": RETAINER_WALL_MM - self.hole_growth_mm,
+            "rib between the rod's ends": self.gap_mm,
+            "ear wall": EAR_WALL_MM - self.hole_growth_mm / 2,
+        }
+
+    @property
     def volume_mm3(self) -> float:
         """Exact volume of the solid."""
         (y0, y1), (x0, x1), bore = self.y_mm, self.x_mm, self.drawn_bore_mm

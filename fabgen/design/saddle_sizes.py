@@ -86,6 +86,17 @@ class SaddleSize(TopBlock):
         return drop_mm(self.boom_diameter_mm, self.foot_width_mm / 2)
 
     @property
+    def walls_mm(self) -> dict[str, float]:
+        """Walls as drawn; a counterbore's apex points to +y."""
+        counterbore = self.drawn_mm(self.counterbore_mm)
+        return {
+            "wall round the bore": self.column_half_mm - self.drawn_bore_mm / 2,
+            "ear wall": EAR_WALL_MM - self.hole_growth_mm / 2,
+            "ear wall at a counterbore's apex": self.width_mm / 2 - math.sqrt(0.5) * counterbore,
+            "floor": self.height_mm - self.drawn_bore_mm / 2,
+        }
+
+    @property
     def volume_mm3(self) -> float:
         """Exact volume of the solid."""
         ears = (self.length_mm - 2 * self.column_half_mm) * self.ear_mm

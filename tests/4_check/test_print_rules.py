@@ -19,6 +19,33 @@ def test_walls_under_two_lines(found):
     assert found("printed_walls", thin) == [("P01", "fail", "R, D1, D2", 0.65, 0.8)]
 
 
+def test_walls_between_the_openings_of_the_feeds(found):
+    """A gap of 1 mm is a rib of 1 mm, a thin cable has a thin wedge, and wide growth eats the walls at the lid screws.
+
+    Round a lid screw M3 stand 7 − 4.4 − 2.5/2 = 1.35 mm of its post, less half the growth: 1 mm at 0.7.
+    """
+
+    def walls(changes):
+        return [each for each in found("printed_walls", changes) if each[2] == "DE"]
+
+    for kind in ({"kind": "straight-dipole"}, {"kind": "folded-dipole", "spacing": 30}):
+        narrow = {"feed": kind | {"gap": 1.0, "height": 18, "cable": 5}, "printer.hole_growth": 0}
+        assert walls(narrow | {"printer.nozzle": 0.5}) == []
+        assert walls(narrow | {"printer.nozzle": 0.55}) == [("P01", "fail", "DE", 1.0, 1.1)]
+    assert walls({"feed.cable": 1.0, "printer.nozzle": 0.55}) == [("P01", "fail", "DE", 1.0, 1.1)]
+    assert walls({"printer.hole_growth": 0.7, "printer.nozzle": 0.5}) == []
+    assert walls({"printer.hole_growth": 0.72, "printer.nozzle": 0.5}) == [("P01", "fail", "DE", 0.99, 1.0)]
+
+
+def test_a_saddles_walls_are_judged_as_drawn(found, on_top):
+    """On a narrow boom 1.2 mm is left at the apex of a counterbore, less √½ of the growth: 0.85 at 0.5."""
+    narrow = {"mounts.line": on_top, "boom.outside": 10, "printer.hole_growth": 0.5}
+    seen = [each for each in found("printed_walls", narrow | {"printer.nozzle": 0.45}) if each[2] != "DE"]
+    ((code, severity, where, wall_mm, least_mm),) = seen
+    assert (code, severity, where, least_mm) == ("P01", "fail", "R, D1, D2", 0.9)
+    assert abs(wall_mm - (1.2 - 0.5 * 0.5**0.5)) < 1e-3
+
+
 def test_parts_larger_than_the_bed(found, made):
     block = made().part("DE feed block").shapes[0]
     x_mm, y_mm = (round(block.high[i] - block.low[i], 3) for i in (0, 1))

@@ -292,33 +292,15 @@ def test_folded_saddle_volume_is_the_formula(case):
     assert parts["saddle"].Volume(1e-6) == pytest.approx(size.volume_mm3, rel=1e-7)
 
 
-def plan_distance(first, second):
-    return math.hypot(first[0] - second[0], first[1] - second[1])
-
-
 @pytest.mark.parametrize("given", STRAIGHT)
 def test_walls_of_the_feed_block(given):
-    """No wall under 1.2 mm (common practice), as the openings come out of the printer."""
+    """No wall under 1.2 mm (common practice), as drawn."""
     size = feed_block_size(**given)
-    corner = hexagon_corners_mm(size.trap_flats_mm) / 2
-    trap, (slot_x, slot_y) = (0.0, size.terminal_y_mm), (size.slot_x_mm, size.slot_y_mm)
-    hold, drain = (size.screw_x_mm[1], 0.0), size.drain_at_mm
-    walls = {
-        "rim": size.half_x_mm - size.rabbet_mm[0],
-        "slot to outside": size.half_y_mm - slot_y[1],
-        "slot to trap": slot_x[0] - corner,
-        "slot to rod": slot_x[0] - size.bore_mm / 2,
-        "slot to hold-down": slot_y[0] - size.counterbore_mm / 2,
-        "hold-down to trap": plan_distance(hold, trap) - size.counterbore_mm / 2 - corner,
-        "hold-down to outside": size.half_x_mm - hold[0] - size.counterbore_mm / 2,
-        "drain to trap": plan_distance(drain, (0.0, -size.terminal_y_mm)) - layout.DRAIN_MM / 2 - corner,
-        "drain to rod": -drain[0] - layout.DRAIN_MM / 2 - size.bore_mm / 2,
-        "drain to outside": size.half_y_mm + drain[1] - layout.DRAIN_MM / 2,
-        "post": layout.POST_MM - layout.LID_SCREW_IN_MM - size.pilot_mm / 2,
-        "lid at its screws": layout.LID_SCREW_IN_MM
-        - (size.half_x_mm - size.lid_mm[0])
-        - fastener(size.lid_screw).clearance_mm / 2,
-        "rod to nut": size.height_mm - size.bore_mm / 2 - size.trap_top_mm - layout.STEP_MM,
+    hold, drain = size.screw_x_mm[1], size.drain_at_mm[1]
+    walls = size.walls_mm | {
+        "slot to outside": size.half_y_mm - size.slot_y_mm[1],
+        "hold-down to outside": size.half_x_mm - hold - size.drawn_mm(size.counterbore_mm) / 2,
+        "drain to outside": size.half_y_mm + drain - size.drawn_mm(layout.DRAIN_MM) / 2,
         "under hold-down": size.seat_mm - max(size.bottom_mm, size.roof_mm),
         "pilot to foot": size.lid_seat_mm - layout.PILOT_DEPTH_MM - size.bottom_mm,
     }

@@ -66,7 +66,7 @@ def test_growth_goes_to_the_bore_and_nowhere_else():
 def test_growth_moves_nothing(name):
     """A printer's correction must not move a drilled hole or an outside face: only openings grow."""
     sizes = [getattr(part_sizes, f"{name}_size")(hole_growth_mm=growth) for growth in (0.0, 0.3)]
-    drawn = {"hole_growth_mm", "volume_mm3", "lid_volume_mm3", "drawn_bore_mm", "shapes"}
+    drawn = {"hole_growth_mm", "volume_mm3", "lid_volume_mm3", "drawn_bore_mm", "walls_mm", "shapes"}
     for quantity in [q for q in dir(sizes[0]) if not q.startswith("_") and q not in drawn]:
         first, second = (getattr(size, quantity) for size in sizes)
         if not callable(first):
@@ -169,6 +169,8 @@ def test_folded_rod_has_the_developed_length_of_its_centre_line():
         ("folded_saddle_size", {"height_mm": 8.0}),
         ("folded_saddle_size", {"spacing_mm": 8.0}),
         ("folded_rod_size", {"length_mm": 40.0}),
+        ("folded_rod_size", {"cross_hole_mm": 4.0}),
+        ("folded_rod_size", {"length_mm": 54.0, "cross_hole_mm": 2.2}),
     ],
 )
 def test_impossible_sizes_are_refused_with_the_reason(name, parameters):
