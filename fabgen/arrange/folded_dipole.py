@@ -31,6 +31,11 @@ def lay_out(design: Design, feed: Feed, line: LedgerLine) -> tuple[Layout, list[
         "cross_hole_from_end_mm": size.rod_hole_from_end_mm,
     }
     bent = folded_rod_size(**rod_numbers)
+    if bent.straight_mm / 2 < max(map(abs, size.y_mm)):
+        raise ValueError(
+            f"a folded dipole's saddle is {2 * max(map(abs, size.y_mm)):g} mm wide, its limbs are straight for only "
+            f"{bent.straight_mm:g} mm"
+        )
     layout, saddle = Layout(), f"{element.id} folded saddle"
     layout.put(
         "folded_rod",

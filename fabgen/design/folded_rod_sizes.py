@@ -77,9 +77,12 @@ def folded_rod_size(
     """Sizes of a bent rod.
 
     Raises:
-        ValueError: the rod is too short for its bends and gap, or the limbs touch.
+        ValueError: too short for its bends and gap, limbs that touch, or ends without room for their holes.
     """
     size = FoldedRodSize(length_mm, spacing_mm, diameter_mm, gap_mm, cross_hole_mm, cross_hole_from_end_mm)
     if size.fed_mm <= 0 or spacing_mm <= diameter_mm:
         raise ValueError(f"a folded rod of {length_mm:g} mm has no room for limbs {spacing_mm:g} mm apart and its gap")
+    beyond_mm = cross_hole_from_end_mm + cross_hole_mm / 2
+    if cross_hole_mm and (cross_hole_mm >= diameter_mm or beyond_mm > size.fed_mm):
+        raise ValueError(f"fed limbs {diameter_mm:g} mm thick and {size.fed_mm:g} mm long have no room for their holes")
     return size

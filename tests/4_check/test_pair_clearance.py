@@ -159,6 +159,14 @@ def test_a_bow_beyond_the_booms_end_is_the_designs_mistake(variant: Variant, at_
     assert {(i.first, i.kind) for i in left} == {("boom U-bolt 1", "bow on boom")}
 
 
+def test_a_bent_rod_shorter_than_its_saddle_is_told(variant: Variant) -> None:
+    """A gap of 86 mm makes the saddle 103 mm wide; limbs 99 mm apart in 202 mm are straight for 99 mm."""
+    wide = ("spacing: 24 mm, gap: 8 mm", "spacing: 99 mm, gap: 86 mm")
+    (said,) = (remark for _, remark in arranged(variant(wide, base="valley-television-637.yaml")).remarks)
+    assert said.code == "F01"
+    assert "saddle is 103.05 mm wide, its limbs are straight for only 99 mm" in said.text
+
+
 def _pushed(found: Arranged, name: str, far: tuple[float, float, float]) -> Arranged:
     part = found.part(name)
     (ring,) = part.shapes
