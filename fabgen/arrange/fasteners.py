@@ -1,5 +1,6 @@
 """Screws, nuts and washers at their places."""
 
+import math
 from typing import Literal
 
 from fabgen.arrange.drilling import Opening
@@ -104,14 +105,32 @@ def middle_screw_thread(rod_diameter_mm: float) -> str:
     return "M3" if rod_diameter_mm >= 6 else "M2.5" if rod_diameter_mm >= 5 else "M2"
 
 
+def _room_below_axis_mm(design: Design, element: Element, screw_mm: float) -> float:
+    """How far an upright screw through the rod's middle may reach below its axis: a tube's floor, or a bar's hole."""
+    boom, hole_mm = design.boom, element.mount.hole_mm if element.mount else 0.0
+    if boom.hollow:
+        return boom.top_mm - boom.wall_mm
+    return math.sqrt(max(0.0, (hole_mm / 2) ** 2 - (screw_mm / 2) ** 2))
+
+
 def middle_screw(layout: Layout, design: Design, element: Element) -> None:
-    """Hold a rod by one screw through the boom's top into its tapped middle; it bonds nothing there."""
+    """Hold a rod by one screw through the boom's top into its tapped middle; it bonds nothing there.
+
+    Raises:
+        ValueError: no screw that is sold holds the rod and ends above what lies under it.
+    """
     thread = middle_screw_thread(element.rod.diameter_mm)
     sizes = fastener(thread)
     layout.openings.append(Opening(element.id, element.station_mm, ("+z",), 0.0, sizes.clearance_mm, "middle screw"))
     top_mm = design.boom.top_mm
     name = f"{element.id} middle screw"
     length_mm = sold_length_mm(top_mm + 0.3 * element.rod.diameter_mm)
+    below_mm, room_mm = length_mm - top_mm, _room_below_axis_mm(design, element, sizes.diameter_mm)
+    if below_mm > room_mm:
+        raise ValueError(
+            f"the shortest screw that holds the rod, {thread} x {length_mm:g}, ends {below_mm:.2f} mm below "
+            f"the rod's axis, where the boom leaves {room_mm:.2f} mm; hold the rod by keepers"
+        )
     screw(layout, name, thread, length_mm, owner=element.id, seat=(element.station_mm, 0.0, top_mm))
     layout.meet(name, "boom", "screw head on wall", 0.0, sizes.clearance_mm - sizes.diameter_mm)
     layout.meet(name, element.id, "thread in rod", 0.0, tables.tap_drill_mm(thread) - sizes.diameter_mm)

@@ -12,6 +12,8 @@ from fabgen.stock.practice import print_practice
 
 LEAD_IN_MM = 0.4
 FLARE_MM = 0.8
+KEEPER_RIM_MM = 1.0
+"""What a keeper should rest on, each side. Source: common practice."""
 
 
 @frozen

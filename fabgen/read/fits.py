@@ -7,7 +7,7 @@ import math
 from typing import Literal
 
 from fabgen.design.design import AllowanceChoice, Boom, Bush, Keeper, Material, Mount, Saddle, Style
-from fabgen.design.keeper_sizes import snap_keeper_size
+from fabgen.design.keeper_sizes import KEEPER_RIM_MM, snap_keeper_size
 from fabgen.design.wall_depth import wall_depth_mm
 from fabgen.physics.split_ring import largest_push_ring_outside_mm, push_ring_strain, snap_clip_strain
 from fabgen.read.compound import table_material
@@ -79,7 +79,8 @@ def mount_for_rod(
         bush = _bush(f"{path}.bush", keys.bush or BushKeys(), rod_mm, hole_mm, boom, reasons)
     keeper = None
     if hold == "keepers":
-        keeper = _keeper(f"{path}.keeper", keys.keeper or KeeperKeys(), rod_mm, bush, reasons)
+        rest_mm = _sleeve_rest_mm(hole_mm) if bush is not None and bush.kind == "sleeve" else 0.0
+        keeper = _keeper(f"{path}.keeper", keys.keeper or KeeperKeys(), rod_mm, bush, rest_mm, reasons)
     saddle = None
     if keys.style == "on-top":
         saddle = _saddle(f"{path}.saddle", keys.saddle or SaddleKeys(), rod_mm, reasons)
@@ -152,7 +153,13 @@ def _bush(path: str, keys: BushKeys, rod_mm: float, hole_mm: float, boom: Boom, 
     )
 
 
-def _keeper(path: str, keys: KeeperKeys, rod_mm: float, bush: Bush | None, reasons: Reasons) -> Keeper:
+def _sleeve_rest_mm(hole_mm: float) -> float:
+    """Least outside of a keeper that stops on the boom itself: a sleeve has its flange on the left only."""
+    largest_mm = hole_mm + tables.drilled_over_mm(hole_mm)
+    return math.ceil((largest_mm + 2 * KEEPER_RIM_MM) * 10 - 1e-6) / 10
+
+
+def _keeper(path: str, keys: KeeperKeys, rod_mm: float, bush: Bush | None, rest_mm: float, reasons: Reasons) -> Keeper:
     pick = reasons.pick
     usual: Literal["push-ring", "snap"] = "push-ring"
     kind = pick(f"{path}.kind", keys.kind, usual)
@@ -160,10 +167,11 @@ def _keeper(path: str, keys: KeeperKeys, rod_mm: float, bush: Bush | None, reaso
         bore_mm, why_bore = default_snap_bore_mm(rod_mm)
         outside_mm, why_outside = default_snap_outside_mm(rod_mm, keys.bore_mm or bore_mm)
     else:
-        bore_mm, why_bore = default_ring_bore_mm(rod_mm)
+        least_mm = max(rest_mm, rod_mm + THINNEST_RING_MM)
+        bore_mm, why_bore = default_ring_bore_mm(rod_mm, least_mm)
         largest_mm = bush.flange_mm - 1 if bush is not None else rod_mm + 6
         ring_bore_mm = keys.bore_mm if keys.bore_mm is not None else bore_mm
-        outside_mm, why_outside = default_ring_outside_mm(rod_mm, ring_bore_mm, largest_mm)
+        outside_mm, why_outside = default_ring_outside_mm(rod_mm, ring_bore_mm, least_mm, largest_mm)
     return Keeper(
         kind=kind,
         material=printed_material(f"{path}.material", keys.material, reasons),
@@ -209,24 +217,24 @@ def _widest_clip_mm(rod_mm: float, bore_mm: float) -> float:
     return 0.0
 
 
-def default_ring_bore_mm(rod_mm: float) -> tuple[float, str]:
-    """Bore of a split ring and its reason: the usual grip, or less where that strains the thinnest ring too far."""
+def default_ring_bore_mm(rod_mm: float, least_mm: float) -> tuple[float, str]:
+    """Bore of a split ring and its reason: the usual grip, or less where that strains a ring this wide too far."""
     usual = tables.print_practice("split_keeper_grip_mm")
     for grip in (usual, *(less for less in LESSER_GRIPS_MM if less < usual)):
         bore_mm = rod_mm - grip
-        if bore_mm > 0 and _widest_ring_mm(rod_mm, bore_mm) >= rod_mm + THINNEST_RING_MM:
+        if bore_mm > 0 and _widest_ring_mm(rod_mm, bore_mm) >= least_mm:
             why = "" if grip == usual else f": {usual:g} mm would strain it over {_limit_percent():g} %"
             return _tidy(bore_mm), f"computed, rod − {grip:g} mm{why}"
     bore_mm = max(rod_mm - LESSER_GRIPS_MM[-1], rod_mm / 2)
     return _tidy(bore_mm), f"computed, rod − {_tidy(rod_mm - bore_mm):g} mm"
 
 
-def default_ring_outside_mm(rod_mm: float, bore_mm: float, largest_mm: float) -> tuple[float, str]:
+def default_ring_outside_mm(rod_mm: float, bore_mm: float, least_mm: float, largest_mm: float) -> tuple[float, str]:
     """Outside of a split ring and its reason: as thick as strain and its seat allow, in steps of 0.5 mm."""
     if not 0 < bore_mm < rod_mm:
-        return _tidy(rod_mm + 3.2), "computed, rod + 3.2 mm"
+        return _tidy(max(least_mm, rod_mm + 3.2)), "computed, rod + 3.2 mm, or what its seat asks for"
     strained_mm = math.floor(min(_widest_ring_mm(rod_mm, bore_mm), 1000.0) * 2) / 2
-    outside_mm = max(rod_mm + THINNEST_RING_MM, min(strained_mm, largest_mm))
+    outside_mm = max(least_mm, min(strained_mm, largest_mm))
     return _tidy(outside_mm), f"computed, the thickest ring up to {_limit_percent():g} % strain that its seat covers"
 
 

@@ -30,7 +30,13 @@ from fabgen.stock.practice import (
     title_fields,
 )
 from fabgen.stock.read_csv import UnknownStockError
-from fabgen.stock.tolerances import NoToleranceError, ToleranceClass, it_grade_mm, linear_tolerance_mm
+from fabgen.stock.tolerances import (
+    NoToleranceError,
+    ToleranceClass,
+    drilled_over_mm,
+    it_grade_mm,
+    linear_tolerance_mm,
+)
 
 __all__ = [
     "Drill",
@@ -47,6 +53,7 @@ __all__ = [
     "UnknownStockError",
     "Washer",
     "clearance_hole_mm",
+    "drilled_over_mm",
     "drills",
     "edge_distance_factor",
     "galvanic_limit_cv",

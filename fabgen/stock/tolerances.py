@@ -7,6 +7,10 @@ from fabgen.stock.read_csv import Row, UnknownStockError, rows
 ToleranceClass = Literal["f", "m", "c", "v"]
 
 
+DRILLED_GRADE = 12
+"""A twist drill in thin sheet makes its hole up to IT12 too large, never smaller. Source: common practice."""
+
+
 class NoToleranceError(ValueError):
     """A size that the standard gives no tolerance for; it must be stated on its own."""
 
@@ -27,6 +31,11 @@ def it_grade_mm(size_mm: float, grade: int) -> float:
     if column not in found:
         raise UnknownStockError("tolerance grade", str(grade), (str(each) for each in range(6, 15)))
     return float(found[column]) / 1000
+
+
+def drilled_over_mm(diameter_mm: float) -> float:
+    """How much larger than its drill a hole may come out."""
+    return it_grade_mm(diameter_mm, DRILLED_GRADE)
 
 
 def linear_tolerance_mm(size_mm: float, tolerance_class: ToleranceClass) -> float:

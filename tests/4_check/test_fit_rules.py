@@ -4,6 +4,9 @@ import math
 
 import pytest
 
+from fabgen.check.pairs import near_pairs
+from fabgen.model.confirm import confirm
+
 
 def test_a_part_that_cannot_be_made(found):
     assert found("parts_that_cannot_be_made") == []
@@ -140,6 +143,18 @@ def test_a_keeper_that_slips_through(found):
     assert found("keeper_stop") == []
 
 
+def test_a_middle_screw_ends_above_what_lies_under_it(made, found):
+    """8 mm hole in a solid bar: room √(4² − 1²) = 3.873 mm below the axis.
+
+    A bar of 13 asks for 6.5 + 1.2, M2 × 8, which ends 1.5 mm below it; one of 20 for 12, 2 mm; one of 30 for 20, 5 mm.
+    """
+    held = {"mounts.line.hold": "middle-screw", "mounts.line.bush": {"spigot_length": 3}, "boom.wall": None}
+    for size, refused in ((13, False), (20, False), (30, True)):
+        here = [each for each in found("parts_that_cannot_be_made", held | {"boom.outside": size}) if each[2] != "DE"]
+        assert here == ([("F01", "fail", "R, D1, D2", None, None)] if refused else []), size
+    assert confirm(near_pairs(made(held | {"boom.outside": 20}))) > 0
+
+
 def test_a_sleeves_right_hand_keeper_stops_on_the_boom(made, found, advice):
     """Its only flange is on the left. Hole 8 drilled up to IT12 = 0.15 too large: a keeper of 8.2 may slip in."""
     sleeve = {"mounts.line.bush.kind": "sleeve"}
@@ -150,11 +165,13 @@ def test_a_sleeves_right_hand_keeper_stops_on_the_boom(made, found, advice):
         ("F08", "warn", "R, D1, D2", 10.1, 10.15)
     ]
     assert found("keeper_stop", sleeve | {"mounts.line.keeper.outside": 10.2}) == []
-    assert "no flange stands on the right" in advice("keeper_stop", sleeve)
+    assert "no flange stands on the right" in advice("keeper_stop", sleeve | {"mounts.line.keeper.outside": 8.2})
     advised = sleeve | {"mounts.line.keeper.outside": 10.2, "mounts.line.keeper.bore": 3.9}
     assert found("keeper_stop", advised) == found("keeper_grip", advised) == []
-    seats = {meeting.second for meeting in made(sleeve).interfaces if meeting.first == "D1 keeper right"}
-    assert seats == {"D1"}
+    assert found("keeper_stop", sleeve) == found("keeper_grip", sleeve) == [], "what the program chooses holds"
+    for keeper, expected in (({}, {"D1", "boom"}), ({"mounts.line.keeper.outside": 6.5}, {"D1"})):
+        meetings = made(sleeve | keeper).interfaces
+        assert {meeting.second for meeting in meetings if meeting.first == "D1 keeper right"} == expected
 
 
 def test_a_keeper_over_the_tip(found):

@@ -4,7 +4,6 @@ from collections.abc import Iterator
 
 from fabgen.check.finding import finding
 from fabgen.check.holes import drillings, place
-from fabgen.check.tolerances import drilled_over_mm
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding, Severity
 from fabgen.stock import tables
@@ -25,7 +24,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
     for hole, *_ in drillings(arranged):
         nearest = nearest_of[hole.diameter_mm]
         smaller_mm = hole.diameter_mm - nearest.diameter_mm
-        far = abs(smaller_mm) > drilled_over_mm(hole.diameter_mm) / 2
+        far = abs(smaller_mm) > tables.drilled_over_mm(hole.diameter_mm) / 2
         if not far and smaller_mm <= PRINTED_MM:
             continue
         advice = f"the nearest {_series(series)} drill is {nearest.name} ({nearest.diameter_mm:.3f} mm)"

@@ -4,7 +4,6 @@ from collections.abc import Iterator
 
 from fabgen.check.finding import finding
 from fabgen.check.holes import drillings, place, wall_width_mm
-from fabgen.check.tolerances import drilled_over_mm
 from fabgen.design.arranged import Arranged, Hole
 from fabgen.design.design import Boom
 from fabgen.design.findings import Finding
@@ -22,7 +21,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
         half_mm = wall_width_mm(arranged, hole) / 2
         slack_mm = shop_tolerance_mm(design.shop, half_mm)
         flat_mm = flat_beside_mm(boom, half_mm, hole)
-        left_mm = flat_mm - slack_mm - drilled_over_mm(hole.diameter_mm) / 2
+        left_mm = flat_mm - slack_mm - tables.drilled_over_mm(hole.diameter_mm) / 2
         edge_mm = half_mm - abs(hole.across_mm)
         if flat_mm < 0:
             advice = "make the hole smaller or the boom larger: the drill wanders off a corner and cuts the next wall"

@@ -3,14 +3,12 @@
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding, too_small
-from fabgen.check.tolerances import drilled_over_mm
 from fabgen.design.arranged import Arranged, Placed
 from fabgen.design.design import Mount
 from fabgen.design.findings import Finding
+from fabgen.design.keeper_sizes import KEEPER_RIM_MM
 from fabgen.design.spans import part_span_mm
-
-RIM_MM = 1.0
-"""What a keeper should rest on, each side. Source: common practice."""
+from fabgen.stock import tables
 
 
 def findings(arranged: Arranged) -> Iterator[Finding]:
@@ -20,7 +18,9 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
         mount = element.mount
         if mount and mount.keeper:
             opening_mm, what = opening(mount)
-            if missed := too_small(mount.keeper.outside_mm, fail_mm=opening_mm + 0.1, warn_mm=opening_mm + 2 * RIM_MM):
+            if missed := too_small(
+                mount.keeper.outside_mm, fail_mm=opening_mm + 0.1, warn_mm=opening_mm + 2 * KEEPER_RIM_MM
+            ):
                 severity, limit_mm = missed
                 advice = f"it rests on the rim of {what}, {opening_mm:.3f} mm at its largest: make it wider"
                 if mount.bush and mount.bush.kind == "sleeve":
@@ -42,7 +42,7 @@ def opening(mount: Mount) -> tuple[float, str]:
         return mount.bush.bore_mm, "the bush's bore"
     if mount.saddle:
         return mount.saddle.bore_mm, "the saddle's bore"
-    return mount.hole_mm + drilled_over_mm(mount.hole_mm), "the hole"
+    return mount.hole_mm + tables.drilled_over_mm(mount.hole_mm), "the hole"
 
 
 def _on_tip(keeper: Placed, rod: Placed) -> Iterator[Finding]:

@@ -3,9 +3,9 @@
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding
-from fabgen.check.tolerances import drilled_over_mm
 from fabgen.design.arranged import Arranged
 from fabgen.design.findings import Finding
+from fabgen.stock import tables
 
 LARGEST_CONTACT_MM = 0.3
 """Diametral play beyond which a press or a weld bridges a gap. Source: common practice."""
@@ -18,7 +18,7 @@ def findings(arranged: Arranged) -> Iterator[Finding]:
         if mount is None or mount.bond not in ("press", "weld"):
             continue
         play_mm = mount.hole_mm - element.rod.diameter_mm
-        worst_mm = play_mm + drilled_over_mm(mount.hole_mm)
+        worst_mm = play_mm + tables.drilled_over_mm(mount.hole_mm)
         if worst_mm > LARGEST_CONTACT_MM + 1e-9:
             advice = (
                 f"play: {play_mm:.3f} mm on the drawing, the figure is a hole drilled too large (IT12); the joint "

@@ -4,7 +4,7 @@ import math
 from collections.abc import Iterator
 
 from fabgen.check.finding import finding
-from fabgen.check.tolerances import drilled_over_mm, printed_accuracy_mm
+from fabgen.check.tolerances import printed_accuracy_mm
 from fabgen.design.arranged import Arranged
 from fabgen.design.design import Boom, Bush, Element
 from fabgen.design.findings import Finding
@@ -31,7 +31,7 @@ def _play(element: Element, bush: Bush, hole_mm: float) -> Iterator[Finding]:
     slides_mm = tables.print_practice("diametral_undersize_press_mm")
     off_mm = printed_accuracy_mm()
     worst = (
-        f"as printed and drilled {play_mm - off_mm:.2f} to {play_mm + off_mm + drilled_over_mm(hole_mm):.2f} mm "
+        f"as printed and drilled {play_mm - off_mm:.2f} to {play_mm + off_mm + tables.drilled_over_mm(hole_mm):.2f} mm "
         "until the fit gauge says better"
     )
     fix = f"write spigot: {hole_mm - tables.print_practice('spigot_clearance_mm'):g} mm, or leave it out"
