@@ -5,6 +5,7 @@ Parts take `cq` from here, so that a missing system library becomes a message wi
 
 import contextlib
 import gc
+import importlib
 import signal
 import sys
 import threading
@@ -47,11 +48,14 @@ def _lean() -> Iterator[None]:
     """Spare the kernel's load what nothing here uses: a third of its time.
 
     Its bindings import all of VTK by the name `vtk`, which only windows need; the modules with the types they name are
-    loaded without it. Python would also search the 400,000 objects that come along for waste again and again.
+    loaded without it, and who asks `vtk` for anything meanwhile gets it. Python would also search the 400,000 objects
+    that come along for waste again and again.
     """
     stands_in = "vtk" not in sys.modules
     if stands_in:
-        sys.modules["vtk"] = ModuleType("vtk")
+        vtk = ModuleType("vtk")
+        vtk.__dict__["__getattr__"] = lambda name: getattr(importlib.import_module("vtkmodules.all"), name)
+        sys.modules["vtk"] = vtk
     collected = gc.isenabled()
     gc.disable()
     try:

@@ -10,9 +10,14 @@ from fabgen.errors import MachineError, ProgramError
 from fabgen.model.kernel import bounds_mm, cq, on_bed, part_of, solid_of, volume_mm3
 
 
-def import_kernel_with(tmp_path, root, message):
-    """Import the door in a fresh interpreter whose cadquery fails to load; its stdout."""
-    (tmp_path / "cadquery.py").write_text(f"raise ImportError({message!r})\n", encoding="utf-8")
+def failing(message):
+    """A cadquery that fails to load."""
+    return f"raise ImportError({message!r})\n"
+
+
+def import_kernel_with(tmp_path, root, cadquery):
+    """Import the door in a fresh interpreter with this for cadquery; its stdout."""
+    (tmp_path / "cadquery.py").write_text(cadquery, encoding="utf-8")
     script = (
         "from fabgen.errors import MachineError\n"
         "try:\n    import fabgen.model.kernel\n"
@@ -30,14 +35,16 @@ def import_kernel_with(tmp_path, root, message):
 
 
 def test_missing_system_library_is_named_with_its_package(tmp_path, root):
-    said = import_kernel_with(tmp_path, root, "libGL.so.1: cannot open shared object file: No such file or directory")
+    said = import_kernel_with(
+        tmp_path, root, failing("libGL.so.1: cannot open shared object file: No such file or directory")
+    )
     assert said.startswith("3 ")
     assert "libGL.so.1" in said
     assert "libgl1" in said.partition("|")[2]
 
 
 def test_any_other_failure_to_load_is_a_machine_error_too(tmp_path, root):
-    said = import_kernel_with(tmp_path, root, "No module named 'OCP'")
+    said = import_kernel_with(tmp_path, root, failing("No module named 'OCP'"))
     assert said.startswith("3 ")
     assert "libgl1" not in said
 
@@ -70,6 +77,12 @@ def test_windows_library_is_not_loaded_and_not_missed():
     )
     done = subprocess.run([sys.executable, "-c", script], capture_output=True, text=True, check=True)
     assert done.stdout.splitlines() == ["False False True", "True", "vtkSphereSource"]
+
+
+def test_who_asks_the_windows_library_for_something_while_loading_gets_it(tmp_path, root):
+    asking = "from vtk import vtkSphereSource\nraise ImportError('found ' + vtkSphereSource.__name__)\n"
+    said = import_kernel_with(tmp_path, root, asking)
+    assert "found vtkSphereSource" in said
 
 
 def test_a_machine_error_exits_with_three():
