@@ -108,6 +108,11 @@ def expected(error: Exception) -> FabgenError:
     return ProgramError(f"a bug: {type(error).__name__}: {error}", fix)
 
 
+def say(line: str) -> None:
+    """One line of progress, kept apart from what was asked for."""
+    click.echo(line, err=True)
+
+
 def tell(error: FabgenError) -> None:
     """Print a failure on stderr: problems of a file as they are, everything else after the program's name."""
     click.echo(error.message if isinstance(error, DesignErrors) else f"fabgen: {error.message}", err=True)

@@ -15,10 +15,9 @@ from fabgen.design.arranged import Cylinder, Frame, Interface, Placed
 from fabgen.errors import ProgramError
 from fabgen.model.envelope import outside_envelope
 from fabgen.model.fits import fits
-from fabgen.model.kernel import common
+from fabgen.model.kernel import common, location_of
 from fabgen.model.neighbourhood import Body, neighbourhood, relative
 from fabgen.model.separation import separation_mm
-from fabgen.model.solids import location
 
 DISTANCE_TOLERANCE_MM = 1e-6
 OVERLAP_TOLERANCE_MM3 = 1e-6
@@ -141,4 +140,4 @@ def _formula_is_exact(first: Placed, second: Placed) -> bool:
 @functools.cache
 def _overlap_mm3(first: Body, second: Body, frame: Frame) -> float:
     """Common volume of two bodies, the second standing at `frame` in the first one's frame."""
-    return float(common(first.solid, second.solid.moved(location(frame))).Volume())
+    return float(common(first.solid, second.solid.moved(location_of(frame))).Volume())

@@ -6,8 +6,8 @@ from typing import Any
 
 from fabgen.design.arranged import Axis, Box, Cylinder, Frame, Parameters, Placed, Shape, Vector
 from fabgen.design.distances import bounding_box
-from fabgen.model.kernel import bounds_of, cq, cut
-from fabgen.model.solids import location, solid_of, without_growth
+from fabgen.model.kernel import bounds_of, cq, cut, location_of
+from fabgen.model.solids import solid_of, without_growth
 
 _DECIMALS = 7
 _OUTSIDE_MM3 = 1e-6
@@ -30,7 +30,7 @@ def outside_envelope(placed: Placed) -> str:
 
 @functools.cache
 def _outside(part: str, parameters: Parameters, frame: Frame, shapes: tuple[Shape, ...], exact: bool) -> str:
-    solid = solid_of(part, parameters).moved(location(frame))
+    solid = solid_of(part, parameters).moved(location_of(frame))
     if exact:
         simple_mm3 = sum(_volume_mm3(shape) for shape in shapes)
         if not math.isclose(solid.Volume(), simple_mm3, rel_tol=_VOLUME_REL):

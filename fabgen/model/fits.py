@@ -9,9 +9,8 @@ from OCP.TopAbs import TopAbs_Orientation
 
 from fabgen.design.arranged import Frame, Vector
 from fabgen.frozen import frozen
-from fabgen.model.kernel import cq, faces_of
+from fabgen.model.kernel import cq, faces_of, location_of
 from fabgen.model.neighbourhood import Body
-from fabgen.model.solids import location
 
 _SAME_AXIS = 1e-6
 
@@ -52,7 +51,7 @@ def fits(first: Body, second: Body, frame: Frame) -> tuple[Fit, ...]:
         frame: where the second one stands in the first one's frame.
     """
     own = _barrels(first.solid)
-    others = _barrels(second.solid.moved(location(frame)))
+    others = _barrels(second.solid.moved(location_of(frame)))
     found: dict[float, float] = {}
     for a in own:
         for b in others:

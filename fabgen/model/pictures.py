@@ -20,8 +20,7 @@ from fabgen.design.arranged import Vector
 from fabgen.design.drawing import Item, Point, Polyline, Sheet, box_of, moved
 from fabgen.design.solids import AssemblyItem, Product
 from fabgen.errors import ProgramError
-from fabgen.model.kernel import bounds_mm, cq
-from fabgen.model.solids import location
+from fabgen.model.kernel import bounds_of, cq, location_of
 
 SCALES = (10.0, 5.0, 2.0, 1.0, 1 / 2, 1 / 5, 1 / 10, 1 / 20, 1 / 50, 1 / 100)
 """Enlargements and reductions (ISO 5455:1979, from memory)."""
@@ -44,7 +43,7 @@ def part_picture(product: Product, *, width_mm: float = 120.0, height_mm: float 
     Returns:
         A sheet no larger than its lines ask for; its title says size and scale.
     """
-    low, high = bounds_mm(cq.Workplane(product.solid))
+    low, high = bounds_of(product.solid)
     sizes = " × ".join(f"{end - start:.2f}" for start, end in zip(low, high, strict=True))
     views = [visible_lines([product.solid], eye) for eye in (ABOVE, BELOW)]
     return _sheet(views, width_mm, height_mm, product.name, f"{product.name}, {sizes} mm, from above and from below")
@@ -93,7 +92,7 @@ def _faceted_lines(items: Sequence[AssemblyItem], eye: Vector) -> list[tuple[Poi
     """As `visible_lines`, by the solids' triangles: ten times faster for many parts, circles become polygons."""
     for product in dict.fromkeys(item.product for item in items):
         BRepMesh_IncrementalMesh(product.solid.wrapped, _FACET_MM, False, _FACET_RAD, False)
-    placed = [item.product.solid.moved(location(item.frame)) for item in items]
+    placed = [item.product.solid.moved(location_of(item.frame)) for item in items]
     algorithm = HLRBRep_PolyAlgo()
     algorithm.Load(cq.Compound.makeCompound(placed).wrapped)
     algorithm.Projector(_projector(eye))

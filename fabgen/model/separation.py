@@ -18,9 +18,8 @@ from OCP.TopoDS import TopoDS_Compound
 from fabgen.design.arranged import Box, Frame, Vector
 from fabgen.design.distances import bounding_box, distance_mm
 from fabgen.errors import ProgramError
-from fabgen.model.kernel import cq, faces_of
+from fabgen.model.kernel import cq, faces_of, location_of
 from fabgen.model.neighbourhood import Body
-from fabgen.model.solids import location
 
 _POINT_MM = 1e-6
 
@@ -51,7 +50,7 @@ def separation_mm(first: Body, second: Body, frame: Frame, within_mm: float) -> 
     apart_mm = math.inf
     if near and near_others:
         measured = BRepExtrema_DistShapeShape(
-            _compound(near), cq.Shape.cast(_compound(near_others)).moved(location(frame)).wrapped
+            _compound(near), cq.Shape.cast(_compound(near_others)).moved(location_of(frame)).wrapped
         )
         if not measured.IsDone():
             raise ProgramError(f"the kernel found no distance between {first.part} and {second.part}")

@@ -4,7 +4,7 @@ import functools
 from collections.abc import Callable
 
 from fabgen import registry
-from fabgen.design.arranged import Frame, Parameters, Placed
+from fabgen.design.arranged import Parameters, Placed
 from fabgen.model import kernel
 from fabgen.model.kernel import cq
 
@@ -43,8 +43,3 @@ def finished(placed: Placed) -> cq.Solid:
 def without_growth(parameters: Parameters) -> Parameters:
     """A part's parameters for the bores as they come out of the printer."""
     return tuple((name, value) for name, value in parameters if name != _GROWTH)
-
-
-def location(frame: Frame) -> cq.Location:
-    """Where a part's frame stands, as the kernel says it."""
-    return kernel.location_of(frame)

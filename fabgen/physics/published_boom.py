@@ -86,22 +86,6 @@ def dl6wu_fraction(boom_wl: float) -> float:
     return 733 * boom_wl * (0.055 - boom_wl) - 504 * boom_wl * (0.03 - boom_wl)
 
 
-def dl6wu_bonded_mm(boom_mm: float, wavelength_mm: float) -> float:
-    """DL6WU's curve for a rod bonded through a round boom.
-
-    Args:
-        boom_mm: boom diameter in mm.
-        wavelength_mm: wavelength in mm.
-
-    Returns:
-        Length to add in mm.
-
-    Raises:
-        ValueError: the boom is 0.055 λ thick or more.
-    """
-    return dl6wu_fraction(boom_mm / wavelength_mm) * boom_mm
-
-
 def lawson_bonded_mm(boom_mm: float) -> float:
     """Lawson's 0.7 D for a rod through the boom, his reading of the NBS measurements; he sets no range.
 

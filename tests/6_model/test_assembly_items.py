@@ -7,9 +7,10 @@ import pytest
 from fabgen.design.arranged import Frame, Placed
 from fabgen.errors import ProgramError
 from fabgen.model.assembly import assembly, unique
+from fabgen.model.kernel import location_of
 from fabgen.model.parts.push_ring import push_ring
 from fabgen.model.prints import prints
-from fabgen.model.solids import location, solid_of
+from fabgen.model.solids import solid_of
 
 LEFT = (0.0, 1.0, 0.0)
 
@@ -109,5 +110,5 @@ def test_the_kernel_places_like_the_frame(frame):
     import cadquery as cq
 
     for point in ((0.0, 0.0, 0.0), (3.0, -2.0, 11.0)):
-        moved = cq.Vertex.makeVertex(*point).moved(location(frame)).Center().toTuple()
+        moved = cq.Vertex.makeVertex(*point).moved(location_of(frame)).Center().toTuple()
         assert moved == pytest.approx(frame.point(point), abs=1e-12)

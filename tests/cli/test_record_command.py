@@ -7,7 +7,6 @@ from pathlib import Path
 import pytest
 import yaml
 
-from fabgen.cli.main import main
 from fabgen.physics.coupon_array import coupon_array
 
 Ran = Callable[..., tuple[int, str, str]]
@@ -38,18 +37,9 @@ def bench(root: Path, tmp_path: Path) -> Path:
     return tmp_path
 
 
-@pytest.fixture
-def ran(bench: Path, monkeypatch: pytest.MonkeyPatch, capsys: pytest.CaptureFixture[str]) -> Ran:
-    """Runs the program in the design's folder: exit code, stdout, stderr."""
+@pytest.fixture(autouse=True)
+def in_the_designs_folder(bench: Path, monkeypatch: pytest.MonkeyPatch) -> None:
     monkeypatch.chdir(bench)
-
-    def run(*arguments: str) -> tuple[int, str, str]:
-        with pytest.raises(SystemExit) as stopped:
-            main(list(arguments))
-        told = capsys.readouterr()
-        return int(stopped.value.code or 0), told.out, told.err
-
-    return run
 
 
 def test_a_coupon_overrules_theory_for_the_whole_table(ran: Ran, bench: Path) -> None:

@@ -9,7 +9,6 @@ from pathlib import Path
 import pytest
 import yaml
 
-from fabgen.cli.main import main
 from fabgen.physics import boom_solver
 from fabgen.physics.boom_closed_form import relative_allowance
 from fabgen.physics.boom_coupon import reactance_factor_from_allowance
@@ -27,19 +26,6 @@ def folder(root: Path, tmp_path: Path, monkeypatch: pytest.MonkeyPatch) -> Path:
     (tmp_path / "gauge.yaml").write_text(text, encoding="utf-8")
     monkeypatch.chdir(tmp_path)
     return tmp_path
-
-
-@pytest.fixture
-def ran(capsys: pytest.CaptureFixture[str]) -> Ran:
-    """Runs the program: exit code, stdout, stderr."""
-
-    def run(*arguments: str) -> tuple[int, str, str]:
-        with pytest.raises(SystemExit) as stopped:
-            main(list(arguments))
-        told = capsys.readouterr()
-        return int(stopped.value.code or 0), told.out, told.err
-
-    return run
 
 
 @pytest.fixture

@@ -27,7 +27,7 @@ def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stampe
     judged: dict[int, Judged] = {}
     for number, path in enumerate(designs):
         with call.telling(number) as record:
-            one = judge_file(path, solve=True, say=_say)
+            one = judge_file(path, solve=True, say=report.say)
             record.update(report.judged_record(path, one))
             _keep(path, one)
             judged[number] = one
@@ -43,7 +43,7 @@ def build(designs: tuple[Path, ...], output: Path, only: tuple[str, ...], stampe
             if not seen.clear and not stamped:
                 _tell_kept(output / seen.name)
                 continue
-            folder = build_package(seen, output=output, stamped=not seen.clear, only=sorted(set(only)), say=_say)
+            folder = build_package(seen, output=output, stamped=not seen.clear, only=sorted(set(only)), say=report.say)
             record["package"] = str(folder)
             if not as_json:
                 click.echo(str(folder))
@@ -61,15 +61,11 @@ def _keep(path: Path, judged: Judged) -> None:
     try:
         write_response(judged.response, folder=records_folder(path))
     except MachineError as error:
-        _say(str(finding("E08", "note", "records", error.message)))
-
-
-def _say(line: str) -> None:
-    click.echo(line, err=True)
+        report.say(str(finding("E08", "note", "records", error.message)))
 
 
 def _tell_kept(folder: Path) -> None:
-    _say("not clear: nothing was written")
+    report.say("not clear: nothing was written")
     if folder.exists():
-        _say(f"  an older package is in {folder}; it was left alone")
-    _say("  --stamped writes it with every sheet marked")
+        report.say(f"  an older package is in {folder}; it was left alone")
+    report.say("  --stamped writes it with every sheet marked")

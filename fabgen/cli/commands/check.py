@@ -26,7 +26,7 @@ def check(designs: tuple[Path, ...], show: bool, response: bool, as_json: bool) 
     names: dict[int, str] = {}
     for number, path in enumerate(designs):
         with call.telling(number) as record:
-            judged = judge_file(path, solve=response, say=lambda line: click.echo(line, err=True))
+            judged = judge_file(path, solve=response, say=report.say)
             names[number] = judged.name
             call.judged(judged.clear)
             record.update(report.judged_record(path, judged))

@@ -4,6 +4,8 @@ from pathlib import Path
 
 import click
 
+from fabgen.cli.report import say
+
 
 @click.command()
 @click.argument("design", type=click.Path(path_type=Path))
@@ -20,7 +22,7 @@ def coupon(design: Path, mount: str, output: Path) -> int:
     from fabgen.read.reader import read_design
 
     read = read_design(design).design
-    plan, files = coupon_files(read, mount, _say)
+    plan, files = coupon_files(read, mount, say)
     manifest = package.manifest(
         files,
         number=read.number,
@@ -29,7 +31,7 @@ def coupon(design: Path, mount: str, output: Path) -> int:
         verdict="clear",
         versions=versions(),
     )
-    folder = package.write([*files, manifest], output=output, name=f"{read.name}_coupon-{mount}", say=_say)
+    folder = package.write([*files, manifest], output=output, name=f"{read.name}_coupon-{mount}", say=say)
     click.echo(f"mount {mount}: expected allowance {plan.allowance_mm:.2f} mm (theory, unmeasured)")
     for rod_mm in other_rods_mm(read, mount):
         click.echo(
@@ -37,7 +39,3 @@ def coupon(design: Path, mount: str, output: Path) -> int:
         )
     click.echo(str(folder))
     return 0
-
-
-def _say(line: str) -> None:
-    click.echo(line, err=True)

@@ -5,7 +5,7 @@ from pathlib import Path
 
 import click
 
-from fabgen.cli.report import error_record, print_json
+from fabgen.cli.report import error_record, print_json, say
 from fabgen.design.as_built import AsBuilt, State
 from fabgen.errors import FabgenError, InputError
 from fabgen.pipeline import check as judge_file
@@ -45,7 +45,7 @@ def _inspected(design: Path, measured: Path) -> tuple[str, AsBuilt]:
     unit = str(tree["units"]) if "units" in tree else None
     rows = read_measured(measured, judged.arranged, unit)
     if judged.response is None:
-        judged = judge_file(design, solve=True, say=lambda line: click.echo(line, err=True))
+        judged = judge_file(design, solve=True, say=say)
     case = electrical_case(judged.arranged)
     if case is None:
         raise InputError(f"{design}: {no_case(judged.arranged.design)}", "inspect needs an array that can be modelled")
