@@ -95,7 +95,7 @@ def test_a_square_boom_may_be_read_as_los_equivalent(variant: Variant) -> None:
     side = variant((COMPUTED, "allowance: {origin: published, model: dl6wu}"))
     lo = variant((COMPUTED, "allowance: {origin: published, model: dl6wu, square_as: lo}"))
     for design, boom_mm in ((side, 20.0), (lo, 20.0 * published_boom.LO_SQUARE)):
-        half_mm = published_boom.dl6wu_bonded_mm(boom_mm, design.wavelength_mm) / 2
+        half_mm = published_boom.dl6wu_fraction(boom_mm / design.wavelength_mm) * boom_mm / 2
         assert line(design, "D1").allowance.value_mm == pytest.approx(half_mm)
     assert [remark.code for remark in line(side, "D1").allowance.remarks] == ["L03"]
 
